@@ -1,0 +1,6 @@
+namespace BarbuleOptics.Anatomy;
+
+/// <summary>A distance between neighbours.</summary>
+/// <param name="Distance">The length as measured.</param>
+/// <param name="BetweenSurfaces">True: from surface to surface, 0 = touching. False: from centre to centre.</param>
+public sealed record Packing(MeasuredLength Distance, bool BetweenSurfaces);

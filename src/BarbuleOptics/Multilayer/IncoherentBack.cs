@@ -1,0 +1,25 @@
+using System.Numerics;
+using BarbuleOptics.Quantities;
+
+namespace BarbuleOptics.Multilayer;
+
+/// <summary>The end of the backing, so far away that its thickness is averaged over at least one fringe.</summary>
+public sealed class IncoherentBack
+{
+    private readonly Complex[] _behind;
+
+    /// <summary>A backing of <paramref name="thickness"/> (0 or above) in front of a half-space.</summary>
+    /// <param name="thickness">Thickness of the backing.</param>
+    /// <param name="behind">Isotropic permittivity behind it, one for each wavelength of the stack.</param>
+    public IncoherentBack(Length thickness, ReadOnlySpan<Complex> behind)
+    {
+        ThicknessNm = Guard.NotNegative(thickness.Nanometres, nameof(thickness));
+        _behind = behind.ToArray();
+    }
+
+    /// <summary>Thickness of the backing, in nm.</summary>
+    public double ThicknessNm { get; }
+
+    /// <summary>Permittivity behind it, at each wavelength.</summary>
+    public ReadOnlySpan<Complex> Behind => _behind;
+}
