@@ -1,7 +1,7 @@
 using System.Numerics;
 using BarbuleOptics.Quantities;
 
-namespace BarbuleOptics.Multilayer;
+namespace BarbuleOptics.Layering;
 
 /// <summary>Films between two half-spaces, with the permittivities of their media against wavelength.</summary>
 /// <remarks>Films are listed from the side the light comes from and name a medium by its number, so that identical rows

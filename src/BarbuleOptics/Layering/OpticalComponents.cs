@@ -1,6 +1,6 @@
 using BarbuleOptics.Quantities;
 
-namespace BarbuleOptics.Multilayer;
+namespace BarbuleOptics.Layering;
 
 /// <summary>Principal permittivities (ex, ey, ez) of the media of a stack against wavelength, as structure of arrays.</summary>
 /// <remarks>Six arrays of media x wavelengths, one medium after another: element m * WavelengthCount + w.

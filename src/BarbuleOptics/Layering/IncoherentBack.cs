@@ -1,7 +1,7 @@
 using System.Numerics;
 using BarbuleOptics.Quantities;
 
-namespace BarbuleOptics.Multilayer;
+namespace BarbuleOptics.Layering;
 
 /// <summary>The end of the backing, so far away that its thickness is averaged over at least one fringe.</summary>
 public sealed class IncoherentBack

@@ -1,0 +1,113 @@
+using BarbuleOptics.Anatomy;
+
+namespace BarbuleOptics.Layering;
+
+/// <summary>Finds layers that reach into each other, out of the surface or into the backing.</summary>
+/// <remarks>Rows of spacings without a common period meet at every sideways offset somewhere, so there the worst one counts.</remarks>
+internal static class LayerOverlap
+{
+    /// <summary>One problem a layer at the most, at the gap that would mend it.</summary>
+    public static IEnumerable<AnatomyProblem> Find(Section section)
+    {
+        List<Extent> extents = [.. section.Runs.Select(run => new Extent(run)), .. section.Films.GroupBy(film => film.LayerNumber).Select(films => new Extent([.. films]))];
+        extents.Sort((a, b) => a.Layer.CompareTo(b.Layer));
+        foreach (Extent extent in extents)
+        {
+            if (extent.TopNm < -SectionBuilder.TouchingNm)
+                yield return Problem(extent.Layer - 1, FormattableString.Invariant($"layer {extent.Layer} reaches {-extent.TopNm:0.###} nm out of the surface"), -extent.TopNm);
+        }
+        for (int lower = 1; lower < extents.Count; lower++)
+        {
+            for (int upper = 0; upper < lower; upper++)
+            {
+                double missingNm = MissingNm(extents[upper], extents[lower]);
+                if (missingNm > SectionBuilder.TouchingNm)
+                {
+                    yield return Problem(extents[lower].Layer - 1, FormattableString.Invariant($"layers {extents[upper].Layer} and {extents[lower].Layer} overlap"), missingNm);
+                    break;
+                }
+            }
+        }
+        double deepest = extents.Count == 0 ? section.CortexNm : extents.Max(extent => extent.BottomNm);
+        if (deepest > section.DepthNm + SectionBuilder.TouchingNm)
+            yield return Problem(extents[^1].Layer, "bodies reach into the backing", deepest - section.DepthNm);
+    }
+
+    private static AnatomyProblem Problem(int layer, string what, double missingNm)
+        => new(FormattableString.Invariant($"layer{layer}.gap"), FormattableString.Invariant($"found a gap too small, {what}; allowed at least {Math.Ceiling(missingNm * 1000) / 1000:0.###} nm more"));
+
+    /// <summary>How much deeper the lower layer would have to lie, in nm; 0 or less when they are clear.</summary>
+    private static double MissingNm(Extent upper, Extent lower)
+    {
+        if (upper.BottomNm <= lower.TopNm)
+            return 0;
+        double missingNm = 0;
+        foreach (Slab above in upper.Slabs)
+        {
+            foreach (Slab below in lower.Slabs)
+            {
+                if (above.BottomNm > below.TopNm && below.BottomNm > above.TopNm)
+                    missingNm = Math.Max(missingNm, MissingNm(upper.Run, above, lower.Run, below));
+                else if (below.BottomNm <= above.TopNm)
+                    missingNm = Math.Max(missingNm, above.BottomNm - below.TopNm);
+            }
+        }
+        return missingNm;
+    }
+
+    private static double MissingNm(SectionRun? upper, Slab above, SectionRun? lower, Slab below)
+    {
+        if (upper is null || lower is null)
+            return above.BottomNm - below.TopNm;
+        double? period = CommonPeriod.Of(upper.SpacingNm, lower.SpacingNm);
+        double needed = double.NegativeInfinity;
+        foreach (CellBody first in upper.Cell)
+        {
+            foreach (CellBody second in lower.Cell)
+                needed = Math.Max(needed, NeededNm(first, second, upper.SpacingNm, lower.SpacingNm, below.ShiftNm - above.ShiftNm, period));
+        }
+        return needed - (below.CentreNm - above.CentreNm);
+    }
+
+    private static double NeededNm(CellBody first, CellBody second, double upperSpacingNm, double lowerSpacingNm, double shiftNm, double? periodNm)
+    {
+        if (periodNm is not double period)
+            return first.BottomNm - second.TopNm;
+        double needed = double.NegativeInfinity;
+        int upperCells = (int)Math.Round(period / upperSpacingNm), lowerCells = (int)Math.Round(period / lowerSpacingNm);
+        for (int i = 0; i < upperCells; i++)
+        {
+            for (int j = 0; j < lowerCells; j++)
+                needed = Math.Max(needed, RowNesting.LeastDepthNm(first, second, shiftNm + j * lowerSpacingNm - i * upperSpacingNm, period, -SectionBuilder.TouchingNm));
+        }
+        return needed;
+    }
+
+    private readonly record struct Slab(double TopNm, double BottomNm, double CentreNm, double ShiftNm);
+
+    private sealed class Extent
+    {
+        public Extent(SectionRun run)
+        {
+            Layer = run.LayerNumber;
+            Run = run;
+            Slabs = [.. run.Rows.Select(row => new Slab(row.CentreNm + run.CellTopNm, row.CentreNm + run.CellBottomNm, row.CentreNm, row.ShiftNm))];
+        }
+
+        public Extent(IReadOnlyList<SectionFilm> films)
+        {
+            Layer = films[0].LayerNumber;
+            Slabs = [.. films.Select(film => new Slab(film.TopNm, film.BottomNm, film.TopNm, 0))];
+        }
+
+        public int Layer { get; }
+
+        public SectionRun? Run { get; }
+
+        public IReadOnlyList<Slab> Slabs { get; }
+
+        public double TopNm => Slabs[0].TopNm;
+
+        public double BottomNm => Slabs[^1].BottomNm;
+    }
+}
