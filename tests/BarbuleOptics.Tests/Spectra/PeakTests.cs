@@ -6,7 +6,8 @@ namespace BarbuleOptics.Tests.Spectra;
 
 public class PeakTests
 {
-    // The center of a Gaussian is where its formula says. Largest error over all places between samples: 0.0019 nm at sd 5 nm.
+    // The center of a Gaussian is where its formula says. Largest error over all places between samples: 0.0019 nm and, of the height,
+    // 4.5e-5 at sd 5 nm.
     [Theory]
     [InlineData(450, 5)]
     [InlineData(450.25, 5)]
@@ -19,7 +20,7 @@ public class PeakTests
         SpectralPeak peak = Assert.Single(Gaussian(centreNm, sdNm, 1).Peaks);
 
         Assert.Equal(centreNm, peak.WavelengthNm, 0.0025);
-        Assert.Equal(0.4, peak.Reflectance, 4e-5);
+        Assert.Equal(0.4, peak.Reflectance, 5e-5);
     }
 
     // Full width at half maximum of a Gaussian: 2 sqrt(2 ln 2) sd (textbook). Its feet are at 0, so that both widths agree.
@@ -52,13 +53,14 @@ public class PeakTests
     }
 
     // R = a + b cos(2 pi (x - x0)/P): prominence 2 b; at half of it the width is P/2; the valleys a - b lie above half the height.
+    // The top at 303.3 nm stands only .0021 above the grid's end at 300 nm, less than 1 % of .6: no peak.
     [Fact]
     public void A_ripple_on_a_high_base_has_no_half_height_width()
     {
         SpectrumFeatures features = SpectrumFeatures.Of(Sampled.Over(300, 700, 1, x => 0.5 + 0.1 * Math.Cos(2 * Math.PI * (x - 503.3) / 100)));
         SpectralPeak peak = features.Peaks.Single(p => Math.Abs(p.WavelengthNm - 503.3) < 1);
 
-        Assert.Equal([303.3, 403.3, 503.3, 603.3], features.Peaks.Select(p => p.WavelengthNm).Order(), (a, b) => Math.Abs(a - b) < 1e-3);
+        Assert.Equal([403.3, 503.3, 603.3], features.Peaks.Select(p => p.WavelengthNm).Order(), (a, b) => Math.Abs(a - b) < 1e-3);
         Assert.Equal(0.2, peak.Prominence, 1e-4);
         Assert.Null(peak.HalfHeightWidthNm);
         Assert.Equal(50, peak.HalfProminenceWidthNm!.Value, 0.01);

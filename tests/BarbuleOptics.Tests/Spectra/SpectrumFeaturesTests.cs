@@ -35,7 +35,7 @@ public class SpectrumFeaturesTests
     [Theory]
     [InlineData(300, 700, 1)]
     [InlineData(300, 780, 7)]
-    [InlineData(299.3, 701, 2.5)]
+    [InlineData(299.3, 702, 2.5)]
     public void A_ramp_has_its_integrals_on_any_grid_that_covers_it(double startNm, double stopNm, double stepNm)
     {
         SpectrumFeatures features = SpectrumFeatures.Of(Sampled.Over(startNm, stopNm, stepNm, x => (x - 300) / 400));
