@@ -34,7 +34,7 @@ internal sealed class LayerReader(MaterialReader materials, ReadingLog log)
         MeasuredLength? gap = reader.Has("gap") ? LengthReader.Read(reader, "gap", LengthReader.Signed, log) : MeasuredLength.FromNanometres(0);
         if (bodies is null || rows is null || gap is null)
             return null;
-        if (bodies[0].Form is MelanosomeForm.Film film && depth is { BetweenSurfaces: false } && depth.Distance.CentralNm < film.Thickness.CentralNm)
+        if (bodies[0].Form is MelanosomeForm.Film film && depth is { BetweenSurfaces: false } && depth.Distance.CentralNm < film.Thickness.CentralNm - LengthReader.TouchingNm)
             reader.Refuse("pitch", $"found {OneLine.Number(depth.Distance.CentralNm)}; allowed the thickness or above, {OneLine.Number(film.Thickness.CentralNm)}");
         return new BarbuleLayer(bodies, lateral, rows, depth, stacking, shift, gap);
     }
@@ -103,7 +103,7 @@ internal sealed class LayerReader(MaterialReader materials, ReadingLog log)
         if (packing is { BetweenSurfaces: false } && bodies is not null)
         {
             double width = bodies.Max(body => FormReader.WidthNm(body.Form) ?? 0);
-            if (packing.Distance.CentralNm < width)
+            if (packing.Distance.CentralNm < width - LengthReader.TouchingNm)
                 reader.Refuse("spacing", $"found {OneLine.Number(packing.Distance.CentralNm)}; allowed the width or above, {OneLine.Number(width)}");
         }
         return packing;

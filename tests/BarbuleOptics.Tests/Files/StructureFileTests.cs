@@ -82,7 +82,7 @@ public sealed class StructureFileTests
     {
         LoadedStructure loaded = StructureTexts.Good(StructureTexts.Rods.Replace("rows     = 4", "rows     = 1"));
         FileNote note = Assert.Single(loaded.Notes);
-        Assert.Equal((FileNote.PitchIgnored, "layer1.pitch", 19, 12), (note.Code, note.Key, note.Location.Line, note.Location.Column));
+        Assert.Equal((FileNote.PitchIgnored, "layer1.pitch", 20, 12), (note.Code, note.Key, note.Location.Line, note.Location.Column));
         Assert.Null(loaded.Barbule.Layers[0].Depth);
     }
 
@@ -106,10 +106,10 @@ public sealed class StructureFileTests
         => Assert.Equal(StructureTexts.Good(StructureTexts.Mixed).Barbule, StructureTexts.Good(StructureTexts.Mixed.Replace("\n", "\r\n")).Barbule);
 
     [Theory]
-    [InlineData("layer1.spacing", 17, 12)]
-    [InlineData("layer1.lumen", 16, 12)]
+    [InlineData("layer1.spacing", 18, 12)]
+    [InlineData("layer1.lumen", 17, 12)]
     [InlineData("cortex.thickness", 11, 13)]
-    [InlineData("layer1.material.n", 14, 12)]
+    [InlineData("layer1.material.n", 15, 12)]
     [InlineData("layer1.shift", 13, 1)]
     [InlineData("barbule", 4, 1)]
     [InlineData("layer7.spacing", 0, 0)]
