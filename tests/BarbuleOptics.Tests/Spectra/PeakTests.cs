@@ -88,14 +88,29 @@ public class PeakTests
         Assert.Equal(407.5 - 404.75, features.Peaks[2].HalfProminenceWidthNm!.Value, 1e-12);
     }
 
-    [Fact]
-    public void The_search_for_a_width_ends_at_the_valley_before_the_next_peak()
+    // Falls to .3 before the next peak and to 0 behind it: half of the height, .25, is not this peak's to reach.
+    [Theory]
+    [InlineData(false)]
+    [InlineData(true)]
+    public void The_search_for_a_width_ends_at_the_valley_before_the_next_peak(bool mirrored)
     {
-        // Falls to .3 before the next peak and to 0 behind it: half of the height, .25, is not this peak's to reach.
-        SpectrumFeatures features = SpectrumFeatures.Of(Sampled.From(400, 0, .2, .5, .4, .3, .4, .45, .4, .2, 0));
+        double[] values = [0, .2, .5, .4, .3, .4, .45, .4, .2, 0];
+        SpectrumFeatures features = SpectrumFeatures.Of(Sampled.From(400, mirrored ? [.. values.Reverse()] : values));
 
+        Assert.Equal(2, features.Peaks.Count);
         Assert.Null(features.Peaks[0].HalfHeightWidthNm);
-        Assert.Contains(features.Peaks, p => p.WavelengthNm > 405);
+    }
+
+    // The vertex, .05/1.3 nm left of 502 nm and (capped) 1 high, starts both searches: to (501, .4) on the left, to (502, 1) and
+    // (503, .3) on the right.
+    [Fact]
+    public void A_sharp_peak_is_measured_from_its_vertex()
+    {
+        SpectralPeak peak = Assert.Single(SpectrumFeatures.Of(Sampled.From(500, 0, .4, 1, .3, 0)).Peaks);
+        double vertexNm = 502 - .05 / 1.3;
+
+        Assert.Equal(vertexNm, peak.WavelengthNm, 1e-9);
+        Assert.Equal(502 + .5 / .7 - (vertexNm - (vertexNm - 501) * .5 / .6), peak.HalfHeightWidthNm!.Value, 1e-9);
     }
 
     [Fact]

@@ -39,9 +39,10 @@ public class PeakTrackTests
     public void A_ripple_beside_the_peak_does_not_take_its_place()
     {
         PeakTrack track = PeakTrack.Follow(Views([0, 30], (angle, x) =>
-            0.4 * Sampled.Gaussian(x, Law(600, 1.4, 1, angle), 10) + (angle > 0 ? 0.01 * Sampled.Gaussian(x, Law(600, 1.55, 1, angle), 2) : 0)));
+            0.4 * Sampled.Gaussian(x, Law(600, 1.3, 1, angle), 3) + (angle > 0 ? 0.01 * Sampled.Gaussian(x, Law(600, 1.55, 1, angle), 2) : 0)));
 
-        Assert.Equal(Law(600, 1.4, 1, 30), track.Sightings[1].Peak!.WavelengthNm, 0.5);
+        Assert.Equal(Law(600, 1.3, 1, 30), track.Sightings[1].Peak!.WavelengthNm, 0.1);
+        Assert.True(track.Sightings[1].Peak!.Prominence > 0.3);
     }
 
     [Fact]
@@ -65,13 +66,25 @@ public class PeakTrackTests
         Assert.Equal(560, track.Shift!.NormalWavelengthNm, 0.05);
     }
 
-    // First views so close that their shift, 0.015 nm, drowns in the peaks' error: the next step is 60 degrees.
+    // First views so close that their shift, 0.015 nm, drowns in the error of reading; the next step is 60 degrees.
     [Fact]
     public void Angles_close_together_do_not_mislead_the_next_step()
     {
-        PeakTrack track = PeakTrack.Follow(Views([0, 0.5, 0.7, 60], (angle, x) => 0.5 * Sampled.Gaussian(x, Law(560.37, 1.6, 1, angle), 4)));
+        double[] centresNm = [560, 560.03, 559.98, Law(560, 1.6, 1, 60)];
+        double[] anglesDeg = [0, 0.5, 0.7, 60];
+        PeakTrack track = PeakTrack.Follow(Views(anglesDeg, (angle, x) => 0.5 * Sampled.Gaussian(x, centresNm[Array.IndexOf(anglesDeg, angle)], 6)));
 
-        Assert.Equal(Law(560.37, 1.6, 1, 60), track.Sightings[3].Peak!.WavelengthNm, 0.05);
+        Assert.Equal(centresNm[3], track.Sightings[3].Peak!.WavelengthNm, 0.05);
+    }
+
+    [Theory]
+    [InlineData(1.35)]
+    [InlineData(2.2)]
+    public void A_first_step_of_sixty_degrees_is_bridged(double index)
+    {
+        PeakTrack track = PeakTrack.Follow(Views([0, 60], (angle, x) => 0.5 * Sampled.Gaussian(x, Law(640, index, 1, angle), 15)));
+
+        Assert.Equal(index, track.EffectiveIndex!.Value, 1e-3);
     }
 
     [Fact]
