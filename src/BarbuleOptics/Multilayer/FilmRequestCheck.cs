@@ -1,0 +1,42 @@
+using BarbuleOptics.Layering;
+using BarbuleOptics.Quantities;
+
+namespace BarbuleOptics.Multilayer;
+
+/// <summary>Checks of a call on a film solver, the same for every one of them.</summary>
+internal static class FilmRequestCheck
+{
+    /// <summary>Throws when the call cannot be answered.</summary>
+    public static void Check(FilmStack stack, in SolverRequest request, FilmWorkspace workspace, in SolverResponse response)
+    {
+        ArgumentNullException.ThrowIfNull(stack);
+        ArgumentNullException.ThrowIfNull(workspace);
+        CheckRequest(stack, request);
+        if (!workspace.Holds(stack))
+            throw new ArgumentException("The workspace was made for a smaller stack.", nameof(workspace));
+        CheckResponse(stack, request, response);
+    }
+
+    private static void CheckRequest(FilmStack stack, in SolverRequest request)
+    {
+        int wavelengths = stack.WavelengthsNm.Length;
+        if (request.First < 0 || request.Count < 0 || request.First > wavelengths - request.Count)
+            throw new ArgumentOutOfRangeException(nameof(request), FormattableString.Invariant(
+                $"Wavelengths {request.First} to {(long)request.First + request.Count - 1} are not all among the {wavelengths} of the stack."));
+        if (!(request.Incidence.Degrees is >= 0 and < 90))
+            throw new ArgumentOutOfRangeException(nameof(request), request.Incidence.Degrees, "The angle of incidence must be 0 to below 90 degrees.");
+        if (request.Polarization is not (Polarizations.S or Polarizations.P or Polarizations.Unpolarized))
+            throw new ArgumentException(FormattableString.Invariant($"The polarization must be S, P or both, not {request.Polarization}."), nameof(request));
+    }
+
+    private static void CheckResponse(FilmStack stack, in SolverRequest request, in SolverResponse response)
+    {
+        Guard.SameLength(request.Count, response.Reflectance.Length, nameof(response));
+        if (request.Outputs.HasFlag(SolverOutputs.Transmittance))
+            Guard.SameLength(request.Count, response.Transmittance.Length, nameof(response));
+        if (request.Outputs.HasFlag(SolverOutputs.Absorptance))
+            Guard.SameLength(request.Count, response.Absorptance.Length, nameof(response));
+        if (!response.FilmAbsorptance.IsEmpty)
+            Guard.SameLength(checked(stack.FilmCount * request.Count), response.FilmAbsorptance.Length, nameof(response));
+    }
+}

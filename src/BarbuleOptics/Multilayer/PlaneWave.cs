@@ -1,0 +1,23 @@
+namespace BarbuleOptics.Multilayer;
+
+/// <summary>What every medium of a stack sees of the light: one wavelength, one direction, s or p.</summary>
+/// <param name="SurroundIndex">Real index n0 of the surround.</param>
+/// <param name="Sine">Sine of the angle of incidence.</param>
+/// <param name="Cosine">Cosine of the angle of incidence.</param>
+/// <param name="IsP">Whether the magnetic field lies along y; otherwise the electric field does.</param>
+internal readonly record struct PlaneWave(double SurroundIndex, double Sine, double Cosine, bool IsP)
+{
+    /// <summary>(kx/k0)^2, the same in all media.</summary>
+    public double LateralSquared => SurroundIndex * SurroundIndex * (Sine * Sine);
+
+    /// <summary>Admittance of the surround, in the units of <see cref="MediumWave.Admittance"/>.</summary>
+    public double SurroundAdmittance => IsP ? Cosine / SurroundIndex : SurroundIndex * Cosine;
+
+    /// <summary><paramref name="permittivity"/> - (kx/k0)^2.</summary>
+    /// <remarks>Written as (e - n0^2) + (n0 cos)^2: near grazing incidence a medium much like the surround keeps its digits.</remarks>
+    public double MinusLateralSquared(double permittivity)
+    {
+        double normal = SurroundIndex * Cosine;
+        return Math.FusedMultiplyAdd(-SurroundIndex, SurroundIndex, permittivity) + normal * normal;
+    }
+}

@@ -1,0 +1,72 @@
+using BarbuleOptics.Layering;
+
+namespace BarbuleOptics.Multilayer;
+
+/// <summary>Reflectance, transmittance and absorptance of plane uniaxial or biaxial films by field recursion, in double precision.</summary>
+/// <remarks>
+/// The readable definition of the film solver. Equations stand in <see cref="MediumWave"/> (media), <see cref="FilmStep"/> (one film),
+/// <see cref="TangentialField"/> (recursion), <see cref="Entrance"/> (reflection), <see cref="SlabAverage"/> (incoherent back).
+/// Works for any thickness, any absorption, grazing angles and total reflection, for nothing that grows is formed.
+/// R + T + A = 1 within 1e-12 with A the integral of the fields and no remainder.
+/// The absorptance and the transmittance of an <see cref="IncoherentBack"/> count the slab: A includes its loss, T is the flux into what lies behind.
+/// </remarks>
+public sealed class ReferenceFilmSolver : ISpectralSolver<FilmStack, FilmWorkspace>
+{
+    /// <summary>Bound of the rounding error of a stack of moderate thickness, found by closure and by comparison in long arithmetic.</summary>
+    private const double RoundingError = 1e-12;
+
+    /// <inheritdoc/>
+    public FilmWorkspace CreateWorkspace(FilmStack structure)
+    {
+        ArgumentNullException.ThrowIfNull(structure);
+        return new FilmWorkspace(structure.FilmCount, structure.Media.MediumCount);
+    }
+
+    /// <inheritdoc/>
+    /// <exception cref="ArgumentException">A span that is to be filled has the wrong length, no polarization is asked for, or the workspace is too small.</exception>
+    /// <exception cref="ArgumentOutOfRangeException">The block lies outside the stack's wavelengths, or the angle outside 0 to below 90 degrees.</exception>
+    public double Solve(FilmStack structure, in SolverRequest request, FilmWorkspace workspace, in SolverResponse response)
+    {
+        FilmRequestCheck.Check(structure, request, workspace, response);
+        Clear(request, response);
+        bool both = request.Polarization == Polarizations.Unpolarized;
+        (double sine, double cosine) = Math.SinCos(request.Incidence.Radians);
+        for (int i = 0; i < request.Count; i++)
+        {
+            int wavelength = request.First + i;
+            double index = structure.SurroundIndex[wavelength];
+            if (request.Polarization.HasFlag(Polarizations.S))
+                Add(structure, wavelength, new PlaneWave(index, sine, cosine, IsP: false), workspace, both ? 0.5 : 1, i, request, response);
+            if (request.Polarization.HasFlag(Polarizations.P))
+                Add(structure, wavelength, new PlaneWave(index, sine, cosine, IsP: true), workspace, both ? 0.5 : 1, i, request, response);
+        }
+        return RoundingError;
+    }
+
+    private static void Clear(in SolverRequest request, in SolverResponse response)
+    {
+        response.Reflectance.Clear();
+        response.DiffractedReflectance.Clear();
+        response.FilmAbsorptance.Clear();
+        if (request.Outputs.HasFlag(SolverOutputs.Transmittance))
+            response.Transmittance.Clear();
+        if (request.Outputs.HasFlag(SolverOutputs.Absorptance))
+            response.Absorptance.Clear();
+    }
+
+    private static void Add(
+        FilmStack stack, int wavelength, in PlaneWave light, FilmWorkspace work, double weight, int at, in SolverRequest request,
+        in SolverResponse response)
+    {
+        PowerBalance power = FilmRecursion.Solve(stack, wavelength, light, work);
+        response.Reflectance[at] += weight * power.Reflected;
+        if (request.Outputs.HasFlag(SolverOutputs.Transmittance))
+            response.Transmittance[at] += weight * power.Transmitted;
+        if (request.Outputs.HasFlag(SolverOutputs.Absorptance))
+            response.Absorptance[at] += weight * power.Lost;
+        if (response.FilmAbsorptance.IsEmpty)
+            return;
+        for (int film = 0; film < stack.FilmCount; film++)
+            response.FilmAbsorptance[film * request.Count + at] += weight * work.Lost[film];
+    }
+}
