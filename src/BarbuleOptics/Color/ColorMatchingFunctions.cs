@@ -3,8 +3,7 @@ namespace BarbuleOptics.Color;
 /// <summary>The color matching functions of an observer at 1 nm from 360 to 780 nm, from the 5 nm table by Sprague's interpolation.</summary>
 /// <remarks>
 /// Against the 1 nm table of the standard (as read out of spec2cie) the interpolated values are within 5e-4 (1931) and 3.4e-3 (1964, worst
-/// at 422 and 488 nm, where the standard's own 1 nm values are not smooth). For a reflectance band of 5 nm or wider this
-/// is below 0.005 in XYZ.
+/// at 422 and 488 nm, where the standard's own 1 nm values are not smooth). What this does to colors is said at <see cref="Colorimeter"/>.
 /// </remarks>
 internal sealed class ColorMatchingFunctions
 {

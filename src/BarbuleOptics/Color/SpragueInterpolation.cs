@@ -6,8 +6,9 @@ namespace BarbuleOptics.Color;
 /// <remarks>
 /// The polynomial through six neighbours whose first and second derivative are continuous at the samples. The interpolant is linear in
 /// the samples, so that it is given here as the weights of the samples. Beyond either end the two samples it lacks are the linear
-/// combinations of the six nearest ones that CIE 167:2005 prints. Exact for polynomials up to the fourth degree.
-/// Coefficients from memory; the polynomial tests decide whether they are right.
+/// combinations of the six nearest ones that CIE 167:2005 prints. Exact for polynomials up to the fourth degree, in the last two steps
+/// before an end for straight lines only, since the end formulas reflect the curve through its end point.
+/// Coefficients from memory; polynomials in the tests decide whether they are right.
 /// </remarks>
 internal static class SpragueInterpolation
 {
