@@ -28,7 +28,7 @@ public class FringeTests
     }
 
     // Height F/(1+F) = ((1-n^2)/(1+n^2))^2, .169906 for n = 1.55; zeros between fringes, so half height and half prominence agree:
-    // sin^2(b) = 1/(2+F), that is lambda = 2 n d / (m + 1/2 -+ (1/2 - asin(1/sqrt(2+F))/pi)). Linear crossings: error below 0.02 nm.
+    // sin^2(b) = 1/(2+F), that is lambda = 2 n d / (m + 1/2 -+ (1/2 - asin(1/sqrt(2+F))/pi)). Linear crossings at 1 nm: error below 0.001 nm.
     [Fact]
     public void A_fringe_has_its_height_and_width_in_closed_form()
     {
@@ -39,7 +39,7 @@ public class FringeTests
 
         Assert.Equal(0.169906, peak.Reflectance, 1e-6);
         Assert.Equal(0.1699, peak.Prominence, 5e-5);
-        Assert.Equal(path / (order - half) - path / (order + half), peak.HalfHeightWidthNm!.Value, 0.02);
+        Assert.Equal(path / (order - half) - path / (order + half), peak.HalfHeightWidthNm!.Value, 0.002);
         Assert.Equal(peak.HalfHeightWidthNm!.Value, peak.HalfProminenceWidthNm!.Value, 0.05);
     }
 
