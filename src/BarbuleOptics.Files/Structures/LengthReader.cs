@@ -105,7 +105,8 @@ internal static class LengthReader
             log.Refuse(list.Location, path, $"found {list.Found}; allowed {Lists}");
             return null;
         }
-        if (list.Items.All(item => item is TomlNumber))
+        // What the first item is, all are meant to be.
+        if (list.Items[0] is not TomlArray)
             return Numbers(list, path, range, log) is { } values ? new MeasuredLength.Replicates(values) : null;
         if (list.Items.FirstOrDefault(item => item is not TomlArray { Items.Count: > 0 }) is { } odd)
         {

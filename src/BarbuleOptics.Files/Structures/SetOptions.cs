@@ -33,7 +33,7 @@ internal static class SetOptions
         {
             if (Descend(table, name, at) is not { } inner)
             {
-                log.Refuse(at, path, $"there is no {table.PathOf(name)}{TableReader.Suggestion(name, Parts(table))}; there is {string.Join(", ", Parts(table))}");
+                log.Refuse(at, path, WhyNot(table, name));
                 return;
             }
             table = inner;
@@ -75,12 +75,13 @@ internal static class SetOptions
     private static IEnumerable<TomlTable> Numbered(TomlTable table)
         => table.Entries.Select(entry => entry.Value).OfType<TomlArray>().SelectMany(list => list.Items).OfType<TomlTable>();
 
-    // What a name may be followed by, for the message.
-    private static string[] Parts(TomlTable table)
+    private static string WhyNot(TomlTable table, string name)
     {
-        IEnumerable<string> items = Numbered(table).Select(item => item.Path[(table.Path.Length == 0 ? 0 : table.Path.Length + 1)..]);
-        string[] parts = [.. table.Path.Length == 0 ? Sections : [], .. items];
-        return parts.Length > 0 ? parts : ["nothing within it"];
+        bool isFile = table.Path.Length == 0;
+        string[] parts = [.. isFile ? Sections : [], .. Numbered(table).Select(item => item.Path[(isFile ? 0 : table.Path.Length + 1)..])];
+        return table.TryGet(name, out TomlEntry? entry) && entry.Value is not TomlArray { IsOfHeaders: true }
+            ? $"{table.PathOf(name)} is {entry.Value.Found} and has no keys of its own"
+            : $"there is no {table.PathOf(name)}{TableReader.Suggestion(name, parts)}{(parts.Length > 0 ? $"; there is {string.Join(", ", parts)}" : "")}";
     }
 
     private static bool IsName(string name) => name.Length > 0 && name.All(c => char.IsAsciiLetterOrDigit(c) || c is '_' or '-');

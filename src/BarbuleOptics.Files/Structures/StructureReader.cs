@@ -27,7 +27,7 @@ internal sealed class StructureReader(MaterialReader materials, ReadingLog log)
     {
         var reader = new TableReader(root, log);
         CheckFormat(reader, log);
-        reader.RefuseOthers(TopKeys, key => key is "layers" or "bodies" or "body" ? "is no key of the file; did you mean [[layer]]?" : null);
+        reader.RefuseOthers(TopKeys, key => key is "layers" or "bodies" or "body" ? "is no key of the file; did you mean [[layer]]" : null);
         string name = reader.Text("name") ?? defaultName;
         TableReader section = reader.Inner("barbule") ?? new TableReader(new TomlTable("barbule", TableOrigin.Implicit, root.Location), log);
         section.RefuseOthers(BarbuleKeys);

@@ -118,9 +118,9 @@ internal sealed class TableReader
         }
     }
 
-    /// <summary>"; did you mean …?" where a word comes near, otherwise nothing.</summary>
+    /// <summary>"; did you mean …" where a word comes near, otherwise nothing.</summary>
     public static string Suggestion(string? word, IEnumerable<string> words)
-        => word is not null && NearMiss.Find(word, words) is { } near ? $"; did you mean \"{near}\"?" : "";
+        => word is not null && NearMiss.Find(word, words) is { } near ? $"; did you mean \"{near}\"" : "";
 
     public static string Quoted(IEnumerable<string> words) => string.Join(", ", words.Select(word => $"\"{word}\""));
 }

@@ -1,0 +1,122 @@
+namespace BarbuleOptics.Files;
+
+/// <summary>Writes a set of files into a folder, all of them or none.</summary>
+/// <remarks>
+/// Each file is written under a temporary name in the folder itself and flushed to the disk; only when all are complete do they take
+/// their names, one rename each. A fault or a cancellation up to then leaves nothing behind, and one among the renames puts
+/// back what was there before. Only a loss of power between two renames can leave a part of the set.
+/// </remarks>
+public static class OutputFolder
+{
+    /// <summary>Writes <paramref name="files"/> into <paramref name="folder"/>, which is made if it is not there.</summary>
+    /// <param name="folder">As the user named it; messages repeat it.</param>
+    /// <param name="files">What to write, each under a name of its own.</param>
+    /// <param name="force">Whether files that are there are replaced; otherwise they are refused before anything is written.</param>
+    /// <param name="cancellation">Ends the writing with nothing left behind; no longer heeded once the renames begin.</param>
+    /// <exception cref="OutputException">The output cannot be written.</exception>
+    /// <exception cref="OperationCanceledException">Cancelled.</exception>
+    /// <exception cref="ArgumentException">Two files have one name, letter case aside.</exception>
+    public static void Write(string folder, IReadOnlyList<OutputFile> files, bool force, CancellationToken cancellation = default)
+    {
+        ArgumentException.ThrowIfNullOrEmpty(folder);
+        ArgumentNullException.ThrowIfNull(files);
+        if (files.DistinctBy(file => file.Name, StringComparer.OrdinalIgnoreCase).Count() < files.Count)
+            throw new ArgumentException("Must have names that differ.", nameof(files));
+        cancellation.ThrowIfCancellationRequested();
+        RefuseExisting(folder, files, force);
+        using var undo = new Undo();
+        Guarded(folder, () => MakeFolder(folder, undo));
+        List<(string Temporary, string Final)> written = [];
+        foreach (OutputFile file in files)
+        {
+            cancellation.ThrowIfCancellationRequested();
+            string final = Path.Combine(folder, file.Name);
+            string temporary = Path.Combine(folder, $".{file.Name}.{Path.GetRandomFileName()}.tmp");
+            Guarded(final, () => WriteTemporary(temporary, file, undo));
+            written.Add((temporary, final));
+        }
+        cancellation.ThrowIfCancellationRequested();
+        List<string> replaced = [];
+        foreach ((string temporary, string final) in written)
+            Guarded(final, () => Rename(temporary, final, force, replaced, undo));
+        undo.Forget();
+        foreach (string path in replaced)
+            DeleteQuietly(path);
+    }
+
+    private static void RefuseExisting(string folder, IReadOnlyList<OutputFile> files, bool force)
+    {
+        if (File.Exists(folder))
+            throw new OutputException(OutputFault.NotWritable, $"{OneLine.Escape(folder)}: is a file, not a folder");
+        foreach (string path in files.Select(file => Path.Combine(folder, file.Name)))
+        {
+            if (Directory.Exists(path))
+                throw new OutputException(OutputFault.NotWritable, $"{OneLine.Escape(path)}: is a folder, where a file is to be written");
+            if (!force && File.Exists(path))
+                throw new OutputException(OutputFault.Exists, $"{OneLine.Escape(path)}: exists; --force replaces it");
+        }
+    }
+
+    private static void MakeFolder(string folder, Undo undo)
+    {
+        Stack<string> missing = [];
+        for (string? path = Path.GetFullPath(folder); path is not null && !Directory.Exists(path); path = Path.GetDirectoryName(path))
+            missing.Push(path);
+        foreach (string path in missing)
+        {
+            Directory.CreateDirectory(path);
+            undo.Add(() => Directory.Delete(path));
+        }
+    }
+
+    private static void WriteTemporary(string temporary, OutputFile file, Undo undo)
+    {
+        undo.Add(() => File.Delete(temporary));
+        using FileStream stream = new(temporary, FileMode.CreateNew, FileAccess.Write, FileShare.None);
+        file.WriteTo(stream);
+        stream.Flush(flushToDisk: true);
+    }
+
+    // What was there waits under another name until every file is in place.
+    private static void Rename(string temporary, string final, bool force, List<string> replaced, Undo undo)
+    {
+        if (force && File.Exists(final))
+        {
+            string aside = temporary + ".old";
+            File.Move(final, aside);
+            undo.Add(() => File.Move(aside, final, overwrite: true));
+            replaced.Add(aside);
+        }
+        File.Move(temporary, final);
+        undo.Add(() => File.Delete(final));
+    }
+
+    private static void Guarded(string path, Action action)
+    {
+        try
+        {
+            action();
+        }
+        catch (OutputException)
+        {
+            throw;
+        }
+        catch (Exception e) when (e is IOException or UnauthorizedAccessException or NotSupportedException)
+        {
+            throw Translate(path, e);
+        }
+    }
+
+    private static OutputException Translate(string path, Exception cause)
+    {
+        // 28 is ENOSPC, 122 EDQUOT (Linux), 69 EDQUOT (macOS); 0x80070027 and 0x80070070 are Windows' two kinds of a full disk.
+        bool isFull = cause is IOException && cause.HResult is 28 or 122 or 69 or unchecked((int)0x80070027) or unchecked((int)0x80070070);
+        if (isFull)
+            return new OutputException(OutputFault.DiskFull, $"{OneLine.Escape(path)}: no space is left on the disk", cause);
+        return File.Exists(path) && cause is IOException
+            ? new OutputException(OutputFault.Exists, $"{OneLine.Escape(path)}: exists; --force replaces it", cause)
+            : new OutputException(OutputFault.NotWritable, $"{OneLine.Escape(path)}: cannot be written: {OneLine.Escape(cause.Message)}", cause);
+    }
+
+    private static void DeleteQuietly(string path) => Undo.Quietly(() => File.Delete(path));
+}
