@@ -45,9 +45,11 @@ internal static class TomlDocument
             // Keys written twice are found while the tree is built: the parser's own check passes over those between braces.
             syntax = SyntaxParser.Parse(text, log.Source, validate: false);
         }
-        catch (TomlException e)
+        catch (Exception e) when (e is TomlException or ArgumentException or InvalidOperationException or IndexOutOfRangeException or FormatException or OverflowException)
         {
-            log.Refuse(SourceLocation.Whole(log.Source), null, $"is not valid TOML: {e.Message}");
+            // The parser throws on some damaged texts instead of reporting them.
+            string reason = e is TomlException ? e.Message : "it breaks off, as within an escape such as \\u00E9";
+            log.Refuse(SourceLocation.Whole(log.Source), null, $"is not valid TOML: {reason}");
             return null;
         }
         LogDiagnostics(syntax, text, log);

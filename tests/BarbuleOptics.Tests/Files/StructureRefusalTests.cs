@@ -238,6 +238,11 @@ public sealed class StructureRefusalTests
         Assert.Equal(new SourceLocation("throat.toml", line, column), Assert.Single(StructureTexts.Read(text).Problems).Location);
     }
 
+    // Found by random changes: the parser throws here instead of reporting.
+    [Fact]
+    public void A_file_that_breaks_off_within_an_escape_is_refused()
+        => Assert.Contains("not valid TOML", Assert.Single(StructureTexts.Read("format = 1\nname = \"\\u").Problems).Message);
+
     [Theory]
     [InlineData("{0} = 1")]
     [InlineData("[{0}]")]
