@@ -1,0 +1,110 @@
+namespace BarbuleOptics.Layering;
+
+/// <summary>The section from the surface down as intervals; equal ones are kept once and named by number.</summary>
+public sealed class DepthProfile
+{
+    /// <summary>Edges closer than this, in nm, are one edge: touching bodies leave no film between them.</summary>
+    private const double SameEdgeNm = 1e-6;
+
+    private DepthProfile(Section section, IReadOnlyList<DepthInterval> kinds, IReadOnlyList<int> order)
+    {
+        Section = section;
+        Kinds = kinds;
+        Order = order;
+    }
+
+    /// <summary>The section.</summary>
+    public Section Section { get; }
+
+    /// <summary>Number of different intervals.</summary>
+    public int KindCount => Kinds.Count;
+
+    internal IReadOnlyList<DepthInterval> Kinds { get; }
+
+    /// <summary>Number of the kind of each interval, from the surface down.</summary>
+    internal IReadOnlyList<int> Order { get; }
+
+    /// <summary>Divides <paramref name="section"/> at every top and bottom of a body, a core or a film.</summary>
+    public static DepthProfile Of(Section section)
+    {
+        ArgumentNullException.ThrowIfNull(section);
+        double[] edges = Edges(section);
+        var kinds = new List<DepthInterval>();
+        var numbers = new Dictionary<string, int>();
+        var order = new List<int>();
+        for (int i = 0; i + 1 < edges.Length; i++)
+        {
+            DepthInterval interval = Between(section, edges[i], edges[i + 1]);
+            string key = interval.Key();
+            if (!numbers.TryGetValue(key, out int number))
+            {
+                number = numbers[key] = kinds.Count;
+                kinds.Add(interval);
+            }
+            order.Add(number);
+        }
+        return new DepthProfile(section, kinds, order);
+    }
+
+    private static double[] Edges(Section section)
+    {
+        var edges = new List<double> { 0, section.DepthNm };
+        foreach (SectionFilm film in section.Films)
+            edges.AddRange([film.TopNm, film.BottomNm]);
+        foreach (SectionRun run in section.Runs)
+        {
+            foreach (SectionRow row in run.Rows)
+            {
+                foreach (CellBody body in run.Cell)
+                {
+                    double centreNm = row.CentreNm + body.ZNm;
+                    edges.AddRange([centreNm - body.Outer.HalfHeightNm, centreNm + body.Outer.HalfHeightNm]);
+                    if (body.Core is Outline core)
+                        edges.AddRange([centreNm - core.HalfHeightNm, centreNm + core.HalfHeightNm]);
+                }
+            }
+        }
+        edges.Sort();
+        var distinct = new List<double>();
+        foreach (double edge in edges)
+        {
+            if (edge >= 0 && edge <= section.DepthNm && (distinct.Count == 0 || edge - distinct[^1] > SameEdgeNm))
+                distinct.Add(edge);
+        }
+        return [.. distinct];
+    }
+
+    private static DepthInterval Between(Section section, double topNm, double bottomNm)
+    {
+        double middleNm = (topNm + bottomNm) / 2;
+        int background = section.Films.FirstOrDefault(film => film.TopNm < middleNm && middleNm < film.BottomNm)?.Material ?? Section.Matrix;
+        var met = new List<(SectionRun Run, PlacedOutline Placed)>();
+        foreach (SectionRun run in section.Runs)
+        {
+            foreach (SectionRow row in run.Rows)
+            {
+                foreach (CellBody body in run.Cell)
+                {
+                    double centreNm = row.CentreNm + body.ZNm;
+                    if (Math.Abs(middleNm - centreNm) < body.Outer.HalfHeightNm)
+                        met.Add((run, new PlacedOutline(body, row.ShiftNm + body.XNm, centreNm - topNm)));
+                }
+            }
+        }
+        if (met.Count == 0)
+            return new DepthInterval(bottomNm - topNm, background, 1, []);
+        // Runs whose spacings have no common period never overlap in depth (LayerOverlap), so there is always one here.
+        double periodNm = CommonPeriod.Of(met.Select(item => item.Run))
+            ?? throw new ArgumentException("Rows without a common period share a depth.", nameof(section));
+        var bodies = new List<PlacedOutline>();
+        foreach ((SectionRun run, PlacedOutline placed) in met)
+        {
+            int images = (int)Math.Round(periodNm / run.SpacingNm);
+            for (int image = 0; image < images; image++)
+                bodies.Add(placed with { XNm = Wrap(placed.XNm + image * run.SpacingNm, periodNm) });
+        }
+        return new DepthInterval(bottomNm - topNm, background, periodNm, bodies);
+    }
+
+    private static double Wrap(double xNm, double periodNm) => xNm - periodNm * Math.Floor(xNm / periodNm);
+}

@@ -1,0 +1,42 @@
+using BarbuleOptics.Anatomy;
+using BarbuleOptics.Materials;
+using BarbuleOptics.Quantities;
+
+namespace BarbuleOptics.Prediction;
+
+/// <summary>Whether the materials of a structure have constants at the wavelengths asked for.</summary>
+internal static class MaterialCheck
+{
+    /// <summary>Every use of a material that has none, one problem each.</summary>
+    public static IEnumerable<AnatomyProblem> Find(Barbule barbule, WavelengthGrid grid, IMaterialCatalog catalog)
+    {
+        bool surround = true;
+        foreach (MaterialUse use in MaterialUse.Of(barbule))
+        {
+            string? fault = catalog.TryFind(use.Reference, out Material? material) ? Fault(material, grid, surround) : $"no material '{use.Reference}'";
+            if (fault is not null)
+                yield return new AnatomyProblem(use.Key, fault);
+            surround = false;
+        }
+    }
+
+    private static string? Fault(Material material, WavelengthGrid grid, bool mustBeLossless)
+    {
+        if (!material.Extrapolates && !material.Covers(grid))
+        {
+            return FormattableString.Invariant(
+                $"found wavelengths {grid.StartNm}-{grid.StopNm} nm; {material.Name} is a table that allows {material.LeastNm}-{material.MostNm} nm, narrow --wavelengths");
+        }
+        foreach (double wavelengthNm in grid.Nanometres)
+        {
+            double n = material.N.At(wavelengthNm), k = material.K.At(wavelengthNm);
+            if (!double.IsFinite(n) || n <= 0)
+                return FormattableString.Invariant($"{material.Name} has n = {n} at {wavelengthNm} nm; allowed above 0 (its formula was published for {material.LeastNm}-{material.MostNm} nm)");
+            if (!double.IsFinite(k) || k < 0)
+                return FormattableString.Invariant($"{material.Name} has k = {k} at {wavelengthNm} nm; allowed 0 or above (its formula was published for {material.LeastNm}-{material.MostNm} nm)");
+            if (mustBeLossless && k > 0)
+                return FormattableString.Invariant($"{material.Name} absorbs (k = {k:G4} at {wavelengthNm} nm); allowed a lossless surround, k = 0");
+        }
+        return null;
+    }
+}

@@ -1,0 +1,38 @@
+using BarbuleOptics.Color;
+using BarbuleOptics.Layering.Mixing;
+using BarbuleOptics.Multilayer;
+using BarbuleOptics.Quantities;
+
+namespace BarbuleOptics.Prediction;
+
+/// <summary>How a structure is looked at.</summary>
+public sealed record PredictionConditions
+{
+    /// <summary>Vacuum wavelengths; 300 to 780 nm in steps of 1 nm unless set.</summary>
+    public WavelengthGrid Wavelengths { get; init; } = WavelengthGrid.FromRange(
+        Length.FromNanometres(300), Length.FromNanometres(780), Length.FromNanometres(1));
+
+    /// <summary>Angles of incidence in the surround, each 0 to below 90 degrees; normal incidence unless set.</summary>
+    public ValueList<Angle> Incidences { get; init; } = [Angle.FromDegrees(0)];
+
+    /// <summary>Polarization of the incident light that views and colors are of; both unless set.</summary>
+    public Polarizations Polarization { get; init; } = Polarizations.Unpolarized;
+
+    /// <summary>Whether the spectra hold s, p and their mean (true), or the polarization asked for alone (false).</summary>
+    public bool AllPolarizations { get; init; } = true;
+
+    /// <summary>Largest absolute error asked of R, T and A, above 0; 1e-4 unless set.</summary>
+    public double Accuracy { get; init; } = 1e-4;
+
+    /// <summary>How rows are averaged into films.</summary>
+    public IMixingRule Mixing { get; init; } = MixingRules.Default;
+
+    /// <summary>The light under which colors are computed; D65 unless set.</summary>
+    public Illuminant Illuminant { get; init; } = Illuminant.D65;
+
+    /// <summary>The observer; CIE 1931 unless set.</summary>
+    public StandardObserver Observer { get; init; } = StandardObserver.Cie1931TwoDegree;
+
+    /// <summary>Most threads used, 1 or above; all processors unless set. Results do not depend on it.</summary>
+    public int Threads { get; init; } = Environment.ProcessorCount;
+}

@@ -1,0 +1,56 @@
+using BarbuleOptics.Anatomy;
+using BarbuleOptics.Layering;
+using BarbuleOptics.Materials;
+using BarbuleOptics.Quantities;
+using BarbuleOptics.Spectra;
+
+namespace BarbuleOptics.Prediction;
+
+/// <summary>What one structure does to light under stated conditions.</summary>
+public sealed record StructurePrediction
+{
+    /// <summary>Name of the film solver.</summary>
+    public const string MultilayerSolver = "multilayer";
+
+    /// <summary>What the result may be said of; it stands in every output.</summary>
+    public const string Scope = "An inference from the measured section and the constants named: it speaks for the sampled spot of the sampled individual.";
+
+    /// <summary>The structure as measured.</summary>
+    public required Barbule Barbule { get; init; }
+
+    /// <summary>The section it was solved as.</summary>
+    public required Section Section { get; init; }
+
+    /// <summary>How it was looked at.</summary>
+    public required PredictionConditions Conditions { get; init; }
+
+    /// <summary>Name of the solver used.</summary>
+    public required string Solver { get; init; }
+
+    /// <summary>Name of the mixing rule; null where nothing was averaged into films.</summary>
+    public required string? Mixing { get; init; }
+
+    /// <summary>Name of the average of porous cores; null where there are none.</summary>
+    public required string? CoreMixing { get; init; }
+
+    /// <summary>Estimate of the largest absolute error of the solution in R, T and A: depth slices and arithmetic, not the layer picture itself.</summary>
+    public required double ErrorEstimate { get; init; }
+
+    /// <summary>Number of films the section was replaced by.</summary>
+    public required int FilmCount { get; init; }
+
+    /// <summary>The materials met, each once, the surround first.</summary>
+    public required ValueList<Material> Materials { get; init; }
+
+    /// <summary>Where the power goes: for each angle s, p and unpolarized, or the polarization asked for alone.</summary>
+    public required ValueList<SpectralResponse> Responses { get; init; }
+
+    /// <summary>One view an angle.</summary>
+    public required ValueList<View> Views { get; init; }
+
+    /// <summary>The main peak over angle; null where the angles do not ascend.</summary>
+    public required PeakTrack? Track { get; init; }
+
+    /// <summary>What the result leans on.</summary>
+    public required ValueList<PredictionWarning> Warnings { get; init; }
+}

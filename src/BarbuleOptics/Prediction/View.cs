@@ -1,0 +1,14 @@
+using BarbuleOptics.Color;
+using BarbuleOptics.Multilayer;
+using BarbuleOptics.Quantities;
+using BarbuleOptics.Spectra;
+
+namespace BarbuleOptics.Prediction;
+
+/// <summary>What is seen at one angle in one polarization.</summary>
+/// <param name="Incidence">Angle of incidence in the surround.</param>
+/// <param name="Polarization">Polarization of the incident light.</param>
+/// <param name="Reflectance">Specular reflectance.</param>
+/// <param name="Features">Its peaks, brightness and contrast.</param>
+/// <param name="Color">Its CIE color; null where the grid leaves out visible light.</param>
+public sealed record View(Angle Incidence, Polarizations Polarization, Spectrum Reflectance, SpectrumFeatures Features, CieColor? Color);

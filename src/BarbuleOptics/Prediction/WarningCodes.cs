@@ -1,0 +1,44 @@
+namespace BarbuleOptics.Prediction;
+
+/// <summary>The codes of warnings; they stay as they are from version to version.</summary>
+public static class WarningCodes
+{
+    /// <summary>A dispersion formula is used beyond the wavelengths it was published for.</summary>
+    public const string IndexExtrapolated = "index-extrapolated";
+
+    /// <summary>Diffraction orders propagate in the matrix at wavelengths shown.</summary>
+    public const string OrdersInMatrix = "orders-in-matrix";
+
+    /// <summary>Diffraction orders leave into the surround at wavelengths shown.</summary>
+    public const string OrdersInSurround = "orders-in-surround";
+
+    /// <summary>The spacing is over half a wavelength in the matrix, where averaging into films means little.</summary>
+    public const string CoarseSpacing = "coarse-spacing";
+
+    /// <summary>Platelets are computed as bars without end.</summary>
+    public const string BarModel = "bar-model";
+
+    /// <summary>A porous core is computed as one averaged permittivity.</summary>
+    public const string CoreAveraged = "core-averaged";
+
+    /// <summary>A color lies outside sRGB and its swatch is only the nearest shown.</summary>
+    public const string OutsideSrgb = "outside-srgb";
+
+    /// <summary>The spectrum still rises at an end of the grid.</summary>
+    public const string PeakAtEdge = "peak-at-edge";
+
+    /// <summary>A length given by bounds is taken at its middle.</summary>
+    public const string IntervalMiddle = "interval-middle";
+
+    /// <summary>An unknown backing is taken as the default matrix.</summary>
+    public const string BackingUnknown = "backing-unknown";
+
+    /// <summary>The grid ends within the observer's range and the ends are held.</summary>
+    public const string ObserverNotCovered = "observer-not-covered";
+
+    /// <summary>The grid leaves out visible light, so there is no color.</summary>
+    public const string NoColor = "no-color";
+
+    /// <summary>The slices could not be made fine enough for the accuracy asked for.</summary>
+    public const string AccuracyNotReached = "accuracy-not-reached";
+}

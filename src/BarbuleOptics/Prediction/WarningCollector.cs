@@ -1,0 +1,95 @@
+using BarbuleOptics.Anatomy;
+using BarbuleOptics.Layering;
+using BarbuleOptics.Materials;
+using BarbuleOptics.Multilayer;
+using BarbuleOptics.Quantities;
+
+namespace BarbuleOptics.Prediction;
+
+/// <summary>Says in words what a prediction leans on.</summary>
+internal sealed class WarningCollector(Barbule barbule, Section section, PredictionConditions conditions)
+{
+    private readonly List<PredictionWarning> _warnings = [];
+
+    public ValueList<PredictionWarning> All => [.. _warnings];
+
+    public void AboutStructure(IReadOnlyList<Material> materials)
+    {
+        AboutIndices(materials);
+        if (barbule.Backing is null)
+            Add(WarningCodes.BackingUnknown, "the backing is unknown and was taken as keratin; try --set barbule.backing=air and eumelanin to see what it decides");
+        foreach ((string key, MeasuredLength length) in MeasuredLengths.Of(barbule))
+        {
+            if (length is MeasuredLength.Interval interval && interval.MostNm > interval.LeastNm)
+                Add(WarningCodes.IntervalMiddle, FormattableString.Invariant($"{key} is only known to lie between {interval.LeastNm} and {interval.MostNm} nm; its middle, {interval.CentralNm:0.###} nm, was used"));
+        }
+        if (section.Runs.Any(run => run.Cell.Any(body => body.Outer.Shape == OutlineShape.Rectangle && 2 * body.Outer.HalfWidthNm < run.SpacingNm)))
+            Add(WarningCodes.BarModel, "platelets are computed as bars without end along one direction; real ones end in both");
+        if (section.Materials.Any(material => material.IsAveraged))
+            Add(WarningCodes.CoreAveraged, "a porous core is computed as one permittivity (three-dimensional Bruggeman average); pores near a tenth of the wavelength also scatter");
+    }
+
+    public void AboutSpacing(Material surround, Material matrix)
+    {
+        if (section.PeriodNm is not double periodNm || !IsUneven)
+            return;
+        ReadOnlySpan<double> wavelengthsNm = conditions.Wavelengths.Nanometres;
+        double? coarseNm = DiffractionOnset.LongestWithin(wavelengthsNm, wavelength => 2 * periodNm * matrix.N.At(wavelength));
+        if (coarseNm is double coarse)
+            Add(WarningCodes.CoarseSpacing, FormattableString.Invariant($"the spacing of {periodNm:0.##} nm is over half a wavelength in the matrix up to {coarse:0.#} nm, where averaging rows into films is a rough picture"));
+        foreach (Angle incidence in conditions.Incidences)
+        {
+            double sine = Math.Sin(incidence.Radians);
+            double? inMatrix = DiffractionOnset.LongestWithin(wavelengthsNm, w => DiffractionOnset.InMatrixNm(section, periodNm, sine, surround.N.At(w), matrix.N.At(w)));
+            double? inSurround = DiffractionOnset.LongestWithin(wavelengthsNm, w => DiffractionOnset.InSurroundNm(section, periodNm, sine, surround.N.At(w)));
+            if (inMatrix is double m)
+                Add(WarningCodes.OrdersInMatrix, FormattableString.Invariant($"up to {m:0.#} nm diffraction orders propagate in the matrix, where no mixing rule holds; spectrum and color lean on it there"), incidence);
+            if (inSurround is double s)
+                Add(WarningCodes.OrdersInSurround, FormattableString.Invariant($"up to {s:0.#} nm light leaves in other directions than the specular one, which films leave out"), incidence);
+        }
+    }
+
+    public void AboutCoverage(bool coversVisible, bool coversObserver)
+    {
+        if (!coversVisible)
+            Add(WarningCodes.NoColor, "the wavelengths do not cover 400-700 nm, so no color was computed; the spectra stand");
+        else if (!coversObserver)
+            Add(WarningCodes.ObserverNotCovered, "the wavelengths do not cover 380-780 nm; the color holds the end values beyond them");
+    }
+
+    public void AboutView(View view)
+    {
+        if (view.Features.AtEdge)
+            Add(WarningCodes.PeakAtEdge, "the reflectance still rises at an end of the wavelengths shown; a peak may lie beyond, widen --wavelengths", view.Incidence);
+        if (view.Color is { IsInSrgbGamut: false })
+            Add(WarningCodes.OutsideSrgb, "the color lies outside sRGB; its swatch is the nearest that a screen shows", view.Incidence);
+    }
+
+    public void AboutAccuracy(double reached, double asked)
+    {
+        if (reached > asked)
+            Add(WarningCodes.AccuracyNotReached, FormattableString.Invariant($"the depth slices reach {reached:0.0e+0} in R, not the {asked:0.0e+0} asked for"));
+    }
+
+    /// <summary>Platelets that fill their spacing are films and diffract nothing.</summary>
+    private bool IsUneven => section.Runs.Any(run => run.Cell.Count > 1 || run.Cell.Any(body =>
+        body.Outer.Shape == OutlineShape.Ellipse || body.Core is not null || 2 * body.Outer.HalfWidthNm < run.SpacingNm - SectionBuilder.TouchingNm));
+
+    private void AboutIndices(IReadOnlyList<Material> materials)
+    {
+        foreach (Material material in materials)
+        {
+            if (material.Covers(conditions.Wavelengths))
+                continue;
+            var parts = new List<string>();
+            if (conditions.Wavelengths.StartNm < material.LeastNm)
+                parts.Add(FormattableString.Invariant($"{conditions.Wavelengths.StartNm}-{Math.Min(material.LeastNm, conditions.Wavelengths.StopNm)} nm"));
+            if (conditions.Wavelengths.StopNm > material.MostNm)
+                parts.Add(FormattableString.Invariant($"{Math.Max(material.MostNm, conditions.Wavelengths.StartNm)}-{conditions.Wavelengths.StopNm} nm"));
+            Add(WarningCodes.IndexExtrapolated, FormattableString.Invariant(
+                $"the index of {material.Name} was published for {material.LeastNm}-{material.MostNm} nm; at {string.Join(" and ", parts)} its formula is extended"));
+        }
+    }
+
+    private void Add(string code, string message, Angle? incidence = null) => _warnings.Add(new PredictionWarning(code, message, incidence));
+}
