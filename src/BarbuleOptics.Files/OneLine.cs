@@ -4,7 +4,7 @@ using System.Text;
 namespace BarbuleOptics.Files;
 
 /// <summary>Text from outside, made fit for a message of one line.</summary>
-internal static class OneLine
+public static class OneLine
 {
     private const int MostQuoted = 60;
 

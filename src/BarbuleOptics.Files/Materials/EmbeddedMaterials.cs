@@ -13,6 +13,12 @@ public static class EmbeddedMaterials
     /// <exception cref="InvalidOperationException">A table that the program carries is wrong: a fault of the program.</exception>
     public static MaterialCatalog Catalog => Loaded.Value;
 
+    /// <summary>The catalog with the tables of a user's folder over it, where one is given.</summary>
+    /// <param name="directory">The folder; null for none.</param>
+    /// <returns>The catalog, or every problem of the folder's tables.</returns>
+    public static FileResult<MaterialCatalog> WithFolder(string? directory)
+        => directory is null ? FileResult.Success(Catalog) : Catalog.With(directory);
+
     private static MaterialCatalog Load()
     {
         Assembly assembly = typeof(EmbeddedMaterials).Assembly;

@@ -23,7 +23,7 @@ public static class OutputFolder
         if (files.DistinctBy(file => file.Name, StringComparer.OrdinalIgnoreCase).Count() < files.Count)
             throw new ArgumentException("Must have names that differ.", nameof(files));
         cancellation.ThrowIfCancellationRequested();
-        RefuseExisting(folder, files, force);
+        RefuseExisting(folder, files.Select(file => file.Name), force);
         using var undo = new Undo();
         Guarded(folder, () => MakeFolder(folder, undo));
         List<(string Temporary, string Final)> written = [];
@@ -44,11 +44,23 @@ public static class OutputFolder
             DeleteQuietly(path);
     }
 
-    private static void RefuseExisting(string folder, IReadOnlyList<OutputFile> files, bool force)
+    /// <summary>Refuses what <see cref="Write"/> would refuse before it writes, so that a long calculation is not lost to it.</summary>
+    /// <param name="folder">As the user named it; messages repeat it.</param>
+    /// <param name="names">Names of the files to come.</param>
+    /// <param name="force">Whether files that are there may be replaced.</param>
+    /// <exception cref="OutputException">A file is there already, or the folder is none.</exception>
+    public static void Check(string folder, IEnumerable<string> names, bool force)
+    {
+        ArgumentException.ThrowIfNullOrEmpty(folder);
+        ArgumentNullException.ThrowIfNull(names);
+        RefuseExisting(folder, names, force);
+    }
+
+    private static void RefuseExisting(string folder, IEnumerable<string> names, bool force)
     {
         if (File.Exists(folder))
             throw new OutputException(OutputFault.NotWritable, $"{OneLine.Escape(folder)}: is a file, not a folder");
-        foreach (string path in files.Select(file => Path.Combine(folder, file.Name)))
+        foreach (string path in names.Select(name => Path.Combine(folder, name)))
         {
             if (Directory.Exists(path))
                 throw new OutputException(OutputFault.NotWritable, $"{OneLine.Escape(path)}: is a folder, where a file is to be written");

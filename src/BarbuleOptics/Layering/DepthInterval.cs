@@ -16,7 +16,7 @@ internal sealed record DepthInterval(double ThicknessNm, int Background, double 
     public SectionCut CutAt(double depthNm, int materialCount)
     {
         if (Bodies.Count == 0)
-            return new SectionCut(1, materialCount, [new Lamella(Background, 1)], []);
+            return new SectionCut(1, Background, materialCount, [new Lamella(Background, 1)], []);
         var lamellae = new List<Lamella>(Bodies.Count * 4);
         var bodies = new CutBody[Bodies.Count];
         var chords = Bodies.Select(placed => Chord.Of(placed, depthNm)).OrderBy(chord => chord.LeftNm).ToArray();
@@ -37,7 +37,7 @@ internal sealed record DepthInterval(double ThicknessNm, int Background, double 
         }
         // The shares add up to 1 but for that rounding.
         Lamella[] whole = [.. lamellae.Where(lamella => lamella.Share > 0).Select(lamella => lamella with { Share = lamella.Share / used })];
-        return new SectionCut(PeriodNm, materialCount, whole, bodies);
+        return new SectionCut(PeriodNm, Background, materialCount, whole, bodies);
     }
 
     /// <summary>Text that is equal for intervals whose cuts are equal, wherever they lie.</summary>

@@ -6,31 +6,26 @@ namespace BarbuleOptics.Layering;
 /// <remarks>Rows of spacings without a common period meet at every sideways offset somewhere, so there the worst one counts.</remarks>
 internal static class LayerOverlap
 {
-    /// <summary>One problem a layer at the most, at the gap that would mend it.</summary>
-    public static IEnumerable<AnatomyProblem> Find(Section section)
+    /// <summary>The first problem from the outside in, at the gap that would mend it (what lies deeper follows from it); null when there is none.</summary>
+    public static AnatomyProblem? Find(Section section)
     {
         List<Extent> extents = [.. section.Runs.Select(run => new Extent(run)), .. section.Films.GroupBy(film => film.LayerNumber).Select(films => new Extent([.. films]))];
         extents.Sort((a, b) => a.Layer.CompareTo(b.Layer));
-        foreach (Extent extent in extents)
-        {
-            if (extent.TopNm < -SectionBuilder.TouchingNm)
-                yield return Problem(extent.Layer - 1, FormattableString.Invariant($"layer {extent.Layer} reaches {-extent.TopNm:0.###} nm out of the surface"), -extent.TopNm);
-        }
         for (int lower = 1; lower < extents.Count; lower++)
         {
+            if (extents[lower].TopNm < -SectionBuilder.TouchingNm)
+                return Problem(extents[lower].Layer - 1, FormattableString.Invariant($"layer {extents[lower].Layer} reaches {-extents[lower].TopNm:0.###} nm out of the surface"), -extents[lower].TopNm);
             for (int upper = 0; upper < lower; upper++)
             {
                 double missingNm = MissingNm(extents[upper], extents[lower]);
                 if (missingNm > SectionBuilder.TouchingNm)
-                {
-                    yield return Problem(extents[lower].Layer - 1, FormattableString.Invariant($"layers {extents[upper].Layer} and {extents[lower].Layer} overlap"), missingNm);
-                    break;
-                }
+                    return Problem(extents[lower].Layer - 1, FormattableString.Invariant($"layers {extents[upper].Layer} and {extents[lower].Layer} overlap"), missingNm);
             }
         }
-        double deepest = extents.Count == 0 ? section.CortexNm : extents.Max(extent => extent.BottomNm);
-        if (deepest > section.DepthNm + SectionBuilder.TouchingNm)
-            yield return Problem(extents[^1].Layer, "bodies reach into the backing", deepest - section.DepthNm);
+        double deepestNm = extents.Count == 0 ? section.CortexNm : extents.Max(extent => extent.BottomNm);
+        return deepestNm > section.DepthNm + SectionBuilder.TouchingNm
+            ? Problem(extents[^1].Layer, "bodies reach into the backing", deepestNm - section.DepthNm)
+            : null;
     }
 
     private static AnatomyProblem Problem(int layer, string what, double missingNm)

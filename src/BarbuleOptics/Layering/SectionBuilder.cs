@@ -53,7 +53,8 @@ public sealed class SectionBuilder
         var section = new Section(
             _barbule.Surround, backing, _barbule.Axis, ValueList.Create<SectionMaterial>([.. _materials.All]), cortexNm, depthNm,
             ValueList.Create<SectionRun>([.. _runs]), ValueList.Create<SectionFilm>([.. _films]), _barbule.Back);
-        _problems.AddRange(LayerOverlap.Find(section));
+        if (LayerOverlap.Find(section) is AnatomyProblem overlap)
+            _problems.Add(overlap);
         return section;
     }
 

@@ -9,12 +9,14 @@ public sealed class SectionCut
 
     /// <summary>A cut through placed bodies.</summary>
     /// <param name="periodNm">Length along the surface after which the cut repeats, in nm.</param>
+    /// <param name="background">Number of the material between the bodies.</param>
     /// <param name="materialCount">Number of materials in the section.</param>
     /// <param name="lamellae">The stretches of the period in order; their shares add up to 1.</param>
     /// <param name="bodies">The bodies met.</param>
-    internal SectionCut(double periodNm, int materialCount, Lamella[] lamellae, CutBody[] bodies)
+    internal SectionCut(double periodNm, int background, int materialCount, Lamella[] lamellae, CutBody[] bodies)
     {
         PeriodNm = periodNm;
+        Background = background;
         _lamellae = lamellae;
         _bodies = bodies;
         _fractions = new double[materialCount];
@@ -25,12 +27,15 @@ public sealed class SectionCut
     /// <summary>Length along the surface after which the cut repeats, in nm.</summary>
     public double PeriodNm { get; }
 
+    /// <summary>Number of the material between the bodies: the matrix, or that of a film.</summary>
+    public int Background { get; }
+
     /// <summary>Share of each material, by its number; they add up to 1.</summary>
     public ReadOnlySpan<double> Fractions => _fractions;
 
     /// <summary>The stretches in their order along the surface.</summary>
     public ReadOnlySpan<Lamella> Lamellae => _lamellae;
 
-    /// <summary>The bodies met; what is left is matrix.</summary>
+    /// <summary>The bodies met; what is left is background.</summary>
     public ReadOnlySpan<CutBody> Bodies => _bodies;
 }

@@ -21,7 +21,9 @@ public sealed class LayerModel
     /// <summary>Number of slices of each kind of interval.</summary>
     public ValueList<int> Slices { get; }
 
-    /// <summary>Largest change of reflectance seen when every slice was halved; the error itself is about a fifteenth of it.</summary>
+    /// <summary>Estimate of the largest error of R that the slices leave: twice the largest change seen when every slice was halved.</summary>
+    /// <remarks>The method is of fourth order, so the error is 16/15 of that change; the rest of the factor allows for the
+    /// wavelengths that were not tried.</remarks>
     public double SliceError { get; }
 
     /// <summary>Finds the slices and builds the films.</summary>
@@ -41,8 +43,8 @@ public sealed class LayerModel
         Guard.Positive(tolerance);
         DepthProfile profile = DepthProfile.Of(section);
         var refinement = new SliceRefinement<TWorkspace>(profile, catalog, rule, grid, incidences, solver);
-        (int[] slices, double error) = refinement.Find(tolerance);
+        (int[] slices, double change) = refinement.Find(tolerance);
         var permittivities = new SectionPermittivities(section, catalog, grid.Nanometres);
-        return new LayerModel(FilmBuilder.Build(profile, slices, permittivities, rule), slices, error);
+        return new LayerModel(FilmBuilder.Build(profile, slices, permittivities, rule), slices, 2 * change);
     }
 }

@@ -16,7 +16,7 @@ internal sealed class SliceRefinement<TWorkspace>
     private const int ProbeAngles = 3;
 
     /// <summary>Part of the tolerance that the change at the probes may use.</summary>
-    private const double Margin = 0.5;
+    private const double Margin = 0.7;
 
     /// <summary>Slices of one kind beyond which refinement stops, and the error reached is reported as it is.</summary>
     private const int MostSlices = 512;

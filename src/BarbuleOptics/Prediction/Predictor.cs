@@ -4,7 +4,6 @@ using BarbuleOptics.Color;
 using BarbuleOptics.Layering;
 using BarbuleOptics.Materials;
 using BarbuleOptics.Multilayer;
-using BarbuleOptics.Quantities;
 using BarbuleOptics.Spectra;
 
 namespace BarbuleOptics.Prediction;
@@ -63,14 +62,14 @@ public static class Predictor
         Material surround = Find(catalog, section.Surround);
         warnings.AboutSpacing(surround, Find(catalog, barbule.Matrix));
         double error = Math.Max(model.SliceError, responses.ErrorEstimate);
-        warnings.AboutAccuracy(error, sliceTolerance);
+        warnings.AboutAccuracy(error, Math.Max(conditions.Accuracy, 2 * sliceTolerance));
 
         var colorimeter = new Colorimeter(conditions.Wavelengths, conditions.Illuminant, conditions.Observer);
-        warnings.AboutCoverage(colorimeter.CoversVisible, colorimeter.CoversObserver);
+        warnings.AboutCoverage(colorimeter.CanMeasure, colorimeter.CoversObserver);
         var views = new List<View>();
         foreach (SpectralResponse response in responses.Of(conditions.Polarization))
         {
-            CieColor? color = colorimeter.CoversVisible ? colorimeter.Measure(response.Reflectance) : null;
+            CieColor? color = colorimeter.CanMeasure ? colorimeter.Measure(response.Reflectance) : null;
             var view = new View(response.Incidence, response.Polarization, response.Reflectance, SpectrumFeatures.Of(response.Reflectance), color);
             views.Add(view);
             warnings.AboutView(view);

@@ -1,7 +1,6 @@
 using BarbuleOptics.Anatomy;
 using BarbuleOptics.Layering;
 using BarbuleOptics.Materials;
-using BarbuleOptics.Multilayer;
 using BarbuleOptics.Quantities;
 
 namespace BarbuleOptics.Prediction;
@@ -52,7 +51,7 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
     public void AboutCoverage(bool coversVisible, bool coversObserver)
     {
         if (!coversVisible)
-            Add(WarningCodes.NoColor, "the wavelengths do not cover 400-700 nm, so no color was computed; the spectra stand");
+            Add(WarningCodes.NoColor, "the wavelengths do not cover 400-700 nm in steps of at most 20 nm, so no color was computed; the spectra stand");
         else if (!coversObserver)
             Add(WarningCodes.ObserverNotCovered, "the wavelengths do not cover 380-780 nm; the color holds the end values beyond them");
     }
@@ -61,7 +60,7 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
     {
         if (view.Features.AtEdge)
             Add(WarningCodes.PeakAtEdge, "the reflectance still rises at an end of the wavelengths shown; a peak may lie beyond, widen --wavelengths", view.Incidence);
-        if (view.Color is { IsInSrgbGamut: false })
+        if (view.Color is { InSrgbGamut: false })
             Add(WarningCodes.OutsideSrgb, "the color lies outside sRGB; its swatch is the nearest that a screen shows", view.Incidence);
     }
 

@@ -10,8 +10,9 @@ namespace BarbuleOptics.Layering.Mixing;
 /// </remarks>
 public sealed class Bruggeman : IMixingRule
 {
-    private const int MostSteps = 200;
-    private const double Tolerance = 4e-16;
+    private const int MostSteps = 400;
+    private const int PlainSteps = 2;
+    private const double Tolerance = 2e-15;
 
     /// <inheritdoc/>
     public string Name => "bruggeman";
@@ -56,6 +57,8 @@ public sealed class Bruggeman : IMixingRule
     {
         // Real permittivities of both signs have a complex solution, which no real start reaches.
         Complex e = new(start.Real, Math.Max(start.Imaginary, 1e-12 * start.Magnitude));
+        double before = double.PositiveInfinity;
+        int plainSteps = PlainSteps;
         for (int step = 0; step < MostSteps; step++)
         {
             Complex s = Complex.Zero, slope = Complex.Zero;
@@ -68,12 +71,15 @@ public sealed class Bruggeman : IMixingRule
                 slope += fractions[m] * inverse * inverse;
             }
             Complex mapped = Complex.Reciprocal(2 * s);
-            Complex newton = e + (mapped - e) / (1 - slope / (2 * s * s));
-            Complex next = step >= 2 && newton.Imaginary >= 0 && Distance(newton, mapped) < Distance(mapped, e) ? newton : mapped;
-            double change = Distance(next, e), size = Distance(next, Complex.Zero);
-            e = next;
-            if (change <= Tolerance * size)
+            double change = Distance(mapped, e);
+            if (change <= Tolerance * Distance(e, Complex.Zero))
                 break;
+            // A Newton step that went away from the solution is followed by steps that cannot.
+            if (change > before)
+                plainSteps = step + PlainSteps;
+            before = change;
+            Complex newton = e + (mapped - e) / (1 - slope / (2 * s * s));
+            e = step >= plainSteps && newton.Imaginary >= 0 ? newton : mapped;
         }
         // A lossless mixture came through the upper half-plane; what is left of the start's loss is rounding.
         return e.Imaginary > 1e-15 * e.Magnitude ? e : new Complex(e.Real, 0);

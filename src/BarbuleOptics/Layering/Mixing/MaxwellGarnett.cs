@@ -17,7 +17,7 @@ public sealed class MaxwellGarnett : IMixingRule
     /// <inheritdoc/>
     public DiagonalPermittivity Mix(SectionCut cut, ReadOnlySpan<Complex> permittivities, double wavelengthNm)
     {
-        Complex host = permittivities[Section.Matrix];
+        Complex host = permittivities[cut.Background];
         Complex sum = Complex.Zero;
         foreach (CutBody body in cut.Bodies)
             sum += (body.ShellShare + body.CoreShare) * Polarizability(body, permittivities, host);

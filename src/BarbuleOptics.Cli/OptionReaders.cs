@@ -1,0 +1,124 @@
+using System.Globalization;
+using BarbuleOptics.Color;
+using BarbuleOptics.Files;
+using BarbuleOptics.Layering.Mixing;
+using BarbuleOptics.Multilayer;
+using BarbuleOptics.Quantities;
+
+namespace BarbuleOptics.Cli;
+
+/// <summary>Reads the texts of options, always with a decimal point, whatever the user's language.</summary>
+internal static class OptionReaders
+{
+    public const double MostAngleCount = 1000;
+
+    public static bool Wavelengths(string text, out WavelengthGrid grid, out string allowed)
+    {
+        grid = null!;
+        allowed = "from:to:step in nm, such as 300:780:1, from 10 to 100000 nm with at most 100000 wavelengths";
+        if (!Numbers(text, ':', out double[] parts) || parts.Length != 3)
+            return false;
+        try
+        {
+            grid = WavelengthGrid.FromRange(Length.FromNanometres(parts[0]), Length.FromNanometres(parts[1]), Length.FromNanometres(parts[2]));
+            return true;
+        }
+        catch (ArgumentOutOfRangeException)
+        {
+            return false;
+        }
+    }
+
+    public static bool Angles(string text, out ValueList<Angle> angles, out string allowed)
+    {
+        angles = [];
+        allowed = "a list such as 0,30,60 or a range from:to:step such as 0:60:15, each angle 0 to below 90 degrees, at most 1000 of them";
+        double[] degrees;
+        if (text.Contains(':', StringComparison.Ordinal))
+        {
+            if (!Numbers(text, ':', out double[] range) || range.Length != 3 || range[2] <= 0 || range[1] < range[0] || (range[1] - range[0]) / range[2] > MostAngleCount)
+                return false;
+            int steps = (int)Math.Floor((range[1] - range[0]) / range[2] + 1e-9);
+            degrees = [.. Enumerable.Range(0, steps + 1).Select(i => Math.Round(range[0] + i * range[2], 9))];
+        }
+        else if (!Numbers(text, ',', out degrees))
+        {
+            return false;
+        }
+        if (degrees.Length > MostAngleCount || degrees.Any(degree => !(degree >= 0 && degree < 90)) || degrees.Distinct().Count() != degrees.Length)
+            return false;
+        angles = [.. degrees.Select(Angle.FromDegrees)];
+        return true;
+    }
+
+    public static bool Polarization(string text, out Polarizations? polarization, out string allowed)
+    {
+        bool found = PolarizationNames.TryFind(text, out Polarizations value);
+        polarization = value;
+        allowed = OneOf(PolarizationNames.All, text);
+        return found;
+    }
+
+    public static bool Mixing(string text, out IMixingRule rule, out string allowed)
+    {
+        bool found = MixingRules.TryFind(text, out IMixingRule? value);
+        rule = value!;
+        allowed = OneOf(MixingRules.All.Select(candidate => candidate.Name), text);
+        return found;
+    }
+
+    public static bool IlluminantName(string text, out Illuminant illuminant, out string allowed)
+    {
+        bool found = Illuminant.TryFind(text, out Illuminant? value);
+        illuminant = value!;
+        allowed = OneOf(Illuminant.All.Select(candidate => candidate.Name), text);
+        return found;
+    }
+
+    public static bool Observer(string text, out StandardObserver observer, out string allowed)
+    {
+        allowed = OneOf(StandardObservers.Names, text);
+        return StandardObservers.TryFind(text, out observer);
+    }
+
+    public static bool Solver(string text, out string solver, out string allowed)
+    {
+        solver = text;
+        allowed = OneOf(["auto", "multilayer"], text);
+        return text is "auto" or "multilayer";
+    }
+
+    public static bool Accuracy(string text, out double accuracy, out string allowed)
+    {
+        allowed = "a number from 1e-10 to 0.1";
+        return Number(text, out accuracy) && accuracy is >= 1e-10 and <= 0.1;
+    }
+
+    public static bool Threads(string text, out int threads, out string allowed)
+    {
+        allowed = "a whole number from 1 to 1024";
+        return int.TryParse(text, NumberStyles.None, CultureInfo.InvariantCulture, out threads) && threads is >= 1 and <= 1024;
+    }
+
+    private static string OneOf(IEnumerable<string> names, string text)
+    {
+        string[] all = [.. names];
+        string? near = NearMiss.Find(text, all);
+        return string.Join(", ", all) + (near is null ? "" : $"; did you mean {near}?");
+    }
+
+    private static bool Numbers(string text, char separator, out double[] numbers)
+    {
+        string[] parts = text.Split(separator);
+        numbers = new double[parts.Length];
+        for (int i = 0; i < parts.Length; i++)
+        {
+            if (!Number(parts[i], out numbers[i]))
+                return false;
+        }
+        return true;
+    }
+
+    private static bool Number(string text, out double number)
+        => double.TryParse(text, NumberStyles.Float, CultureInfo.InvariantCulture, out number) && double.IsFinite(number);
+}

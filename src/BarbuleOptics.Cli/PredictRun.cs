@@ -1,0 +1,130 @@
+using System.Text;
+using BarbuleOptics.Anatomy;
+using BarbuleOptics.Files;
+using BarbuleOptics.Files.Results;
+using BarbuleOptics.Prediction;
+
+namespace BarbuleOptics.Cli;
+
+/// <summary>Carries out <c>barbule predict</c>: reads everything, solves, and only then writes.</summary>
+internal sealed class PredictRun(PredictRequest request, TextWriter output, TextWriter error)
+{
+    private static readonly string[] ResultNames = [SpectraCsv.FileName, PredictionJson.FileName];
+
+    private bool _inputWrong;
+
+    public int Execute(CancellationToken cancellation)
+    {
+        if (!TryFolders(out string[]? folders))
+            return ExitCode.WrongCommandLine;
+        FileResult<MaterialCatalog> catalog = EmbeddedMaterials.WithFolder(request.MaterialFolder);
+        if (!catalog.Succeeded)
+            return Refuse(catalog.Problems);
+        if (folders is not null && !TryReserve(folders))
+            return ExitCode.OutputFailed;
+
+        var done = new List<PredictedStructure>();
+        for (int i = 0; i < request.Files.Count; i++)
+        {
+            if (Predict(request.Files[i], catalog.Value, cancellation) is not (PredictedStructure predicted, LoadedStructure loaded))
+                continue;
+            done.Add(predicted);
+            if (folders is not null && !TryWrite(folders[i], predicted, cancellation))
+                return ExitCode.OutputFailed;
+            if (!request.Json)
+                Print(predicted, loaded, folders?[i]);
+        }
+        if (request.Json && done.Count > 0)
+            PrintJson(done);
+        return _inputWrong ? ExitCode.WrongInput : ExitCode.Done;
+    }
+
+    private (PredictedStructure Predicted, LoadedStructure Loaded)? Predict(string file, MaterialCatalog catalog, CancellationToken cancellation)
+    {
+        FileResult<LoadedStructure> read = StructureFile.Read(file, catalog, request.Sets);
+        if (!read.Succeeded)
+        {
+            Refuse(read.Problems);
+            return null;
+        }
+        LoadedStructure loaded = read.Value;
+        if (!Predictor.TryPredict(loaded.Barbule, request.Conditions, loaded.Catalog, out StructurePrediction? prediction, out IReadOnlyList<AnatomyProblem> problems, cancellation))
+        {
+            Refuse([.. problems.Select(loaded.Locate)]);
+            return null;
+        }
+        return (new PredictedStructure(file, loaded.Sha256, prediction, request.Sets), loaded);
+    }
+
+    private int Refuse(IReadOnlyList<FileProblem> problems)
+    {
+        foreach (FileProblem problem in problems)
+            error.WriteLine(problem);
+        _inputWrong = true;
+        return ExitCode.WrongInput;
+    }
+
+    private void Print(PredictedStructure predicted, LoadedStructure loaded, string? folder)
+    {
+        PredictionTable.Write(predicted, loaded.Notes, output);
+        if (folder is not null)
+            output.WriteLine($"Written: {Path.Combine(folder, SpectraCsv.FileName)}, {Path.Combine(folder, PredictionJson.FileName)}");
+        output.WriteLine();
+    }
+
+    private void PrintJson(List<PredictedStructure> done)
+    {
+        byte[] document = request.Files.Count == 1 ? PredictionJson.Write(done[0]) : PredictionJson.Write(done);
+        output.Write(Encoding.UTF8.GetString(document));
+    }
+
+    /// <summary>One FILE writes into the folder itself, several into a folder each, named for the file.</summary>
+    private bool TryFolders(out string[]? folders)
+    {
+        folders = null;
+        if (request.OutputFolder is not string folder)
+            return true;
+        if (request.Files.Count == 1)
+        {
+            folders = [folder];
+            return true;
+        }
+        string[] names = [.. request.Files.Select(file => Path.GetFileNameWithoutExtension(file))];
+        IGrouping<string, string>? equal = names.GroupBy(name => name, StringComparer.OrdinalIgnoreCase).FirstOrDefault(group => group.Count() > 1);
+        if (equal is not null)
+        {
+            error.WriteLine($"barbule: --out: found {equal.Count()} files named {OneLine.Quote(equal.Key)}; allowed one, since each file's results go into a folder of its name");
+            return false;
+        }
+        folders = [.. names.Select(name => Path.Combine(folder, name))];
+        return true;
+    }
+
+    /// <summary>Refuses before any work what could not be written after it.</summary>
+    private bool TryReserve(string[] folders)
+        => TryOutput(() =>
+        {
+            foreach (string folder in folders)
+                OutputFolder.Check(folder, ResultNames, request.Force);
+        });
+
+    private bool TryWrite(string folder, PredictedStructure predicted, CancellationToken cancellation)
+        => TryOutput(() => OutputFolder.Write(
+            folder,
+            [OutputFile.FromBytes(SpectraCsv.FileName, SpectraCsv.Write(predicted.Prediction)), OutputFile.FromBytes(PredictionJson.FileName, PredictionJson.Write(predicted))],
+            request.Force, cancellation));
+
+    private bool TryOutput(Action write)
+    {
+        try
+        {
+            write();
+            return true;
+        }
+        catch (OutputException fault)
+        {
+            error.WriteLine(fault.Message);
+            return false;
+        }
+    }
+}

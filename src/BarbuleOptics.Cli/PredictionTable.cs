@@ -1,0 +1,102 @@
+using System.Globalization;
+using BarbuleOptics.Files;
+using BarbuleOptics.Files.Results;
+using BarbuleOptics.Materials;
+using BarbuleOptics.Multilayer;
+using BarbuleOptics.Prediction;
+using BarbuleOptics.Spectra;
+
+namespace BarbuleOptics.Cli;
+
+/// <summary>A prediction as a short table for a person.</summary>
+internal static class PredictionTable
+{
+    private const int TextWidth = 100;
+
+    private static readonly (string Head, int Width)[] Columns =
+    [
+        ("angle", 6), ("peak nm", 9), ("height", 8), ("width nm", 10), ("mean R", 8), ("x", 8), ("y", 8), ("L*", 7), ("C*", 7), ("h deg", 7),
+        ("sRGB", 9), ("bright", 9),
+    ];
+
+    public static void Write(PredictedStructure predicted, IReadOnlyList<FileNote> notes, TextWriter output)
+    {
+        StructurePrediction prediction = predicted.Prediction;
+        output.WriteLine($"{prediction.Barbule.Name}  ({predicted.File})");
+        output.WriteLine(Summary(prediction));
+        output.WriteLine();
+        output.WriteLine(string.Concat(Columns.Select(column => column.Head.PadLeft(column.Width))) + "  hue");
+        foreach (View view in prediction.Views)
+            output.WriteLine(Row(view));
+        output.WriteLine();
+        foreach (string line in Remarks(prediction).Concat(notes.Select(note => $"Warning {note.Code}: {note}.")).Concat(Warnings(prediction)))
+            Wrap(line, output);
+    }
+
+    private static string Summary(StructurePrediction prediction)
+    {
+        string rule = prediction.Mixing is null ? "" : $", {prediction.Mixing} mixing";
+        PredictionConditions conditions = prediction.Conditions;
+        return string.Create(CultureInfo.InvariantCulture,
+            $"{prediction.Solver} solver{rule}, {prediction.FilmCount} films, {PolarizationNames.Of(conditions.Polarization)}, {conditions.Illuminant.Name}, {Color.StandardObservers.NameOf(conditions.Observer)}, error estimate {prediction.ErrorEstimate:0.0e+0} in R");
+    }
+
+    private static string Row(View view)
+    {
+        SpectralPeak? peak = view.Features.MainPeak;
+        string[] cells =
+        [
+            Text(view.Incidence.Degrees, "0.##"), Text(peak?.WavelengthNm, "0.0"), Text(peak?.Reflectance, "0.0000"),
+            Text(peak?.HalfProminenceWidthNm, "0.0"), Text(view.Features.MeanReflectance, "0.0000"),
+            Text(view.Color?.Chromaticity.X, "0.0000"), Text(view.Color?.Chromaticity.Y, "0.0000"), Text(view.Color?.Lab.L, "0.0"),
+            Text(view.Color?.Lab.Chroma, "0.0"), Text(view.Color?.Lab.HueDegrees, "0.0"),
+            view.Color?.Srgb.Hex ?? "-", view.Color?.SrgbBrightened.Hex ?? "-",
+        ];
+        return string.Concat(cells.Select((cell, i) => cell.PadLeft(Columns[i].Width))) + "  " + (view.Color?.HueTerm ?? "-");
+    }
+
+    private static IEnumerable<string> Remarks(StructurePrediction prediction)
+    {
+        if (prediction.Track is { Shift: BlueShift shift })
+        {
+            yield return string.Create(CultureInfo.InvariantCulture,
+                $"The main peak moves over angle as for an effective index of {shift.EffectiveIndex:0.000} ({shift.NormalWavelengthNm:0.0} nm at normal incidence, {shift.ResidualNm:0.00} nm rms).");
+        }
+        yield return $"Materials: {string.Join(", ", prediction.Materials.Select(Describe))}.";
+        yield return "Reflectance 1 is a perfect mirror. 'width' is at half prominence; 'bright' is the color at a lightness a screen shows well.";
+        yield return StructurePrediction.Scope;
+    }
+
+    private static string Describe(Material material)
+        => string.Create(CultureInfo.InvariantCulture, $"{material.Name} (published for {material.LeastNm}-{material.MostNm} nm)");
+
+    /// <summary>One line a warning; what holds at several angles is said once.</summary>
+    private static IEnumerable<string> Warnings(StructurePrediction prediction)
+    {
+        foreach (IGrouping<(string Code, string Message), PredictionWarning> alike in prediction.Warnings.GroupBy(warning => (warning.Code, warning.Message)))
+        {
+            string angles = string.Join(", ", alike.Where(warning => warning.Incidence is not null).Select(warning => Text(warning.Incidence?.Degrees, "0.##")));
+            yield return $"Warning {alike.Key.Code}{(angles.Length > 0 ? $" at {angles} degrees" : "")}: {alike.Key.Message}.";
+        }
+    }
+
+    private static string Text(double? value, string format) => value?.ToString(format, CultureInfo.InvariantCulture) ?? "-";
+
+    private static void Wrap(string text, TextWriter output)
+    {
+        string line = "";
+        foreach (string word in text.Split(' '))
+        {
+            if (line.Length > 0 && line.Length + 1 + word.Length > TextWidth)
+            {
+                output.WriteLine(line);
+                line = "  " + word;
+            }
+            else
+            {
+                line = line.Length == 0 ? word : line + " " + word;
+            }
+        }
+        output.WriteLine(line);
+    }
+}

@@ -1,0 +1,10 @@
+using BarbuleOptics.Prediction;
+
+namespace BarbuleOptics.Files.Results;
+
+/// <summary>A prediction and the file it came from.</summary>
+/// <param name="File">The structure file as the user named it.</param>
+/// <param name="Sha256">SHA-256 of its bytes, lower-case hexadecimal.</param>
+/// <param name="Prediction">The prediction.</param>
+/// <param name="Changes">The values replaced on the command line, as typed.</param>
+public sealed record PredictedStructure(string File, string Sha256, StructurePrediction Prediction, IReadOnlyList<string> Changes);

@@ -1,0 +1,222 @@
+using System.Text.Encodings.Web;
+using System.Text.Json;
+using BarbuleOptics.Color;
+using BarbuleOptics.Materials;
+using BarbuleOptics.Multilayer;
+using BarbuleOptics.Prediction;
+using BarbuleOptics.Spectra;
+
+namespace BarbuleOptics.Files.Results;
+
+/// <summary>Predictions as JSON, without anything that differs from run to run: no time, host, thread count or output path.</summary>
+public static class PredictionJson
+{
+    /// <summary>Name of the file in an output folder.</summary>
+    public const string FileName = "prediction.json";
+
+    private static readonly JsonWriterOptions Options = new() { Indented = true, Encoder = JavaScriptEncoder.UnsafeRelaxedJsonEscaping, NewLine = "\n" };
+
+    /// <summary>One prediction as one document, UTF-8.</summary>
+    public static byte[] Write(PredictedStructure predicted)
+    {
+        ArgumentNullException.ThrowIfNull(predicted);
+        return Document(json => WritePrediction(json, predicted));
+    }
+
+    /// <summary>Several predictions as one document, <c>{ "predictions": [ … ] }</c>.</summary>
+    public static byte[] Write(IReadOnlyList<PredictedStructure> predicted)
+    {
+        ArgumentNullException.ThrowIfNull(predicted);
+        return Document(json =>
+        {
+            json.WriteStartObject();
+            json.WriteStartArray("predictions");
+            foreach (PredictedStructure one in predicted)
+                WritePrediction(json, one);
+            json.WriteEndArray();
+            json.WriteEndObject();
+        });
+    }
+
+    private static byte[] Document(Action<Utf8JsonWriter> content)
+    {
+        using var stream = new MemoryStream();
+        using (var json = new Utf8JsonWriter(stream, Options))
+            content(json);
+        stream.WriteByte((byte)'\n');
+        return stream.ToArray();
+    }
+
+    private static void WritePrediction(Utf8JsonWriter json, PredictedStructure predicted)
+    {
+        StructurePrediction prediction = predicted.Prediction;
+        json.WriteStartObject();
+        json.WriteStartObject("program");
+        json.WriteString("name", ProgramIdentity.Name);
+        json.WriteString("version", ProgramIdentity.Version);
+        json.WriteEndObject();
+        WriteStructure(json, predicted);
+        json.WriteString("solver", prediction.Solver);
+        json.WriteString("mixing", prediction.Mixing);
+        json.WriteString("core_mixing", prediction.CoreMixing);
+        json.WriteNumber("films", prediction.FilmCount);
+        json.WriteNumber("accuracy_asked", prediction.Conditions.Accuracy);
+        json.WriteNumber("error_estimate", prediction.ErrorEstimate);
+        json.WriteString("reference", "mirror");
+        json.WriteString("scope", StructurePrediction.Scope);
+        WriteMaterials(json, prediction.Materials);
+        json.WriteStartObject("wavelengths_nm");
+        json.WriteNumber("start", prediction.Conditions.Wavelengths.StartNm);
+        json.WriteNumber("stop", prediction.Conditions.Wavelengths.StopNm);
+        json.WriteNumber("step", prediction.Conditions.Wavelengths.StepNm);
+        json.WriteEndObject();
+        json.WriteStartArray("views");
+        foreach (View view in prediction.Views)
+            WriteView(json, view);
+        json.WriteEndArray();
+        WriteTrack(json, prediction.Track);
+        WriteWarnings(json, prediction.Warnings);
+        json.WriteEndObject();
+    }
+
+    private static void WriteStructure(Utf8JsonWriter json, PredictedStructure predicted)
+    {
+        json.WriteStartObject("structure");
+        json.WriteString("name", predicted.Prediction.Barbule.Name);
+        json.WriteString("file", predicted.File);
+        json.WriteString("sha256", predicted.Sha256);
+        json.WriteStartArray("set");
+        foreach (string change in predicted.Changes)
+            json.WriteStringValue(change);
+        json.WriteEndArray();
+        json.WriteEndObject();
+    }
+
+    private static void WriteMaterials(Utf8JsonWriter json, IReadOnlyList<Material> materials)
+    {
+        json.WriteStartArray("materials");
+        foreach (Material material in materials)
+        {
+            json.WriteStartObject();
+            json.WriteString("name", material.Name);
+            json.WriteString("source", material.Source);
+            json.WriteString("obtained", material.Obtained);
+            WriteNumbers(json, "range_nm", material.LeastNm, material.MostNm);
+            json.WriteEndObject();
+        }
+        json.WriteEndArray();
+    }
+
+    private static void WriteView(Utf8JsonWriter json, View view)
+    {
+        json.WriteStartObject();
+        json.WriteNumber("incidence_deg", view.Incidence.Degrees);
+        json.WriteString("polarization", PolarizationNames.Of(view.Polarization));
+        WriteFeatures(json, view.Features);
+        if (view.Color is CieColor color)
+        {
+            WriteColor(json, color);
+            json.WriteStartObject("hue");
+            json.WriteString("term", color.HueTerm);
+            json.WriteEndObject();
+        }
+        else
+        {
+            json.WriteNull("cie");
+            json.WriteNull("hue");
+        }
+        json.WriteNull("bird");
+        json.WriteNull("layer_model_error");
+        json.WriteEndObject();
+    }
+
+    private static void WriteFeatures(Utf8JsonWriter json, SpectrumFeatures features)
+    {
+        json.WriteStartObject("spectrum");
+        json.WriteStartArray("peaks");
+        foreach (SpectralPeak peak in features.Peaks)
+        {
+            json.WriteStartObject();
+            json.WriteNumber("wavelength_nm", peak.WavelengthNm);
+            json.WriteNumber("reflectance", peak.Reflectance);
+            json.WriteNumber("prominence", peak.Prominence);
+            WriteOptional(json, "half_height_width_nm", peak.HalfHeightWidthNm);
+            WriteOptional(json, "half_prominence_width_nm", peak.HalfProminenceWidthNm);
+            json.WriteEndObject();
+        }
+        json.WriteEndArray();
+        json.WriteBoolean("at_edge", features.AtEdge);
+        WriteOptional(json, "mean_reflectance", features.MeanReflectance);
+        WriteOptional(json, "contrast", features.Contrast);
+        WriteOptional(json, "ultraviolet_share", features.UltravioletShare);
+        json.WriteEndObject();
+    }
+
+    private static void WriteColor(Utf8JsonWriter json, CieColor color)
+    {
+        json.WriteStartObject("cie");
+        json.WriteString("observer", StandardObservers.NameOf(color.Observer));
+        json.WriteString("illuminant", color.Illuminant.Name);
+        WriteNumbers(json, "XYZ", color.Tristimulus.X, color.Tristimulus.Y, color.Tristimulus.Z);
+        WriteNumbers(json, "xy", color.Chromaticity.X, color.Chromaticity.Y);
+        WriteNumbers(json, "Lab", color.Lab.L, color.Lab.A, color.Lab.B);
+        WriteNumbers(json, "LCh", color.Lab.L, color.Lab.Chroma, color.Lab.HueDegrees);
+        WriteOptional(json, "dominant_wavelength_nm", color.DominantWavelengthNm);
+        json.WriteNumber("excitation_purity", color.ExcitationPurity);
+        json.WriteString("sRGB", color.Srgb.Hex);
+        json.WriteString("sRGB_brightened", color.SrgbBrightened.Hex);
+        json.WriteBoolean("in_sRGB_gamut", color.InSrgbGamut);
+        json.WriteEndObject();
+    }
+
+    private static void WriteTrack(Utf8JsonWriter json, PeakTrack? track)
+    {
+        if (track is null)
+        {
+            json.WriteNull("main_peak_over_angle");
+            return;
+        }
+        json.WriteStartObject("main_peak_over_angle");
+        json.WriteStartArray("wavelengths_nm");
+        foreach (PeakSighting sighting in track.Sightings)
+        {
+            if (sighting.Peak is null)
+                json.WriteNullValue();
+            else
+                json.WriteNumberValue(sighting.Peak.WavelengthNm);
+        }
+        json.WriteEndArray();
+        WriteOptional(json, "effective_index", track.EffectiveIndex);
+        json.WriteEndObject();
+    }
+
+    private static void WriteWarnings(Utf8JsonWriter json, IReadOnlyList<PredictionWarning> warnings)
+    {
+        json.WriteStartArray("warnings");
+        foreach (PredictionWarning warning in warnings)
+        {
+            json.WriteStartObject();
+            json.WriteString("code", warning.Code);
+            json.WriteString("message", warning.Message);
+            WriteOptional(json, "incidence_deg", warning.Incidence?.Degrees);
+            json.WriteEndObject();
+        }
+        json.WriteEndArray();
+    }
+
+    private static void WriteNumbers(Utf8JsonWriter json, string name, params ReadOnlySpan<double> values)
+    {
+        json.WriteStartArray(name);
+        foreach (double value in values)
+            json.WriteNumberValue(value);
+        json.WriteEndArray();
+    }
+
+    private static void WriteOptional(Utf8JsonWriter json, string name, double? value)
+    {
+        if (value is double number)
+            json.WriteNumber(name, number);
+        else
+            json.WriteNull(name);
+    }
+}
