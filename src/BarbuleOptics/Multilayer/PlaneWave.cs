@@ -14,9 +14,11 @@ internal readonly record struct PlaneWave(double SurroundIndex, double Sine, dou
     public double SurroundAdmittance => IsP ? Cosine / SurroundIndex : SurroundIndex * Cosine;
 
     /// <summary><paramref name="permittivity"/> - (kx/k0)^2.</summary>
-    /// <remarks>Written as (e - n0^2) + (n0 cos)^2: near grazing incidence a medium much like the surround keeps its digits.</remarks>
+    /// <remarks>Near grazing incidence written as (e - n0^2) + (n0 cos)^2, so that a medium much like the surround keeps its digits.</remarks>
     public double MinusLateralSquared(double permittivity)
     {
+        if (Sine < Cosine)
+            return permittivity - LateralSquared;
         double normal = SurroundIndex * Cosine;
         return Math.FusedMultiplyAdd(-SurroundIndex, SurroundIndex, permittivity) + normal * normal;
     }

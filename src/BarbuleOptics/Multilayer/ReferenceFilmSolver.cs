@@ -7,13 +7,17 @@ namespace BarbuleOptics.Multilayer;
 /// The readable definition of the film solver. Equations stand in <see cref="MediumWave"/> (media), <see cref="FilmStep"/> (one film),
 /// <see cref="TangentialField"/> (recursion), <see cref="Entrance"/> (reflection), <see cref="SlabAverage"/> (incoherent back).
 /// Works for any thickness, any absorption, grazing angles and total reflection, for nothing that grows is formed.
-/// R + T + A = 1 within 1e-12 with A the integral of the fields and no remainder.
-/// The absorptance and the transmittance of an <see cref="IncoherentBack"/> count the slab: A includes its loss, T is the flux into what lies behind.
+/// R + T + A = 1 within 1e-14 with A the integral of the fields and no remainder.
+/// With an <see cref="IncoherentBack"/> the answer is the mean over one turn of the phase in the slab, A includes what the slab
+/// loses and T is the flux into what lies behind; a slab that holds less than one fringe is solved as the film it is.
 /// </remarks>
 public sealed class ReferenceFilmSolver : ISpectralSolver<FilmStack, FilmWorkspace>
 {
-    /// <summary>Bound of the rounding error of a stack of moderate thickness, found by closure and by comparison in long arithmetic.</summary>
-    private const double RoundingError = 1e-12;
+    /// <summary>Largest rounding error to expect in any output.</summary>
+    /// <remarks>Against 60-digit arithmetic, over 24,000 stacks of films to 100 um thick at up to 89.9 degrees, half of the answers were
+    /// within 2e-16, all but 7 within 1e-12 and the worst within 5e-12: thick films near grazing incidence, where the answer
+    /// hangs on the last digit of what is given. So does a resonance that is narrower than that.</remarks>
+    private const double RoundingError = 1e-11;
 
     /// <inheritdoc/>
     public FilmWorkspace CreateWorkspace(FilmStack structure)
@@ -30,7 +34,9 @@ public sealed class ReferenceFilmSolver : ISpectralSolver<FilmStack, FilmWorkspa
         FilmRequestCheck.Check(structure, request, workspace, response);
         Clear(request, response);
         bool both = request.Polarization == Polarizations.Unpolarized;
-        (double sine, double cosine) = Math.SinCos(request.Incidence.Radians);
+        double sine = Math.Sin(request.Incidence.Radians);
+        // The sine of the complement, which keeps its digits at grazing incidence.
+        double cosine = Math.Sin(double.DegreesToRadians(90 - request.Incidence.Degrees));
         for (int i = 0; i < request.Count; i++)
         {
             int wavelength = request.First + i;
