@@ -22,6 +22,7 @@ public sealed class FilmStack
     /// <param name="surroundIndex">Real index where the light comes from, above zero; length L.</param>
     /// <param name="backing">Isotropic permittivity under the last film, imaginary part 0 or above; length L.</param>
     /// <param name="back">Where the backing ends and is averaged over thickness; null for a half-space.</param>
+    /// <exception cref="ArgumentException">Lengths do not fit, or a value lies outside its range.</exception>
     public FilmStack(
         ReadOnlySpan<double> wavelengthsNm, OpticalComponents media, ReadOnlySpan<int> mediumOfFilm, ReadOnlySpan<double> thicknessesNm,
         ReadOnlySpan<double> surroundIndex, ReadOnlySpan<Complex> backing, IncoherentBack? back = null)
@@ -39,6 +40,10 @@ public sealed class FilmStack
             Guard.Positive(index, nameof(surroundIndex));
         foreach (int medium in mediumOfFilm)
             ArgumentOutOfRangeException.ThrowIfGreaterThanOrEqual((uint)medium, (uint)media.MediumCount, nameof(mediumOfFilm));
+        foreach (Complex permittivity in backing)
+            Guard.NotNegative(permittivity.Imaginary, nameof(backing));
+        if (back is not null)
+            Guard.SameLength(wavelengthsNm.Length, back.Behind.Length, nameof(back));
         Media = media;
         Back = back;
         _wavelengthsNm = wavelengthsNm.ToArray();

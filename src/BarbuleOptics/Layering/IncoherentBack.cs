@@ -10,10 +10,13 @@ public sealed class IncoherentBack
 
     /// <summary>A backing of <paramref name="thickness"/> (0 or above) in front of a half-space.</summary>
     /// <param name="thickness">Thickness of the backing.</param>
-    /// <param name="behind">Isotropic permittivity behind it, one for each wavelength of the stack.</param>
+    /// <param name="behind">Isotropic permittivity behind it, imaginary part 0 or above; one for each wavelength of the stack.</param>
+    /// <exception cref="ArgumentOutOfRangeException">The thickness or an imaginary part is below zero.</exception>
     public IncoherentBack(Length thickness, ReadOnlySpan<Complex> behind)
     {
         ThicknessNm = Guard.NotNegative(thickness.Nanometres, nameof(thickness));
+        foreach (Complex permittivity in behind)
+            Guard.NotNegative(permittivity.Imaginary, nameof(behind));
         _behind = behind.ToArray();
     }
 

@@ -105,6 +105,25 @@ public class FilmWorkspaceTests
     }
 
     [Fact]
+    public void A_medium_that_was_never_filled_is_refused()
+    {
+        var stack = new FilmStack([500], new OpticalComponents(2, 1), [1], [100], [1], [2.25]);
+        var error = Assert.Throws<ArgumentException>(
+            () => Solver.Solve(stack, Request(0, 1), Solver.CreateWorkspace(stack), new SolverResponse { Reflectance = new double[1] }));
+        Assert.Contains("medium 1", error.Message, StringComparison.Ordinal);
+    }
+
+    [Fact]
+    public void A_stack_with_gain_or_of_unequal_lengths_is_refused()
+    {
+        var media = new OpticalComponents(0, 1);
+        Assert.Throws<ArgumentOutOfRangeException>(() => new FilmStack([500], media, [], [], [1], [new Complex(2, -.1)]));
+        Assert.Throws<ArgumentOutOfRangeException>(() => new IncoherentBack(Length.FromNanometres(1000), [new Complex(2, -.1)]));
+        Assert.Throws<ArgumentException>(
+            () => new FilmStack([500], media, [], [], [1], [2], new IncoherentBack(Length.FromNanometres(1000), [1, 1])));
+    }
+
+    [Fact]
     public void The_error_estimate_is_small_and_not_zero()
     {
         FilmStack stack = Stack(films: 3);

@@ -30,7 +30,7 @@ public class IncoherentBackTests
             foreach (Complex behind in (Complex[])[1, 2.89, new(-9, 1.2), new(3, .5)])
             {
                 var stack = new TestStack(1, films, 1.55 * 1.55) { SlabThicknessNm = 5000, Behind = behind, WavelengthNm = 520 };
-                AssertMean(stack, degrees, samples: 200, 1e-12);
+                AssertMean(stack, degrees, samples: 400, 1e-12);
             }
         }
     }
