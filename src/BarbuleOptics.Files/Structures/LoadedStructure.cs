@@ -39,6 +39,9 @@ public sealed class LoadedStructure
     public SourceLocation Locate(string key)
     {
         ArgumentNullException.ThrowIfNull(key);
+        // A problem with the pitch stands at row_separation where the file gives that.
+        if (!_locations.ContainsKey(key) && PartnerKeys.Of(key) is { } partner && _locations.ContainsKey(partner))
+            key = partner;
         for (string name = key; name.Length > 0; name = name[..Math.Max(0, name.LastIndexOf('.'))])
         {
             if (_locations.TryGetValue(name, out SourceLocation? location))

@@ -9,7 +9,6 @@ namespace BarbuleOptics.Files;
 internal static class SetOptions
 {
     private static readonly string[] Sections = ["barbule", "cortex", "back"];
-    private static readonly (string, string)[] Partners = [("spacing", "separation"), ("pitch", "row_separation")];
 
     public static void Apply(TomlTable root, IEnumerable<string> sets, ReadingLog log)
     {
@@ -48,11 +47,8 @@ internal static class SetOptions
     {
         TomlNode value = TomlDocument.ParseValue(text, table.PathOf(key), at) ?? new TomlText(text, at);
         table.Put(new TomlEntry(key, at, value));
-        foreach ((string one, string other) in Partners)
-        {
-            if (key == one || key == other)
-                table.Remove(key == one ? other : one);
-        }
+        if (PartnerKeys.Of(key) is { } partner)
+            table.Remove(partner);
     }
 
     private static TomlTable? Descend(TomlTable table, string name, SourceLocation at)

@@ -13,7 +13,9 @@ public static class StructureFile
     /// <summary>Reads a file.</summary>
     /// <param name="path">As the user named it; messages repeat it.</param>
     /// <param name="catalog">The materials that may be named.</param>
-    /// <param name="sets"><c>KEY=VALUE</c> texts of <c>--set</c> options; they replace or add values, later ones count more.</param>
+    /// <param name="sets"><c>KEY=VALUE</c> texts of <c>--set</c> options, with keys such as <c>barbule.surround</c>, <c>cortex.thickness</c>,
+    /// <c>layer1.diameter</c>, <c>layer1.body2.x</c>, <c>back.thickness</c>, <c>name</c>. They replace or add values before the checks. VALUE is TOML, and what
+    /// is none is a text. A later option counts more. Setting spacing removes separation and the other way round, likewise pitch and row_separation.</param>
     public static FileResult<LoadedStructure> Read(string path, MaterialCatalog catalog, IReadOnlyList<string>? sets = null)
     {
         ArgumentNullException.ThrowIfNull(path);
@@ -29,7 +31,7 @@ public static class StructureFile
     /// <param name="baseDirectory">The folder that paths of material tables start from, empty for the current one;
     /// null where paths are refused.</param>
     /// <param name="catalog">The materials that may be named.</param>
-    /// <param name="sets"><c>KEY=VALUE</c> texts of <c>--set</c> options; they replace or add values, later ones count more.</param>
+    /// <param name="sets">As for <see cref="Read"/>.</param>
     public static FileResult<LoadedStructure> Parse(
         ReadOnlySpan<byte> bytes, string displayName, string? baseDirectory, MaterialCatalog catalog, IReadOnlyList<string>? sets = null)
     {

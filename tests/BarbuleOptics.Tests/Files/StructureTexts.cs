@@ -145,9 +145,12 @@ internal static class StructureTexts
         => StructureFile.Parse(Encoding.UTF8.GetBytes(text), "throat.toml", null, Catalog, sets);
 
     /// <summary>Reads a text that must be free of problems.</summary>
-    public static LoadedStructure Good(string text, params string[] sets)
+    public static LoadedStructure Good(string text, params string[] sets) => Good(text, Catalog, sets);
+
+    /// <summary>Reads a text that must be free of problems.</summary>
+    public static LoadedStructure Good(string text, MaterialCatalog catalog, params string[] sets)
     {
-        FileResult<LoadedStructure> result = Read(text, sets);
+        FileResult<LoadedStructure> result = StructureFile.Parse(Encoding.UTF8.GetBytes(text), "throat.toml", null, catalog, sets);
         Assert.True(result.Succeeded, string.Join('\n', result.Problems));
         return result.Value;
     }
