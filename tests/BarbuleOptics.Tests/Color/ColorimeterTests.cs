@@ -107,6 +107,15 @@ public sealed class ColorimeterTests
         }
     }
 
+    // Noise of alternating sign at half a nanometre: the mean over 1 nm takes 1/4, 1/2, 1/4 of the neighbors, which cancel; picking out the
+    // whole nanometres would give 0.6 everywhere.
+    [Fact]
+    public void Steps_below_one_nanometre_are_averaged()
+    {
+        Tristimulus noisy = Sum(ColorSamples.Grid(300, 800, 0.5), static l => l % 1 == 0 ? 0.6 : 0.4);
+        Assert.Equal(50, noisy.Y, 1e-9);
+    }
+
     [Fact]
     public void End_values_are_held_where_the_grid_ends()
     {

@@ -77,6 +77,18 @@ public sealed class DominantWavelengthTests
         Assert.InRange(color.ExcitationPurity, 0.99, 1.0001);
     }
 
+    [Fact]
+    public void Nearly_gray_color_has_a_purity_but_no_dominant_wavelength()
+    {
+        WavelengthGrid grid = ColorSamples.Grid(300, 780, 1);
+        var colorimeter = new Colorimeter(grid, Illuminant.D65, StandardObserver.Cie1931TwoDegree);
+        CieColor color = colorimeter.Measure(ColorSamples.On(grid, static l => 0.3 + 0.02 * ColorSamples.Bell(l, 600, 80)));
+        Assert.InRange(color.Lab.Chroma, 0.5, HueTerms.AchromaticChroma);
+        Assert.Null(color.DominantWavelengthNm);
+        Assert.InRange(color.ExcitationPurity, 0.001, 0.1);
+        Assert.Equal("gray", color.HueTerm);
+    }
+
     private static Chromaticity Between(Chromaticity from, Chromaticity to, double share)
         => new(from.X + share * (to.X - from.X), from.Y + share * (to.Y - from.Y));
 }
