@@ -1,4 +1,5 @@
 using System.Diagnostics;
+using System.Globalization;
 using System.Text;
 using BarbuleOptics.Files;
 using Tomlyn.Parsing;
@@ -32,6 +33,30 @@ public sealed class StructureFuzzTests
         // The mutations must neither break all files nor leave all whole, or the test would show nothing.
         Assert.InRange(accepted, Mutations / 20, Mutations / 2);
         Assert.InRange(slowestMs, 0, 5000);
+    }
+
+    // Measured: at most 2 s each on a busy machine of two cores; the bound is there to catch work that grows with the square of the size.
+    [Theory]
+    [InlineData("[[layer]]\n")]
+    [InlineData("[[layer]]\nform='film'\nthickness=5\n")]
+    [InlineData("[[layer.body]]\n")]
+    [InlineData("key# = 1\n")]
+    [InlineData("[t#.u]\n")]
+    [InlineData("= \n")]
+    [InlineData("a.b.c.d.e.f.# = [[[{}]]]\n")]
+    [InlineData("'")]
+    [InlineData("{")]
+    [InlineData("\"\"\"")]
+    public void A_megabyte_of_one_thing_is_dealt_with_in_time(string piece)
+    {
+        var text = new StringBuilder("format = 1\n");
+        for (int i = 0; text.Length < 990_000; i++)
+            text.Append(piece.Replace("#", i.ToString(CultureInfo.InvariantCulture)));
+        byte[] bytes = Encoding.UTF8.GetBytes(text.ToString());
+        long start = Stopwatch.GetTimestamp();
+        FileResult<LoadedStructure> result = StructureFile.Parse(bytes, "throat.toml", null, StructureTexts.Catalog);
+        Assert.InRange(Stopwatch.GetElapsedTime(start).TotalSeconds, 0, 10);
+        Assert.InRange(result.Problems.Count, 0, 21);
     }
 
     [Fact]

@@ -113,6 +113,9 @@ public sealed class StructureRefusalTests
         { Head + Flat + "lumen_height = 0\nlumen_width = 20\n", 10, "layer1.lumen_width", "both 0 or both above 0" },
         { Head + Platelet + "wall = 0\n", 9, "layer1.wall", "found 0; allowed above 0" },
         { Head + Platelet + "wall = 30\n", 9, "layer1.wall", "below half of thickness and width, 30" },
+        { Head + "[[layer]]\nform = 'platelet'\nthickness = 200\nwidth = 60\nspacing = 70\nwall = 30\n", 9, "layer1.wall", "below half of thickness and width, 30" },
+        { Head + Flat.Replace("spacing = 150", "spacing = 119"), 8, "layer1.spacing", "found 119; allowed the width or above, 120" },
+        { Head + Platelet.Replace("spacing = 200", "spacing = 199"), 8, "layer1.spacing", "found 199; allowed the width or above, 200" },
         { Head + Platelet + "core_air = 0.5\n", 9, "layer1.core_air", "found without a wall" },
         { Head + Platelet + "wall = 5\ncore_air = 1.5\n", 10, "layer1.core_air", "found 1.5; allowed 0 to 1" },
 
