@@ -45,6 +45,7 @@ internal static class FilmRecursion
         Climb(stack, k0, work);
         PowerBalance down = FromAbove(stack, light, slab.Medium, work, out double entered);
 
+        // Light from the slab, with the films in reverse: it ends in the surround.
         FilmPass pass = work.Up;
         pass.Start(light.SurroundAdmittance);
         for (int film = 0; film < stack.FilmCount; film++)
@@ -71,6 +72,7 @@ internal static class FilmRecursion
     private static FilmStep Step(FilmStack stack, int film, double k0, FilmWorkspace work)
         => new(work.Media[stack.MediumOfFilm[film]], k0 * stack.ThicknessesNm[film]);
 
+    /// <summary>Ends the passage at the surround.</summary>
     /// <param name="stack">The films.</param>
     /// <param name="light">The incident wave.</param>
     /// <param name="far">Where the passage started.</param>

@@ -30,9 +30,11 @@ internal static class FilmRequestCheck
             throw new ArgumentOutOfRangeException(nameof(request), FormattableString.Invariant(
                 $"Wavelengths {request.First} to {(long)request.First + request.Count - 1} are not all among the {wavelengths} of the stack."));
         if (!(request.Incidence.Degrees is >= 0 and < 90))
-            throw new ArgumentOutOfRangeException(nameof(request), request.Incidence.Degrees, "The angle of incidence must be 0 to below 90 degrees.");
+            throw new ArgumentOutOfRangeException(
+                nameof(request), request.Incidence.Degrees, "The angle of incidence must be 0 to below 90 degrees.");
         if (request.Polarization is not (Polarizations.S or Polarizations.P or Polarizations.Unpolarized))
-            throw new ArgumentException(FormattableString.Invariant($"The polarization must be S, P or both, not {request.Polarization}."), nameof(request));
+            throw new ArgumentException(
+                FormattableString.Invariant($"The polarization must be S, P or both, not {request.Polarization}."), nameof(request));
     }
 
     private static void CheckResponse(FilmStack stack, in SolverRequest request, in SolverResponse response)

@@ -6,7 +6,7 @@ namespace BarbuleOptics.Tests.Multilayer;
 /// <summary>R + T + A = 1 (Poynting's theorem), with R from the fields' flux, T from the far field and A from the volume integrals.</summary>
 public class EnergyTests
 {
-    // Largest gap found over these stacks: 1.4e-15 on a half-space, 8.5e-15 on an averaged slab.
+    // Largest gap found over these stacks, 120,000 of either kind in s and p: 1.4e-15 on a half-space, 7e-15 on an averaged slab.
     private const double Tolerance = 1e-12;
     private const int Blocks = 60;
     private const int StacksInBlock = 2000;

@@ -10,7 +10,7 @@ public class FilmIdentityTests
 {
     private const int Count = 3000;
 
-    // Errors found: below 2e-13 (thick films, whose phase is rounded film by film).
+    // Errors found: below 4e-14 (thick films, whose phase is rounded film by film).
     [Fact]
     public void Splitting_a_film_in_two_changes_nothing()
     {
@@ -22,7 +22,13 @@ public class FilmIdentityTests
             double upper = film.ThicknessNm * random.NextDouble();
             TestStack split = stack with
             {
-                Films = [.. stack.Films.Take(at), film with { ThicknessNm = upper }, film with { ThicknessNm = film.ThicknessNm - upper }, .. stack.Films.Skip(at + 1)],
+                Films =
+                [
+                    .. stack.Films.Take(at),
+                    film with { ThicknessNm = upper },
+                    film with { ThicknessNm = film.ThicknessNm - upper },
+                    .. stack.Films.Skip(at + 1),
+                ],
             };
             Powers whole = stack.Solve(degrees, polarization);
             Powers parts = split.Solve(degrees, polarization);
@@ -58,6 +64,7 @@ public class FilmIdentityTests
     }
 
     // Helmholtz reciprocity, Born and Wolf, Principles of Optics (section from memory): T is the same both ways, absorbing or not.
+    // Errors found: below 2e-13, from the two angles.
     [Fact]
     public void Transmittance_is_the_same_both_ways()
         => ForEach(seed: 3, (stack, degrees, polarization) =>
@@ -66,9 +73,10 @@ public class FilmIdentityTests
             double far = lateral * 1.0001 + 1.1;
             double back = double.RadiansToDegrees(Math.Asin(lateral / far));
             TestStack forward = stack with { Backing = far * far };
-            var reverse = new TestStack(far, [.. stack.Films.Reverse()], stack.SurroundIndex * stack.SurroundIndex) { WavelengthNm = stack.WavelengthNm };
+            double near = stack.SurroundIndex;
+            var reverse = new TestStack(far, [.. stack.Films.Reverse()], near * near) { WavelengthNm = stack.WavelengthNm };
             if (degrees < 89)
-                Assert.Equal(forward.Solve(degrees, polarization).Transmitted, reverse.Solve(back, polarization).Transmitted, 1e-9);
+                Assert.Equal(forward.Solve(degrees, polarization).Transmitted, reverse.Solve(back, polarization).Transmitted, 5e-12);
         });
 
     [Fact]
@@ -100,7 +108,7 @@ public class FilmIdentityTests
         }
     }
 
-    // Errors found: below 2e-13.
+    // Errors found: below 4e-14.
     [Fact]
     public void S_equals_p_at_normal_incidence_where_x_and_y_are_alike()
     {

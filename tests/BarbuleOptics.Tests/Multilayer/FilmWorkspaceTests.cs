@@ -72,7 +72,9 @@ public class FilmWorkspaceTests
         Solver.Solve(large, Request(0, Wavelengths), workspace, new SolverResponse { Reflectance = used });
         Solver.Solve(small, Request(0, Wavelengths), workspace, new SolverResponse { Reflectance = used });
         Assert.Equal(fresh, used);
-        Assert.Throws<ArgumentException>(() => Solver.Solve(large, Request(0, Wavelengths), Solver.CreateWorkspace(small), new SolverResponse { Reflectance = used }));
+        FilmWorkspace tight = Solver.CreateWorkspace(small);
+        Assert.Throws<ArgumentException>(
+            () => Solver.Solve(large, Request(0, Wavelengths), tight, new SolverResponse { Reflectance = used }));
     }
 
     [Theory]

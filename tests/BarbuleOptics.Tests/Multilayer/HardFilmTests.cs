@@ -11,14 +11,15 @@ public class HardFilmTests
     private const double Tolerance = 1e-12;
 
     // A sheet between two gaps too wide to tunnel through in general: light enters by its guided modes alone, in lines far narrower than
-    // any grid. The line is found by golden-section search on the transmittance or absorptance.
+    // any grid: at 1500 nm, in s, 1e-10 degrees to either side.
     [Theory]
     [InlineData(300, 0)]
     [InlineData(600, 0)]
     [InlineData(1000, 0)]
     [InlineData(1500, 0)]
-    [InlineData(600, 1e-7)]
-    [InlineData(1000, 1e-10)]
+    [InlineData(600, 1e-5)]
+    [InlineData(1000, 1e-8)]
+    [InlineData(1500, 1e-12)]
     public void Power_balances_through_a_guided_resonance(double gapNm, double k)
     {
         TestStack guide = TestStack.OnIndex(1.6, 1.6, Film.OfIndex(1, gapNm), Film.OfIndex(new Complex(1.5, k), 400), Film.OfIndex(1, gapNm));
@@ -67,7 +68,7 @@ public class HardFilmTests
         double eta = 1.5 * Math.Cos(double.DegreesToRadians(degrees));
         double half = Math.PI / 500 * thicknessNm * eta;
         TestStack stack = TestStack.OnIndex(1.5, 1.5, Film.OfIndex(lateral, thicknessNm)).At(500);
-        Assert.Equal(1 / (1 + half * half), stack.Solve(degrees, Polarizations.S).Transmitted, 1e-11);
+        Assert.Equal(1 / (1 + half * half), stack.Solve(degrees, Polarizations.S).Transmitted, 1e-14);
     }
 
     // On both sides of kz = 0, from exactly 0 to where it is plain, with and without absorption.
@@ -84,7 +85,12 @@ public class HardFilmTests
             foreach (int sign in (int[])[-1, 0, 1])
             {
                 var critical = new Complex(lateralSquared + sign * Math.Pow(10, exponent), loss);
-                Film[] films = [Film.OfIndex(new(1.7, loss), 90), new(DiagonalPermittivity.Isotropic(critical), 30_000), new(new(2.2, critical, critical), 300)];
+                Film[] films =
+                [
+                    Film.OfIndex(new(1.7, loss), 90),
+                    new(DiagonalPermittivity.Isotropic(critical), 30_000),
+                    new(new(2.2, critical, critical), 300),
+                ];
                 TestStack stack = TestStack.OnIndex(1.5, 1.4, films);
                 Assert.InRange(stack.Solve(30, Polarizations.S).Gap, 0, Tolerance);
                 Assert.InRange(stack.Solve(30, Polarizations.P).Gap, 0, Tolerance);
@@ -122,8 +128,7 @@ public class HardFilmTests
 
     private static double FindLine(TestStack guide, Polarizations polarization)
     {
-        // A pole pulls the phase of the film field over half a turn; far off the line, transmittance falls as 1/detuning^2, so its
-        // largest sample points to the line and the interval round it shrinks.
+        // Beside the line what passes falls as 1/detuning^2, so that the largest sample points to it and the interval can shrink round it.
         double from = 45, to = 65;
         for (int round = 0; round < 12; round++)
         {

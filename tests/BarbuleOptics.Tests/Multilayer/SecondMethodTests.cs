@@ -8,8 +8,8 @@ namespace BarbuleOptics.Tests.Multilayer;
 /// <summary>The solver against <see cref="MaxwellMatrix"/>, on stacks of one to six films whose three permittivities differ.</summary>
 public class SecondMethodTests
 {
-    // Largest difference found: 3e-12, from the squarings of the matrix exponential.
-    private const double Tolerance = 1e-10;
+    // Largest difference found: 1.5e-12, from the squarings of the matrix exponential.
+    private const double Tolerance = 5e-11;
 
     [Fact]
     public void Random_anisotropic_stacks_match_the_matrix_exponential()

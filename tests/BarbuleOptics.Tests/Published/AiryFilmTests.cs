@@ -33,7 +33,7 @@ public class AiryFilmTests
         Assert.Equal(p, film.Solve(degrees, Polarizations.P).Reflected, 5.1e-8);
     }
 
-    // Errors found: below 2e-15.
+    // Errors found: below 2e-14, at 89 degrees.
     [Theory]
     [InlineData(1.0, 1.55, 0, 1.5, 210)]
     [InlineData(1.0, 1.75, .1, 1.55, 95)]
