@@ -15,53 +15,53 @@ internal static class MaterialsCommand
         var name = new Argument<string?>("NAME") { Description = "A material to show in full; without it all are listed", Arity = ArgumentArity.ZeroOrOne };
         var folder = new Option<string?>("--materials") { Description = "Folder of material tables of your own; their names win", HelpName = "DIR" };
         var command = new Command("materials", "Optical constants: what there is, where it was published and for which wavelengths") { name, folder };
-        command.SetAction(parse => Execute(parse.GetValue(name), parse.GetValue(folder)));
+        command.SetAction(parse => Execute(parse.GetValue(name), parse.GetValue(folder), parse.InvocationConfiguration.Output, parse.InvocationConfiguration.Error));
         return command;
     }
 
-    private static int Execute(string? name, string? folder)
+    private static int Execute(string? name, string? folder, TextWriter output, TextWriter error)
     {
         FileResult<MaterialCatalog> catalog = EmbeddedMaterials.WithFolder(folder);
         if (!catalog.Succeeded)
         {
             foreach (FileProblem problem in catalog.Problems)
-                Console.Error.WriteLine(problem);
+                error.WriteLine(problem);
             return ExitCode.WrongInput;
         }
         if (name is null)
         {
             foreach (MaterialTable table in catalog.Value.Tables)
-                Console.Out.WriteLine(string.Create(CultureInfo.InvariantCulture, $"{table.Material.Name,-22} {Range(table.Material),-16} {table.Material.Source}"));
+                output.WriteLine(string.Create(CultureInfo.InvariantCulture, $"{table.Material.Name,-22} {Range(table.Material),-16} {table.Material.Source}"));
             return ExitCode.Done;
         }
         MaterialTable? found = catalog.Value.Tables.FirstOrDefault(table => table.Material.Name == name);
         if (found is null)
         {
             string? near = NearMiss.Find(name, catalog.Value.Names);
-            Console.Error.WriteLine($"barbule: there is no material {OneLine.Quote(name)}; {(near is null ? "allowed " + string.Join(", ", catalog.Value.Names) : $"did you mean {near}?")}");
+            error.WriteLine($"barbule: there is no material {OneLine.Quote(name)}; {(near is null ? "allowed " + string.Join(", ", catalog.Value.Names) : $"did you mean {near}?")}");
             return ExitCode.WrongCommandLine;
         }
-        Show(found);
+        Show(found, output);
         return ExitCode.Done;
     }
 
-    private static void Show(MaterialTable table)
+    private static void Show(MaterialTable table, TextWriter output)
     {
         Material material = table.Material;
-        Console.Out.WriteLine(material.Name);
-        Console.Out.WriteLine($"  published for  {Range(material)}");
-        Console.Out.WriteLine($"  source         {material.Source}");
-        Console.Out.WriteLine($"  obtained       {material.Obtained}");
+        output.WriteLine(material.Name);
+        output.WriteLine($"  published for  {Range(material)}");
+        output.WriteLine($"  source         {material.Source}");
+        output.WriteLine($"  obtained       {material.Obtained}");
         if (table.Note is not null)
-            Console.Out.WriteLine($"  note           {table.Note}");
-        Console.Out.WriteLine();
-        Console.Out.WriteLine("  wavelength nm         n         k");
+            output.WriteLine($"  note           {table.Note}");
+        output.WriteLine();
+        output.WriteLine("  wavelength nm         n         k");
         foreach (double wavelengthNm in SampleNm)
         {
             bool inside = wavelengthNm >= material.LeastNm && wavelengthNm <= material.MostNm;
             if (inside || material.Extrapolates)
             {
-                Console.Out.WriteLine(string.Create(CultureInfo.InvariantCulture,
+                output.WriteLine(string.Create(CultureInfo.InvariantCulture,
                     $"  {wavelengthNm,13}  {material.N.At(wavelengthNm),8:0.0000}  {material.K.At(wavelengthNm),8:0.0000}{(inside ? "" : "  extrapolated")}"));
             }
         }

@@ -1,4 +1,5 @@
 using System.CommandLine;
+using System.CommandLine.Parsing;
 using BarbuleOptics.Color;
 using BarbuleOptics.Layering.Mixing;
 using BarbuleOptics.Multilayer;
@@ -43,8 +44,19 @@ internal sealed class PredictCommand
             foreach (string text in result.Tokens.Select(token => token.Value).Where(text => text.StartsWith('-')))
                 result.AddError(CommandLineErrors.UnknownOption(text, command));
         });
-        command.SetAction((parse, cancellation) =>
-            Task.FromResult(new PredictRun(options.Request(parse), Console.Out, Console.Error).Execute(cancellation)));
+        // The parser counts values, so that `--out here --out` would pass.
+        command.Validators.Add(result =>
+        {
+            foreach (OptionResult option in result.Children.OfType<OptionResult>().Where(option => option.Option.Arity.MinimumNumberOfValues > 0))
+            {
+                if (option.Tokens.Count > 0 && option.IdentifierTokenCount > option.Tokens.Count)
+                    result.AddError($"Required argument missing for option: '{option.Option.Name}'.");
+            }
+        });
+        // On a thread of its own, or nobody would listen for an interrupt before the work is done.
+        command.SetAction((parse, cancellation) => Task.Run(
+            () => new PredictRun(options.Request(parse), parse.InvocationConfiguration.Output, parse.InvocationConfiguration.Error).Execute(cancellation),
+            CancellationToken.None));
         return command;
     }
 

@@ -9,13 +9,30 @@ namespace BarbuleOptics.Cli;
 /// <summary>Carries out <c>barbule predict</c>: reads everything, solves, and only then writes.</summary>
 internal sealed class PredictRun(PredictRequest request, TextWriter output, TextWriter error)
 {
+    /// <summary>Most wavelengths times angles of one file: 2 million are a table of 0.6 GB.</summary>
+    private const int MostPoints = 2_000_000;
+
     private static readonly string[] ResultNames = [SpectraCsv.FileName, PredictionJson.FileName];
 
     private bool _inputWrong;
+    private int _written;
 
     public int Execute(CancellationToken cancellation)
     {
-        if (!TryFolders(out string[]? folders))
+        try
+        {
+            return Run(cancellation);
+        }
+        catch (OperationCanceledException)
+        {
+            error.WriteLine($"barbule: interrupted; {(_written == 0 ? "nothing was written" : $"the results of {_written} of {request.Files.Count} files were written")}");
+            return ExitCode.Interrupted;
+        }
+    }
+
+    private int Run(CancellationToken cancellation)
+    {
+        if (!HasRoom() || !TryFolders(out string[]? folders))
             return ExitCode.WrongCommandLine;
         FileResult<MaterialCatalog> catalog = EmbeddedMaterials.WithFolder(request.MaterialFolder);
         if (!catalog.Succeeded)
@@ -29,8 +46,12 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
             if (Predict(request.Files[i], catalog.Value, cancellation) is not (PredictedStructure predicted, LoadedStructure loaded))
                 continue;
             done.Add(predicted);
-            if (folders is not null && !TryWrite(folders[i], predicted, cancellation))
-                return ExitCode.OutputFailed;
+            if (folders is not null)
+            {
+                if (!TryWrite(folders[i], predicted, cancellation))
+                    return ExitCode.OutputFailed;
+                _written++;
+            }
             if (!request.Json)
                 Print(predicted, loaded, folders?[i]);
         }
@@ -78,6 +99,15 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
         output.Write(Encoding.UTF8.GetString(document));
     }
 
+    private bool HasRoom()
+    {
+        int wavelengths = request.Conditions.Wavelengths.Count, angles = request.Conditions.Incidences.Count;
+        if ((long)wavelengths * angles <= MostPoints)
+            return true;
+        error.WriteLine($"barbule: --angles: found {angles} angles at {wavelengths} wavelengths each; allowed {MostPoints} in all");
+        return false;
+    }
+
     /// <summary>One FILE writes into the folder itself, several into a folder each, named for the file.</summary>
     private bool TryFolders(out string[]? folders)
     {
@@ -111,7 +141,7 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
     private bool TryWrite(string folder, PredictedStructure predicted, CancellationToken cancellation)
         => TryOutput(() => OutputFolder.Write(
             folder,
-            [OutputFile.FromBytes(SpectraCsv.FileName, SpectraCsv.Write(predicted.Prediction)), OutputFile.FromBytes(PredictionJson.FileName, PredictionJson.Write(predicted))],
+            [new OutputFile(SpectraCsv.FileName, stream => SpectraCsv.Write(predicted.Prediction, stream)), OutputFile.FromBytes(PredictionJson.FileName, PredictionJson.Write(predicted))],
             request.Force, cancellation));
 
     private bool TryOutput(Action write)

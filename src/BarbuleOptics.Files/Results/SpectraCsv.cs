@@ -14,21 +14,28 @@ public static class SpectraCsv
     /// <summary>The header line.</summary>
     public const string Header = "wavelength_nm,incidence_deg,polarization,reflectance,transmittance,absorptance,diffracted_reflectance";
 
-    /// <summary>The file's bytes: UTF-8 without byte-order mark, lines ended by a line feed.</summary>
-    public static byte[] Write(StructurePrediction prediction)
+    /// <summary>Writes the table: UTF-8 without byte-order mark, lines ended by a line feed.</summary>
+    public static void Write(StructurePrediction prediction, Stream stream)
     {
         ArgumentNullException.ThrowIfNull(prediction);
-        var text = new StringBuilder(Header).Append('\n');
+        ArgumentNullException.ThrowIfNull(stream);
+        // A line at a time: a long table would not fit into one text.
+        using var text = new StreamWriter(stream, new UTF8Encoding(encoderShouldEmitUTF8Identifier: false), bufferSize: 1 << 16, leaveOpen: true);
+        text.Write(Header);
+        text.Write('\n');
         foreach (SpectralResponse response in prediction.Responses)
+            Write(response, text);
+    }
+
+    private static void Write(SpectralResponse response, StreamWriter text)
+    {
+        string beam = string.Create(CultureInfo.InvariantCulture, $",{response.Incidence.Degrees},{PolarizationNames.Of(response.Polarization)},");
+        ReadOnlySpan<double> wavelengthsNm = response.Reflectance.Grid.Nanometres;
+        Span<char> line = stackalloc char[256];
+        for (int i = 0; i < wavelengthsNm.Length; i++)
         {
-            string beam = string.Create(CultureInfo.InvariantCulture, $",{response.Incidence.Degrees},{PolarizationNames.Of(response.Polarization)},");
-            ReadOnlySpan<double> wavelengthsNm = response.Reflectance.Grid.Nanometres;
-            for (int i = 0; i < wavelengthsNm.Length; i++)
-            {
-                text.Append(CultureInfo.InvariantCulture, $"{wavelengthsNm[i]}").Append(beam);
-                text.Append(CultureInfo.InvariantCulture, $"{response.Reflectance[i]},{response.Transmittance[i]},{response.Absorptance[i]},{response.DiffractedReflectance[i]}\n");
-            }
+            line.TryWrite(CultureInfo.InvariantCulture, $"{wavelengthsNm[i]}{beam}{response.Reflectance[i]},{response.Transmittance[i]},{response.Absorptance[i]},{response.DiffractedReflectance[i]}\n", out int length);
+            text.Write(line[..length]);
         }
-        return Encoding.UTF8.GetBytes(text.ToString());
     }
 }

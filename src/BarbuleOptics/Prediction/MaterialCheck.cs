@@ -27,6 +27,11 @@ internal static class MaterialCheck
             return FormattableString.Invariant(
                 $"found wavelengths {grid.StartNm}-{grid.StopNm} nm; {material.Name} is a table that allows {material.LeastNm}-{material.MostNm} nm, narrow --wavelengths");
         }
+        if (ResonanceBetween(material, grid) is double resonanceNm)
+        {
+            return FormattableString.Invariant(
+                $"found wavelengths {grid.StartNm}-{grid.StopNm} nm; {material.Name} has a resonance at {resonanceNm:0.#} nm, beyond which its formula, published for {material.LeastNm}-{material.MostNm} nm, means nothing, narrow --wavelengths");
+        }
         foreach (double wavelengthNm in grid.Nanometres)
         {
             double n = material.N.At(wavelengthNm), k = material.K.At(wavelengthNm);
@@ -36,6 +41,21 @@ internal static class MaterialCheck
                 return FormattableString.Invariant($"{material.Name} has k = {k} at {wavelengthNm} nm; allowed 0 or above (its formula was published for {material.LeastNm}-{material.MostNm} nm)");
             if (mustBeLossless && k > 0)
                 return FormattableString.Invariant($"{material.Name} absorbs (k = {k:G4} at {wavelengthNm} nm); allowed a lossless surround, k = 0");
+        }
+        return null;
+    }
+
+    /// <summary>A resonance of Sellmeier's equation, in nm, that parts some of the grid from the published range; null when none does.</summary>
+    /// <remarks>The equation stands for frequencies between two resonances; on the far side of one it gives a number that is no index.</remarks>
+    private static double? ResonanceBetween(Material material, WavelengthGrid grid)
+    {
+        if (material.N is not SellmeierDispersion sellmeier)
+            return null;
+        foreach (double squareUm2 in sellmeier.ResonancesUm2)
+        {
+            double resonanceNm = 1000 * Math.Sqrt(Math.Max(0, squareUm2));
+            if ((grid.StartNm <= resonanceNm && resonanceNm < material.LeastNm) || (material.MostNm < resonanceNm && resonanceNm <= grid.StopNm))
+                return resonanceNm;
         }
         return null;
     }

@@ -11,5 +11,8 @@ internal sealed class TemporaryFolder : IDisposable
     public string[] Content()
         => [.. Directory.GetFileSystemEntries(Path, "*", SearchOption.AllDirectories).Select(path => System.IO.Path.GetRelativePath(Path, path)).Order(StringComparer.Ordinal)];
 
+    /// <summary>Text of a file within.</summary>
+    public string Text(string name) => File.ReadAllText(this[name]);
+
     public void Dispose() => Directory.Delete(Path, recursive: true);
 }

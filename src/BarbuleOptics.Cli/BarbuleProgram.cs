@@ -1,0 +1,44 @@
+using System.CommandLine;
+using System.CommandLine.Invocation;
+using BarbuleOptics.Files;
+
+namespace BarbuleOptics.Cli;
+
+/// <summary>The command from its arguments to its exit code, whatever it writes to.</summary>
+internal static class BarbuleProgram
+{
+    /// <summary>Runs the command to its end.</summary>
+    /// <param name="args">The words after <c>barbule</c>.</param>
+    /// <param name="output">Takes results.</param>
+    /// <param name="error">Takes what is wrong, one line each.</param>
+    /// <param name="cancellation">Interrupts the work, as the terminal does.</param>
+    /// <returns>One of <see cref="ExitCode"/>.</returns>
+    public static async Task<int> RunAsync(string[] args, TextWriter output, TextWriter error, CancellationToken cancellation = default)
+    {
+        try
+        {
+            RootCommand root = BarbuleCommand.Create();
+            // Without the replacer a file named @results stays a file name.
+            ParseResult result = root.Parse(args, new ParserConfiguration { ResponseFileTokenReplacer = null });
+            if (result.Errors.Count > 0 && result.Action is ParseErrorAction)
+            {
+                CommandLineErrors.Write(result, error);
+                return ExitCode.WrongCommandLine;
+            }
+            var configuration = new InvocationConfiguration { EnableDefaultExceptionHandler = false, Output = output, Error = error };
+            return await result.InvokeAsync(configuration, cancellation).ConfigureAwait(false);
+        }
+        catch (OperationCanceledException)
+        {
+            error.WriteLine("barbule: interrupted");
+            return ExitCode.Interrupted;
+        }
+#pragma warning disable CA1031 // The last line of defense: whatever is left is a fault of ours, and a user sees one line of it.
+        catch (Exception fault)
+#pragma warning restore CA1031
+        {
+            error.WriteLine(OneLine.Escape($"barbule: a fault of the program, not of your input: {fault.GetType().Name}: {fault.Message}; please report it with the command line and the input file"));
+            return ExitCode.OurFault;
+        }
+    }
+}

@@ -1,0 +1,182 @@
+using System.Globalization;
+using System.Text.Json;
+using BarbuleOptics.Files.Results;
+using BarbuleOptics.Tests.Files;
+using BarbuleOptics.Tests.Samples;
+using Xunit;
+
+namespace BarbuleOptics.Tests.Cli;
+
+/// <summary>What <c>barbule predict</c> writes.</summary>
+public sealed class PredictOutputTests
+{
+    private const string Header = "wavelength_nm,incidence_deg,polarization,reflectance,transmittance,absorptance,diffracted_reflectance";
+
+    public static TheoryData<string> Samples => SampleFiles.Rows;
+
+    [Fact]
+    public async Task Spectra_hold_a_line_for_each_wavelength_angle_and_polarization()
+    {
+        using var folder = new TemporaryFolder();
+        string file = SampleFiles.Write("solid-rods-one-row", folder.Path);
+        (await Barbule.Call("predict", file, "--wavelengths", "400:401:0.5", "--angles", "0:60:30", "--out", folder["out"])).Good();
+
+        string[] lines = folder.Text("out/spectra.csv").Split('\n');
+        Assert.Equal(Header, lines[0]);
+        Assert.Equal("", lines[^1]);
+        Assert.DoesNotContain("\r", folder.Text("out/spectra.csv"), StringComparison.Ordinal);
+        string[] beams = [.. lines[1..^1].Select(line => string.Join(',', line.Split(',')[..3]))];
+        string[] expected = [.. from angle in (string[])["0", "30", "60"] from beam in (string[])["s", "p", "unpolarized"] from nm in (string[])["400", "400.5", "401"] select $"{nm},{angle},{beam}"];
+        Assert.Equal(expected, beams);
+    }
+
+    // Nothing is diffracted by films, and unpolarized is the mean of s and p.
+    [Theory]
+    [MemberData(nameof(Samples))]
+    public async Task Power_closes_on_every_line_of_every_sample(string name)
+    {
+        using var folder = new TemporaryFolder();
+        string file = SampleFiles.Write(name, folder.Path);
+        (await Barbule.Call("predict", file, "--wavelengths", "300:780:2", "--angles", "0,30,60,85", "--out", folder["out"])).Good();
+
+        double[][] values = [.. folder.Text("out/spectra.csv").Split('\n')[1..^1].Select(line => line.Split(',')[3..].Select(text => double.Parse(text, CultureInfo.InvariantCulture)).ToArray())];
+        Assert.Equal(4 * 3 * 241, values.Length);
+        Assert.All(values, parts =>
+        {
+            Assert.All(parts, part => Assert.InRange(part, 0, 1));
+            Assert.Equal(0, parts[3]);
+            Assert.Equal(1, parts.Sum(), 1e-12);
+        });
+        for (int i = 0; i < 241; i++)
+            Assert.Equal((values[723 + i][0] + values[964 + i][0]) / 2, values[1205 + i][0], 1e-15);
+    }
+
+    [Fact]
+    public async Task Polarization_narrows_spectra_and_views()
+    {
+        using var folder = new TemporaryFolder();
+        string file = SampleFiles.Write("solid-rods-one-row", folder.Path);
+        (await Barbule.Call("predict", file, "--angles", "40", "--polarization", "s", "--out", folder["s"])).Good();
+        (await Barbule.Call("predict", file, "--angles", "40", "--out", folder["all"])).Good();
+
+        string[] s = folder.Text("s/spectra.csv").Split('\n'), all = folder.Text("all/spectra.csv").Split('\n');
+        Assert.Equal(all.Where(line => line == Header || line.Contains(",s,", StringComparison.Ordinal)), s[..^1]);
+        JsonElement view = Assert.Single(JsonDocument.Parse(folder.Text("s/prediction.json")).RootElement.GetProperty("views").EnumerateArray());
+        Assert.Equal("s", view.GetProperty("polarization").GetString());
+    }
+
+    [Fact]
+    public async Task The_document_holds_every_key_of_its_description()
+    {
+        using var folder = new TemporaryFolder();
+        string file = SampleFiles.Write("porous-platelets", folder.Path);
+        JsonElement root = (await Barbule.Call("predict", file, "--angles", "0,30", "--json", "--observer", "1964-10deg", "--illuminant", "A", "--accuracy", "1e-3")).Json();
+
+        AssertKeys(root, "program", "structure", "solver", "mixing", "core_mixing", "films", "accuracy_asked", "error_estimate", "reference", "scope", "materials", "wavelengths_nm", "views", "main_peak_over_angle", "warnings");
+        Assert.Equal(("Barbule Optics", ProgramIdentity.Version), (Text(root, "program", "name"), Text(root, "program", "version")));
+        Assert.Equal(file, Text(root, "structure", "file"));
+        Assert.Equal(Convert.ToHexStringLower(System.Security.Cryptography.SHA256.HashData(File.ReadAllBytes(file))), Text(root, "structure", "sha256"));
+        Assert.Equal(("multilayer", "bruggeman", "bruggeman-3d", "mirror"), (Text(root, "solver"), Text(root, "mixing"), Text(root, "core_mixing"), Text(root, "reference")));
+        Assert.Equal(1e-3, Number(root, "accuracy_asked"));
+        Assert.InRange(Number(root, "error_estimate"), 1e-13, 1e-3);
+        Assert.Equal((300, 780, 1), (Number(root, "wavelengths_nm", "start"), Number(root, "wavelengths_nm", "stop"), Number(root, "wavelengths_nm", "step")));
+        Assert.All(root.GetProperty("materials").EnumerateArray(), material =>
+        {
+            AssertKeys(material, "name", "source", "obtained", "range_nm");
+            Assert.Equal(2, material.GetProperty("range_nm").GetArrayLength());
+        });
+        Assert.Equal(["air", "keratin", "eumelanin"], root.GetProperty("materials").EnumerateArray().Select(material => Text(material, "name")));
+        Assert.All(root.GetProperty("warnings").EnumerateArray(), warning =>
+        {
+            AssertKeys(warning, "code", "message", "incidence_deg");
+            Assert.Contains(warning.GetProperty("incidence_deg").ValueKind, (JsonValueKind[])[JsonValueKind.Null, JsonValueKind.Number]);
+        });
+        JsonElement[] views = [.. root.GetProperty("views").EnumerateArray()];
+        Assert.Equal([0, 30], views.Select(view => Number(view, "incidence_deg")));
+        Assert.All(views, AssertView);
+    }
+
+    [Fact]
+    public async Task What_does_not_exist_is_null()
+    {
+        using var folder = new TemporaryFolder();
+        string file = SampleFiles.Write("cortex-over-sheet", folder.Path);
+        JsonElement root = (await Barbule.Call("predict", file, "--wavelengths", "500:600:1", "--json")).Json();
+
+        Assert.Equal(JsonValueKind.Null, root.GetProperty("mixing").ValueKind);
+        Assert.Equal(JsonValueKind.Null, root.GetProperty("core_mixing").ValueKind);
+        JsonElement view = root.GetProperty("views")[0];
+        Assert.Equal(JsonValueKind.Null, view.GetProperty("cie").ValueKind);
+        Assert.Equal(JsonValueKind.Null, view.GetProperty("bird").ValueKind);
+        Assert.Equal(JsonValueKind.Null, view.GetProperty("layer_model_error").ValueKind);
+    }
+
+    [Fact]
+    public async Task A_value_set_on_the_command_line_is_as_good_as_one_in_the_file()
+    {
+        using var folder = new TemporaryFolder();
+        string file = SampleFiles.Write("hollow-rods", folder.Path);
+        string wet = folder["wet.toml"];
+        await File.WriteAllTextAsync(wet, SampleFiles.Text("hollow-rods").Replace("[cortex]", "[barbule]\nsurround = \"water\"\n[cortex]", StringComparison.Ordinal), TestContext.Current.CancellationToken);
+        (await Barbule.Call("predict", file, "--set", "barbule.surround=water", "--out", folder["set"])).Good();
+        (await Barbule.Call("predict", wet, "--out", folder["wet"])).Good();
+        (await Barbule.Call("predict", file, "--out", folder["dry"])).Good();
+
+        Assert.Equal(folder.Text("wet/spectra.csv"), folder.Text("set/spectra.csv"));
+        Assert.NotEqual(folder.Text("dry/spectra.csv"), folder.Text("set/spectra.csv"));
+        JsonElement changes = JsonDocument.Parse(folder.Text("set/prediction.json")).RootElement.GetProperty("structure").GetProperty("set");
+        Assert.Equal("barbule.surround=water", Assert.Single(changes.EnumerateArray()).GetString());
+    }
+
+    [Fact]
+    public async Task A_folder_of_materials_adds_names_and_wins_over_those_inside()
+    {
+        using var folder = new TemporaryFolder();
+        string file = SampleFiles.Write("cortex-over-sheet", folder.Path), tables = Directory.CreateDirectory(folder["tables"]).FullName;
+        const string Table = "format = 1\nname = \"{0}\"\nunit = \"nm\"\nrange_nm = [300, 900]\nsource = \"invented\"\nobtained = \"invented\"\n[n]\nkind = \"constant\"\nvalue = 1.9\n[k]\nkind = \"constant\"\nvalue = 0.0\n";
+        await File.WriteAllTextAsync(Path.Combine(tables, "keratin.toml"), Table.Replace("{0}", "keratin", StringComparison.Ordinal), TestContext.Current.CancellationToken);
+        await File.WriteAllTextAsync(Path.Combine(tables, "glass.toml"), Table.Replace("{0}", "glass", StringComparison.Ordinal), TestContext.Current.CancellationToken);
+        (await Barbule.Call("predict", file, "--materials", tables, "--out", folder["own"])).Good();
+        (await Barbule.Call("predict", file, "--materials", tables, "--set", "barbule.matrix=glass", "--out", folder["named"])).Good();
+        (await Barbule.Call("predict", file, "--set", "barbule.matrix={ n = 1.9 }", "--out", folder["inline"])).Good();
+
+        Assert.Equal(folder.Text("inline/spectra.csv"), folder.Text("own/spectra.csv"));
+        Assert.Equal(folder.Text("inline/spectra.csv"), folder.Text("named/spectra.csv"));
+        Assert.Contains("invented", (await Barbule.Call("materials", "keratin", "--materials", tables)).Good().Output, StringComparison.Ordinal);
+    }
+
+    private static void AssertView(JsonElement view)
+    {
+        AssertKeys(view, "incidence_deg", "polarization", "spectrum", "cie", "hue", "bird", "layer_model_error");
+        Assert.Equal("unpolarized", Text(view, "polarization"));
+        JsonElement spectrum = view.GetProperty("spectrum"), cie = view.GetProperty("cie");
+        AssertKeys(spectrum, "peaks", "at_edge", "mean_reflectance", "contrast", "ultraviolet_share");
+        Assert.Contains(spectrum.GetProperty("at_edge").ValueKind, (JsonValueKind[])[JsonValueKind.True, JsonValueKind.False]);
+        Assert.NotEqual(0, spectrum.GetProperty("peaks").GetArrayLength());
+        Assert.All(spectrum.GetProperty("peaks").EnumerateArray(), peak =>
+        {
+            AssertKeys(peak, "wavelength_nm", "reflectance", "prominence", "half_height_width_nm", "half_prominence_width_nm");
+            Assert.InRange(Number(peak, "wavelength_nm"), 300, 780);
+            Assert.InRange(Number(peak, "prominence"), 0, Number(peak, "reflectance"));
+        });
+        AssertKeys(cie, "observer", "illuminant", "XYZ", "xy", "Lab", "LCh", "dominant_wavelength_nm", "excitation_purity", "sRGB", "sRGB_brightened", "in_sRGB_gamut");
+        Assert.Equal(("1964-10deg", "A"), (Text(cie, "observer"), Text(cie, "illuminant")));
+        double[] xyz = Numbers(cie, "XYZ"), xy = Numbers(cie, "xy"), lab = Numbers(cie, "Lab"), lch = Numbers(cie, "LCh");
+        // Definitions of x, y, C* and h (CIE 015:2018, sections 7.3 and 8.2.1; numbers of the sections from memory).
+        Assert.Equal([xyz[0] / xyz.Sum(), xyz[1] / xyz.Sum()], xy, (a, b) => Math.Abs(a - b) < 1e-12);
+        Assert.Equal([lab[0], Math.Sqrt(lab[1] * lab[1] + lab[2] * lab[2]), (Math.Atan2(lab[2], lab[1]) * 180 / Math.PI + 360) % 360], lch, (a, b) => Math.Abs(a - b) < 1e-9);
+        Assert.Matches("^#[0-9a-f]{6}$", Text(cie, "sRGB"));
+        Assert.Matches("^#[0-9a-f]{6}$", Text(cie, "sRGB_brightened"));
+        Assert.NotEqual("", Text(view, "hue", "term"));
+    }
+
+    private static void AssertKeys(JsonElement element, params string[] keys) => Assert.Equal(keys, element.EnumerateObject().Select(property => property.Name));
+
+    private static JsonElement At(JsonElement element, string[] path) => path.Aggregate(element, (inner, key) => inner.GetProperty(key));
+
+    private static string Text(JsonElement element, params string[] path) => At(element, path).GetString()!;
+
+    private static double Number(JsonElement element, params string[] path) => At(element, path).GetDouble();
+
+    private static double[] Numbers(JsonElement element, string key) => [.. element.GetProperty(key).EnumerateArray().Select(item => item.GetDouble())];
+}

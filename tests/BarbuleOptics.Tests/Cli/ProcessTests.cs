@@ -1,0 +1,83 @@
+using System.Diagnostics;
+using BarbuleOptics.Files;
+using BarbuleOptics.Files.Results;
+using BarbuleOptics.Tests.Files;
+using BarbuleOptics.Tests.Samples;
+using Xunit;
+
+namespace BarbuleOptics.Tests.Cli;
+
+/// <summary>The command as a process: what only a process shows.</summary>
+public sealed class ProcessTests
+{
+    [Fact]
+    public async Task Results_are_the_same_bytes_in_a_German_shell_on_one_thread_and_called_within()
+    {
+        using var folder = new TemporaryFolder();
+        SampleFiles.Write("hollow-rods", folder.Path);
+        string[] German(string threads, string into) => ["predict", "hollow-rods.toml", "--angles", "0,30.5", "--threads", threads, "--out", into];
+        Outcome first = await Barbule.Run(German("1", "one"), folder.Path, ("LANG", "de_DE.UTF-8"), ("LC_ALL", "de_DE.UTF-8"));
+        Outcome second = await Barbule.Run(German("2", "two"), folder.Path, ("LANG", "C"), ("LC_ALL", "C"));
+        string path = folder["hollow-rods.toml"];
+        (await Barbule.Call("predict", path, "--angles", "0,30.5", "--out", folder["three"])).Good();
+
+        Assert.Equal(first.Good().Output.Replace("one/", "two/", StringComparison.Ordinal), second.Good().Output);
+        Assert.Contains("Written: ", first.Output, StringComparison.Ordinal);
+        string spectra = folder.Text("one/" + SpectraCsv.FileName), json = folder.Text("one/" + PredictionJson.FileName);
+        Assert.Equal(spectra, folder.Text("two/" + SpectraCsv.FileName));
+        Assert.Equal(spectra, folder.Text("three/" + SpectraCsv.FileName));
+        Assert.Equal(json, folder.Text("two/" + PredictionJson.FileName));
+        // The file as typed is the one thing that differs.
+        Assert.Equal(json, folder.Text("three/" + PredictionJson.FileName).Replace(path, "hollow-rods.toml", StringComparison.Ordinal));
+    }
+
+    [Fact]
+    public async Task Json_is_one_document_and_nothing_else()
+    {
+        using var folder = new TemporaryFolder();
+        SampleFiles.Write("deep-multilayer", folder.Path);
+        Outcome outcome = await Barbule.Run(["predict", "deep-multilayer.toml", "--json"], folder.Path);
+
+        Assert.StartsWith("{", outcome.Good().Output, StringComparison.Ordinal);
+        Assert.EndsWith("}\n", outcome.Output, StringComparison.Ordinal);
+        Assert.Equal("deep-multilayer.toml", outcome.Json().GetProperty("structure").GetProperty("file").GetString());
+        Assert.Equal(["deep-multilayer.toml"], folder.Content());
+    }
+
+    [Fact]
+    public async Task A_wrong_file_ends_with_3_and_one_line_on_standard_error()
+    {
+        using var folder = new TemporaryFolder();
+        await File.WriteAllTextAsync(folder["wrong.toml"], "format = 1\n[cortex]\nthickness = -5\n", TestContext.Current.CancellationToken);
+        Outcome outcome = await Barbule.Run(["predict", "wrong.toml", "--out", "out"], folder.Path);
+
+        Assert.StartsWith("wrong.toml:3:13: cortex.thickness: ", outcome.Refusal(3), StringComparison.Ordinal);
+        Assert.Equal(["wrong.toml"], folder.Content());
+    }
+
+    [Fact]
+    public async Task A_wrong_word_ends_with_2_and_a_hint()
+        => Assert.Equal("barbule: there is no command \"predcit\"; did you mean predict?", (await Barbule.Run(["predcit", "x.toml"])).Refusal(2));
+
+    [Fact]
+    public async Task Version_names_the_program()
+        => Assert.Equal($"{ProgramIdentity.Name} {ProgramIdentity.Version}\n", (await Barbule.Run(["--version"])).Good().Output);
+
+    // 130 is 128 and the number of the signal, SIGINT, as a shell reports it (POSIX.1-2017, Shell Command Language, 2.8.2: "greater than 128").
+    [Fact]
+    public async Task An_interrupt_ends_with_130_and_writes_nothing()
+    {
+        Assert.SkipWhen(OperatingSystem.IsWindows(), "Windows has no kill.");
+        using var folder = new TemporaryFolder();
+        SampleFiles.Write("hollow-rods", folder.Path);
+        using Process process = Barbule.Start(["predict", "hollow-rods.toml", "--wavelengths", "300:399.999:0.001", "--angles", "0:18:1", "--out", "out"], folder.Path);
+        // By then it computes: start-up takes a fifth of that.
+        while (!process.HasExited && process.TotalProcessorTime < TimeSpan.FromSeconds(1))
+            await Task.Delay(20, TestContext.Current.CancellationToken);
+        OutsideProgram.Run(OutsideProgram.Find("kill", "procps"), folder.Path, "-INT", process.Id.ToString(System.Globalization.CultureInfo.InvariantCulture));
+        Outcome outcome = await Barbule.End(process);
+
+        Assert.Equal("barbule: interrupted; nothing was written", outcome.Refusal(130));
+        Assert.Equal(["hollow-rods.toml"], folder.Content());
+    }
+}
