@@ -8,15 +8,23 @@ namespace BarbuleOptics.Multilayer;
 /// <summary>A section as films, in slices just fine enough for the reflectance asked for.</summary>
 public sealed class LayerModel
 {
-    private LayerModel(FilmStack films, int[] slices, double sliceError)
+    private readonly FilmPlan _plan;
+    private readonly Section _section;
+    private readonly IMaterialCatalog _catalog;
+    private readonly IMixingRule _rule;
+
+    private LayerModel(DepthProfile profile, IMaterialCatalog catalog, IMixingRule rule, int[] slices, double sliceError)
     {
-        Films = films;
+        _plan = FilmPlan.Of(profile, slices);
+        _section = profile.Section;
+        _catalog = catalog;
+        _rule = rule;
         Slices = ValueList.Create<int>(slices);
         SliceError = sliceError;
     }
 
-    /// <summary>The films, at the wavelengths asked for.</summary>
-    public FilmStack Films { get; }
+    /// <summary>Number of films.</summary>
+    public int FilmCount => _plan.FilmCount;
 
     /// <summary>Number of slices of each kind of interval.</summary>
     public ValueList<int> Slices { get; }
@@ -26,7 +34,7 @@ public sealed class LayerModel
     /// wavelengths that were not tried.</remarks>
     public double SliceError { get; }
 
-    /// <summary>Finds the slices and builds the films.</summary>
+    /// <summary>Finds the slices.</summary>
     /// <param name="section">The section.</param>
     /// <param name="catalog">Where its materials are.</param>
     /// <param name="rule">How cuts are averaged.</param>
@@ -34,17 +42,22 @@ public sealed class LayerModel
     /// <param name="incidences">The angles of incidence that will be asked for; at least one.</param>
     /// <param name="tolerance">Largest change of R allowed when slices are halved, at any wavelength; above 0.</param>
     /// <param name="solver">The solver that judges the slices.</param>
+    /// <param name="cancellation">Ends the search early with an <see cref="OperationCanceledException"/>.</param>
     /// <exception cref="ArgumentException">A material cannot be had, or the rods lie at an angle (see <see cref="FilmBuilder"/>).</exception>
     public static LayerModel Of<TWorkspace>(
         Section section, IMaterialCatalog catalog, IMixingRule rule, WavelengthGrid grid, IReadOnlyList<Angle> incidences, double tolerance,
-        ISpectralSolver<FilmStack, TWorkspace> solver)
+        ISpectralSolver<FilmStack, TWorkspace> solver, CancellationToken cancellation = default)
     {
         ArgumentNullException.ThrowIfNull(grid);
         Guard.Positive(tolerance);
         DepthProfile profile = DepthProfile.Of(section);
         var refinement = new SliceRefinement<TWorkspace>(profile, catalog, rule, grid, incidences, solver);
-        (int[] slices, double change) = refinement.Find(tolerance);
-        var permittivities = new SectionPermittivities(section, catalog, grid.Nanometres);
-        return new LayerModel(FilmBuilder.Build(profile, slices, permittivities, rule), slices, 2 * change);
+        (int[] slices, double change) = refinement.Find(tolerance, cancellation);
+        return new LayerModel(profile, catalog, rule, slices, 2 * change);
     }
+
+    /// <summary>The films at some wavelengths; a long grid is taken in blocks, for each film holds six numbers a wavelength.</summary>
+    /// <param name="wavelengthsNm">Vacuum wavelengths, in nm.</param>
+    /// <exception cref="ArgumentException">A table does not reach a wavelength.</exception>
+    public FilmStack FilmsAt(ReadOnlySpan<double> wavelengthsNm) => _plan.Build(new SectionPermittivities(_section, _catalog, wavelengthsNm), _rule);
 }

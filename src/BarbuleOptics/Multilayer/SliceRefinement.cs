@@ -39,7 +39,7 @@ internal sealed class SliceRefinement<TWorkspace>
     }
 
     /// <summary>The slices of each kind, and the largest change of R at the probes when all are halved.</summary>
-    public (int[] Slices, double Change) Find(double tolerance)
+    public (int[] Slices, double Change) Find(double tolerance, CancellationToken cancellation)
     {
         double allowed = Margin * tolerance;
         int[] slices = new int[_profile.KindCount];
@@ -50,6 +50,7 @@ internal sealed class SliceRefinement<TWorkspace>
 
         while (true)
         {
+            cancellation.ThrowIfCancellationRequested();
             double[] reflectance = Reflectances(slices);
             double change = LargestChange(reflectance, Reflectances(Halved(slices, uneven)));
             if (change <= allowed || uneven.Any(kind => slices[kind] >= MostSlices))

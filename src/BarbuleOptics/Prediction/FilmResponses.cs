@@ -8,7 +8,7 @@ namespace BarbuleOptics.Prediction;
 internal sealed class FilmResponses
 {
     /// <summary>Wavelengths a piece of work has; the pieces do not depend on the number of threads.</summary>
-    private const int Block = 64;
+    private const int Block = 32;
 
     private readonly PredictionConditions _conditions;
     private readonly double[][] _values;
@@ -40,29 +40,37 @@ internal sealed class FilmResponses
     public IEnumerable<SpectralResponse> Of(Polarizations polarization)
         => Enumerable.Range(0, _conditions.Incidences.Count).Select(angle => Of(angle, polarization));
 
-    public static FilmResponses Solve(ReferenceFilmSolver solver, FilmStack films, PredictionConditions conditions, CancellationToken cancellation)
+    public static FilmResponses Solve(ReferenceFilmSolver solver, LayerModel model, PredictionConditions conditions, CancellationToken cancellation)
     {
         int count = conditions.Wavelengths.Count, angles = conditions.Incidences.Count;
-        int blocks = (count + Block - 1) / Block;
         double[][] values = [.. Enumerable.Range(0, 6 * angles).Select(_ => new double[count])];
-        var errors = new double[blocks * angles * 2];
+        var errors = new double[(count + Block - 1) / Block];
         var options = new ParallelOptions { MaxDegreeOfParallelism = conditions.Threads, CancellationToken = cancellation };
-        Parallel.For(0, errors.Length, options, () => solver.CreateWorkspace(films), (piece, _, workspace) =>
+        Parallel.For(0, errors.Length, options, block => errors[block] = SolveBlock(solver, model, conditions, values, block * Block, cancellation));
+        return new FilmResponses(conditions, values, errors.Max());
+    }
+
+    private static double SolveBlock(
+        ReferenceFilmSolver solver, LayerModel model, PredictionConditions conditions, double[][] values, int first, CancellationToken cancellation)
+    {
+        int length = Math.Min(Block, conditions.Wavelengths.Count - first);
+        FilmStack films = model.FilmsAt(conditions.Wavelengths.Nanometres.Slice(first, length));
+        FilmWorkspace workspace = solver.CreateWorkspace(films);
+        double error = 0;
+        for (int beam = 0; beam < 2 * conditions.Incidences.Count; beam++)
         {
-            int block = piece % blocks, beam = piece / blocks, first = block * Block;
-            int length = Math.Min(Block, count - first);
+            cancellation.ThrowIfCancellationRequested();
             var request = new SolverRequest(
-                first, length, conditions.Incidences[beam / 2], beam % 2 == 0 ? Polarizations.S : Polarizations.P,
+                0, length, conditions.Incidences[beam / 2], beam % 2 == 0 ? Polarizations.S : Polarizations.P,
                 SolverOutputs.Transmittance | SolverOutputs.Absorptance);
-            errors[piece] = solver.Solve(films, request, workspace, new SolverResponse
+            error = Math.Max(error, solver.Solve(films, request, workspace, new SolverResponse
             {
                 Reflectance = values[3 * beam].AsSpan(first, length),
                 Transmittance = values[3 * beam + 1].AsSpan(first, length),
                 Absorptance = values[3 * beam + 2].AsSpan(first, length),
-            });
-            return workspace;
-        }, _ => { });
-        return new FilmResponses(conditions, values, errors.Max());
+            }));
+        }
+        return error;
     }
 
     private SpectralResponse Of(int angle, Polarizations polarization)

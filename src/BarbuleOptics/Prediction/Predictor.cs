@@ -52,9 +52,8 @@ public static class Predictor
     {
         var solver = new ReferenceFilmSolver();
         double sliceTolerance = Math.Min(MostSliceChange, conditions.Accuracy);
-        LayerModel model = LayerModel.Of(section, catalog, conditions.Mixing, conditions.Wavelengths, conditions.Incidences, sliceTolerance, solver);
-        cancellation.ThrowIfCancellationRequested();
-        FilmResponses responses = FilmResponses.Solve(solver, model.Films, conditions, cancellation);
+        LayerModel model = LayerModel.Of(section, catalog, conditions.Mixing, conditions.Wavelengths, conditions.Incidences, sliceTolerance, solver, cancellation);
+        FilmResponses responses = FilmResponses.Solve(solver, model, conditions, cancellation);
 
         List<Material> materials = [.. MaterialUse.Of(barbule).Select(use => Find(catalog, use.Reference)).Distinct()];
         var warnings = new WarningCollector(barbule, section, conditions);
@@ -84,7 +83,7 @@ public static class Predictor
             Mixing = section.Runs.Count > 0 ? conditions.Mixing.Name : null,
             CoreMixing = section.Materials.Any(material => material.IsAveraged) ? PorousCore.Name : null,
             ErrorEstimate = error,
-            FilmCount = model.Films.FilmCount,
+            FilmCount = model.FilmCount,
             Materials = [.. materials],
             Responses = [.. conditions.AllPolarizations ? responses.All : responses.Of(conditions.Polarization)],
             Views = [.. views],
