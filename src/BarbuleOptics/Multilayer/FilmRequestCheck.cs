@@ -40,9 +40,9 @@ internal static class FilmRequestCheck
     private static void CheckResponse(FilmStack stack, in SolverRequest request, in SolverResponse response)
     {
         Guard.SameLength(request.Count, response.Reflectance.Length, nameof(response));
-        if (request.Outputs.HasFlag(SolverOutputs.Transmittance))
+        if ((request.Outputs & SolverOutputs.Transmittance) != 0)
             Guard.SameLength(request.Count, response.Transmittance.Length, nameof(response));
-        if (request.Outputs.HasFlag(SolverOutputs.Absorptance))
+        if ((request.Outputs & SolverOutputs.Absorptance) != 0)
             Guard.SameLength(request.Count, response.Absorptance.Length, nameof(response));
         if (!response.FilmAbsorptance.IsEmpty)
             Guard.SameLength(checked(stack.FilmCount * request.Count), response.FilmAbsorptance.Length, nameof(response));

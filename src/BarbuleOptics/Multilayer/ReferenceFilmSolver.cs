@@ -43,9 +43,9 @@ public sealed class ReferenceFilmSolver : ISpectralSolver<FilmStack, FilmWorkspa
         {
             int wavelength = request.First + i;
             double index = structure.SurroundIndex[wavelength];
-            if (request.Polarization.HasFlag(Polarizations.S))
+            if ((request.Polarization & Polarizations.S) != 0)
                 Add(structure, wavelength, new PlaneWave(index, sine, cosine, IsP: false), workspace, both ? 0.5 : 1, i, request, response);
-            if (request.Polarization.HasFlag(Polarizations.P))
+            if ((request.Polarization & Polarizations.P) != 0)
                 Add(structure, wavelength, new PlaneWave(index, sine, cosine, IsP: true), workspace, both ? 0.5 : 1, i, request, response);
         }
         return RoundingError;
@@ -56,9 +56,9 @@ public sealed class ReferenceFilmSolver : ISpectralSolver<FilmStack, FilmWorkspa
         response.Reflectance.Clear();
         response.DiffractedReflectance.Clear();
         response.FilmAbsorptance.Clear();
-        if (request.Outputs.HasFlag(SolverOutputs.Transmittance))
+        if ((request.Outputs & SolverOutputs.Transmittance) != 0)
             response.Transmittance.Clear();
-        if (request.Outputs.HasFlag(SolverOutputs.Absorptance))
+        if ((request.Outputs & SolverOutputs.Absorptance) != 0)
             response.Absorptance.Clear();
     }
 
@@ -68,9 +68,9 @@ public sealed class ReferenceFilmSolver : ISpectralSolver<FilmStack, FilmWorkspa
     {
         PowerBalance power = FilmRecursion.Solve(stack, wavelength, light, work);
         response.Reflectance[at] += weight * power.Reflected;
-        if (request.Outputs.HasFlag(SolverOutputs.Transmittance))
+        if ((request.Outputs & SolverOutputs.Transmittance) != 0)
             response.Transmittance[at] += weight * power.Transmitted;
-        if (request.Outputs.HasFlag(SolverOutputs.Absorptance))
+        if ((request.Outputs & SolverOutputs.Absorptance) != 0)
             response.Absorptance[at] += weight * power.Lost;
         if (response.FilmAbsorptance.IsEmpty)
             return;

@@ -71,6 +71,34 @@ public class HardFilmTests
         Assert.Equal(1 / (1 + half * half), stack.Solve(degrees, Polarizations.S).Transmitted, 1e-14);
     }
 
+    // kz = 0 to the last digit, where eta is 0 too; the second method has no kz in a film. Errors found: below 1e-15.
+    [Theory]
+    [InlineData(0)]
+    [InlineData(.3)]
+    public void A_film_exactly_at_its_critical_angle_matches_the_matrix_exponential(double loss)
+    {
+        double sine = Math.Sin(double.DegreesToRadians(30));
+        double critical = 1.5 * 1.5 * (sine * sine);
+        Film[] films =
+        [
+            Film.OfIndex(new(1.7, .1), 90),
+            new(new(new(2.2, loss), critical, critical), 200), // s: ey = K^2; p: ez = K^2, ex free
+            Film.OfIndex(1.4, 60),
+        ];
+        TestStack stack = TestStack.OnIndex(1.5, 1.6, films);
+        var second = new MaxwellMatrix(stack, 30);
+        AssertSame(second.Solve(isP: false), stack.Solve(30, Polarizations.S));
+        AssertSame(second.Solve(isP: true), stack.Solve(30, Polarizations.P));
+
+        static void AssertSame(Powers expected, Powers found)
+        {
+            Assert.Equal(expected.Reflected, found.Reflected, 1e-13);
+            Assert.Equal(expected.Transmitted, found.Transmitted, 1e-13);
+            Assert.Equal(expected.Films[1], found.Films[1], 1e-13);
+            Assert.InRange(found.Gap, 0, Tolerance);
+        }
+    }
+
     // On both sides of kz = 0, from exactly 0 to where it is plain, with and without absorption.
     [Theory]
     [InlineData(0)]
@@ -113,6 +141,23 @@ public class HardFilmTests
             Assert.InRange(power.Gap, 0, Tolerance);
             Assert.Equal(0, power.Transmitted);
             Assert.Equal(0, power.Films[2]);
+        }
+    }
+
+    // Toward the light the fields grow by nH/nL at every second film, to 1e110 here, and are brought back on the way, sooner or later in
+    // the stack by its number of films. Beyond some fifty films more of them change nothing, for little light gets there.
+    [Fact]
+    public void A_reflector_of_any_number_of_films_balances()
+    {
+        Film high = Film.OfIndex(new(2.3, 1e-3), 500 / 2.3 / 4), low = Film.OfIndex(new(1.35, 1e-3), 500 / 1.35 / 4);
+        Film[] films = [.. Enumerable.Range(0, 950).Select(i => i % 2 == 0 ? high : low)];
+        double limit = TestStack.OnIndex(1, 1.52, films[..101]).Solve(0, Polarizations.S).Reflected;
+        for (int count = 1; count <= films.Length; count += count < 300 ? 1 : 31)
+        {
+            Powers power = TestStack.OnIndex(1, 1.52, films[..count]).Solve(0, Polarizations.S);
+            Assert.InRange(power.Gap, 0, Tolerance);
+            if (count > 100)
+                Assert.Equal(limit, power.Reflected, 1e-14);
         }
     }
 
