@@ -63,6 +63,17 @@ public class FilmIdentityTests
             AssertSame(bare.Solve(50, polarization), clad.Solve(50, polarization), 1e-14);
     }
 
+    // Near grazing e - K^2 is a small difference: a millimetre of the surround in front must still be nothing. 1.5^2 is exact.
+    [Fact]
+    public void A_film_like_the_surround_changes_no_power_near_grazing_incidence()
+    {
+        Film[] films = [Film.OfIndex(new(1.7, .1), 120), Film.OfIndex(1.4, 90)];
+        TestStack bare = TestStack.OnIndex(1.5, 1.6, films);
+        TestStack clad = TestStack.OnIndex(1.5, 1.6, [Film.OfIndex(1.5, 1e6), .. films]);
+        foreach (Polarizations polarization in (Polarizations[])[Polarizations.S, Polarizations.P])
+            AssertSame(bare.Solve(89.9, polarization), clad.Solve(89.9, polarization), 1e-15);
+    }
+
     // Helmholtz reciprocity, Born and Wolf, Principles of Optics (section from memory): T is the same both ways, absorbing or not.
     // Errors found: below 2e-13, from the two angles.
     [Fact]
