@@ -39,7 +39,8 @@ internal static class Clearance
     /// <summary>How far below the first the second must lie, in nm, to clear it by <paramref name="clearanceNm"/>; null when they clear at any depth.</summary>
     public static double? LeastDepth(in Outline first, in Outline second, double dxNm, double clearanceNm)
     {
-        if (Between(first, second, dxNm, 0) >= clearanceNm)
+        // Side by side they are clear already: the direction along the surface alone shows it.
+        if (Math.Abs(dxNm) - first.HalfWidthNm - second.HalfWidthNm >= clearanceNm || Between(first, second, dxNm, 0) >= clearanceNm)
             return null;
         double low = 0, high = first.HalfHeightNm + second.HalfHeightNm + Math.Max(clearanceNm, 0);
         while (high - low > 1e-10 * high)

@@ -29,12 +29,13 @@ public sealed class DepthProfile
     {
         ArgumentNullException.ThrowIfNull(section);
         double[] edges = Edges(section);
+        SectionFilm[] films = [.. section.Films.OrderBy(film => film.TopNm)];
         var kinds = new List<DepthInterval>();
         var numbers = new Dictionary<string, int>();
         var order = new List<int>();
         for (int i = 0; i + 1 < edges.Length; i++)
         {
-            DepthInterval interval = Between(section, edges[i], edges[i + 1]);
+            DepthInterval interval = Between(section, films, edges[i], edges[i + 1]);
             string key = interval.Key();
             if (!numbers.TryGetValue(key, out int number))
             {
@@ -74,20 +75,21 @@ public sealed class DepthProfile
         return [.. distinct];
     }
 
-    private static DepthInterval Between(Section section, double topNm, double bottomNm)
+    private static DepthInterval Between(Section section, ReadOnlySpan<SectionFilm> films, double topNm, double bottomNm)
     {
         double middleNm = (topNm + bottomNm) / 2;
-        int background = section.Films.FirstOrDefault(film => film.TopNm < middleNm && middleNm < film.BottomNm)?.Material ?? Section.Matrix;
+        int background = BackgroundAt(films, middleNm);
         var met = new List<(SectionRun Run, PlacedOutline Placed)>();
         foreach (SectionRun run in section.Runs)
         {
-            foreach (SectionRow row in run.Rows)
+            (int first, int last) = RowsAt(run, middleNm);
+            for (int row = first; row <= last; row++)
             {
                 foreach (CellBody body in run.Cell)
                 {
-                    double centreNm = row.CentreNm + body.ZNm;
+                    double centreNm = run.Rows[row].CentreNm + body.ZNm;
                     if (Math.Abs(middleNm - centreNm) < body.Outer.HalfHeightNm)
-                        met.Add((run, new PlacedOutline(body, row.ShiftNm + body.XNm, centreNm - topNm)));
+                        met.Add((run, new PlacedOutline(body, run.Rows[row].ShiftNm + body.XNm, centreNm - topNm)));
                 }
             }
         }
@@ -104,6 +106,32 @@ public sealed class DepthProfile
                 bodies.Add(placed with { XNm = Wrap(placed.XNm + image * run.SpacingNm, periodNm) });
         }
         return new DepthInterval(bottomNm - topNm, background, periodNm, bodies);
+    }
+
+    // Films lie one below the other, so the last that starts above a depth is the one there, if any is.
+    private static int BackgroundAt(ReadOnlySpan<SectionFilm> films, double depthNm)
+    {
+        int low = 0, high = films.Length;
+        while (low < high)
+        {
+            int middle = (low + high) / 2;
+            if (films[middle].TopNm < depthNm)
+                low = middle + 1;
+            else
+                high = middle;
+        }
+        return low > 0 && depthNm < films[low - 1].BottomNm ? films[low - 1].Material : Section.Matrix;
+    }
+
+    // Rows lie at equal steps; one more on each side covers rounding.
+    private static (int First, int Last) RowsAt(SectionRun run, double depthNm)
+    {
+        double firstNm = run.Rows[0].CentreNm;
+        if (run.Rows.Count == 1 || run.PitchNm <= 0)
+            return depthNm < firstNm + run.CellTopNm || depthNm > run.Rows[^1].CentreNm + run.CellBottomNm ? (0, -1) : (0, run.Rows.Count - 1);
+        double first = Math.Floor((depthNm - run.CellBottomNm - firstNm) / run.PitchNm) - 1;
+        double last = Math.Ceiling((depthNm - run.CellTopNm - firstNm) / run.PitchNm) + 1;
+        return ((int)Math.Clamp(first, 0, run.Rows.Count), (int)Math.Clamp(last, -1, run.Rows.Count - 1));
     }
 
     private static double Wrap(double xNm, double periodNm) => xNm - periodNm * Math.Floor(xNm / periodNm);

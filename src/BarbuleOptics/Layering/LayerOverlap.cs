@@ -11,16 +11,18 @@ internal static class LayerOverlap
     {
         List<Extent> extents = [.. section.Runs.Select(run => new Extent(run)), .. section.Films.GroupBy(film => film.LayerNumber).Select(films => new Extent([.. films]))];
         extents.Sort((a, b) => a.Layer.CompareTo(b.Layer));
+        double deepestAboveNm = extents.Count == 0 ? 0 : extents[0].BottomNm;
         for (int lower = 1; lower < extents.Count; lower++)
         {
             if (extents[lower].TopNm < -SectionBuilder.TouchingNm)
                 return Problem(extents[lower].Layer - 1, FormattableString.Invariant($"layer {extents[lower].Layer} reaches {-extents[lower].TopNm:0.###} nm out of the surface"), -extents[lower].TopNm);
-            for (int upper = 0; upper < lower; upper++)
+            for (int upper = 0; upper < lower && deepestAboveNm > extents[lower].TopNm; upper++)
             {
                 double missingNm = MissingNm(extents[upper], extents[lower]);
                 if (missingNm > SectionBuilder.TouchingNm)
                     return Problem(extents[lower].Layer - 1, FormattableString.Invariant($"layers {extents[upper].Layer} and {extents[lower].Layer} overlap"), missingNm);
             }
+            deepestAboveNm = Math.Max(deepestAboveNm, extents[lower].BottomNm);
         }
         double deepestNm = extents.Count == 0 ? section.CortexNm : extents.Max(extent => extent.BottomNm);
         return deepestNm > section.DepthNm + SectionBuilder.TouchingNm

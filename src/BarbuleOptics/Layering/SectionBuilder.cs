@@ -12,6 +12,12 @@ public sealed class SectionBuilder
     /// <summary>Overlap that is taken for rounding, in nm: touching bodies may be given to this precision.</summary>
     internal const double TouchingNm = 1e-6;
 
+    /// <summary>Most rows of all layers together.</summary>
+    private const int MostRows = 20_000;
+
+    /// <summary>Most bodies of one cell.</summary>
+    private const int MostBodies = 100;
+
     private readonly Barbule _barbule;
     private readonly MaterialNumbers _materials = new();
     private readonly List<SectionRun> _runs = [];
@@ -40,9 +46,16 @@ public sealed class SectionBuilder
         _materials.Of(SectionMaterial.Plain(_barbule.Matrix));
         double cortexNm = _barbule.Cortex?.CentralNm ?? 0;
         double depthNm = cortexNm;
+        int rows = 0;
         for (int i = 0; i < _barbule.Layers.Count; i++)
         {
             BarbuleLayer layer = _barbule.Layers[i];
+            rows += layer.Rows.Central;
+            if (rows > MostRows)
+            {
+                Refuse(i + 1, "rows", FormattableString.Invariant($"found {rows} rows in all layers so far; allowed up to {MostRows}"));
+                return null;
+            }
             double? bottomNm = layer.IsFilm ? AddFilms(layer, i + 1, depthNm) : AddRun(layer, i + 1, depthNm);
             if (bottomNm is null)
                 return null;
@@ -81,6 +94,8 @@ public sealed class SectionBuilder
 
     private double? AddRun(BarbuleLayer layer, int number, double topNm)
     {
+        if (layer.Bodies.Count > MostBodies)
+            return Refuse(number, "body", FormattableString.Invariant($"found {layer.Bodies.Count} bodies in one cell; allowed up to {MostBodies}"));
         for (int b = 0; b < layer.Bodies.Count; b++)
         {
             if (CellBuilder.Fault(layer.Bodies[b].Form) is (string key, string message))
@@ -129,6 +144,8 @@ public sealed class SectionBuilder
             }
             for (int other = 0; other < b; other++)
             {
+                if (cell[other].BottomNm <= cell[b].TopNm || cell[b].BottomNm <= cell[other].TopNm)
+                    continue;
                 double clearanceNm = NearestNm(cell[other], cell[b], spacingNm);
                 if (clearanceNm < -TouchingNm)
                 {

@@ -18,6 +18,9 @@ internal sealed class SliceRefinement<TWorkspace>
     /// <summary>Part of the tolerance that the change at the probes may use.</summary>
     private const double Margin = 0.7;
 
+    /// <summary>Groups of kinds that are judged together; with many kinds those of like thickness share one.</summary>
+    private const int MostGroups = 12;
+
     /// <summary>Slices of one kind beyond which refinement stops, and the error reached is reported as it is.</summary>
     private const int MostSlices = 512;
 
@@ -47,6 +50,7 @@ internal sealed class SliceRefinement<TWorkspace>
         int[] uneven = [.. Enumerable.Range(0, slices.Length).Where(kind => !_profile.Kinds[kind].IsUniform)];
         if (uneven.Length == 0)
             return (slices, 0);
+        int[][] groups = Groups(uneven);
 
         while (true)
         {
@@ -55,26 +59,33 @@ internal sealed class SliceRefinement<TWorkspace>
             double change = LargestChange(reflectance, Reflectances(Halved(slices, uneven)));
             if (change <= allowed || uneven.Any(kind => slices[kind] >= MostSlices))
                 return (slices, change);
-            Refine(slices, uneven, reflectance, allowed / uneven.Length);
+            Refine(slices, groups, reflectance, allowed / groups.Length);
         }
     }
 
-    /// <summary>Gives each kind the slices that its own share of the tolerance asks for, by the fourth order of the method.</summary>
-    private void Refine(int[] slices, int[] uneven, double[] reflectance, double share)
+    /// <summary>Gives each group of kinds the slices that its own share of the tolerance asks for, by the fourth order of the method.</summary>
+    private void Refine(int[] slices, int[][] groups, double[] reflectance, double share)
     {
         int[] before = [.. slices];
-        foreach (int kind in uneven)
+        foreach (int[] group in groups)
         {
-            double change = LargestChange(reflectance, Reflectances(Halved(before, [kind])));
+            double change = LargestChange(reflectance, Reflectances(Halved(before, group)));
             double growth = Math.Clamp(Math.Pow(change / share, 0.25), 1, 2);
-            slices[kind] = Math.Min((int)Math.Ceiling(before[kind] * growth - 1e-9), MostSlices);
+            foreach (int kind in group)
+                slices[kind] = Math.Min((int)Math.Ceiling(before[kind] * growth - 1e-9), MostSlices);
         }
         // Changes of different kinds may add up although each keeps its share.
         if (slices.AsSpan().SequenceEqual(before))
         {
-            foreach (int kind in uneven)
+            foreach (int kind in groups.SelectMany(group => group))
                 slices[kind]++;
         }
+    }
+
+    private int[][] Groups(int[] kinds)
+    {
+        int[] ordered = [.. kinds.OrderBy(kind => _profile.Kinds[kind].ThicknessNm)];
+        return [.. ordered.Chunk((ordered.Length + MostGroups - 1) / MostGroups)];
     }
 
     private double[] Reflectances(int[] slices)

@@ -7,6 +7,9 @@ namespace BarbuleOptics.Prediction;
 /// <summary>Whether the materials of a structure have constants at the wavelengths asked for.</summary>
 internal static class MaterialCheck
 {
+    /// <summary>Least index, far below any metal's: a mixing rule divides by sums of permittivities, which losses keep from zero.</summary>
+    private const double LeastIndex = 1e-6;
+
     /// <summary>Every use of a material that has none, one problem each.</summary>
     public static IEnumerable<AnatomyProblem> Find(Barbule barbule, WavelengthGrid grid, IMaterialCatalog catalog)
     {
@@ -35,15 +38,19 @@ internal static class MaterialCheck
         foreach (double wavelengthNm in grid.Nanometres)
         {
             double n = material.N.At(wavelengthNm), k = material.K.At(wavelengthNm);
-            if (!double.IsFinite(n) || n <= 0)
-                return FormattableString.Invariant($"{material.Name} has n = {n} at {wavelengthNm} nm; allowed above 0 (its formula was published for {material.LeastNm}-{material.MostNm} nm)");
+            if (!double.IsFinite(n) || n < LeastIndex)
+                return FormattableString.Invariant($"{material.Name} has n = {n} at {wavelengthNm} nm; allowed {LeastIndex} or above{Published(material, wavelengthNm)}");
             if (!double.IsFinite(k) || k < 0)
-                return FormattableString.Invariant($"{material.Name} has k = {k} at {wavelengthNm} nm; allowed 0 or above (its formula was published for {material.LeastNm}-{material.MostNm} nm)");
+                return FormattableString.Invariant($"{material.Name} has k = {k} at {wavelengthNm} nm; allowed 0 or above{Published(material, wavelengthNm)}");
             if (mustBeLossless && k > 0)
                 return FormattableString.Invariant($"{material.Name} absorbs (k = {k:G4} at {wavelengthNm} nm); allowed a lossless surround, k = 0");
         }
         return null;
     }
+
+    private static string Published(Material material, double wavelengthNm)
+        => wavelengthNm >= material.LeastNm && wavelengthNm <= material.MostNm
+            ? "" : FormattableString.Invariant($" (its formula was published for {material.LeastNm}-{material.MostNm} nm)");
 
     /// <summary>A resonance of Sellmeier's equation, in nm, that parts some of the grid from the published range; null when none does.</summary>
     /// <remarks>The equation stands for frequencies between two resonances; on the far side of one it gives a number that is no index.</remarks>
