@@ -51,7 +51,8 @@ public static class Predictor
         Barbule barbule, Section section, PredictionConditions conditions, IMaterialCatalog catalog, CancellationToken cancellation)
     {
         var solver = new ReferenceFilmSolver();
-        double sliceTolerance = Math.Min(MostSliceChange, conditions.Accuracy);
+        // The estimate of the error is twice the change.
+        double sliceTolerance = Math.Min(MostSliceChange, conditions.Accuracy / 2);
         LayerModel model = LayerModel.Of(section, catalog, conditions.Mixing, conditions.Wavelengths, conditions.Incidences, sliceTolerance, solver, cancellation);
         FilmResponses responses = FilmResponses.Solve(solver, model, conditions, cancellation);
 
@@ -61,7 +62,7 @@ public static class Predictor
         Material surround = Find(catalog, section.Surround);
         warnings.AboutSpacing(surround, Find(catalog, barbule.Matrix));
         double error = Math.Max(model.SliceError, responses.ErrorEstimate);
-        warnings.AboutAccuracy(error, Math.Max(conditions.Accuracy, 2 * sliceTolerance));
+        warnings.AboutAccuracy(error, conditions.Accuracy);
 
         var colorimeter = new Colorimeter(conditions.Wavelengths, conditions.Illuminant, conditions.Observer);
         warnings.AboutCoverage(colorimeter.CanMeasure, colorimeter.CoversObserver);

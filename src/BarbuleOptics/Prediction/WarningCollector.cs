@@ -22,7 +22,7 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
             if (length is MeasuredLength.Interval interval && interval.MostNm > interval.LeastNm)
                 Add(WarningCodes.IntervalMiddle, FormattableString.Invariant($"{key} is only known to lie between {interval.LeastNm} and {interval.MostNm} nm; its middle, {interval.CentralNm:0.###} nm, was used"));
         }
-        if (section.Runs.Any(run => run.Cell.Any(body => body.Outer.Shape == OutlineShape.Rectangle && 2 * body.Outer.HalfWidthNm < run.SpacingNm)))
+        if (section.Runs.Any(run => run.Cell.Any(body => body.Outer.Shape == OutlineShape.Rectangle) && IsUneven(run)))
             Add(WarningCodes.BarModel, "platelets are computed as bars without end along one direction; real ones end in both");
         if (section.Materials.Any(material => material.IsAveraged))
             Add(WarningCodes.CoreAveraged, "a porous core is computed as one permittivity (three-dimensional Bruggeman average); pores near a tenth of the wavelength also scatter");
@@ -30,7 +30,7 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
 
     public void AboutSpacing(Material surround, Material matrix)
     {
-        if (section.PeriodNm is not double periodNm || !IsUneven)
+        if (section.PeriodNm is not double periodNm || !section.Runs.Any(IsUneven))
             return;
         ReadOnlySpan<double> wavelengthsNm = conditions.Wavelengths.Nanometres;
         double? coarseNm = DiffractionOnset.LongestWithin(wavelengthsNm, wavelength => 2 * periodNm * matrix.N.At(wavelength));
@@ -71,8 +71,8 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
     }
 
     /// <summary>Platelets that fill their spacing are films and diffract nothing.</summary>
-    private bool IsUneven => section.Runs.Any(run => run.Cell.Count > 1 || run.Cell.Any(body =>
-        body.Outer.Shape == OutlineShape.Ellipse || body.Core is not null || 2 * body.Outer.HalfWidthNm < run.SpacingNm - SectionBuilder.TouchingNm));
+    private static bool IsUneven(SectionRun run) => run.Cell.Count > 1 || run.Cell.Any(body =>
+        body.Outer.Shape == OutlineShape.Ellipse || body.Core is not null || 2 * body.Outer.HalfWidthNm < run.SpacingNm - SectionBuilder.TouchingNm);
 
     private void AboutIndices(IReadOnlyList<Material> materials)
     {

@@ -1,0 +1,100 @@
+using BarbuleOptics.Files;
+using BarbuleOptics.Layering;
+using BarbuleOptics.Layering.Mixing;
+using BarbuleOptics.Multilayer;
+using BarbuleOptics.Prediction;
+using BarbuleOptics.Quantities;
+using BarbuleOptics.Tests.Samples;
+using Xunit;
+
+namespace BarbuleOptics.Tests.Prediction;
+
+/// <summary>As many slices as the promise needs, which is 1e-5 in R on doubling them, and not many more.</summary>
+public sealed class SliceCountTests
+{
+    private const double Promise = 1e-5;
+
+    private static readonly PredictionConditions Conditions = new() { Incidences = [.. ((double[])[0, 30, 60, 75]).Select(Angle.FromDegrees)] };
+
+    public static TheoryData<string> Samples => SampleFiles.Rows;
+
+    public static TheoryData<string> Rules => [.. MixingRules.All.Select(rule => rule.Name)];
+
+    [Theory]
+    [MemberData(nameof(Samples))]
+    public void Twice_the_slices_change_no_sample(string name) => AssertFine(name, MixingRules.Default);
+
+    [Theory]
+    [MemberData(nameof(Rules))]
+    public void Twice_the_slices_change_hollow_rods_by_no_rule(string rule)
+    {
+        Assert.True(MixingRules.TryFind(rule, out IMixingRule? found));
+        AssertFine("hollow-rods", found);
+    }
+
+    // Measured: of the samples with round bodies all but one or two exceed the promise with half of the slices.
+    [Fact]
+    public void Half_the_slices_would_break_the_promise_for_most_samples()
+    {
+        int cases = 0, broken = 0;
+        foreach (string name in SampleFiles.Names)
+        {
+            Model model = Of(name, MixingRules.Default);
+            int[] half = [.. model.Slices.Select(count => (count + 1) / 2)];
+            if (half.SequenceEqual(model.Slices))
+                continue;
+            cases++;
+            broken += Change(model.Reflectance(half), model.Reflectance(model.Slices)) > Promise ? 1 : 0;
+        }
+        Assert.True(cases >= 8, $"{cases} samples have slices.");
+        Assert.True(broken > cases / 2, $"Half of the slices would do for {cases - broken} of {cases} samples.");
+    }
+
+    // The true error is the distance to four times the slices, where by the fourth order 1/255 of it is left.
+    [Theory]
+    [MemberData(nameof(Samples))]
+    public void The_error_estimate_covers_the_error(string name)
+    {
+        LoadedStructure loaded = SampleFiles.Load(name);
+        Assert.True(Predictor.TryPredict(loaded.Barbule, Conditions, loaded.Catalog, out StructurePrediction? prediction, out _, TestContext.Current.CancellationToken));
+        Model model = Of(name, MixingRules.Default);
+        double error = Change(model.Reflectance(model.Slices), model.Reflectance([.. model.Slices.Select(count => 4 * count)]));
+
+        Assert.InRange(error, 0, prediction.ErrorEstimate);
+    }
+
+    private static void AssertFine(string name, IMixingRule rule)
+    {
+        Model model = Of(name, rule);
+        Assert.InRange(Change(model.Reflectance(model.Slices), model.Reflectance([.. model.Slices.Select(count => 2 * count)])), 0, Promise);
+    }
+
+    private static double Change(double[] before, double[] after) => before.Zip(after, (one, other) => Math.Abs(one - other)).Max();
+
+    private static Model Of(string name, IMixingRule rule)
+    {
+        LoadedStructure loaded = SampleFiles.Load(name);
+        Assert.True(SectionBuilder.TryBuild(loaded.Barbule, out Section? section, out _));
+        var solver = new ReferenceFilmSolver();
+        LayerModel model = LayerModel.Of(section, loaded.Catalog, rule, Conditions.Wavelengths, Conditions.Incidences, Promise, solver, TestContext.Current.CancellationToken);
+        return new Model(DepthProfile.Of(section), [.. model.Slices], new SectionPermittivities(section, loaded.Catalog, Conditions.Wavelengths.Nanometres), rule, solver);
+    }
+
+    private sealed record Model(DepthProfile Profile, int[] Slices, SectionPermittivities Permittivities, IMixingRule Rule, ReferenceFilmSolver Solver)
+    {
+        /// <summary>R at every wavelength, angle and polarization.</summary>
+        public double[] Reflectance(int[] slices)
+        {
+            FilmStack films = FilmBuilder.Build(Profile, slices, Permittivities, Rule);
+            FilmWorkspace workspace = Solver.CreateWorkspace(films);
+            int count = films.WavelengthsNm.Length;
+            var reflectance = new double[2 * count * Conditions.Incidences.Count];
+            for (int i = 0; i < 2 * Conditions.Incidences.Count; i++)
+            {
+                var request = new SolverRequest(0, count, Conditions.Incidences[i / 2], i % 2 == 0 ? Polarizations.S : Polarizations.P, SolverOutputs.Reflectance);
+                Solver.Solve(films, request, workspace, new SolverResponse { Reflectance = reflectance.AsSpan(i * count, count) });
+            }
+            return reflectance;
+        }
+    }
+}

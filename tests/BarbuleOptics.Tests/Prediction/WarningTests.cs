@@ -1,0 +1,112 @@
+using BarbuleOptics.Prediction;
+using BarbuleOptics.Quantities;
+using Xunit;
+
+namespace BarbuleOptics.Tests.Prediction;
+
+/// <summary>Each warning comes where it must, and not where it need not.</summary>
+public sealed class WarningTests
+{
+    private const string Clear = "barbule.matrix = { n = 1.5 }\nbarbule.backing = { n = 1.5 }\n";
+    private const string Melanin = "material = { n = 1.7 }\n";
+    private const string Sheet = Clear + "[[layer]]\nform = 'film'\nthickness = 60\n" + Melanin;
+
+    /// <summary>Code; a structure and wavelengths with the warning; the same without.</summary>
+    public static TheoryData<string, string, string, string, string> Pairs => new()
+    {
+        // Keratin is published for 400-700 nm.
+        { WarningCodes.IndexExtrapolated, "[cortex]\nthickness = 100\n", "399:700:1", "[cortex]\nthickness = 100\n", "400:700:1" },
+        { WarningCodes.IndexExtrapolated, "[cortex]\nthickness = 100\n", "400:701:1", Sheet, "300:800:1" },
+        { WarningCodes.CoarseSpacing, Rods(150), "450:700:1", Rods(150), "451:700:1" },
+        { WarningCodes.BarModel, Platelets(110, ""), "500:501:1", Platelets(100, ""), "500:501:1" },
+        { WarningCodes.BarModel, Platelets(100, "wall = 10\n"), "500:501:1", Rods(110), "500:501:1" },
+        { WarningCodes.CoreAveraged, Platelets(110, "wall = 10\ncore_air = 0.7\n"), "500:501:1", Platelets(110, "wall = 10\ncore_air = 1\n"), "500:501:1" },
+        { WarningCodes.CoreAveraged, Platelets(110, "wall = 10\ncore_air = 0.01\n"), "500:501:1", Platelets(110, "wall = 10\ncore_air = 0\n"), "500:501:1" },
+        { WarningCodes.IntervalMiddle, Clear + "[cortex]\nthickness = { min = 100, max = 120 }\n", "500:501:1", Clear + "[cortex]\nthickness = { min = 100, max = 100 }\n", "500:501:1" },
+        { WarningCodes.BackingUnknown, Sheet.Replace("{ n = 1.5 }\n[[", "'unknown'\n[[", StringComparison.Ordinal), "500:501:1", Sheet, "500:501:1" },
+        { WarningCodes.ObserverNotCovered, Sheet, "381:780:1", Sheet, "380:780:1" },
+        { WarningCodes.ObserverNotCovered, Sheet, "380:779:1", Sheet, "300:800:1" },
+        { WarningCodes.NoColor, Sheet, "401:700:1", Sheet, "400:700:1" },
+        { WarningCodes.NoColor, Sheet, "400:699:1", Sheet, "400:700:20" },
+        { WarningCodes.NoColor, Sheet, "400:700:25", Sheet, "400:700:5" },
+        // A film of 62.5 nm and n = 2 is a quarter of 500 nm thick and half of 250 nm: one broad peak between.
+        { WarningCodes.PeakAtEdge, Quarter, "510:700:1", Quarter, "300:780:1" },
+        { WarningCodes.PeakAtEdge, Quarter, "300:490:1", Quarter, "400:600:1" },
+        // Sixty pairs of quarter waves of 520 nm reflect a band so narrow that no screen has its green.
+        { WarningCodes.OutsideSrgb, "barbule.surround = { n = 1.45 }\nbarbule.matrix = { n = 1.45 }\nbarbule.backing = { n = 1.45 }\n[[layer]]\nform = 'film'\nthickness = 81.25\nmaterial = { n = 1.6 }\nrows = 60\npitch = 170.9\n", "380:780:1", Sheet, "380:780:1" },
+    };
+
+    private const string Quarter = Clear + "[[layer]]\nform = 'film'\nthickness = 62.5\nmaterial = { n = 2.0 }\n";
+
+    [Theory]
+    [MemberData(nameof(Pairs))]
+    public void A_warning_comes_with_its_cause_and_goes_with_it(string code, string with, string withNm, string without, string withoutNm)
+    {
+        Assert.Contains(code, Codes(with, withNm));
+        Assert.DoesNotContain(code, Codes(without, withoutNm));
+    }
+
+    // Grating equation at the edge of an order, by hand, for a period of 300 nm and a matrix of 1.5: across in the matrix 300 (1.5 + n_s sin a),
+    // in the surround 300 n_s (1 + sin a); along 300 sqrt(1.5^2 - (n_s sin a)^2) and 300 n_s cos a. Rounded down to whole nm.
+    [Theory]
+    [InlineData("across", 1.0, 0, 450, 300)]
+    [InlineData("across", 1.0, 30, 600, 450)]
+    [InlineData("across", 1.33, 30, 649, 598)]
+    [InlineData("along", 1.0, 0, 450, 300)]
+    [InlineData("along", 1.0, 30, 424, 259)]
+    [InlineData("along", 1.33, 60, 288, 199)]
+    public void Orders_are_told_up_to_their_last_wavelength(string axis, double surround, double degrees, double matrixNm, double surroundNm)
+    {
+        string text = FormattableString.Invariant($"barbule.surround = {{ n = {surround} }}\nbarbule.axis = '{axis}'\n") + Rods(300);
+        foreach ((string code, double lastNm) in ((string, double)[])[(WarningCodes.OrdersInMatrix, matrixNm), (WarningCodes.OrdersInSurround, surroundNm)])
+        {
+            StructurePrediction met = Predictions.Of(text, Predictions.At(lastNm, 700, 1, degrees));
+            PredictionWarning warning = Assert.Single(met.Warnings, warning => warning.Code == code);
+            Assert.StartsWith(FormattableString.Invariant($"up to {lastNm} nm "), warning.Message, StringComparison.Ordinal);
+            Assert.Equal(degrees, warning.Incidence!.Value.Degrees);
+            Assert.DoesNotContain(code, Predictions.Codes(Predictions.Of(text, Predictions.At(lastNm + 1, 700, 1, degrees))));
+        }
+    }
+
+    // Two spacings of 200 and 300 nm repeat every 600 nm; of 200 and 311 nm at no multiple up to six.
+    [Theory]
+    [InlineData(300, 900)]
+    [InlineData(311, 466)]
+    public void Orders_of_two_spacings_are_those_of_the_common_period(double spacing, double lastNm)
+    {
+        string text = Rods(200) + FormattableString.Invariant($"gap = 50\n[[layer]]\nform = 'rod'\ndiameter = 100\nspacing = {spacing}\n") + Melanin;
+        PredictionWarning warning = Assert.Single(Predictions.Of(text, Predictions.At(400, 950, 1)).Warnings, warning => warning.Code == WarningCodes.OrdersInMatrix);
+        Assert.StartsWith(FormattableString.Invariant($"up to {lastNm} nm "), warning.Message, StringComparison.Ordinal);
+    }
+
+    [Fact]
+    public void Films_and_closed_platelets_send_no_orders()
+    {
+        Assert.DoesNotContain(WarningCodes.OrdersInMatrix, Codes(Platelets(100, "rows = 3\npitch = 90\n"), "30:60:1"));
+        Assert.DoesNotContain(WarningCodes.OrdersInMatrix, Codes(Sheet, "30:60:1"));
+        Assert.Contains(WarningCodes.OrdersInMatrix, Codes(Platelets(100, "wall = 10\n"), "30:60:1"));
+    }
+
+    // Sixty rows of rods five wavelengths thick and more need more slices than are tried.
+    [Fact]
+    public void An_accuracy_out_of_reach_is_told()
+    {
+        string huge = Rods(2000).Replace("diameter = 100\n", "diameter = 2000\n", StringComparison.Ordinal).Replace("spacing = 2000", "spacing = 2500", StringComparison.Ordinal) + "rows = 60\npitch = 2010\n";
+        StructurePrediction prediction = Predictions.Of(huge, Predictions.At(400, 400, 1, 0, 80) with { Accuracy = 1e-10 });
+        Assert.Contains(WarningCodes.AccuracyNotReached, Predictions.Codes(prediction));
+        Assert.True(prediction.ErrorEstimate > 1e-10);
+        StructurePrediction reached = Predictions.Of(Rods(150), Predictions.At(400, 700, 50) with { Accuracy = 1e-9 });
+        Assert.DoesNotContain(WarningCodes.AccuracyNotReached, Predictions.Codes(reached));
+        Assert.InRange(reached.ErrorEstimate, 1e-13, 1e-9);
+    }
+
+    private static string Rods(double spacing) => Clear + FormattableString.Invariant($"[[layer]]\nform = 'rod'\ndiameter = 100\nspacing = {spacing}\n") + Melanin;
+
+    private static string Platelets(double spacing, string more) => Clear + FormattableString.Invariant($"[[layer]]\nform = 'platelet'\nthickness = 50\nwidth = 100\nspacing = {spacing}\n") + more + Melanin;
+
+    private static string[] Codes(string text, string wavelengths)
+    {
+        double[] parts = [.. wavelengths.Split(':').Select(part => double.Parse(part, System.Globalization.CultureInfo.InvariantCulture))];
+        return Predictions.Codes(Predictions.Of(text, Predictions.At(parts[0], parts[1], parts[2])));
+    }
+}
