@@ -11,15 +11,17 @@ internal static class BarbuleProgram
     /// <param name="args">The words after <c>barbule</c>.</param>
     /// <param name="output">Takes results.</param>
     /// <param name="error">Takes what is wrong, one line each.</param>
+    /// <param name="colors">What colors results are shown in; null for none.</param>
     /// <param name="cancellation">Interrupts the work, as the terminal does.</param>
     /// <returns>One of <see cref="ExitCode"/>.</returns>
-    public static async Task<int> RunAsync(string[] args, TextWriter output, TextWriter error, CancellationToken cancellation = default)
+    public static async Task<int> RunAsync(
+        string[] args, TextWriter output, TextWriter error, TerminalColors? colors = null, CancellationToken cancellation = default)
     {
         try
         {
-            RootCommand root = BarbuleCommand.Create();
+            RootCommand root = BarbuleCommand.Create(colors ?? TerminalColors.None);
             // Without the replacer a file named @results stays a file name.
-            ParseResult result = root.Parse(args, new ParserConfiguration { ResponseFileTokenReplacer = null });
+            ParseResult result = root.Parse(CompletionCommand.Separated(args), new ParserConfiguration { ResponseFileTokenReplacer = null });
             if (result.Errors.Count > 0 && result.Action is ParseErrorAction)
             {
                 CommandLineErrors.Write(result, error);

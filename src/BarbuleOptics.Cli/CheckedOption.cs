@@ -12,7 +12,7 @@ internal sealed class CheckedOption<T>
     /// <summary>Reads a text: the value, or what is allowed instead.</summary>
     public delegate bool Reader(string text, out T value, out string allowed);
 
-    public CheckedOption(string name, string valueName, string description, T standard, Reader read)
+    public CheckedOption(string name, string valueName, string description, T standard, Reader read, IEnumerable<string>? completions = null)
     {
         _standard = standard;
         Option = new Option<T>(name)
@@ -22,6 +22,10 @@ internal sealed class CheckedOption<T>
             CustomParser = result => Parse(name, result, standard, read),
             Arity = ArgumentArity.ExactlyOne,
         };
+        // Those of the type would offer the names that it has in the code.
+        Option.CompletionSources.Clear();
+        if (completions is not null)
+            Option.CompletionSources.Add([.. completions]);
     }
 
     /// <summary>The option, to be added to a command.</summary>

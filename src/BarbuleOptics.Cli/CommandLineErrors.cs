@@ -1,4 +1,5 @@
 using System.CommandLine;
+using System.CommandLine.Parsing;
 using BarbuleOptics.Files;
 
 namespace BarbuleOptics.Cli;
@@ -24,6 +25,13 @@ internal static class CommandLineErrors
     /// <summary>What to say of an option that a command does not have.</summary>
     public static string UnknownOption(string text, Command command)
         => Unknown("option", text, command, command.Options.Select(option => option.Name).Append("--help"));
+
+    /// <summary>Refuses options within an argument: the parser takes one that it does not know for one more value.</summary>
+    public static void RefuseOptions(ArgumentResult argument, Command command)
+    {
+        foreach (string text in argument.Tokens.Select(token => token.Value).Where(text => text.StartsWith('-')))
+            argument.AddError(UnknownOption(text, command));
+    }
 
     private static string Unmatched(string token, Command command)
     {

@@ -1,4 +1,5 @@
 using System.CommandLine;
+using System.CommandLine.Completions;
 using System.Globalization;
 using BarbuleOptics.Files;
 using BarbuleOptics.Materials;
@@ -13,7 +14,12 @@ internal static class MaterialsCommand
     public static Command Create()
     {
         var name = new Argument<string?>("NAME") { Description = "A material to show in full; without it all are listed", Arity = ArgumentArity.ZeroOrOne };
-        var folder = new Option<string?>("--materials") { Description = "Folder of material tables of your own; their names win", HelpName = "DIR" };
+        var folder = new Option<string?>("--materials") { Description = "Folder of material tables of your own; they go before those inside of the same name", HelpName = "DIR" };
+        name.CompletionSources.Add(context =>
+        {
+            FileResult<MaterialCatalog> catalog = EmbeddedMaterials.WithFolder(context.ParseResult.GetValue(folder));
+            return (catalog.Succeeded ? catalog.Value : EmbeddedMaterials.Catalog).Names.Select(known => new CompletionItem(known));
+        });
         var command = new Command("materials", "Optical constants: what there is, where it was published and for which wavelengths") { name, folder };
         command.SetAction(parse => Execute(parse.GetValue(name), parse.GetValue(folder), parse.InvocationConfiguration.Output, parse.InvocationConfiguration.Error));
         return command;

@@ -12,6 +12,8 @@ internal static class OptionReaders
 {
     public const double MostAngleCount = 1000;
 
+    public static IReadOnlyList<string> Solvers { get; } = ["auto", "multilayer"];
+
     public static bool Wavelengths(string text, out WavelengthGrid grid, out string allowed)
     {
         grid = null!;
@@ -84,8 +86,8 @@ internal static class OptionReaders
     public static bool Solver(string text, out string solver, out string allowed)
     {
         solver = text;
-        allowed = OneOf(["auto", "multilayer"], text);
-        return text is "auto" or "multilayer";
+        allowed = OneOf(Solvers, text);
+        return Solvers.Contains(text);
     }
 
     public static bool Accuracy(string text, out double accuracy, out string allowed)

@@ -13,23 +13,23 @@ internal sealed class PredictCommand
 {
     private static readonly PredictionConditions Standard = new();
 
-    private readonly Argument<string[]> _files = new("FILE") { Description = "Structure files, one barbule each", Arity = ArgumentArity.OneOrMore };
-    private readonly CheckedOption<WavelengthGrid> _wavelengths = new("--wavelengths", "from:to:step", "Vacuum wavelengths in nm [300:780:1]", Standard.Wavelengths, OptionReaders.Wavelengths);
-    private readonly CheckedOption<ValueList<Angle>> _angles = new("--angles", "list|range", "Angles of incidence in degrees, 0,30,60 or 0:60:15 [0]", Standard.Incidences, OptionReaders.Angles);
-    private readonly CheckedOption<Polarizations?> _polarization = new("--polarization", "unpolarized|s|p", "Of table, views and color [unpolarized]; spectra.csv holds all three unless it is given", null, OptionReaders.Polarization);
-    private readonly CheckedOption<string> _solver = new("--solver", "auto|multilayer", "How the section is solved [auto, which is multilayer]", "auto", OptionReaders.Solver);
-    private readonly CheckedOption<double> _accuracy = new("--accuracy", "number", "Largest absolute error in R, T and A [1e-4]", Standard.Accuracy, OptionReaders.Accuracy);
-    private readonly CheckedOption<IMixingRule> _mixing = new("--mixing", "rule", $"How rows are averaged into films: {string.Join(", ", MixingRules.All.Select(rule => rule.Name))} [{MixingRules.Default.Name}]", Standard.Mixing, OptionReaders.Mixing);
-    private readonly CheckedOption<Illuminant> _illuminant = new("--illuminant", "name", $"{string.Join(", ", Illuminant.All.Select(light => light.Name))} [D65]", Standard.Illuminant, OptionReaders.IlluminantName);
-    private readonly CheckedOption<StandardObserver> _observer = new("--observer", "name", $"{string.Join(" or ", StandardObservers.Names)} [1931-2deg]", Standard.Observer, OptionReaders.Observer);
+    private readonly Argument<string[]> _files = new("FILE") { Description = "Structure files, one barbule each; `barbule sample DIR` writes some to start from", Arity = ArgumentArity.OneOrMore };
+    private readonly CheckedOption<WavelengthGrid> _wavelengths = new("--wavelengths", "from:to:step", "Vacuum wavelengths in nm: first, last and step [300:780:1]", Standard.Wavelengths, OptionReaders.Wavelengths);
+    private readonly CheckedOption<ValueList<Angle>> _angles = new("--angles", "list|range", "Angles of incidence in degrees, from the normal: a list (0,30,60) or first, last and step (0:60:15) [0]", Standard.Incidences, OptionReaders.Angles);
+    private readonly CheckedOption<Polarizations?> _polarization = new("--polarization", "unpolarized|s|p", "Polarization of the light for table and color [unpolarized]; spectra.csv holds all three unless it is given", null, OptionReaders.Polarization, PolarizationNames.All);
+    private readonly CheckedOption<string> _solver = new("--solver", "auto|multilayer", "How the section is solved [auto, which is multilayer]", "auto", OptionReaders.Solver, OptionReaders.Solvers);
+    private readonly CheckedOption<double> _accuracy = new("--accuracy", "number", "Largest absolute error allowed in reflectance, transmittance and absorptance [1e-4]", Standard.Accuracy, OptionReaders.Accuracy);
+    private readonly CheckedOption<IMixingRule> _mixing = new("--mixing", "rule", $"How rows are averaged into films: {string.Join(", ", MixingRules.All.Select(rule => rule.Name))} [{MixingRules.Default.Name}]", Standard.Mixing, OptionReaders.Mixing, MixingRules.All.Select(rule => rule.Name));
+    private readonly CheckedOption<Illuminant> _illuminant = new("--illuminant", "name", $"Light that color is computed for: {string.Join(", ", Illuminant.All.Select(light => light.Name))} [D65]", Standard.Illuminant, OptionReaders.IlluminantName, Illuminant.All.Select(light => light.Name));
+    private readonly CheckedOption<StandardObserver> _observer = new("--observer", "name", $"Eye that color is computed for: {string.Join(" or ", StandardObservers.Names)} [1931-2deg]", Standard.Observer, OptionReaders.Observer, StandardObservers.Names);
     private readonly CheckedOption<int> _threads = new("--threads", "N", "Most processors used [all]; results do not depend on it", Standard.Threads, OptionReaders.Threads);
     private readonly Option<string?> _output = new("--out") { Description = "Folder for spectra.csv and prediction.json; with several files, a folder each within it", HelpName = "DIR" };
-    private readonly Option<bool> _force = new("--force") { Description = "Replace results that exist" };
-    private readonly Option<bool> _json = new("--json") { Description = "Print one JSON document and nothing else" };
-    private readonly Option<string?> _materials = new("--materials") { Description = "Folder of material tables of your own; their names win", HelpName = "DIR" };
-    private readonly Option<string[]> _sets = new("--set") { Description = "Replace a value of the structure, such as barbule.surround=water or layer1.lumen=0; several allowed", HelpName = "KEY=VALUE" };
+    private readonly Option<bool> _force = new("--force") { Description = "Replace results that exist", Arity = ArgumentArity.Zero };
+    private readonly Option<bool> _json = new("--json") { Description = "Print one JSON document and nothing else", Arity = ArgumentArity.Zero };
+    private readonly Option<string?> _materials = new("--materials") { Description = "Folder of material tables of your own; they go before those inside of the same name", HelpName = "DIR" };
+    private readonly Option<string[]> _sets = new("--set") { Description = "Replace a value of the structure file, named by table and key: barbule.surround=water, cortex.thickness=150, layer1.lumen=0 (layer1 is the outermost); may be repeated", HelpName = "KEY=VALUE" };
 
-    public static Command Create()
+    public static Command Create(TerminalColors colors)
     {
         var options = new PredictCommand();
         var command = new Command("predict", "Reflectance, CIE color and hue of measured structures")
@@ -38,12 +38,7 @@ internal sealed class PredictCommand
             options._accuracy.Option, options._mixing.Option, options._illuminant.Option, options._observer.Option, options._output,
             options._force, options._json, options._materials, options._sets, options._threads.Option,
         };
-        options._files.Validators.Add(result =>
-        {
-            // The parser takes an option that it does not know for one more file.
-            foreach (string text in result.Tokens.Select(token => token.Value).Where(text => text.StartsWith('-')))
-                result.AddError(CommandLineErrors.UnknownOption(text, command));
-        });
+        options._files.Validators.Add(result => CommandLineErrors.RefuseOptions(result, command));
         // The parser counts values, so that `--out here --out` would pass.
         command.Validators.Add(result =>
         {
@@ -55,7 +50,7 @@ internal sealed class PredictCommand
         });
         // On a thread of its own, or nobody would listen for an interrupt before the work is done.
         command.SetAction((parse, cancellation) => Task.Run(
-            () => new PredictRun(options.Request(parse), parse.InvocationConfiguration.Output, parse.InvocationConfiguration.Error).Execute(cancellation),
+            () => new PredictRun(options.Request(parse), parse.InvocationConfiguration.Output, parse.InvocationConfiguration.Error, colors).Execute(cancellation),
             CancellationToken.None));
         return command;
     }

@@ -7,7 +7,7 @@ using BarbuleOptics.Prediction;
 namespace BarbuleOptics.Cli;
 
 /// <summary>Carries out <c>barbule predict</c>: reads everything, solves, and only then writes.</summary>
-internal sealed class PredictRun(PredictRequest request, TextWriter output, TextWriter error)
+internal sealed class PredictRun(PredictRequest request, TextWriter output, TextWriter error, TerminalColors colors)
 {
     /// <summary>Most wavelengths times angles of one file: 2 million are a table of 0.6 GB.</summary>
     private const int MostPoints = 2_000_000;
@@ -87,7 +87,7 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
 
     private void Print(PredictedStructure predicted, LoadedStructure loaded, string? folder)
     {
-        PredictionTable.Write(predicted, loaded.Notes, output);
+        PredictionTable.Write(predicted, loaded.Notes, output, colors);
         if (folder is not null)
             output.WriteLine($"Written: {Path.Combine(folder, SpectraCsv.FileName)}, {Path.Combine(folder, PredictionJson.FileName)}");
         output.WriteLine();

@@ -1,4 +1,5 @@
 using System.Globalization;
+using BarbuleOptics.Color;
 using BarbuleOptics.Files;
 using BarbuleOptics.Files.Results;
 using BarbuleOptics.Materials;
@@ -11,25 +12,24 @@ namespace BarbuleOptics.Cli;
 /// <summary>A prediction as a short table for a person.</summary>
 internal static class PredictionTable
 {
-    private const int TextWidth = 100;
+    private const int TextWidth = 100, CodeWidth = 9, SwatchWidth = 3;
 
     private static readonly (string Head, int Width)[] Columns =
     [
         ("angle", 6), ("peak nm", 9), ("height", 8), ("width nm", 10), ("mean R", 8), ("x", 8), ("y", 8), ("L*", 7), ("C*", 7), ("h deg", 7),
-        ("sRGB", 9), ("bright", 9),
     ];
 
-    public static void Write(PredictedStructure predicted, IReadOnlyList<FileNote> notes, TextWriter output)
+    public static void Write(PredictedStructure predicted, IReadOnlyList<FileNote> notes, TextWriter output, TerminalColors colors)
     {
         StructurePrediction prediction = predicted.Prediction;
         output.WriteLine($"{prediction.Barbule.Name}  ({predicted.File})");
         output.WriteLine(Summary(prediction));
         output.WriteLine();
-        output.WriteLine(string.Concat(Columns.Select(column => column.Head.PadLeft(column.Width))) + "  hue");
+        output.WriteLine(Line([.. Columns.Select(column => column.Head)], Code("sRGB", null, colors), Code("bright", null, colors), "hue"));
         foreach (View view in prediction.Views)
-            output.WriteLine(Row(view));
+            output.WriteLine(Row(view, colors));
         output.WriteLine();
-        foreach (string line in Remarks(prediction).Concat(notes.Select(note => $"Warning {note.Code}: {note}.")).Concat(Warnings(prediction)))
+        foreach (string line in Remarks(prediction).Concat(notes.Select(note => $"Warning {note.Code}: {note}.")).Concat(WarningLines.Of(prediction.Warnings)))
             Wrap(line, output);
     }
 
@@ -38,10 +38,10 @@ internal static class PredictionTable
         string rule = prediction.Mixing is null ? "" : $", {prediction.Mixing} mixing";
         PredictionConditions conditions = prediction.Conditions;
         return string.Create(CultureInfo.InvariantCulture,
-            $"{prediction.Solver} solver{rule}, {prediction.FilmCount} films, {PolarizationNames.Of(conditions.Polarization)}, {conditions.Illuminant.Name}, {Color.StandardObservers.NameOf(conditions.Observer)}, error estimate {prediction.ErrorEstimate:0.0e+0} in R");
+            $"{prediction.Solver} solver{rule}, {prediction.FilmCount} films, {PolarizationNames.Of(conditions.Polarization)}, {conditions.Illuminant.Name}, {StandardObservers.NameOf(conditions.Observer)}, error estimate {prediction.ErrorEstimate:0.0e+0} in R");
     }
 
-    private static string Row(View view)
+    private static string Row(View view, TerminalColors colors)
     {
         SpectralPeak? peak = view.Features.MainPeak;
         string[] cells =
@@ -50,9 +50,21 @@ internal static class PredictionTable
             Text(peak?.HalfProminenceWidthNm, "0.0"), Text(view.Features.MeanReflectance, "0.0000"),
             Text(view.Color?.Chromaticity.X, "0.0000"), Text(view.Color?.Chromaticity.Y, "0.0000"), Text(view.Color?.Lab.L, "0.0"),
             Text(view.Color?.Lab.Chroma, "0.0"), Text(view.Color?.Lab.HueDegrees, "0.0"),
-            view.Color?.Srgb.Hex ?? "-", view.Color?.SrgbBrightened.Hex ?? "-",
         ];
-        return string.Concat(cells.Select((cell, i) => cell.PadLeft(Columns[i].Width))) + "  " + (view.Color?.HueTerm ?? "-");
+        SrgbColor? computed = view.Color?.Srgb, brightened = view.Color?.SrgbBrightened;
+        return Line(cells, Code(computed?.Hex ?? "-", computed, colors), Code(brightened?.Hex ?? "-", brightened, colors), view.Color?.HueTerm ?? "-");
+    }
+
+    private static string Line(string[] cells, string computed, string brightened, string hue)
+        => string.Concat(cells.Select((cell, i) => cell.PadLeft(Columns[i].Width))) + computed + brightened + "  " + hue;
+
+    /// <summary>The code of a color, behind a block of it where the terminal shows colors.</summary>
+    private static string Code(string code, SrgbColor? color, TerminalColors colors)
+    {
+        if (!colors.AreShown)
+            return code.PadLeft(CodeWidth);
+        string swatch = color is SrgbColor shown ? colors.Block(shown, SwatchWidth) : new string(' ', SwatchWidth);
+        return "  " + swatch + code.PadLeft(CodeWidth - 1);
     }
 
     private static IEnumerable<string> Remarks(StructurePrediction prediction)
@@ -69,16 +81,6 @@ internal static class PredictionTable
 
     private static string Describe(Material material)
         => string.Create(CultureInfo.InvariantCulture, $"{material.Name} (published for {material.LeastNm}-{material.MostNm} nm)");
-
-    /// <summary>One line a warning; what holds at several angles is said once.</summary>
-    private static IEnumerable<string> Warnings(StructurePrediction prediction)
-    {
-        foreach (IGrouping<(string Code, string Message), PredictionWarning> alike in prediction.Warnings.GroupBy(warning => (warning.Code, warning.Message)))
-        {
-            string angles = string.Join(", ", alike.Where(warning => warning.Incidence is not null).Select(warning => Text(warning.Incidence?.Degrees, "0.##")));
-            yield return $"Warning {alike.Key.Code}{(angles.Length > 0 ? $" at {angles} degrees" : "")}: {alike.Key.Message}.";
-        }
-    }
 
     private static string Text(double? value, string format) => value?.ToString(format, CultureInfo.InvariantCulture) ?? "-";
 

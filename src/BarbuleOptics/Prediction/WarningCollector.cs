@@ -16,16 +16,16 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
     {
         AboutIndices(materials);
         if (barbule.Backing is null)
-            Add(WarningCodes.BackingUnknown, "the backing is unknown and was taken as keratin; try --set barbule.backing=air and eumelanin to see what it decides");
+            Add(WarningCodes.BackingUnknown, "the backing is unknown and was taken as keratin; run again with --set barbule.backing=air and with --set barbule.backing=eumelanin to see how much it matters");
         foreach ((string key, MeasuredLength length) in MeasuredLengths.Of(barbule))
         {
             if (length is MeasuredLength.Interval interval && interval.MostNm > interval.LeastNm)
-                Add(WarningCodes.IntervalMiddle, FormattableString.Invariant($"{key} is only known to lie between {interval.LeastNm} and {interval.MostNm} nm; its middle, {interval.CentralNm:0.###} nm, was used"));
+                Add(WarningCodes.IntervalMiddle, FormattableString.Invariant($"{key} is only known to lie between {interval.LeastNm} and {interval.MostNm} nm; its middle, {interval.CentralNm:0.###} nm, was used; run again with --set {key}={interval.LeastNm} and with --set {key}={interval.MostNm} to see how much it matters"));
         }
         if (section.Runs.Any(run => run.Cell.Any(body => body.Outer.Shape == OutlineShape.Rectangle) && IsUneven(run)))
-            Add(WarningCodes.BarModel, "platelets are computed as bars without end along one direction; real ones end in both");
+            Add(WarningCodes.BarModel, "platelets are computed as bars without end along one direction; real ones end in both; say so where you report the result");
         if (section.Materials.Any(material => material.IsAveraged))
-            Add(WarningCodes.CoreAveraged, "a porous core is computed as one permittivity (three-dimensional Bruggeman average); pores near a tenth of the wavelength also scatter");
+            Add(WarningCodes.CoreAveraged, "a porous core is computed as one permittivity (three-dimensional Bruggeman average); pores near a tenth of the wavelength also scatter; if yours are as large, expect a paler color");
     }
 
     public void AboutSpacing(Material surround, Material matrix)
@@ -35,39 +35,39 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
         ReadOnlySpan<double> wavelengthsNm = conditions.Wavelengths.Nanometres;
         double? coarseNm = DiffractionOnset.LongestWithin(wavelengthsNm, wavelength => 2 * periodNm * matrix.N.At(wavelength));
         if (coarseNm is double coarse)
-            Add(WarningCodes.CoarseSpacing, FormattableString.Invariant($"the spacing of {periodNm:0.##} nm is over half a wavelength in the matrix up to {coarse:0.#} nm, where averaging rows into films is a rough picture"));
+            Add(WarningCodes.CoarseSpacing, FormattableString.Invariant($"the spacing of {periodNm:0.##} nm is over half a wavelength in the matrix up to {coarse:0.#} nm, where averaging rows into films is a rough picture; compare --mixing rules and rely on what they agree on"));
         foreach (Angle incidence in conditions.Incidences)
         {
             double sine = Math.Sin(incidence.Radians);
             double? inMatrix = DiffractionOnset.LongestWithin(wavelengthsNm, w => DiffractionOnset.InMatrixNm(section, periodNm, sine, surround.N.At(w), matrix.N.At(w)));
             double? inSurround = DiffractionOnset.LongestWithin(wavelengthsNm, w => DiffractionOnset.InSurroundNm(section, periodNm, sine, surround.N.At(w)));
             if (inMatrix is double m)
-                Add(WarningCodes.OrdersInMatrix, FormattableString.Invariant($"up to {m:0.#} nm diffraction orders propagate in the matrix, where no mixing rule holds; spectrum and color lean on it there"), incidence);
+                Add(WarningCodes.OrdersInMatrix, FormattableString.Invariant($"up to {m:0.#} nm the rows act as a diffraction grating inside the barbule, where no mixing rule holds; do not rely on the spectrum there, nor on a color that rests on it"), incidence);
             if (inSurround is double s)
-                Add(WarningCodes.OrdersInSurround, FormattableString.Invariant($"up to {s:0.#} nm light leaves in other directions than the specular one, which films leave out"), incidence);
+                Add(WarningCodes.OrdersInSurround, FormattableString.Invariant($"up to {s:0.#} nm the rows also send light in other directions than that of a mirror, which films leave out; compare with measurements at longer wavelengths only"), incidence);
         }
     }
 
     public void AboutCoverage(bool coversVisible, bool coversObserver)
     {
         if (!coversVisible)
-            Add(WarningCodes.NoColor, "the wavelengths do not cover 400-700 nm in steps of at most 20 nm, so no color was computed; the spectra stand");
+            Add(WarningCodes.NoColor, "the wavelengths do not cover 400-700 nm in steps of at most 20 nm, so no color was computed; the spectra stand; --wavelengths 300:780:1 gives both");
         else if (!coversObserver)
-            Add(WarningCodes.ObserverNotCovered, "the wavelengths do not cover 380-780 nm; the color holds the end values beyond them");
+            Add(WarningCodes.ObserverNotCovered, "the wavelengths do not cover 380-780 nm; beyond them the color holds the end values; --wavelengths 380:780:1 covers them");
     }
 
     public void AboutView(View view)
     {
         if (view.Features.AtEdge)
-            Add(WarningCodes.PeakAtEdge, "the reflectance still rises at an end of the wavelengths shown; a peak may lie beyond, widen --wavelengths", view.Incidence);
+            Add(WarningCodes.PeakAtEdge, "the reflectance still rises at an end of the wavelengths; a peak may lie beyond: widen --wavelengths to see it", view.Incidence);
         if (view.Color is { InSrgbGamut: false })
-            Add(WarningCodes.OutsideSrgb, "the color lies outside sRGB; its swatch is the nearest that a screen shows", view.Incidence);
+            Add(WarningCodes.OutsideSrgb, "the color lies outside sRGB; its swatch is the nearest that a screen shows; report x and y, or L*, C* and h", view.Incidence);
     }
 
     public void AboutAccuracy(double reached, double asked)
     {
         if (reached > asked)
-            Add(WarningCodes.AccuracyNotReached, FormattableString.Invariant($"the depth slices reach {reached:0.0e+0} in R, not the {asked:0.0e+0} asked for"));
+            Add(WarningCodes.AccuracyNotReached, FormattableString.Invariant($"the depth slices reach {reached:0.0e+0} in R, not the {asked:0.0e+0} asked for; report the error reached, or ask for less with --accuracy"));
     }
 
     /// <summary>Platelets that fill their spacing are films and diffract nothing.</summary>
@@ -86,7 +86,7 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
             if (conditions.Wavelengths.StopNm > material.MostNm)
                 parts.Add(FormattableString.Invariant($"{Math.Max(material.MostNm, conditions.Wavelengths.StartNm)}-{conditions.Wavelengths.StopNm} nm"));
             Add(WarningCodes.IndexExtrapolated, FormattableString.Invariant(
-                $"the index of {material.Name} was published for {material.LeastNm}-{material.MostNm} nm; at {string.Join(" and ", parts)} its formula is extended"));
+                $"the index of {material.Name} was published for {material.LeastNm}-{material.MostNm} nm; at {string.Join(" and ", parts)} its formula is extended; rely less on what lies there, or give a table of your own (--materials)"));
         }
     }
 

@@ -15,6 +15,9 @@ internal static class Barbule
     /// <summary>The runtime that runs the test runs the command, too.</summary>
     private static readonly string Runtime = Environment.ProcessPath is string path && Path.GetFileNameWithoutExtension(path) == "dotnet" ? path : "dotnet";
 
+    /// <summary>The command as a shell runs it.</summary>
+    public static string CommandLine => $"'{Runtime}' '{Program}'";
+
     /// <summary>Runs the command as a process.</summary>
     /// <param name="arguments">The words after <c>barbule</c>.</param>
     /// <param name="workingDirectory">Where relative paths start; that of the test when null.</param>
@@ -66,7 +69,7 @@ internal static class Barbule
     {
         var output = new StringWriter { NewLine = "\n" };
         var error = new StringWriter { NewLine = "\n" };
-        int exitCode = await BarbuleProgram.RunAsync(arguments, output, error, cancellation);
+        int exitCode = await BarbuleProgram.RunAsync(arguments, output, error, cancellation: cancellation);
         return new Outcome(exitCode, output.ToString(), error.ToString());
     }
 }

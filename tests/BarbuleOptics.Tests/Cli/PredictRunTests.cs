@@ -129,6 +129,7 @@ public sealed class PredictRunTests
     [InlineData("--help")]
     [InlineData("predict --help")]
     [InlineData("materials --help")]
+    [InlineData("sample --help")]
     [InlineData("predict -h")]
     public async Task Help_shows_an_example(string arguments)
     {

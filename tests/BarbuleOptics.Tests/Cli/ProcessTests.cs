@@ -60,8 +60,12 @@ public sealed class ProcessTests
         => Assert.Equal("barbule: there is no command \"predcit\"; did you mean predict?", (await Barbule.Run(["predcit", "x.toml"])).Refusal(2));
 
     [Fact]
-    public async Task Version_names_the_program()
-        => Assert.Equal($"{ProgramIdentity.Name} {ProgramIdentity.Version}\n", (await Barbule.Run(["--version"])).Good().Output);
+    public async Task Version_names_the_program_and_where_the_licenses_are()
+    {
+        string[] lines = (await Barbule.Run(["--version"])).Good().Output.Split('\n');
+        Assert.Equal([$"{ProgramIdentity.Name} {ProgramIdentity.Version}", "MIT license; licenses of the libraries within: THIRD-PARTY-NOTICES.txt, beside the program", ""], lines);
+        Assert.True(File.Exists(Path.Combine(AppContext.BaseDirectory, "THIRD-PARTY-NOTICES.txt")));
+    }
 
     // 130 is 128 and the number of the signal, SIGINT, as a shell reports it (POSIX.1-2017, Shell Command Language, 2.8.2: "greater than 128").
     [Fact]
