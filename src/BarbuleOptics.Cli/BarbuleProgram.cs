@@ -21,7 +21,7 @@ internal static class BarbuleProgram
         {
             RootCommand root = BarbuleCommand.Create(colors ?? TerminalColors.None);
             // Without the replacer a file named @results stays a file name.
-            ParseResult result = root.Parse(CompletionCommand.Separated(args), new ParserConfiguration { ResponseFileTokenReplacer = null });
+            ParseResult result = root.Parse(SuggestLine.Prepare(args), new ParserConfiguration { ResponseFileTokenReplacer = null });
             if (result.Errors.Count > 0 && result.Action is ParseErrorAction)
             {
                 CommandLineErrors.Write(result, error);

@@ -7,8 +7,6 @@ namespace BarbuleOptics.Cli;
 /// <remarks>The scripts ask the command itself, <c>barbule "[suggest:POSITION]" "LINE"</c>, and so know every option without a list of their own.</remarks>
 internal static class CompletionCommand
 {
-    private const string SuggestDirective = "[suggest";
-
     private static readonly string[] Shells = ["bash", "zsh", "powershell"];
 
     public static Command Create()
@@ -30,16 +28,5 @@ internal static class CompletionCommand
             return ExitCode.Done;
         });
         return command;
-    }
-
-    /// <summary>The arguments with <c>--option=value</c> at the end of a line to complete taken apart: the parser completes values only after a space.</summary>
-    public static string[] Separated(string[] args)
-    {
-        if (args.Length != 2 || !args[0].StartsWith(SuggestDirective, StringComparison.Ordinal))
-            return args;
-        string line = args[1];
-        int start = line.LastIndexOf(' ') + 1, equals = line.IndexOf('=', start);
-        bool isOption = equals > 0 && line.AsSpan(start).StartsWith("--");
-        return isOption ? [args[0], $"{line[..equals]} {line[(equals + 1)..]}"] : args;
     }
 }
