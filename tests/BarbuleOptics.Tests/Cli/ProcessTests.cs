@@ -78,10 +78,19 @@ public sealed class ProcessTests
         // By then it computes: start-up takes a fifth of that.
         while (!process.HasExited && process.TotalProcessorTime < TimeSpan.FromSeconds(1))
             await Task.Delay(20, TestContext.Current.CancellationToken);
-        OutsideProgram.Run(OutsideProgram.Find("kill", "procps"), folder.Path, "-INT", process.Id.ToString(System.Globalization.CultureInfo.InvariantCulture));
+        OutsideProgram.Run(OutsideProgram.Find("kill", "procps"), folder.Path, Signal(process), process.Id.ToString(System.Globalization.CultureInfo.InvariantCulture));
         Outcome outcome = await Barbule.End(process);
 
         Assert.Equal("barbule: interrupted; nothing was written", outcome.Refusal(130));
         Assert.Equal(["hollow-rods.toml"], folder.Content());
+    }
+
+    // A shell starts what runs in the background with SIGINT ignored, and every process below inherits that; SIGTERM asks for the same end.
+    private static string Signal(Process process)
+    {
+        string status = $"/proc/{process.Id}/status";
+        string? ignored = File.Exists(status) ? File.ReadLines(status).FirstOrDefault(line => line.StartsWith("SigIgn:", StringComparison.Ordinal)) : null;
+        const ulong Interrupt = 1UL << (2 - 1);
+        return ignored is not null && (Convert.ToUInt64(ignored[7..].Trim(), 16) & Interrupt) != 0 ? "-TERM" : "-INT";
     }
 }
