@@ -1,5 +1,6 @@
 using System.Globalization;
 using BarbuleOptics.Color;
+using BarbuleOptics.Figures;
 using BarbuleOptics.Files;
 using BarbuleOptics.Layering.Mixing;
 using BarbuleOptics.Multilayer;
@@ -100,6 +101,16 @@ internal static class OptionReaders
     {
         allowed = "a whole number from 1 to 1024";
         return int.TryParse(text, NumberStyles.None, CultureInfo.InvariantCulture, out threads) && threads is >= 1 and <= 1024;
+    }
+
+    public static bool FigureWidth(string text, out FigureSize size, out string allowed)
+    {
+        size = default;
+        allowed = FormattableString.Invariant($"{FigureSize.LeastWidthMm} to {FigureSize.MostWidthMm} mm");
+        if (!Number(text, out double widthMm) || widthMm is < FigureSize.LeastWidthMm or > FigureSize.MostWidthMm)
+            return false;
+        size = FigureSize.FromWidth(widthMm);
+        return true;
     }
 
     private static string OneOf(IEnumerable<string> names, string text)

@@ -1,6 +1,7 @@
 using System.CommandLine;
 using System.CommandLine.Parsing;
 using BarbuleOptics.Color;
+using BarbuleOptics.Figures;
 using BarbuleOptics.Layering.Mixing;
 using BarbuleOptics.Multilayer;
 using BarbuleOptics.Prediction;
@@ -23,7 +24,8 @@ internal sealed class PredictCommand
     private readonly CheckedOption<Illuminant> _illuminant = new("--illuminant", "name", $"Light that color is computed for: {string.Join(", ", Illuminant.All.Select(light => light.Name))} [D65]", Standard.Illuminant, OptionReaders.IlluminantName, Illuminant.All.Select(light => light.Name));
     private readonly CheckedOption<StandardObserver> _observer = new("--observer", "name", $"Eye that color is computed for: {string.Join(" or ", StandardObservers.Names)} [1931-2deg]", Standard.Observer, OptionReaders.Observer, StandardObservers.Names);
     private readonly CheckedOption<int> _threads = new("--threads", "N", "Most processors used [all]; results do not depend on it", Standard.Threads, OptionReaders.Threads);
-    private readonly Option<string?> _output = new("--out") { Description = "Folder for spectra.csv and prediction.json; with several files, a folder each within it", HelpName = "DIR" };
+    private readonly CheckedOption<FigureSize> _width = new("--width", "mm", "Printed width of the figures, such as 85 or 170 mm for one or two columns [85]", FigureSize.OneColumn, OptionReaders.FigureWidth);
+    private readonly Option<string?> _output = new("--out") { Description = "Folder for spectra.csv, prediction.json and figures; with several files, a folder each within it", HelpName = "DIR" };
     private readonly Option<bool> _force = new("--force") { Description = "Replace results that exist", Arity = ArgumentArity.Zero };
     private readonly Option<bool> _json = new("--json") { Description = "Print one JSON document and nothing else", Arity = ArgumentArity.Zero };
     private readonly Option<string?> _materials = new("--materials") { Description = "Folder of material tables of your own; they go before those inside of the same name", HelpName = "DIR" };
@@ -36,7 +38,7 @@ internal sealed class PredictCommand
         {
             options._files, options._wavelengths.Option, options._angles.Option, options._polarization.Option, options._solver.Option,
             options._accuracy.Option, options._mixing.Option, options._illuminant.Option, options._observer.Option, options._output,
-            options._force, options._json, options._materials, options._sets, options._threads.Option,
+            options._force, options._json, options._materials, options._sets, options._threads.Option, options._width.Option,
         };
         options._files.Validators.Add(result => CommandLineErrors.RefuseOptions(result, command));
         // The parser counts values, so that `--out here --out` would pass.
@@ -72,6 +74,6 @@ internal sealed class PredictCommand
         };
         return new PredictRequest(
             parse.GetRequiredValue(_files), conditions, parse.GetValue(_output), parse.GetValue(_force), parse.GetValue(_json),
-            parse.GetValue(_materials), parse.GetValue(_sets) ?? []);
+            parse.GetValue(_materials), parse.GetValue(_sets) ?? [], _width.Of(parse));
     }
 }

@@ -1,3 +1,4 @@
+using BarbuleOptics.Figures;
 using BarbuleOptics.Prediction;
 
 namespace BarbuleOptics.Cli;
@@ -10,5 +11,7 @@ namespace BarbuleOptics.Cli;
 /// <param name="Json">Whether standard output holds JSON in place of tables.</param>
 /// <param name="MaterialFolder">Folder of the user's material tables; null for none.</param>
 /// <param name="Sets">KEY=VALUE texts.</param>
+/// <param name="FigureSize">Printed width of the figures.</param>
 internal sealed record PredictRequest(
-    IReadOnlyList<string> Files, PredictionConditions Conditions, string? OutputFolder, bool Force, bool Json, string? MaterialFolder, IReadOnlyList<string> Sets);
+    IReadOnlyList<string> Files, PredictionConditions Conditions, string? OutputFolder, bool Force, bool Json, string? MaterialFolder, IReadOnlyList<string> Sets,
+    FigureSize FigureSize);

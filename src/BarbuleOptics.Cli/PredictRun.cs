@@ -1,5 +1,6 @@
 using System.Text;
 using BarbuleOptics.Anatomy;
+using BarbuleOptics.Figures;
 using BarbuleOptics.Files;
 using BarbuleOptics.Files.Results;
 using BarbuleOptics.Prediction;
@@ -12,7 +13,7 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
     /// <summary>Most wavelengths times angles of one file: 2 million are a table of 0.6 GB.</summary>
     private const int MostPoints = 2_000_000;
 
-    private static readonly string[] ResultNames = [SpectraCsv.FileName, PredictionJson.FileName];
+    private static readonly string[] ResultNames = [SpectraCsv.FileName, PredictionJson.FileName, .. PredictionFigures.FileNames];
 
     private bool _inputWrong;
     private int _written;
@@ -89,7 +90,7 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
     {
         PredictionTable.Write(predicted, loaded.Notes, output, colors);
         if (folder is not null)
-            output.WriteLine($"Written: {Path.Combine(folder, SpectraCsv.FileName)}, {Path.Combine(folder, PredictionJson.FileName)}");
+            output.WriteLine($"Written: {string.Join(", ", ResultNames)} in {Path.TrimEndingDirectorySeparator(folder)}{Path.DirectorySeparatorChar}");
         output.WriteLine();
     }
 
@@ -139,10 +140,18 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
         });
 
     private bool TryWrite(string folder, PredictedStructure predicted, CancellationToken cancellation)
-        => TryOutput(() => OutputFolder.Write(
-            folder,
-            [new OutputFile(SpectraCsv.FileName, stream => SpectraCsv.Write(predicted.Prediction, stream)), OutputFile.FromBytes(PredictionJson.FileName, PredictionJson.Write(predicted))],
-            request.Force, cancellation));
+        => TryOutput(() => OutputFolder.Write(folder, [.. Results(predicted, cancellation)], request.Force, cancellation));
+
+    private IEnumerable<OutputFile> Results(PredictedStructure predicted, CancellationToken cancellation)
+    {
+        yield return new OutputFile(SpectraCsv.FileName, stream => SpectraCsv.Write(predicted.Prediction, stream));
+        yield return OutputFile.FromBytes(PredictionJson.FileName, PredictionJson.Write(predicted));
+        foreach ((string name, byte[] bytes) in PredictionFigures.Render(predicted.Prediction, request.FigureSize))
+        {
+            cancellation.ThrowIfCancellationRequested();
+            yield return OutputFile.FromBytes(name, bytes);
+        }
+    }
 
     private bool TryOutput(Action write)
     {

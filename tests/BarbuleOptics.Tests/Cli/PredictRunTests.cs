@@ -11,6 +11,9 @@ public sealed class PredictRunTests
 {
     private const string Wrong = "format = 1\n[cortex]\nthickness = -5\n";
 
+    private static readonly string[] ResultNames =
+        ["prediction.json", "reflectance.pdf", "reflectance.png", "reflectance.svg", "section.pdf", "section.png", "section.svg", "spectra.csv"];
+
     private static readonly string[] Coarse = ["--wavelengths", "400:700:10"];
 
     [Fact]
@@ -23,8 +26,7 @@ public sealed class PredictRunTests
         Assert.Equal("predictions", Assert.Single(root.EnumerateObject()).Name);
         Assert.Equal([one, two], root.GetProperty("predictions").EnumerateArray().Select(item => item.GetProperty("structure").GetProperty("file").GetString()));
         Assert.Equal(
-            ["hollow-rods.toml", "nested-runs.toml", "out", "out/hollow-rods", "out/hollow-rods/prediction.json", "out/hollow-rods/spectra.csv",
-             "out/nested-runs", "out/nested-runs/prediction.json", "out/nested-runs/spectra.csv"], folder.Content());
+            ["hollow-rods.toml", "nested-runs.toml", "out", "out/hollow-rods", .. Results("out/hollow-rods"), "out/nested-runs", .. Results("out/nested-runs")], folder.Content());
     }
 
     [Fact]
@@ -40,7 +42,7 @@ public sealed class PredictRunTests
         Assert.StartsWith(wrong + ":3:13: ", outcome.ErrorLines[0], StringComparison.Ordinal);
         Assert.StartsWith(folder["absent.toml"] + ": ", outcome.ErrorLines[1], StringComparison.Ordinal);
         Assert.Single(JsonDocument.Parse(outcome.Output).RootElement.GetProperty("predictions").EnumerateArray());
-        Assert.Equal(["a-wrong.toml", "nested-runs.toml", "out", "out/nested-runs", "out/nested-runs/prediction.json", "out/nested-runs/spectra.csv"], folder.Content());
+        Assert.Equal(["a-wrong.toml", "nested-runs.toml", "out", "out/nested-runs", .. Results("out/nested-runs")], folder.Content());
     }
 
     [Fact]
@@ -70,7 +72,7 @@ public sealed class PredictRunTests
         Assert.NotEqual(spectra, folder.Text("out/spectra.csv"));
         (await Barbule.Call([.. run, "--force"])).Good();
         Assert.Equal((spectra, document), (folder.Text("out/spectra.csv"), folder.Text("out/prediction.json")));
-        Assert.Equal(["nested-runs.toml", "out", "out/prediction.json", "out/spectra.csv"], folder.Content());
+        Assert.Equal(["nested-runs.toml", "out", .. Results("out")], folder.Content());
     }
 
     // Below a regular file nobody can make a folder, the superuser neither.
@@ -158,4 +160,7 @@ public sealed class PredictRunTests
         Assert.Contains("extrapolated", keratin, StringComparison.Ordinal);
         Assert.Contains("doi", keratin, StringComparison.OrdinalIgnoreCase);
     }
+
+    /// <summary>Every file that a prediction writes, in the order of their names.</summary>
+    private static IEnumerable<string> Results(string folder) => ResultNames.Select(name => $"{folder}/{name}");
 }

@@ -1,4 +1,5 @@
 using System.Diagnostics;
+using BarbuleOptics.Figures;
 using BarbuleOptics.Files;
 using BarbuleOptics.Files.Results;
 using BarbuleOptics.Tests.Files;
@@ -27,6 +28,12 @@ public sealed class ProcessTests
         Assert.Equal(spectra, folder.Text("two/" + SpectraCsv.FileName));
         Assert.Equal(spectra, folder.Text("three/" + SpectraCsv.FileName));
         Assert.Equal(json, folder.Text("two/" + PredictionJson.FileName));
+        foreach (string name in PredictionFigures.FileNames)
+        {
+            byte[] figure = await File.ReadAllBytesAsync(folder["one/" + name], TestContext.Current.CancellationToken);
+            Assert.Equal(figure, await File.ReadAllBytesAsync(folder["two/" + name], TestContext.Current.CancellationToken));
+            Assert.Equal(figure, await File.ReadAllBytesAsync(folder["three/" + name], TestContext.Current.CancellationToken));
+        }
         // The file as typed is the one thing that differs.
         Assert.Equal(json, folder.Text("three/" + PredictionJson.FileName).Replace(path, "hollow-rods.toml", StringComparison.Ordinal));
     }

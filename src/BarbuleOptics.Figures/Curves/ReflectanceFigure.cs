@@ -1,0 +1,139 @@
+using System.Globalization;
+using BarbuleOptics.Color;
+using BarbuleOptics.Figures.Drawing;
+using BarbuleOptics.Figures.Layout;
+using BarbuleOptics.Multilayer;
+using BarbuleOptics.Prediction;
+using BarbuleOptics.Quantities;
+using BarbuleOptics.Spectra;
+
+namespace BarbuleOptics.Figures.Curves;
+
+/// <summary>Reflectance over wavelength, one curve an angle, with the colors that the curves predict.</summary>
+public sealed class ReflectanceFigure
+{
+    private const double MarginPt = 4;
+    private const double LabelGapPt = 6;
+    private const double MostLabels = 12;
+
+    private readonly StructurePrediction _prediction;
+    private readonly IReadOnlyList<View> _views;
+    private readonly double _widthPt;
+    private readonly List<PageElement> _elements = [];
+    private readonly PlotFrame _frame;
+    private readonly int _labelEvery;
+
+    private ReflectanceFigure(StructurePrediction prediction, FigureSize size)
+    {
+        (_prediction, _views, _widthPt) = (prediction, prediction.Views, size.WidthPt);
+        double height = Math.Min(215, Math.Max(130, _widthPt * 0.62));
+        _labelEvery = (int)Math.Ceiling(_views.Count / Math.Min(MostLabels, EndLabels.Capacity(height - 40)));
+        double right = _widthPt - MarginPt - EndLabels.RoomPt(Labelled.Select(view => Degrees.Text(view.Incidence)));
+        _frame = PlotFrame.Within(Grid, _views.Max(view => Greatest(view.Reflectance)), new Box(MarginPt, MarginPt + Ink.SmallPt / 2, right, height));
+    }
+
+    private WavelengthGrid Grid => _prediction.Conditions.Wavelengths;
+
+    private IEnumerable<View> Labelled => _views.Where((_, i) => IsLabelled(i));
+
+    /// <summary>Lays the figure out.</summary>
+    /// <remarks>Curves are drawn in the predicted color, brought to a lightness that reads on white; the swatches hold the colors
+    /// themselves. Beyond twelve angles not every curve is labelled, and the note says so.</remarks>
+    /// <exception cref="ArgumentException">The prediction has no view.</exception>
+    public static Figure Draw(StructurePrediction prediction, FigureSize size)
+    {
+        ArgumentNullException.ThrowIfNull(prediction);
+        if (prediction.Views.Count == 0)
+            throw new ArgumentException("Must have at least one view.", nameof(prediction));
+        return new Figure(new ReflectanceFigure(prediction, size).Compose());
+    }
+
+    private Page Compose()
+    {
+        TintUltraviolet();
+        IReadOnlyList<Point>[] traces = [.. _views.Select(view => CurveTrace.Of(view.Reflectance, _frame))];
+        Stroke[] strokes = [.. _views.Select((view, i) => CurveStyle.Of(i, view.Color))];
+        for (int i = 0; i < traces.Length; i++)
+            AddCurve(traces[i], strokes[i]);
+        _frame.Draw(_elements);
+        EndLabels.Draw(_elements, _frame.Plot, [.. _views.Select((view, i) => (Degrees.Text(view.Incidence), traces[i][^1], strokes[i])).Where((_, i) => IsLabelled(i))]);
+        bool allPeaks = MarkPeaks(traces, strokes);
+
+        double bottom = _frame.Plot.Bottom + 26 + LabelGapPt;
+        bottom = SwatchTable.Draw(_elements, _views, !allPeaks, MarginPt, _widthPt - MarginPt, bottom);
+        bottom = NoteBlock.Add(_elements, Notes(), MarginPt, _widthPt - MarginPt, bottom + LabelGapPt);
+        return new Page($"Reflectance of {_prediction.Barbule.Name}", _widthPt, bottom + MarginPt, _elements);
+    }
+
+    private void AddCurve(IReadOnlyList<Point> trace, Stroke stroke)
+    {
+        if (trace.Count > 1)
+            _elements.Add(new StrokedShape(Shape.Polyline(trace), stroke, "curve"));
+        else
+            _elements.Add(new StrokedShape(Shape.Circle(trace[0], 1.8), stroke with { Dash = null }, "curve"));
+    }
+
+    /// <summary>Light gray behind wavelengths that birds see and people do not.</summary>
+    private void TintUltraviolet()
+    {
+        double from = Math.Max(SpectrumFeatures.UltravioletStartNm, _frame.StartNm), to = Math.Min(SpectrumFeatures.VisibleStartNm, _frame.StopNm);
+        if (to <= from)
+            return;
+        var band = new Box(_frame.X(from), _frame.Plot.Top, _frame.X(to), _frame.Plot.Bottom);
+        _elements.Add(new FilledShape(Shape.Rectangle(band), Ink.Tint));
+        var name = new TextRun("UV", new(band.Center.X, band.Top + Ink.SmallPt), Ink.SmallPt, TextAlign.Middle, Ink.Note);
+        if (name.Box.Width + 4 < band.Width)
+            _elements.Add(name);
+    }
+
+    /// <summary>False when a peak's wavelength found no place.</summary>
+    private bool MarkPeaks(IReadOnlyList<Point>[] traces, Stroke[] strokes)
+    {
+        var labels = new PeakLabels(_frame.Plot with { Right = _frame.Plot.Right + LabelGapPt }, traces, _elements.OfType<TextRun>().Select(text => text.Box));
+        (string Text, Point At, SrgbColor Color)[] peaks = [.. _views.Select((view, i) => (view.Features.MainPeak, i)).Where(pair => pair.MainPeak is not null)
+            .Select(pair => (Text(pair.MainPeak!), _frame.At(pair.MainPeak!.WavelengthNm, pair.MainPeak.Reflectance), strokes[pair.i].Color))];
+        if (_views.Count > MostLabels)
+            return false;
+        foreach ((_, Point at, SrgbColor color) in peaks)
+            labels.Mark(_elements, at, color);
+        // All or none: half of the wavelengths in the plot and half below would be hard to read.
+        var written = new List<PageElement>();
+        bool all = peaks.OrderBy(peak => peak.At.Y).All(peak => labels.TryWrite(written, peak.Text, peak.At, peak.Color));
+        if (all)
+            _elements.AddRange(written);
+        return all;
+    }
+
+    private IEnumerable<string> Notes()
+    {
+        PredictionConditions conditions = _prediction.Conditions;
+        string light = conditions.Polarization switch
+        {
+            Polarizations.Unpolarized => "unpolarized light",
+            Polarizations.S => "s-polarized light",
+            _ => "p-polarized light",
+        };
+        yield return $"Specular reflectance, {light}.";
+        if (_views.Any(view => view.Color is not null))
+            yield return $"Colors: illuminant {conditions.Illuminant.Name}, CIE 1931 2° observer; a perfect mirror is white.";
+        string[] outside = [.. _views.Where(view => view.Color is { InSrgbGamut: false }).Select(view => Degrees.Text(view.Incidence))];
+        if (outside.Length == _views.Count)
+            yield return "They lie outside sRGB and are shown paler.";
+        else if (outside.Length > 0)
+            yield return $"Outside sRGB and shown paler: {(outside.Length <= 4 ? string.Join(", ", outside) : $"{outside.Length} of {_views.Count}")}.";
+        if (_labelEvery > 1)
+            yield return string.Create(CultureInfo.InvariantCulture, $"{_views.Count} angles; one curve in {_labelEvery} is labelled, and the last.");
+    }
+
+    private bool IsLabelled(int view) => view % _labelEvery == 0 && view + _labelEvery / 2 < _views.Count - 1 || view == _views.Count - 1;
+
+    private static string Text(SpectralPeak peak) => peak.WavelengthNm.ToString("0", CultureInfo.InvariantCulture) + " nm";
+
+    private static double Greatest(Spectrum spectrum)
+    {
+        double greatest = 0;
+        foreach (double value in spectrum.Values)
+            greatest = Math.Max(greatest, value);
+        return greatest;
+    }
+}
