@@ -22,6 +22,12 @@ public sealed class NoticesTests
     [InlineData("Redistributions in binary form must reproduce the above copyright notice")]
     public void The_texts_of_the_licenses_are_there(string words) => Assert.Contains(words, Notices, StringComparison.Ordinal);
 
+    [Theory]
+    [InlineData("LiberationSans-LICENSE.txt", "SIL OPEN FONT LICENSE Version 1.1")]
+    [InlineData("SKIA-THIRD-PARTY-NOTICES.txt", "The FreeType Project LICENSE")]
+    public void Font_and_drawing_library_bring_their_licenses(string file, string words)
+        => Assert.Contains(words, File.ReadAllText(Path.Combine(AppContext.BaseDirectory, file)), StringComparison.Ordinal);
+
     /// <summary>Packages of which the command's own list of dependencies says that they bring a file along.</summary>
     private static string[] Packages()
     {
