@@ -32,7 +32,7 @@ public sealed class SliceCountTests
         AssertFine("hollow-rods", found);
     }
 
-    // Measured: of the samples with round bodies all but one or two exceed the promise with half of the slices.
+    // Measured: all ten samples with round bodies exceed the promise with half of the slices.
     [Fact]
     public void Half_the_slices_would_break_the_promise_for_most_samples()
     {
@@ -46,8 +46,8 @@ public sealed class SliceCountTests
             cases++;
             broken += Change(model.Reflectance(half), model.Reflectance(model.Slices)) > Promise ? 1 : 0;
         }
-        Assert.True(cases >= 8, $"{cases} samples have slices.");
-        Assert.True(broken > cases / 2, $"Half of the slices would do for {cases - broken} of {cases} samples.");
+        Assert.True(cases >= 10, $"{cases} samples have slices.");
+        Assert.True(broken >= cases - 1, $"Half of the slices would do for {cases - broken} of {cases} samples.");
     }
 
     // The true error is the distance to four times the slices, where by the fourth order 1/255 of it is left.
