@@ -23,7 +23,7 @@ internal static class BarbuleCommand
         Add(MaterialsCommand.Create(), "barbule materials eumelanin");
         Add(SampleCommand.Create(), "barbule sample samples");
         Add(CompletionCommand.Create(), "eval \"$(barbule completion bash)\"");
-        help.AddExample(root, "barbule predict throat.toml --angles 0,30,60 --out results");
+        help.AddExample(root, $"barbule sample samples{Environment.NewLine}  barbule predict samples/hollow-rods.toml --angles 0,30,60 --out results");
         HelpOption option = root.Options.OfType<HelpOption>().Single();
         option.Action = help;
         // As completions of a path they would get in its way, and `/h` may be a file.

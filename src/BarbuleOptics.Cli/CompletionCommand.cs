@@ -11,7 +11,7 @@ internal static class CompletionCommand
 
     public static Command Create()
     {
-        var shell = new Argument<string>("SHELL") { Description = $"{string.Join(", ", Shells)}; the first line of the script says where it goes" };
+        var shell = new Argument<string>("SHELL") { Description = $"{string.Join(", ", Shells)}; the script says at its top where it goes", HelpName = "SHELL" };
         shell.CompletionSources.Add(Shells);
         shell.Validators.Add(result =>
         {

@@ -13,8 +13,8 @@ internal static class MaterialsCommand
 
     public static Command Create()
     {
-        var name = new Argument<string?>("NAME") { Description = "A material to show in full; without it all are listed", Arity = ArgumentArity.ZeroOrOne };
-        var folder = new Option<string?>("--materials") { Description = "Folder of material tables of your own; they go before those inside of the same name", HelpName = "DIR" };
+        var name = new Argument<string?>("NAME") { Description = "A material to show in full; without it all are listed", Arity = ArgumentArity.ZeroOrOne, HelpName = "NAME" };
+        var folder = new Option<string?>("--materials") { Description = "Folder of material tables of your own; where a built-in material has the same name, yours is taken", HelpName = "DIR" };
         name.CompletionSources.Add(context =>
         {
             FileResult<MaterialCatalog> catalog = EmbeddedMaterials.WithFolder(context.ParseResult.GetValue(folder));

@@ -26,9 +26,9 @@ internal sealed class PredictCommand
     private readonly CheckedOption<int> _threads = new("--threads", "N", "Most processors used [all]; results do not depend on it", Standard.Threads, OptionReaders.Threads);
     private readonly CheckedOption<FigureSize> _width = new("--width", "mm", "Printed width of the figures, such as 85 or 170 mm for one or two columns [85]", FigureSize.OneColumn, OptionReaders.FigureWidth);
     private readonly Option<string?> _output = new("--out") { Description = "Folder for spectra.csv, prediction.json and figures; with several files, a folder each within it", HelpName = "DIR" };
-    private readonly Option<bool> _force = new("--force") { Description = "Replace results that exist", Arity = ArgumentArity.Zero };
+    private readonly Option<bool> _force = new("--force") { Description = "Replace results that are in the folder already", Arity = ArgumentArity.Zero };
     private readonly Option<bool> _json = new("--json") { Description = "Print one JSON document and nothing else", Arity = ArgumentArity.Zero };
-    private readonly Option<string?> _materials = new("--materials") { Description = "Folder of material tables of your own; they go before those inside of the same name", HelpName = "DIR" };
+    private readonly Option<string?> _materials = new("--materials") { Description = "Folder of material tables of your own; where a built-in material has the same name, yours is taken", HelpName = "DIR" };
     private readonly Option<string[]> _sets = new("--set") { Description = "Replace a value of the structure file, named by table and key: barbule.surround=water, cortex.thickness=150, layer1.lumen=0 (layer1 is the outermost); may be repeated", HelpName = "KEY=VALUE" };
 
     public static Command Create(TerminalColors colors)

@@ -71,6 +71,14 @@ public sealed class CompletionTests
         Assert.Contains($"barbule completion {shell}", script.Split('\n').First(line => line.StartsWith("# ", StringComparison.Ordinal)), StringComparison.Ordinal);
     }
 
+    // The stock help shows completions in place of a name.
+    [Theory]
+    [InlineData("--help", "  materials <NAME>")]
+    [InlineData("materials --help", "\n  <NAME> ")]
+    [InlineData("completion --help", "\n  <SHELL> ")]
+    public async Task Help_names_arguments_and_does_not_list_their_values(string arguments, string words)
+        => Assert.Contains(words, (await Barbule.Call(arguments.Split(' '))).Good().Output.ReplaceLineEndings("\n"), StringComparison.Ordinal);
+
     [Fact]
     public async Task Help_says_how_a_script_is_used()
         => Assert.Contains("Example:\n  eval \"$(barbule completion bash)\"", (await Barbule.Call("completion", "--help")).Good().Output.ReplaceLineEndings("\n"), StringComparison.Ordinal);
