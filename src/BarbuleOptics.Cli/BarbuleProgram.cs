@@ -39,8 +39,11 @@ internal static class BarbuleProgram
         catch (Exception fault)
 #pragma warning restore CA1031
         {
-            error.WriteLine(OneLine.Escape($"barbule: a fault of the program, not of your input: {fault.GetType().Name}: {fault.Message}; please report it with the command line and the input file"));
+            error.WriteLine(OneLine.Escape($"barbule: {Describe(fault)}"));
             return ExitCode.OurFault;
         }
     }
+
+    /// <summary>What to tell the user of a fault of ours.</summary>
+    public static string Describe(Exception fault) => $"a fault of the program, not of your input: {fault.GetType().Name}: {fault.Message}; please report it with the command line and the input file";
 }

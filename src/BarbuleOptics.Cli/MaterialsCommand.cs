@@ -58,8 +58,8 @@ internal static class MaterialsCommand
         output.WriteLine($"  published for  {Range(material)}");
         output.WriteLine($"  source         {material.Source}");
         output.WriteLine($"  obtained       {material.Obtained}");
-        if (table.Note is not null)
-            output.WriteLine($"  note           {table.Note}");
+        if (material.Note is not null)
+            output.WriteLine($"  note           {material.Note}");
         output.WriteLine();
         output.WriteLine("  wavelength nm         n         k");
         foreach (double wavelengthNm in SampleNm)

@@ -16,6 +16,7 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
     private static readonly string[] ResultNames = [SpectraCsv.FileName, PredictionJson.FileName, .. PredictionFigures.FileNames];
 
     private bool _inputWrong;
+    private bool _ourFault;
     private int _written;
 
     public int Execute(CancellationToken cancellation)
@@ -44,9 +45,10 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
         var done = new List<PredictedStructure>();
         for (int i = 0; i < request.Files.Count; i++)
         {
-            if (Predict(request.Files[i], catalog.Value, cancellation) is not (PredictedStructure predicted, LoadedStructure loaded))
+            if (TryFile(request.Files[i], catalog.Value, cancellation) is not (PredictedStructure predicted, LoadedStructure loaded))
                 continue;
-            done.Add(predicted);
+            if (request.Json)
+                done.Add(predicted);
             if (folders is not null)
             {
                 if (!TryWrite(folders[i], predicted, cancellation))
@@ -58,7 +60,24 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
         }
         if (request.Json && done.Count > 0)
             PrintJson(done);
-        return _inputWrong ? ExitCode.WrongInput : ExitCode.Done;
+        return _ourFault ? ExitCode.OurFault : _inputWrong ? ExitCode.WrongInput : ExitCode.Done;
+    }
+
+    /// <summary>One file; a fault of ours in it does not stop the others.</summary>
+    private (PredictedStructure Predicted, LoadedStructure Loaded)? TryFile(string file, MaterialCatalog catalog, CancellationToken cancellation)
+    {
+        try
+        {
+            return Predict(file, catalog, cancellation);
+        }
+#pragma warning disable CA1031 // Whatever goes wrong in one file, the user gets the others.
+        catch (Exception fault) when (fault is not OperationCanceledException)
+#pragma warning restore CA1031
+        {
+            error.WriteLine(OneLine.Escape($"{file}: {BarbuleProgram.Describe(fault)}"));
+            _ourFault = true;
+            return null;
+        }
     }
 
     private (PredictedStructure Predicted, LoadedStructure Loaded)? Predict(string file, MaterialCatalog catalog, CancellationToken cancellation)

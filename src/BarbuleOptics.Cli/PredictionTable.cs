@@ -5,6 +5,7 @@ using BarbuleOptics.Files.Results;
 using BarbuleOptics.Materials;
 using BarbuleOptics.Multilayer;
 using BarbuleOptics.Prediction;
+using BarbuleOptics.Quantities;
 using BarbuleOptics.Spectra;
 
 namespace BarbuleOptics.Cli;
@@ -38,7 +39,7 @@ internal static class PredictionTable
         string rule = prediction.Mixing is null ? "" : $", {prediction.Mixing} mixing";
         PredictionConditions conditions = prediction.Conditions;
         return string.Create(CultureInfo.InvariantCulture,
-            $"{prediction.Solver} solver{rule}, {prediction.FilmCount} films, {PolarizationNames.Of(conditions.Polarization)}, {conditions.Illuminant.Name}, {StandardObservers.NameOf(conditions.Observer)}, error estimate {prediction.ErrorEstimate:0.0e+0} in R");
+            $"{prediction.Solver} solver{rule}, {prediction.FilmCount} films, {PolarizationNames.Of(conditions.Polarization)}, {conditions.Illuminant.Name}, {StandardObservers.NameOf(conditions.Observer)}, error estimate {prediction.ErrorEstimate:0.0e+0}");
     }
 
     private static string Row(View view, TerminalColors colors)
@@ -69,18 +70,35 @@ internal static class PredictionTable
 
     private static IEnumerable<string> Remarks(StructurePrediction prediction)
     {
-        if (prediction.Track is { Shift: BlueShift shift })
+        if (FollowedElsewhere(prediction) is string followed)
+            yield return followed;
+        if (prediction.Track.Shift is BlueShift shift)
         {
             yield return string.Create(CultureInfo.InvariantCulture,
-                $"The main peak moves over angle as for an effective index of {shift.EffectiveIndex:0.000} ({shift.NormalWavelengthNm:0.0} nm at normal incidence, {shift.ResidualNm:0.00} nm rms).");
+                $"The main peak of the smallest angle moves as for an effective index of {shift.EffectiveIndex:0.000} ({shift.NormalWavelengthNm:0.0} nm at normal incidence, {shift.ResidualNm:0.00} nm rms).");
         }
+        WavelengthGrid grid = prediction.Conditions.Wavelengths;
+        if (grid.StartNm > SpectrumFeatures.UltravioletStartNm || grid.StopNm < SpectrumFeatures.VisibleEndNm)
+            yield return string.Create(CultureInfo.InvariantCulture, $"'mean R' is over the part of 300-700 nm that {grid.StartNm}-{grid.StopNm} nm covers.");
         yield return $"Materials: {string.Join(", ", prediction.Materials.Select(Describe))}.";
         yield return "Reflectance 1 is a perfect mirror. 'width' is at half prominence; 'bright' is the color at a lightness a screen shows well.";
         yield return StructurePrediction.Scope;
     }
 
     private static string Describe(Material material)
-        => string.Create(CultureInfo.InvariantCulture, $"{material.Name} (published for {material.LeastNm}-{material.MostNm} nm)");
+        => material.LeastNm <= WavelengthGrid.LeastNm && material.MostNm >= WavelengthGrid.MostNm
+            ? material.Name
+            : string.Create(CultureInfo.InvariantCulture, $"{material.Name} (published for {material.LeastNm}-{material.MostNm} nm)");
+
+    /// <summary>Where the peak that is followed over angle is not the highest one of the table.</summary>
+    private static string? FollowedElsewhere(StructurePrediction prediction)
+    {
+        Dictionary<double, SpectralPeak?> highest = prediction.Views.ToDictionary(view => view.Incidence.Degrees, view => view.Features.MainPeak);
+        if (prediction.Track.Sightings.All(sighting => sighting.Peak == highest[sighting.Incidence.Degrees]))
+            return null;
+        IEnumerable<string> places = prediction.Track.Sightings.Select(sighting => $"{Text(sighting.Peak?.WavelengthNm, "0.0")} at {Text(sighting.Incidence.Degrees, "0.##")}");
+        return $"The main peak of the smallest angle, followed by continuity, lies at (nm at degrees): {string.Join(", ", places)}.";
+    }
 
     private static string Text(double? value, string format) => value?.ToString(format, CultureInfo.InvariantCulture) ?? "-";
 

@@ -57,9 +57,9 @@ public static class MaterialTableFile
         (IDispersion? n, IDispersion? k) = reader.Has("table") ? dispersions.ReadJoint(reader) : dispersions.ReadSeparate(reader);
         if (name is null || source is null || obtained is null || range is not var (least, most) || n is null || k is null || log.HasProblems)
             return null;
-        var material = new Material(name, n, k, Length.FromNanometres(least), Length.FromNanometres(most), source, obtained);
+        var material = new Material(name, n, k, Length.FromNanometres(least), Length.FromNanometres(most), source, obtained, note);
         CheckRange(material, reader);
-        return new MaterialTable(material, note, log.Source);
+        return new MaterialTable(material, log.Source);
     }
 
     private static (double LeastNm, double MostNm)? ReadRange(TableReader reader)

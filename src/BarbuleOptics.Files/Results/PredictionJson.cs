@@ -1,6 +1,8 @@
 using System.Text.Encodings.Web;
 using System.Text.Json;
+using BarbuleOptics.Anatomy;
 using BarbuleOptics.Color;
+using BarbuleOptics.Layering;
 using BarbuleOptics.Materials;
 using BarbuleOptics.Multilayer;
 using BarbuleOptics.Prediction;
@@ -89,7 +91,29 @@ public static class PredictionJson
         foreach (string change in predicted.Changes)
             json.WriteStringValue(change);
         json.WriteEndArray();
+        WriteGeometry(json, predicted.Prediction);
         json.WriteEndObject();
+    }
+
+    /// <summary>The geometry that was solved: the central value of every length as measured, and what follows from it.</summary>
+    private static void WriteGeometry(Utf8JsonWriter json, StructurePrediction prediction)
+    {
+        json.WriteStartObject("solved_as_nm");
+        foreach ((string key, MeasuredLength length) in MeasuredLengths.Of(prediction.Barbule))
+            json.WriteNumber(key, length.CentralNm);
+        json.WriteEndObject();
+        json.WriteStartArray("solved_rows");
+        foreach (SectionRun run in prediction.Section.Runs)
+        {
+            json.WriteStartObject();
+            json.WriteNumber("layer", run.LayerNumber);
+            json.WriteNumber("rows", run.Rows.Count);
+            json.WriteNumber("spacing_nm", run.SpacingNm);
+            json.WriteNumber("pitch_nm", run.PitchNm);
+            json.WriteEndObject();
+        }
+        json.WriteEndArray();
+        json.WriteNumber("depth_nm", prediction.Section.DepthNm);
     }
 
     private static void WriteMaterials(Utf8JsonWriter json, IReadOnlyList<Material> materials)
@@ -101,6 +125,7 @@ public static class PredictionJson
             json.WriteString("name", material.Name);
             json.WriteString("source", material.Source);
             json.WriteString("obtained", material.Obtained);
+            json.WriteString("note", material.Note);
             WriteNumbers(json, "range_nm", material.LeastNm, material.MostNm);
             json.WriteEndObject();
         }
@@ -169,15 +194,14 @@ public static class PredictionJson
         json.WriteEndObject();
     }
 
-    private static void WriteTrack(Utf8JsonWriter json, PeakTrack? track)
+    private static void WriteTrack(Utf8JsonWriter json, PeakTrack track)
     {
-        if (track is null)
-        {
-            json.WriteNull("main_peak_over_angle");
-            return;
-        }
         json.WriteStartObject("main_peak_over_angle");
-        json.WriteStartArray("wavelengths_nm");
+        json.WriteStartArray("incidence_deg");
+        foreach (PeakSighting sighting in track.Sightings)
+            json.WriteNumberValue(sighting.Incidence.Degrees);
+        json.WriteEndArray();
+        json.WriteStartArray("wavelength_nm");
         foreach (PeakSighting sighting in track.Sightings)
         {
             if (sighting.Peak is null)
@@ -187,6 +211,8 @@ public static class PredictionJson
         }
         json.WriteEndArray();
         WriteOptional(json, "effective_index", track.EffectiveIndex);
+        WriteOptional(json, "normal_wavelength_nm", track.Shift?.NormalWavelengthNm);
+        WriteOptional(json, "residual_nm", track.Shift?.ResidualNm);
         json.WriteEndObject();
     }
 

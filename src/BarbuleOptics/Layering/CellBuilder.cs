@@ -27,6 +27,10 @@ internal static class CellBuilder
         }
     }
 
+    /// <summary>Whether a body of this form holds any of its lumen material.</summary>
+    public static bool HasLumen(MelanosomeForm form)
+        => form is not MelanosomeForm.Film && OutlinesOf(form).Core is not null && form is not MelanosomeForm.Platelet { CoreAir: 0 };
+
     /// <summary>Why a form cannot exist; null when it can.</summary>
     public static (string Key, string Message)? Fault(MelanosomeForm form) => form switch
     {

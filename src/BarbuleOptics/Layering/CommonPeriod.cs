@@ -6,31 +6,40 @@ internal static class CommonPeriod
     /// <summary>Most cells of one spacing that a common period may hold.</summary>
     public const int MostCells = 6;
 
+    /// <summary>Least common multiple of the numbers up to six: the longest spacing's cells in a period of spacings that agree pair by pair.</summary>
+    private const int MostCombinedCells = 60;
+
     private const double Tolerance = 1e-9;
 
-    /// <summary>The common period of two spacings in nm; null when there is none of at most six cells of each.</summary>
-    public static double? Of(double firstNm, double secondNm)
+    /// <summary>The common period of spacings in nm; null when there is none of at most six cells of each.</summary>
+    public static double? Of(params ReadOnlySpan<double> spacingsNm) => Find(spacingsNm, MostCells, MostCells, Tolerance);
+
+    /// <summary>The common period of spacings in nm any two of which have one (<see cref="Of"/>), however many cells of each it holds.</summary>
+    public static double OfPairwise(params ReadOnlySpan<double> spacingsNm)
+        => Find(spacingsNm, MostCombinedCells, MostCombinedCells * MostCells, 4 * Tolerance)
+            ?? throw new ArgumentException("Spacings without a common period share a depth.", nameof(spacingsNm));
+
+    private static double? Find(ReadOnlySpan<double> spacingsNm, int mostOfLongest, int mostOfAny, double tolerance)
     {
-        for (int cells = 1; cells <= MostCells; cells++)
+        double longest = 0;
+        foreach (double spacing in spacingsNm)
+            longest = Math.Max(longest, spacing);
+        for (int cells = 1; cells <= mostOfLongest; cells++)
         {
-            double ratio = cells * firstNm / secondNm;
-            double whole = Math.Round(ratio);
-            if (whole is >= 1 and <= MostCells && Math.Abs(ratio - whole) <= Tolerance * whole)
-                return cells * firstNm;
+            if (IsWhole(cells * longest, spacingsNm, mostOfAny, tolerance))
+                return cells * longest;
         }
         return null;
     }
 
-    /// <summary>The common period of all runs in nm; null when there is none of at most six cells of each.</summary>
-    public static double? Of(IEnumerable<SectionRun> runs)
+    private static bool IsWhole(double periodNm, ReadOnlySpan<double> spacingsNm, int mostCells, double tolerance)
     {
-        double? period = null;
-        foreach (double spacing in runs.Select(run => run.SpacingNm).Distinct())
+        foreach (double spacing in spacingsNm)
         {
-            period = period is double soFar ? Of(soFar, spacing) : spacing;
-            if (period is null)
-                return null;
+            double ratio = periodNm / spacing, whole = Math.Round(ratio);
+            if (whole > mostCells || Math.Abs(ratio - whole) > tolerance * whole)
+                return false;
         }
-        return period;
+        return true;
     }
 }

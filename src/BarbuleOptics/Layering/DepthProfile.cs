@@ -95,9 +95,8 @@ public sealed class DepthProfile
         }
         if (met.Count == 0)
             return new DepthInterval(bottomNm - topNm, background, 1, []);
-        // Runs whose spacings have no common period never overlap in depth (LayerOverlap), so there is always one here.
-        double periodNm = CommonPeriod.Of(met.Select(item => item.Run))
-            ?? throw new ArgumentException("Rows without a common period share a depth.", nameof(section));
+        // Two runs whose spacings have no common period never overlap in depth (LayerOverlap), so any two here have one.
+        double periodNm = CommonPeriod.OfPairwise([.. met.Select(item => item.Run.SpacingNm)]);
         var bodies = new List<PlacedOutline>();
         foreach ((SectionRun run, PlacedOutline placed) in met)
         {

@@ -27,7 +27,7 @@ public sealed record Section(
     /// <summary>Whether the rods lie along the plane of incidence.</summary>
     public bool IsAlong => Axis.Degrees == 90;
 
-    /// <summary>The period of the whole section along the surface, in nm; null without rows. Where spacings have no common period
-    /// of at most six cells the longest spacing stands for it.</summary>
-    public double? PeriodNm => Runs.Count == 0 ? null : CommonPeriod.Of(Runs) ?? Runs.Max(run => run.SpacingNm);
+    /// <summary>The period of the whole section along the surface, in nm; null without rows, or where the spacings have no common
+    /// period of at most six cells of each.</summary>
+    public double? PeriodNm => Runs.Count == 0 ? null : CommonPeriod.Of([.. Runs.Select(run => run.SpacingNm)]);
 }

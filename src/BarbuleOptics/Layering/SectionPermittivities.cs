@@ -79,7 +79,7 @@ public sealed class SectionPermittivities
         double n = material.N.At(wavelengthNm), k = material.K.At(wavelengthNm);
         if (!(n > 0 && k >= 0 && double.IsFinite(n) && double.IsFinite(k)))
             throw new ArgumentException(FormattableString.Invariant($"Material '{material.Name}' has n = {n}, k = {k} at {wavelengthNm} nm; allowed n above 0, k 0 or above."));
-        return new Complex((n - k) * (n + k), 2 * n * k);
+        return material.PermittivityAt(wavelengthNm);
     }
 
     private static double LosslessIndex(Material surround, double wavelengthNm)

@@ -14,7 +14,8 @@ public sealed class Material
     /// <param name="most">Longest such wavelength.</param>
     /// <param name="source">Where the values were published.</param>
     /// <param name="obtained">How the values came into the table.</param>
-    public Material(string name, IDispersion n, IDispersion k, Length least, Length most, string source, string obtained)
+    /// <param name="note">What a user of the constants should know; null for nothing.</param>
+    public Material(string name, IDispersion n, IDispersion k, Length least, Length most, string source, string obtained, string? note = null)
     {
         Name = name;
         N = n;
@@ -25,6 +26,7 @@ public sealed class Material
             throw new ArgumentOutOfRangeException(nameof(most), most.Nanometres, "Must not be below the range's start.");
         Source = source;
         Obtained = obtained;
+        Note = note;
     }
 
     /// <summary>As the catalog lists it.</summary>
@@ -47,6 +49,9 @@ public sealed class Material
 
     /// <summary>How the values came into the table: published, from memory, fitted.</summary>
     public string Obtained { get; }
+
+    /// <summary>What a user of the constants should know, where their limits lie; null for nothing.</summary>
+    public string? Note { get; }
 
     /// <summary>Whether both constants are formulas, which extend beyond their range.</summary>
     public bool Extrapolates => N.Extrapolates && K.Extrapolates;

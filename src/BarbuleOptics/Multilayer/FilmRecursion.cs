@@ -17,7 +17,7 @@ internal static class FilmRecursion
             return OnHalfSpace(stack, k0, light, backing, work);
 
         var slab = new Slab(backing, Isotropic(back.Behind[wavelength], light), k0 * back.ThicknessNm);
-        return slab.HoldsFringe ? OnAveragedSlab(stack, k0, light, slab, work) : OnSlab(stack, k0, light, slab, work);
+        return slab.HasFringes ? OnAveragedSlab(stack, k0, light, slab, work) : OnSlab(stack, k0, light, slab, work);
     }
 
     private static MediumWave Isotropic(Complex permittivity, in PlaneWave light)

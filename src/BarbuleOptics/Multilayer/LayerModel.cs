@@ -29,7 +29,7 @@ public sealed class LayerModel
     /// <summary>Number of slices of each kind of interval.</summary>
     public ValueList<int> Slices { get; }
 
-    /// <summary>Estimate of the largest error of R that the slices leave: twice the largest change seen when every slice was halved.</summary>
+    /// <summary>Estimate of the largest error of R, T and A that the slices leave: twice the largest change seen when every slice was halved.</summary>
     /// <remarks>The method is of fourth order, so the error is 16/15 of that change; the rest of the factor allows for the
     /// wavelengths that were not tried.</remarks>
     public double SliceError { get; }
@@ -40,19 +40,21 @@ public sealed class LayerModel
     /// <param name="rule">How cuts are averaged.</param>
     /// <param name="grid">The wavelengths.</param>
     /// <param name="incidences">The angles of incidence that will be asked for; at least one.</param>
-    /// <param name="tolerance">Largest change of R allowed when slices are halved, at any wavelength; above 0.</param>
+    /// <param name="ofReflectance">Largest change of R allowed when slices are halved, at any wavelength; above 0.</param>
+    /// <param name="ofAny">The same for T and A.</param>
     /// <param name="solver">The solver that judges the slices.</param>
     /// <param name="cancellation">Ends the search early with an <see cref="OperationCanceledException"/>.</param>
     /// <exception cref="ArgumentException">A material cannot be had, or the rods lie at an angle (see <see cref="FilmBuilder"/>).</exception>
     public static LayerModel Of<TWorkspace>(
-        Section section, IMaterialCatalog catalog, IMixingRule rule, WavelengthGrid grid, IReadOnlyList<Angle> incidences, double tolerance,
+        Section section, IMaterialCatalog catalog, IMixingRule rule, WavelengthGrid grid, IReadOnlyList<Angle> incidences, double ofReflectance, double ofAny,
         ISpectralSolver<FilmStack, TWorkspace> solver, CancellationToken cancellation = default)
     {
         ArgumentNullException.ThrowIfNull(grid);
-        Guard.Positive(tolerance);
+        Guard.Positive(ofReflectance);
+        Guard.Positive(ofAny);
         DepthProfile profile = DepthProfile.Of(section);
         var refinement = new SliceRefinement<TWorkspace>(profile, catalog, rule, grid, incidences, solver);
-        (int[] slices, double change) = refinement.Find(tolerance, cancellation);
+        (int[] slices, double change) = refinement.Find(ofReflectance, ofAny, cancellation);
         return new LayerModel(profile, catalog, rule, slices, 2 * change);
     }
 

@@ -16,7 +16,7 @@ namespace BarbuleOptics.Multilayer;
 internal readonly struct SlabAverage
 {
     /// <summary>The averages for one slab and the films above it.</summary>
-    /// <param name="slab">The slab, which holds at least one fringe.</param>
+    /// <param name="slab">The slab, which has fringes.</param>
     /// <param name="films">The films seen from the slab.</param>
     /// <param name="entered">|t|^2.</param>
     public SlabAverage(in Slab slab, in Entrance films, double entered)

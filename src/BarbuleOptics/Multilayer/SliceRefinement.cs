@@ -6,7 +6,7 @@ using BarbuleOptics.Quantities;
 namespace BarbuleOptics.Multilayer;
 
 /// <summary>Chooses how many slices each kind of interval needs: halves the slices of one kind after another at some of the
-/// wavelengths and angles, and refines the kinds whose halving still moves the reflectance.</summary>
+/// wavelengths and angles, and refines the kinds whose halving still moves reflectance, transmittance or absorptance.</summary>
 internal sealed class SliceRefinement<TWorkspace>
 {
     /// <summary>Wavelengths tried; the largest change between them exceeds the largest among them by less than the margin allows for.</summary>
@@ -15,7 +15,7 @@ internal sealed class SliceRefinement<TWorkspace>
     /// <summary>Angles tried.</summary>
     private const int ProbeAngles = 3;
 
-    /// <summary>Part of the tolerance that the change at the probes may use.</summary>
+    /// <summary>Part of a tolerance that the change at the probes may use.</summary>
     private const double Margin = 0.7;
 
     /// <summary>Groups of kinds that are judged together; with many kinds those of like thickness share one.</summary>
@@ -41,10 +41,12 @@ internal sealed class SliceRefinement<TWorkspace>
         _incidences = Spread([.. incidences], ProbeAngles);
     }
 
-    /// <summary>The slices of each kind, and the largest change of R at the probes when all are halved.</summary>
-    public (int[] Slices, double Change) Find(double tolerance, CancellationToken cancellation)
+    /// <summary>The slices of each kind, and the largest change of R, T or A at the probes when all are halved.</summary>
+    /// <param name="ofReflectance">Largest change of R allowed.</param>
+    /// <param name="ofAny">Largest change of T and A allowed.</param>
+    /// <param name="cancellation">Ends the search early.</param>
+    public (int[] Slices, double Change) Find(double ofReflectance, double ofAny, CancellationToken cancellation)
     {
-        double allowed = Margin * tolerance;
         int[] slices = new int[_profile.KindCount];
         Array.Fill(slices, 1);
         int[] uneven = [.. Enumerable.Range(0, slices.Length).Where(kind => !_profile.Kinds[kind].IsUniform)];
@@ -55,21 +57,24 @@ internal sealed class SliceRefinement<TWorkspace>
         while (true)
         {
             cancellation.ThrowIfCancellationRequested();
-            double[] reflectance = Reflectances(slices);
-            double change = LargestChange(reflectance, Reflectances(Halved(slices, uneven)));
-            if (change <= allowed || uneven.Any(kind => slices[kind] >= MostSlices))
-                return (slices, change);
-            Refine(slices, groups, reflectance, allowed / groups.Length);
+            Probe[] probes = Solve(slices);
+            Probe change = Probe.LargestChange(probes, Solve(Halved(slices, uneven)));
+            if (Excess(change) <= Margin || uneven.Any(kind => slices[kind] >= MostSlices))
+                return (slices, change.Largest);
+            Refine(slices, groups, probes, Excess);
         }
+
+        double Excess(Probe change) => Math.Max(change.Reflected / ofReflectance, change.Largest / ofAny);
     }
 
     /// <summary>Gives each group of kinds the slices that its own share of the tolerance asks for, by the fourth order of the method.</summary>
-    private void Refine(int[] slices, int[][] groups, double[] reflectance, double share)
+    private void Refine(int[] slices, int[][] groups, Probe[] probes, Func<Probe, double> excess)
     {
         int[] before = [.. slices];
+        double share = Margin / groups.Length;
         foreach (int[] group in groups)
         {
-            double change = LargestChange(reflectance, Reflectances(Halved(before, group)));
+            double change = excess(Probe.LargestChange(probes, Solve(Halved(before, group))));
             double growth = Math.Clamp(Math.Pow(change / share, 0.25), 1, 2);
             foreach (int kind in group)
                 slices[kind] = Math.Min((int)Math.Ceiling(before[kind] * growth - 1e-9), MostSlices);
@@ -88,22 +93,27 @@ internal sealed class SliceRefinement<TWorkspace>
         return [.. ordered.Chunk((ordered.Length + MostGroups - 1) / MostGroups)];
     }
 
-    private double[] Reflectances(int[] slices)
+    private Probe[] Solve(int[] slices)
     {
         FilmStack films = FilmBuilder.Build(_profile, slices, _permittivities, _rule);
         TWorkspace workspace = _solver.CreateWorkspace(films);
         int count = films.WavelengthsNm.Length;
-        var reflectance = new double[2 * _incidences.Length * count];
-        for (int i = 0; i < _incidences.Length; i++)
+        double[] reflectance = new double[count], transmittance = new double[count];
+        var probes = new List<Probe>(2 * _incidences.Length * count);
+        foreach (Angle incidence in _incidences)
         {
-            Solve(Polarizations.S, reflectance.AsSpan(2 * i * count, count));
-            Solve(Polarizations.P, reflectance.AsSpan((2 * i + 1) * count, count));
-
-            void Solve(Polarizations polarization, Span<double> into) => _solver.Solve(
-                films, new SolverRequest(0, count, _incidences[i], polarization, SolverOutputs.Reflectance), workspace,
-                new SolverResponse { Reflectance = into });
+            Add(incidence, Polarizations.S);
+            Add(incidence, Polarizations.P);
         }
-        return reflectance;
+        return [.. probes];
+
+        void Add(Angle incidence, Polarizations polarization)
+        {
+            _solver.Solve(
+                films, new SolverRequest(0, count, incidence, polarization, SolverOutputs.Transmittance), workspace,
+                new SolverResponse { Reflectance = reflectance, Transmittance = transmittance });
+            probes.AddRange(reflectance.Zip(transmittance, (reflected, transmitted) => new Probe(reflected, transmitted)));
+        }
     }
 
     private static int[] Halved(int[] slices, int[] kinds)
@@ -114,14 +124,23 @@ internal sealed class SliceRefinement<TWorkspace>
         return halved;
     }
 
-    private static double LargestChange(double[] before, double[] after)
-    {
-        double largest = 0;
-        for (int i = 0; i < before.Length; i++)
-            largest = Math.Max(largest, Math.Abs(after[i] - before[i]));
-        return largest;
-    }
-
     private static T[] Spread<T>(T[] all, int most)
         => all.Length <= most ? all : [.. Enumerable.Range(0, most).Select(i => all[(int)((long)i * (all.Length - 1) / (most - 1))])];
+
+    /// <summary>R and T at one wavelength, direction and polarization, or how far they and A = 1 - R - T moved.</summary>
+    private readonly record struct Probe(double Reflected, double Transmitted, double Absorbed = 0)
+    {
+        public double Largest => Math.Max(Reflected, Math.Max(Transmitted, Absorbed));
+
+        public static Probe LargestChange(Probe[] before, Probe[] after)
+        {
+            double reflected = 0, transmitted = 0, absorbed = 0;
+            for (int i = 0; i < before.Length; i++)
+            {
+                double r = after[i].Reflected - before[i].Reflected, t = after[i].Transmitted - before[i].Transmitted;
+                (reflected, transmitted, absorbed) = (Math.Max(reflected, Math.Abs(r)), Math.Max(transmitted, Math.Abs(t)), Math.Max(absorbed, Math.Abs(r + t)));
+            }
+            return new Probe(reflected, transmitted, absorbed);
+        }
+    }
 }

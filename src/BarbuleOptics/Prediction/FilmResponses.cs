@@ -40,7 +40,7 @@ internal sealed class FilmResponses
     public IEnumerable<SpectralResponse> Of(Polarizations polarization)
         => Enumerable.Range(0, _conditions.Incidences.Count).Select(angle => Of(angle, polarization));
 
-    public static FilmResponses Solve(ReferenceFilmSolver solver, LayerModel model, PredictionConditions conditions, CancellationToken cancellation)
+    public static FilmResponses Solve<TWorkspace>(ISpectralSolver<FilmStack, TWorkspace> solver, LayerModel model, PredictionConditions conditions, CancellationToken cancellation)
     {
         int count = conditions.Wavelengths.Count, angles = conditions.Incidences.Count;
         double[][] values = [.. Enumerable.Range(0, 6 * angles).Select(_ => new double[count])];
@@ -50,12 +50,12 @@ internal sealed class FilmResponses
         return new FilmResponses(conditions, values, errors.Max());
     }
 
-    private static double SolveBlock(
-        ReferenceFilmSolver solver, LayerModel model, PredictionConditions conditions, double[][] values, int first, CancellationToken cancellation)
+    private static double SolveBlock<TWorkspace>(
+        ISpectralSolver<FilmStack, TWorkspace> solver, LayerModel model, PredictionConditions conditions, double[][] values, int first, CancellationToken cancellation)
     {
         int length = Math.Min(Block, conditions.Wavelengths.Count - first);
         FilmStack films = model.FilmsAt(conditions.Wavelengths.Nanometres.Slice(first, length));
-        FilmWorkspace workspace = solver.CreateWorkspace(films);
+        TWorkspace workspace = solver.CreateWorkspace(films);
         double error = 0;
         for (int beam = 0; beam < 2 * conditions.Incidences.Count; beam++)
         {

@@ -10,11 +10,14 @@ internal static class MaterialCheck
     /// <summary>Least index, far below any metal's: a mixing rule divides by sums of permittivities, which losses keep from zero.</summary>
     private const double LeastIndex = 1e-6;
 
+    /// <summary>Beyond this no extended formula is believed: transparent solids end near 4.</summary>
+    private const double MostExtrapolatedIndex = 5;
+
     /// <summary>Every use of a material that has none, one problem each.</summary>
-    public static IEnumerable<AnatomyProblem> Find(Barbule barbule, WavelengthGrid grid, IMaterialCatalog catalog)
+    public static IEnumerable<AnatomyProblem> Find(IEnumerable<MaterialUse> uses, WavelengthGrid grid, IMaterialCatalog catalog)
     {
         bool surround = true;
-        foreach (MaterialUse use in MaterialUse.Of(barbule))
+        foreach (MaterialUse use in uses)
         {
             string? fault = catalog.TryFind(use.Reference, out Material? material) ? Fault(material, grid, surround) : $"no material '{use.Reference}'";
             if (fault is not null)
@@ -40,6 +43,8 @@ internal static class MaterialCheck
             double n = material.N.At(wavelengthNm), k = material.K.At(wavelengthNm);
             if (!double.IsFinite(n) || n < LeastIndex)
                 return FormattableString.Invariant($"{material.Name} has n = {n} at {wavelengthNm} nm; allowed {LeastIndex} or above{Published(material, wavelengthNm)}");
+            if (n > MostExtrapolatedIndex && Published(material, wavelengthNm) is { Length: > 0 } published)
+                return FormattableString.Invariant($"{material.Name} has n = {n:G4} at {wavelengthNm} nm; allowed {MostExtrapolatedIndex} or below where a formula is extended{published}");
             if (!double.IsFinite(k) || k < 0)
                 return FormattableString.Invariant($"{material.Name} has k = {k} at {wavelengthNm} nm; allowed 0 or above{Published(material, wavelengthNm)}");
             if (mustBeLossless && k > 0)

@@ -1,4 +1,5 @@
 using BarbuleOptics.Anatomy;
+using BarbuleOptics.Layering;
 using BarbuleOptics.Materials;
 
 namespace BarbuleOptics.Prediction;
@@ -9,12 +10,13 @@ namespace BarbuleOptics.Prediction;
 internal readonly record struct MaterialUse(string Key, MaterialReference Reference)
 {
     /// <summary>Every place whose material the light can meet, the surround first.</summary>
-    public static IEnumerable<MaterialUse> Of(Barbule barbule)
+    /// <param name="barbule">The structure.</param>
+    /// <param name="section">The same, laid out.</param>
+    public static IEnumerable<MaterialUse> Of(Barbule barbule, Section section)
     {
         yield return new("barbule.surround", barbule.Surround);
-        yield return new("barbule.matrix", barbule.Matrix);
-        if (barbule.Backing is not null)
-            yield return new("barbule.backing", barbule.Backing);
+        if (HasMatrix(section))
+            yield return new("barbule.matrix", barbule.Matrix);
         for (int l = 0; l < barbule.Layers.Count; l++)
         {
             BarbuleLayer layer = barbule.Layers[l];
@@ -22,19 +24,16 @@ internal readonly record struct MaterialUse(string Key, MaterialReference Refere
             {
                 string place = FormattableString.Invariant($"layer{l + 1}") + (layer.Bodies.Count == 1 ? "" : FormattableString.Invariant($".body{b + 1}"));
                 yield return new(place + ".material", layer.Bodies[b].Material);
-                if (IsHollow(layer.Bodies[b].Form))
+                if (CellBuilder.HasLumen(layer.Bodies[b].Form))
                     yield return new(place + ".lumen_material", layer.Bodies[b].LumenMaterial);
             }
         }
+        yield return new("barbule.backing", section.Backing);
         if (barbule.Back is not null)
             yield return new("back.behind", barbule.Back.Behind);
     }
 
-    private static bool IsHollow(MelanosomeForm form) => form switch
-    {
-        MelanosomeForm.Rod rod => rod.Lumen is { CentralNm: > 0 },
-        MelanosomeForm.FlattenedRod rod => rod.LumenHeight is { CentralNm: > 0 },
-        MelanosomeForm.Platelet platelet => platelet.Wall is not null && platelet.CoreAir > 0,
-        _ => false,
-    };
+    /// <summary>Whether anything is left for the matrix: films alone may fill the whole depth.</summary>
+    private static bool HasMatrix(Section section)
+        => section.Runs.Count > 0 || section.Films.Sum(film => film.ThicknessNm) < section.DepthNm - SectionBuilder.TouchingNm;
 }

@@ -13,7 +13,13 @@ public sealed record PredictionConditions
         Length.FromNanometres(300), Length.FromNanometres(780), Length.FromNanometres(1));
 
     /// <summary>Angles of incidence in the surround, each 0 to below 90 degrees; normal incidence unless set.</summary>
-    public ValueList<Angle> Incidences { get; init; } = [Angle.FromDegrees(0)];
+    /// <exception cref="ArgumentException">There is none, or one lies outside its range.</exception>
+    public ValueList<Angle> Incidences
+    {
+        get;
+        init => field = value.Count > 0 && value.All(angle => angle.Degrees is >= 0 and < 90)
+            ? value : throw new ArgumentException("Must be one angle or more, each 0 to below 90 degrees.", nameof(value));
+    } = [Angle.FromDegrees(0)];
 
     /// <summary>Polarization of the incident light that views and colors are of; both unless set.</summary>
     public Polarizations Polarization { get; init; } = Polarizations.Unpolarized;
@@ -22,7 +28,8 @@ public sealed record PredictionConditions
     public bool AllPolarizations { get; init; } = true;
 
     /// <summary>Largest absolute error asked of R, T and A, above 0; 1e-4 unless set.</summary>
-    public double Accuracy { get; init; } = 1e-4;
+    /// <exception cref="ArgumentOutOfRangeException">Not a finite number above 0.</exception>
+    public double Accuracy { get; init => field = Guard.Positive(value); } = 1e-4;
 
     /// <summary>How rows are averaged into films.</summary>
     public IMixingRule Mixing { get; init; } = MixingRules.Default;
@@ -34,5 +41,10 @@ public sealed record PredictionConditions
     public StandardObserver Observer { get; init; } = StandardObserver.Cie1931TwoDegree;
 
     /// <summary>Most threads used, 1 or above; all processors unless set. Results do not depend on it.</summary>
-    public int Threads { get; init; } = Environment.ProcessorCount;
+    /// <exception cref="ArgumentOutOfRangeException">Below 1.</exception>
+    public int Threads
+    {
+        get;
+        init => field = value >= 1 ? value : throw new ArgumentOutOfRangeException(nameof(value), value, "Must be 1 or above.");
+    } = Environment.ProcessorCount;
 }

@@ -4,6 +4,7 @@ using BarbuleOptics.Color;
 using BarbuleOptics.Layering;
 using BarbuleOptics.Materials;
 using BarbuleOptics.Multilayer;
+using BarbuleOptics.Quantities;
 using BarbuleOptics.Spectra;
 
 namespace BarbuleOptics.Prediction;
@@ -13,6 +14,9 @@ public static class Predictor
 {
     /// <summary>Change of R on halving the slices that is allowed whatever accuracy is asked for.</summary>
     private const double MostSliceChange = 1e-5;
+
+    /// <summary>The one place that names the solver of films.</summary>
+    private static readonly ReferenceFilmSolver Solver = new();
 
     /// <summary>Predicts what <paramref name="barbule"/> does to light, by the multilayer solver.</summary>
     /// <param name="barbule">The structure; its central measurements are used.</param>
@@ -31,7 +35,7 @@ public static class Predictor
         prediction = null;
         if (!SectionBuilder.TryBuild(barbule, out Section? section, out problems))
             return false;
-        problems = [.. FilmProblems(section), .. MaterialCheck.Find(barbule, conditions.Wavelengths, catalog)];
+        problems = [.. FilmProblems(section), .. MaterialCheck.Find(MaterialUse.Of(barbule, section), conditions.Wavelengths, catalog)];
         if (problems.Count > 0)
             return false;
         prediction = Predict(barbule, section, conditions, catalog, cancellation);
@@ -50,15 +54,19 @@ public static class Predictor
     private static StructurePrediction Predict(
         Barbule barbule, Section section, PredictionConditions conditions, IMaterialCatalog catalog, CancellationToken cancellation)
     {
-        var solver = new ReferenceFilmSolver();
         // The estimate of the error is twice the change.
-        double sliceTolerance = Math.Min(MostSliceChange, conditions.Accuracy / 2);
-        LayerModel model = LayerModel.Of(section, catalog, conditions.Mixing, conditions.Wavelengths, conditions.Incidences, sliceTolerance, solver, cancellation);
-        FilmResponses responses = FilmResponses.Solve(solver, model, conditions, cancellation);
+        bool thinBack = HoldsNoFringe(section, conditions.Wavelengths, catalog);
+        if (thinBack)
+            section = section with { Back = section.Back! with { Coherent = true } };
+        double ofAny = conditions.Accuracy / 2, ofReflectance = Math.Min(MostSliceChange, ofAny);
+        LayerModel model = LayerModel.Of(section, catalog, conditions.Mixing, conditions.Wavelengths, conditions.Incidences, ofReflectance, ofAny, Solver, cancellation);
+        FilmResponses responses = FilmResponses.Solve(Solver, model, conditions, cancellation);
 
-        List<Material> materials = [.. MaterialUse.Of(barbule).Select(use => Find(catalog, use.Reference)).Distinct()];
+        List<Material> materials = [.. MaterialUse.Of(barbule, section).Select(use => Find(catalog, use.Reference)).Distinct()];
         var warnings = new WarningCollector(barbule, section, conditions);
         warnings.AboutStructure(materials);
+        if (thinBack)
+            warnings.AboutThinBack();
         Material surround = Find(catalog, section.Surround);
         warnings.AboutSpacing(surround, Find(catalog, barbule.Matrix));
         double error = Math.Max(model.SliceError, responses.ErrorEstimate);
@@ -93,15 +101,18 @@ public static class Predictor
         };
     }
 
-    private static PeakTrack? TrackOf(List<View> views, Material surround)
+    /// <summary>Whether the backing is to be averaged over thickness but is thinner than half a wave somewhere in the spectrum: no such
+    /// thickness varies by a fringe. Decided once for the whole spectrum, so that it has no step.</summary>
+    private static bool HoldsNoFringe(Section section, WavelengthGrid grid, IMaterialCatalog catalog)
+        => section.Back is { Coherent: false } back
+            && back.Thickness.CentralNm < grid.StopNm / (2 * Find(catalog, section.Backing).N.At(grid.StopNm));
+
+    /// <summary>The peak followed from the smallest angle up, in whatever order the angles were asked for.</summary>
+    private static PeakTrack TrackOf(List<View> views, Material surround)
     {
-        for (int i = 1; i < views.Count; i++)
-        {
-            if (views[i].Incidence.Degrees <= views[i - 1].Incidence.Degrees)
-                return null;
-        }
-        double peakNm = views[0].Features.MainPeak?.WavelengthNm ?? views[0].Reflectance.Grid.StartNm;
-        return PeakTrack.Follow([.. views.Select(view => (view.Incidence, view.Features))], surround.N.At(peakNm));
+        View[] ordered = [.. views.OrderBy(view => view.Incidence.Degrees)];
+        double peakNm = ordered[0].Features.MainPeak?.WavelengthNm ?? ordered[0].Reflectance.Grid.StartNm;
+        return PeakTrack.Follow([.. ordered.Select(view => (view.Incidence, view.Features))], surround.N.At(peakNm));
     }
 
     private static Material Find(IMaterialCatalog catalog, MaterialReference reference)

@@ -48,8 +48,8 @@ public sealed record StructurePrediction
     /// <summary>One view an angle.</summary>
     public required ValueList<View> Views { get; init; }
 
-    /// <summary>The main peak over angle; null where the angles do not ascend.</summary>
-    public required PeakTrack? Track { get; init; }
+    /// <summary>The main peak of the smallest angle, followed over the angles in ascending order.</summary>
+    public required PeakTrack Track { get; init; }
 
     /// <summary>What the result leans on.</summary>
     public required ValueList<PredictionWarning> Warnings { get; init; }

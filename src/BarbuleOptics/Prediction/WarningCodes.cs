@@ -33,6 +33,9 @@ public static class WarningCodes
     /// <summary>An unknown backing is taken as the default matrix.</summary>
     public const string BackingUnknown = "backing-unknown";
 
+    /// <summary>A backing to be averaged over thickness is too thin for it and was solved at its own thickness.</summary>
+    public const string BackCoherent = "back-coherent";
+
     /// <summary>The grid ends within the observer's range and the ends are held.</summary>
     public const string ObserverNotCovered = "observer-not-covered";
 

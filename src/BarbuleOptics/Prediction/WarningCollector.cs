@@ -8,6 +8,9 @@ namespace BarbuleOptics.Prediction;
 /// <summary>Says in words what a prediction leans on.</summary>
 internal sealed class WarningCollector(Barbule barbule, Section section, PredictionConditions conditions)
 {
+    /// <summary>L* below which a swatch is black on any screen.</summary>
+    private const double DarkestShown = 5;
+
     private readonly List<PredictionWarning> _warnings = [];
 
     public ValueList<PredictionWarning> All => [.. _warnings];
@@ -28,19 +31,29 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
             Add(WarningCodes.CoreAveraged, "a porous core is computed as one permittivity (three-dimensional Bruggeman average); pores near a tenth of the wavelength also scatter; if yours are as large, expect a paler color");
     }
 
+    public void AboutThinBack()
+        => Add(WarningCodes.BackCoherent, FormattableString.Invariant(
+            $"the backing of {section.Back!.Thickness.CentralNm:0.##} nm is thinner than half a wave at {conditions.Wavelengths.StopNm} nm, too thin to average over fringes; it was solved at this one thickness, as with coherent = true"));
+
+    /// <summary>Each layer opens orders by its own spacing, so the longest decides; what spacings do together is said beside it.</summary>
     public void AboutSpacing(Material surround, Material matrix)
     {
-        if (section.PeriodNm is not double periodNm || !section.Runs.Any(IsUneven))
+        double[] spacingsNm = [.. section.Runs.Where(IsUneven).Select(run => run.SpacingNm).Distinct()];
+        if (spacingsNm.Length == 0)
             return;
+        double spacingNm = spacingsNm.Max();
+        string together = spacingsNm.Length == 1 ? "" : section.PeriodNm is double periodNm
+            ? FormattableString.Invariant($"; spacings that differ repeat together after {periodNm:0.##} nm, so that weaker orders open at longer wavelengths still")
+            : "; spacings that differ open weaker orders together at longer wavelengths still";
         ReadOnlySpan<double> wavelengthsNm = conditions.Wavelengths.Nanometres;
-        double? coarseNm = DiffractionOnset.LongestWithin(wavelengthsNm, wavelength => 2 * periodNm * matrix.N.At(wavelength));
+        double? coarseNm = DiffractionOnset.LongestWithin(wavelengthsNm, wavelength => 2 * spacingNm * matrix.N.At(wavelength));
         if (coarseNm is double coarse)
-            Add(WarningCodes.CoarseSpacing, FormattableString.Invariant($"the spacing of {periodNm:0.##} nm is over half a wavelength in the matrix up to {coarse:0.#} nm, where averaging rows into films is a rough picture; compare --mixing rules and rely on what they agree on"));
+            Add(WarningCodes.CoarseSpacing, FormattableString.Invariant($"the spacing of {spacingNm:0.##} nm is over half a wavelength in the matrix up to {coarse:0.#} nm, where averaging rows into films is a rough picture; compare --mixing rules and rely on what they agree on{together}"));
         foreach (Angle incidence in conditions.Incidences)
         {
             double sine = Math.Sin(incidence.Radians);
-            double? inMatrix = DiffractionOnset.LongestWithin(wavelengthsNm, w => DiffractionOnset.InMatrixNm(section, periodNm, sine, surround.N.At(w), matrix.N.At(w)));
-            double? inSurround = DiffractionOnset.LongestWithin(wavelengthsNm, w => DiffractionOnset.InSurroundNm(section, periodNm, sine, surround.N.At(w)));
+            double? inMatrix = DiffractionOnset.LongestWithin(wavelengthsNm, w => DiffractionOnset.InMatrixNm(section, spacingNm, sine, surround.N.At(w), matrix.N.At(w)));
+            double? inSurround = DiffractionOnset.LongestWithin(wavelengthsNm, w => DiffractionOnset.InSurroundNm(section, spacingNm, sine, surround.N.At(w)));
             if (inMatrix is double m)
                 Add(WarningCodes.OrdersInMatrix, FormattableString.Invariant($"up to {m:0.#} nm the rows act as a diffraction grating inside the barbule, where no mixing rule holds; do not rely on the spectrum there, nor on a color that rests on it"), incidence);
             if (inSurround is double s)
@@ -59,15 +72,27 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
     public void AboutView(View view)
     {
         if (view.Features.AtEdge)
-            Add(WarningCodes.PeakAtEdge, "the reflectance still rises at an end of the wavelengths; a peak may lie beyond: widen --wavelengths to see it", view.Incidence);
-        if (view.Color is { InSrgbGamut: false })
+            Add(WarningCodes.PeakAtEdge, FormattableString.Invariant($"the reflectance still rises at {EndsOf(view)}; a peak may lie beyond: widen --wavelengths to see it"), view.Incidence);
+        // No screen shows which black a black is.
+        if (view.Color is { InSrgbGamut: false, Lab.L: >= DarkestShown })
             Add(WarningCodes.OutsideSrgb, "the color lies outside sRGB; its swatch is the nearest that a screen shows; report x and y, or L*, C* and h", view.Incidence);
+    }
+
+    private string EndsOf(View view)
+    {
+        WavelengthGrid grid = conditions.Wavelengths;
+        return (view.Features.RisesAtStart, view.Features.RisesAtStop) switch
+        {
+            (true, true) => FormattableString.Invariant($"both ends, {grid.StartNm} and {grid.StopNm} nm"),
+            (true, false) => FormattableString.Invariant($"the short end, {grid.StartNm} nm"),
+            _ => FormattableString.Invariant($"the long end, {grid.StopNm} nm"),
+        };
     }
 
     public void AboutAccuracy(double reached, double asked)
     {
         if (reached > asked)
-            Add(WarningCodes.AccuracyNotReached, FormattableString.Invariant($"the depth slices reach {reached:0.0e+0} in R, not the {asked:0.0e+0} asked for; report the error reached, or ask for less with --accuracy"));
+            Add(WarningCodes.AccuracyNotReached, FormattableString.Invariant($"the depth slices reach {reached:0.0e+0} in R and T, not the {asked:0.0e+0} asked for; report the error reached, or ask for less with --accuracy"));
     }
 
     /// <summary>Platelets that fill their spacing are films and diffract nothing.</summary>
@@ -86,7 +111,7 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
             if (conditions.Wavelengths.StopNm > material.MostNm)
                 parts.Add(FormattableString.Invariant($"{Math.Max(material.MostNm, conditions.Wavelengths.StartNm)}-{conditions.Wavelengths.StopNm} nm"));
             Add(WarningCodes.IndexExtrapolated, FormattableString.Invariant(
-                $"the index of {material.Name} was published for {material.LeastNm}-{material.MostNm} nm; at {string.Join(" and ", parts)} its formula is extended; rely less on what lies there, or give a table of your own (--materials)"));
+                $"the index of {material.Name} was published for {material.LeastNm}-{material.MostNm} nm; at {string.Join(" and ", parts)} its formula is extended; rely less on what lies there (barbule materials NAME shows its note), or give a table of your own (--materials)"));
         }
     }
 

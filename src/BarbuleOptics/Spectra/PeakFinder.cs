@@ -38,16 +38,16 @@ internal static class PeakFinder
         double Valley(Summit summit) => Math.Max(lowestLeft[summit.First], lowestRight[summit.Last]);
     }
 
-    /// <summary>Whether an end of the spectrum stands out as a peak would.</summary>
-    public static bool RisesAtEnd(ReadOnlySpan<double> values)
+    /// <summary>Which ends of the spectrum stand out as a peak would.</summary>
+    public static (bool Start, bool Stop) RisesAtEnds(ReadOnlySpan<double> values)
     {
         double highest = 0;
         foreach (double value in values)
             highest = Math.Max(highest, value);
-        double rise = Math.Max(
-            values[0] - LowestSinceHigher(values, fromLeft: false)[0],
-            values[^1] - LowestSinceHigher(values, fromLeft: true)[^1]);
-        return rise > 0 && rise >= LeastProminenceShare * highest;
+        double least = LeastProminenceShare * highest;
+        return (Stands(values[0] - LowestSinceHigher(values, fromLeft: false)[0]), Stands(values[^1] - LowestSinceHigher(values, fromLeft: true)[^1]));
+
+        bool Stands(double rise) => rise > 0 && rise >= least;
     }
 
     /// <summary>Maxima with lower samples on both sides, in the order of the grid.</summary>

@@ -4,14 +4,15 @@ namespace BarbuleOptics.Spectra;
 
 /// <summary>What a reader of a reflectance spectrum names first: its peaks, its brightness, its contrast, its ultraviolet.</summary>
 /// <param name="Peaks">From the highest reflectance down; equals from the shortest wavelength up. Empty where nothing peaks inside the grid.</param>
-/// <param name="AtEdge">Whether the spectrum still rises at an end of its grid, so that a peak may lie beyond: the end stands above
-/// the lowest point before higher ground by at least 1 % of the highest reflectance.</param>
+/// <param name="RisesAtStart">Whether the spectrum still rises towards the first wavelength of its grid, so that a peak may lie beyond:
+/// the end stands above the lowest point before higher ground by at least 1 % of the highest reflectance.</param>
+/// <param name="RisesAtStop">The same at the last wavelength.</param>
 /// <param name="MeanReflectance">Mean over 300-700 nm or the part of it that the grid covers; null where it covers none.</param>
 /// <param name="Contrast">(Greatest - least)/mean over the same wavelengths; null where the mean is not above 0.</param>
 /// <param name="UltravioletShare">Reflectance summed over 300-400 nm, as a share of 300-700 nm; null where the grid does not cover all
 /// of 300-700 nm (a share of a part could not be compared), or the sum is not above 0.</param>
 public sealed record SpectrumFeatures(
-    ValueList<SpectralPeak> Peaks, bool AtEdge, double? MeanReflectance, double? Contrast, double? UltravioletShare)
+    ValueList<SpectralPeak> Peaks, bool RisesAtStart, bool RisesAtStop, double? MeanReflectance, double? Contrast, double? UltravioletShare)
 {
     /// <summary>Start of the ultraviolet that birds see, in nm.</summary>
     public const double UltravioletStartNm = 300;
@@ -21,6 +22,9 @@ public sealed record SpectrumFeatures(
 
     /// <summary>End of the light that birds see, in nm.</summary>
     public const double VisibleEndNm = 700;
+
+    /// <summary>Whether the spectrum still rises at an end of its grid.</summary>
+    public bool AtEdge => RisesAtStart || RisesAtStop;
 
     /// <summary>The peak with the highest reflectance; null where there is none.</summary>
     public SpectralPeak? MainPeak => Peaks.Count > 0 ? Peaks[0] : null;
@@ -37,8 +41,9 @@ public sealed record SpectrumFeatures(
         SpectralBand? seen = SpectralBand.Covered(reflectance, UltravioletStartNm, VisibleEndNm);
         double? mean = seen?.Mean;
         double? contrast = seen is not null && mean > 0 ? (seen.Greatest - seen.Least) / mean : null;
+        (bool risesAtStart, bool risesAtStop) = PeakFinder.RisesAtEnds(reflectance.Values);
         return new SpectrumFeatures(
-            [.. PeakFinder.Find(reflectance)], PeakFinder.RisesAtEnd(reflectance.Values), mean, contrast, ShareOfUltraviolet(reflectance));
+            [.. PeakFinder.Find(reflectance)], risesAtStart, risesAtStop, mean, contrast, ShareOfUltraviolet(reflectance));
     }
 
     private static double? ShareOfUltraviolet(Spectrum reflectance)

@@ -77,12 +77,16 @@ public sealed class PredictOutputTests
         Assert.Equal(file, Text(root, "structure", "file"));
         Assert.Equal(Convert.ToHexStringLower(System.Security.Cryptography.SHA256.HashData(File.ReadAllBytes(file))), Text(root, "structure", "sha256"));
         Assert.Equal(("multilayer", "bruggeman", "bruggeman-3d", "mirror"), (Text(root, "solver"), Text(root, "mixing"), Text(root, "core_mixing"), Text(root, "reference")));
+        JsonElement structure = root.GetProperty("structure");
+        AssertKeys(structure, "name", "file", "sha256", "set", "solved_as_nm", "solved_rows", "depth_nm");
+        // The mean of the sample's four replicates, (84 + 88 + 91 + 85) / 4.
+        Assert.Equal(87, Number(structure, "solved_as_nm", "cortex.thickness"));
         Assert.Equal(1e-3, Number(root, "accuracy_asked"));
         Assert.InRange(Number(root, "error_estimate"), 1e-13, 1e-3);
         Assert.Equal((300, 780, 1), (Number(root, "wavelengths_nm", "start"), Number(root, "wavelengths_nm", "stop"), Number(root, "wavelengths_nm", "step")));
         Assert.All(root.GetProperty("materials").EnumerateArray(), material =>
         {
-            AssertKeys(material, "name", "source", "obtained", "range_nm");
+            AssertKeys(material, "name", "source", "obtained", "note", "range_nm");
             Assert.Equal(2, material.GetProperty("range_nm").GetArrayLength());
         });
         Assert.Equal(["air", "keratin", "eumelanin"], root.GetProperty("materials").EnumerateArray().Select(material => Text(material, "name")));

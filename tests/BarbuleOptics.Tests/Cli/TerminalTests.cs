@@ -99,7 +99,9 @@ public sealed partial class TerminalTests
         Assert.All(lines[first..], line => Assert.True(line.Length == 0 || line.StartsWith("Warning ", StringComparison.Ordinal) || line.StartsWith("  ", StringComparison.Ordinal), line));
         string[] codes = [.. lines.Where(line => line.StartsWith("Warning ", StringComparison.Ordinal)).Select(line => line.Split(' ')[1].TrimEnd(':'))];
         Assert.Contains("orders-in-matrix", codes);
-        Assert.Equal(codes.Distinct(), codes);
+        // A spectrum may rise at one end at some angles and at the other at others.
+        string[] once = [.. codes.Where(code => code != "peak-at-edge")];
+        Assert.Equal(once.Distinct(), once);
         Assert.Contains(lines, line => line.StartsWith("Warning orders-in-matrix at 30 and 60 degrees: up to ", StringComparison.Ordinal));
         Assert.Contains(lines, line => line.StartsWith("Warning index-extrapolated: the index of keratin and eumelanin was published for ", StringComparison.Ordinal));
     }

@@ -60,7 +60,7 @@ public sealed class MaterialTableTests
     public void A_table_keeps_its_words()
     {
         MaterialTable table = MaterialTableFile.Parse(Encoding.UTF8.GetBytes("note = 'dry'\n" + Text(One, Zero)), "own.toml").Value!;
-        Assert.Equal(("own", "invented", "for a test", "dry", "own.toml"), (table.Material.Name, table.Material.Source, table.Material.Obtained, table.Note, table.File));
+        Assert.Equal(("own", "invented", "for a test", "dry", "own.toml"), (table.Material.Name, table.Material.Source, table.Material.Obtained, table.Material.Note, table.File));
         Assert.Equal((300.0, 800.0), (table.Material.LeastNm, table.Material.MostNm));
     }
 

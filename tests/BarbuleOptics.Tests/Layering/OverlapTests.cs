@@ -145,6 +145,29 @@ public sealed class OverlapTests
     }
 
     [Fact]
+    public void Three_layers_with_a_period_pair_by_pair_may_share_a_depth()
+    {
+        // 400, 500 and 600 nm: 2000, 1200 and 3000 nm two by two, 6000 nm all three, 15 cells of the first.
+        const string Layer = "[[layer]]\nform = \"rod\"\ndiameter = 20\nspacing = {0}\nshift = {1}\ngap = {2}\n";
+        Section section = Structures.Section("[cortex]\nthickness = 100\n"
+            + string.Format(CultureInfo.InvariantCulture, Layer, 400, 0.05, -20) + string.Format(CultureInfo.InvariantCulture, Layer, 500, 0.1, -20)
+            + string.Format(CultureInfo.InvariantCulture, Layer, 600, 0.15, 0));
+        Assert.Null(section.PeriodNm);
+        Assert.True(DepthProfile.Of(section).KindCount > 1);
+    }
+
+    [Theory]
+    [InlineData(200, 300, 500)]
+    [InlineData(500, 300, 200)]
+    [InlineData(300, 500, 200)]
+    public void The_common_period_does_not_depend_on_the_order_of_spacings(double first, double second, double third)
+    {
+        Assert.Null(CommonPeriod.Of(first, second, third)); // 3000 nm would hold 15 cells of 200
+        Assert.Equal(600, CommonPeriod.Of(200, 300));
+        Assert.Equal(3000, CommonPeriod.OfPairwise(first, second, third));
+    }
+
+    [Fact]
     public void Bodies_may_not_reach_into_the_backing_or_a_film()
     {
         Assert.Equal("layer1.gap", Structures.Problem("[[layer]]\nform = \"rod\"\ndiameter = 100\nspacing = 160\ngap = -5").Key);

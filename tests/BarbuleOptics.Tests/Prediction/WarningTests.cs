@@ -68,15 +68,29 @@ public sealed class WarningTests
         }
     }
 
-    // Two spacings of 200 and 300 nm repeat every 600 nm; of 200 and 311 nm at no multiple up to six.
+    // Each layer opens orders by its own spacing, the longer one first; 200 and 300 nm repeat together every 600 nm, 200 and 311 nm never.
     [Theory]
-    [InlineData(300, 900)]
-    [InlineData(311, 466)]
-    public void Orders_of_two_spacings_are_those_of_the_common_period(double spacing, double lastNm)
+    [InlineData(300, 450, "repeat together after 600 nm")]
+    [InlineData(311, 466, "open weaker orders together")]
+    public void Orders_of_two_spacings_are_those_of_the_longer_one_and_their_beat_is_told(double spacing, double lastNm, string together)
     {
         string text = Rods(200) + FormattableString.Invariant($"gap = 50\n[[layer]]\nform = 'rod'\ndiameter = 100\nspacing = {spacing}\n") + Melanin;
         PredictionWarning warning = Assert.Single(Predictions.Of(text, Predictions.At(400, 950, 1)).Warnings, warning => warning.Code == WarningCodes.OrdersInMatrix);
         Assert.StartsWith(FormattableString.Invariant($"up to {lastNm} nm "), warning.Message, StringComparison.Ordinal);
+        PredictionWarning coarse = Assert.Single(Predictions.Of(text, Predictions.At(400, 950, 1)).Warnings, warning => warning.Code == WarningCodes.CoarseSpacing);
+        Assert.Contains(together, coarse.Message, StringComparison.Ordinal);
+    }
+
+    // A backing of n = 1.5 holds half a wave of 600 nm in 200 nm.
+    [Fact]
+    public void A_back_too_thin_to_average_is_solved_as_it_is_over_the_whole_spectrum()
+    {
+        string Back(double thickness, string coherent) => Sheet + FormattableString.Invariant($"[back]\nthickness = {thickness}\n") + coherent;
+        StructurePrediction thin = Predictions.Of(Back(199, ""), Predictions.At(400, 600, 1)), asked = Predictions.Of(Back(199, "coherent = true\n"), Predictions.At(400, 600, 1));
+        Assert.Contains(WarningCodes.BackCoherent, Predictions.Codes(thin));
+        Assert.DoesNotContain(WarningCodes.BackCoherent, Predictions.Codes(asked));
+        Assert.Equal(asked.Views[0].Reflectance.Values.ToArray(), thin.Views[0].Reflectance.Values.ToArray());
+        Assert.DoesNotContain(WarningCodes.BackCoherent, Predictions.Codes(Predictions.Of(Back(201, ""), Predictions.At(400, 600, 1))));
     }
 
     [Fact]

@@ -12,7 +12,7 @@ public sealed class MaxwellGarnett : IMixingRule
     public string Name => "maxwell-garnett";
 
     /// <inheritdoc/>
-    public string Description => "two-dimensional Maxwell Garnett with coated cylinders for hollow bodies; along the rods the mean permittivity";
+    public string Description => "two-dimensional Maxwell Garnett, every body a cylinder, a hollow one a coated cylinder; along the rods the mean permittivity";
 
     /// <inheritdoc/>
     public DiagonalPermittivity Mix(SectionCut cut, ReadOnlySpan<Complex> permittivities, double wavelengthNm)
