@@ -59,7 +59,8 @@ internal sealed class PeakLabels(Box plot, IReadOnlyList<IReadOnlyList<Point>> c
     private bool IsFree(Box box)
         => plot.Holds(box) && !_taken.Any(box.Overlaps) && !_leaders.Any(leader => box.Meets(leader.From, leader.To)) && !curves.Any(curve => Crosses(curve, box));
 
-    private static bool Crosses(IReadOnlyList<Point> curve, Box box)
+    /// <summary>Whether a curve runs through a box.</summary>
+    public static bool Crosses(IReadOnlyList<Point> curve, Box box)
     {
         for (int i = 1; i < curve.Count; i++)
         {

@@ -15,6 +15,7 @@ public sealed class ReflectanceFigure
     private const double MarginPt = 4;
     private const double LabelGapPt = 6;
     private const double MostLabels = 12;
+    private const double LeastPeakShare = 0.005;
 
     private readonly StructurePrediction _prediction;
     private readonly IReadOnlyList<View> _views;
@@ -22,6 +23,7 @@ public sealed class ReflectanceFigure
     private readonly List<PageElement> _elements = [];
     private readonly PlotFrame _frame;
     private readonly int _labelEvery;
+    private bool _explainsTint;
 
     private ReflectanceFigure(StructurePrediction prediction, FigureSize size)
     {
@@ -50,8 +52,8 @@ public sealed class ReflectanceFigure
 
     private Page Compose()
     {
-        TintUltraviolet();
         IReadOnlyList<Point>[] traces = [.. _views.Select(view => CurveTrace.Of(view.Reflectance, _frame))];
+        TintUltraviolet(traces);
         Stroke[] strokes = [.. _views.Select((view, i) => CurveStyle.Of(i, view.Color))];
         for (int i = 0; i < traces.Length; i++)
             AddCurve(traces[i], strokes[i]);
@@ -60,7 +62,7 @@ public sealed class ReflectanceFigure
         bool allPeaks = MarkPeaks(traces, strokes);
 
         double bottom = _frame.Plot.Bottom + 26 + LabelGapPt;
-        bottom = SwatchTable.Draw(_elements, _views, !allPeaks, MarginPt, _widthPt - MarginPt, bottom);
+        bottom = SwatchTable.Draw(_elements, _views, allPeaks ? null : PeakOf, MarginPt, _widthPt - MarginPt, bottom);
         bottom = NoteBlock.Add(_elements, Notes(), MarginPt, _widthPt - MarginPt, bottom + LabelGapPt);
         return new Page($"Reflectance of {_prediction.Barbule.Name}", _widthPt, bottom + MarginPt, _elements);
     }
@@ -73,25 +75,33 @@ public sealed class ReflectanceFigure
             _elements.Add(new StrokedShape(Shape.Circle(trace[0], 1.8), stroke with { Dash = null }, "curve"));
     }
 
-    /// <summary>Light gray behind wavelengths that birds see and people do not.</summary>
-    private void TintUltraviolet()
+    /// <summary>Light gray behind wavelengths that birds see and people do not; named where no curve runs.</summary>
+    private void TintUltraviolet(IReadOnlyList<Point>[] traces)
     {
         double from = Math.Max(SpectrumFeatures.UltravioletStartNm, _frame.StartNm), to = Math.Min(SpectrumFeatures.VisibleStartNm, _frame.StopNm);
         if (to <= from)
             return;
         var band = new Box(_frame.X(from), _frame.Plot.Top, _frame.X(to), _frame.Plot.Bottom);
         _elements.Add(new FilledShape(Shape.Rectangle(band), Ink.Tint));
-        var name = new TextRun("UV", new(band.Center.X, band.Top + Ink.SmallPt), Ink.SmallPt, TextAlign.Middle, Ink.Note);
-        if (name.Box.Width + 4 < band.Width)
-            _elements.Add(name);
+        for (double baseline = band.Top + Ink.SmallPt; baseline < band.Bottom; baseline += Ink.SmallPt)
+        {
+            var name = new TextRun("UV", new(band.Center.X, baseline), Ink.SmallPt, TextAlign.Middle, Ink.Note);
+            bool isFree = band.Holds(name.Box.Grown(1)) && !traces.Any(trace => PeakLabels.Crosses(trace, name.Box.Grown(1)));
+            if (isFree)
+            {
+                _elements.Add(name);
+                return;
+            }
+        }
+        _explainsTint = true;
     }
 
     /// <summary>False when a peak's wavelength found no place.</summary>
     private bool MarkPeaks(IReadOnlyList<Point>[] traces, Stroke[] strokes)
     {
         var labels = new PeakLabels(_frame.Plot with { Right = _frame.Plot.Right + LabelGapPt }, traces, _elements.OfType<TextRun>().Select(text => text.Box));
-        (string Text, Point At, SrgbColor Color)[] peaks = [.. _views.Select((view, i) => (view.Features.MainPeak, i)).Where(pair => pair.MainPeak is not null)
-            .Select(pair => (Text(pair.MainPeak!), _frame.At(pair.MainPeak!.WavelengthNm, pair.MainPeak.Reflectance), strokes[pair.i].Color))];
+        (string Text, Point At, SrgbColor Color)[] peaks = [.. _views.Select((view, i) => (Peak: PeakOf(view), i)).Where(pair => pair.Peak is not null)
+            .Select(pair => (Text(pair.Peak!), _frame.At(pair.Peak!.WavelengthNm, pair.Peak.Reflectance), strokes[pair.i].Color))];
         if (_views.Count > MostLabels)
             return false;
         foreach ((_, Point at, SrgbColor color) in peaks)
@@ -121,11 +131,17 @@ public sealed class ReflectanceFigure
             yield return "They lie outside sRGB and are shown paler.";
         else if (outside.Length > 0)
             yield return $"Outside sRGB and shown paler: {(outside.Length <= 4 ? string.Join(", ", outside) : $"{outside.Length} of {_views.Count}")}.";
+        if (_explainsTint)
+            yield return "Gray: ultraviolet.";
         if (_labelEvery > 1)
             yield return string.Create(CultureInfo.InvariantCulture, $"{_views.Count} angles; one curve in {_labelEvery} is labelled, and the last.");
     }
 
     private bool IsLabelled(int view) => view % _labelEvery == 0 && view + _labelEvery / 2 < _views.Count - 1 || view == _views.Count - 1;
+
+    /// <summary>The main peak; null where there is none, or it is too low to be told from the axis.</summary>
+    private SpectralPeak? PeakOf(View view)
+        => view.Features.MainPeak is SpectralPeak peak && 100 * peak.Reflectance > LeastPeakShare * _frame.TopPercent ? peak : null;
 
     private static string Text(SpectralPeak peak) => peak.WavelengthNm.ToString("0", CultureInfo.InvariantCulture) + " nm";
 

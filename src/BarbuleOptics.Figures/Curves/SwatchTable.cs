@@ -3,6 +3,7 @@ using BarbuleOptics.Color;
 using BarbuleOptics.Figures.Drawing;
 using BarbuleOptics.Figures.Layout;
 using BarbuleOptics.Prediction;
+using BarbuleOptics.Spectra;
 
 namespace BarbuleOptics.Figures.Curves;
 
@@ -12,7 +13,7 @@ internal sealed class SwatchTable
     private const double RowGapPt = 2.5;
     private const double SwatchPt = 10;
     private const double WidestPt = 34;
-    private const double TextGapPt = 3;
+    private const double TextGapPt = 1.6;
 
     private readonly List<PageElement> _elements;
     private readonly IReadOnlyList<View> _views;
@@ -26,6 +27,12 @@ internal sealed class SwatchTable
         (_elements, _views, _left, _top) = (elements, views, left, top);
         _firstColumn = left + new[] { BrightenedText, AsComputedText }.Max(text => FigureFont.WidthPt(text, Ink.SmallPt)) + 6;
         _column = Math.Min(WidestPt, (right - _firstColumn) / views.Count);
+        double widest = views.Max(view => FigureFont.WidthPt(Degrees.Text(view.Incidence), Ink.SmallPt));
+        if (_column >= widest)
+            return;
+        // Numbers wider than their columns reach beyond the first and the last.
+        _firstColumn += widest / 2;
+        _column = (right - widest / 2 - _firstColumn) / views.Count;
     }
 
     private static string AsComputedText => "Color as computed";
@@ -33,13 +40,17 @@ internal sealed class SwatchTable
     private static string BrightenedText => FormattableString.Invariant($"Brightened to L* {SrgbEncoder.BrightenedLightness}");
 
     /// <summary>Draws the table; its bottom.</summary>
-    public static double Draw(List<PageElement> elements, IReadOnlyList<View> views, bool withPeaks, double left, double right, double top)
+    public static double Draw(List<PageElement> elements, IReadOnlyList<View> views, Func<View, SpectralPeak?>? peak, double left, double right, double top)
     {
         var table = new SwatchTable(elements, views, left, right, top);
-        table.Texts("Angle of incidence", view => Degrees.Text(view.Incidence));
-        if (withPeaks)
-            table.Texts("Main peak (nm)", view => view.Features.MainPeak?.WavelengthNm.ToString("0", CultureInfo.InvariantCulture) ?? "–");
-        if (views.Any(view => view.Color is not null))
+        bool withColors = views.Any(view => view.Color is not null);
+        if (peak is null && !withColors)
+            return top;
+        List<(string Name, string[] Texts)> rows = [("Angle of incidence", [.. views.Select(view => Degrees.Text(view.Incidence))])];
+        if (peak is not null)
+            rows.Add(("Main peak (nm)", [.. views.Select(view => peak(view)?.WavelengthNm.ToString("0", CultureInfo.InvariantCulture) ?? "–")]));
+        table.Texts(rows);
+        if (withColors)
         {
             table.Swatches(AsComputedText, color => color.Srgb);
             table.Swatches(BrightenedText, color => color.SrgbBrightened);
@@ -47,19 +58,19 @@ internal sealed class SwatchTable
         return table._top - RowGapPt;
     }
 
-    private void Texts(string name, Func<View, string> text)
+    private void Texts(List<(string Name, string[] Texts)> rows)
     {
-        double middle = _top + Ink.SmallPt / 2;
-        Name(name, middle);
-        // Columns too narrow for every number hold every second, third, … one.
-        double widest = _views.Max(view => FigureFont.WidthPt(text(view), Ink.SmallPt));
+        // Columns too narrow for every number hold every second, third, … one, the same in all rows.
+        double widest = rows.Max(row => row.Texts.Max(text => FigureFont.WidthPt(text, Ink.SmallPt)));
         int every = (int)Math.Ceiling((widest + TextGapPt) / _column);
-        for (int i = 0; i < _views.Count; i += every)
+        foreach ((string name, string[] texts) in rows)
         {
-            double x = every == 1 ? Middle(i) : Math.Max(Middle(i), _firstColumn + widest / 2);
-            _elements.Add(TextRun.CenteredAt(text(_views[i]), new(x, middle), Ink.SmallPt, TextAlign.Middle, Ink.Text));
+            double middle = _top + Ink.SmallPt / 2;
+            Name(name, middle);
+            for (int i = 0; i < texts.Length; i += every)
+                _elements.Add(TextRun.CenteredAt(texts[i], new(Middle(i), middle), Ink.SmallPt, TextAlign.Middle, Ink.Text));
+            _top += Ink.SmallPt + RowGapPt;
         }
-        _top += Ink.SmallPt + RowGapPt;
     }
 
     private void Swatches(string name, Func<CieColor, SrgbColor> color)

@@ -18,7 +18,8 @@ internal static class PdfWriter
             Producer = "SkiaSharp",
             Creation = Fixed,
             Modified = Fixed,
-            RasterDpi = PngWriter.Dpi,
+            // Pages are rounded to whole dots of this size; nothing in a figure is turned into dots.
+            RasterDpi = 7200,
             EncodingQuality = 101,
         };
         using (SKDocument document = SKDocument.CreatePdf(bytes, about) ?? throw new InvalidOperationException("The PDF document could not be begun."))

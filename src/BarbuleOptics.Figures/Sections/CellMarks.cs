@@ -1,4 +1,3 @@
-using System.Globalization;
 using BarbuleOptics.Figures.Drawing;
 using BarbuleOptics.Layering;
 
@@ -9,23 +8,30 @@ internal static class CellMarks
 {
     private const double RowPt = 10;
     private const double ArrowPt = 3;
+    private const double OutsidePt = 8;
+    private const double AsidePt = 1.2;
     private const int MostMarks = 3;
 
     private static readonly Stroke Under = new(Ink.White, 1.6);
     private static readonly Stroke Dashed = new(Ink.Text, 0.7, [2.4, 1.6]);
+    private static readonly Stroke Hair = new(Ink.Text, Ink.HairPt);
 
     /// <summary>Draws the cells and their widths below the section; the bottom.</summary>
     public static double Draw(List<PageElement> elements, SectionLayout layout)
     {
         double bottom = layout.Box.Bottom + 2;
-        foreach (IGrouping<double, SectionRun> runs in layout.Section.Runs.GroupBy(run => Math.Round(run.SpacingNm, 3)).Take(MostMarks))
+        var widths = new List<PageElement>();
+        // Narrow ones first, so that the guides of the wide ones pass outside.
+        foreach (IGrouping<double, SectionRun> runs in layout.Section.Runs.GroupBy(run => Math.Round(run.SpacingNm, 3)).OrderBy(runs => runs.Key).Take(MostMarks))
         {
             double topNm = runs.Min(run => run.Rows[0].CentreNm + run.CellTopNm), bottomNm = runs.Max(run => run.Rows[^1].CentreNm + run.CellBottomNm);
             Point upper = layout.At(-runs.Key / 2, topNm), lower = layout.At(runs.Key / 2, bottomNm);
-            Cell(elements, new Box(upper.X, upper.Y - 1.2, lower.X, lower.Y + 1.2), layout.Box);
-            Width(elements, upper.X, lower.X, lower.Y + 1.2, bottom + RowPt / 2, runs.Key, layout.Box);
-            bottom += RowPt;
+            var cell = new Box(upper.X, upper.Y - AsidePt, lower.X, lower.Y + AsidePt);
+            Cell(elements, cell, layout.Box);
+            Guides(elements, cell, bottom + RowPt / 2);
+            bottom += Width(widths, cell, bottom + RowPt / 2, runs.Key, layout.Box);
         }
+        elements.AddRange(widths);
         return bottom;
     }
 
@@ -35,25 +41,36 @@ internal static class CellMarks
         elements.Add(new ClippedGroup(Shape.Rectangle(window), [new StrokedShape(outline, Under), new StrokedShape(outline, Dashed, "cell")]));
     }
 
-    private static void Width(List<PageElement> elements, double left, double right, double from, double y, double spacingNm, Box window)
+    private static void Guides(List<PageElement> elements, Box cell, double y)
+        => elements.Add(new StrokedShape(new Shape().AddLine(new(cell.Left, cell.Bottom), new(cell.Left, y + 2)).AddLine(new(cell.Right, cell.Bottom), new(cell.Right, y + 2)), Hair));
+
+    /// <summary>Draws the width of a cell; the height that it takes.</summary>
+    private static double Width(List<PageElement> elements, Box cell, double y, double spacingNm, Box window)
     {
-        var guides = new Shape();
-        foreach (double x in new[] { left, right })
-            guides.AddLine(new(x, Math.Max(from, window.Top)), new(x, y + 2));
-        elements.Add(new StrokedShape(guides, new Stroke(Ink.Text, Ink.HairPt)));
-        string text = "period " + spacingNm.ToString("0.#", CultureInfo.InvariantCulture) + " nm";
-        double length = FigureFont.WidthPt(text, Ink.SmallPt);
-        bool inside = length + 4 * ArrowPt < right - left;
-        double middle = (left + right) / 2;
-        if (inside)
+        string words = "period " + LengthText.Of(spacingNm);
+        double length = FigureFont.WidthPt(words, Ink.SmallPt), middle = cell.Center.X;
+        if (length + 4 * ArrowPt < cell.Width)
         {
-            Arrow.Draw(elements, new(middle - length / 2 - 1.5, y), new(left, y), Ink.Text, Ink.HairPt, ArrowPt);
-            Arrow.Draw(elements, new(middle + length / 2 + 1.5, y), new(right, y), Ink.Text, Ink.HairPt, ArrowPt);
-            elements.Add(TextRun.CenteredAt(text, new(middle, y), Ink.SmallPt, TextAlign.Middle, Ink.Text));
-            return;
+            Dimension(elements, middle - length / 2 - 1.5, cell.Left, y);
+            Dimension(elements, middle + length / 2 + 1.5, cell.Right, y);
+            Words(elements, words, new(middle, y));
+            return RowPt;
         }
-        Arrow.Draw(elements, new(left - 8, y), new(left, y), Ink.Text, Ink.HairPt, ArrowPt);
-        Arrow.Draw(elements, new(right + 8, y), new(right, y), Ink.Text, Ink.HairPt, ArrowPt);
-        elements.Add(TextRun.CenteredAt(text, new(right + 10, y), Ink.SmallPt, TextAlign.Start, Ink.Text));
+        // Too narrow: arrows from outside, and the words below, within the width of the drawing.
+        Dimension(elements, cell.Left - OutsidePt, cell.Left, y);
+        Dimension(elements, cell.Right + OutsidePt, cell.Right, y);
+        double least = window.Left + length / 2;
+        Words(elements, words, new(Math.Clamp(middle, least, Math.Max(least, window.Right - length / 2)), y + RowPt - 1));
+        return 2 * RowPt - 1;
+    }
+
+    private static void Dimension(List<PageElement> elements, double from, double to, double y) => Arrow.Draw(elements, new(from, y), new(to, y), Ink.Text, Ink.HairPt, ArrowPt);
+
+    /// <summary>Words on a white ground, where the guides of wider cells may pass.</summary>
+    private static void Words(List<PageElement> elements, string words, Point at)
+    {
+        var text = TextRun.CenteredAt(words, at, Ink.SmallPt, TextAlign.Middle, Ink.Text);
+        elements.Add(new FilledShape(Shape.Rectangle(text.Box.Grown(0.8)), Ink.White));
+        elements.Add(text);
     }
 }

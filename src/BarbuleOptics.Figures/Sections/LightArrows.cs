@@ -9,7 +9,8 @@ namespace BarbuleOptics.Figures.Sections;
 /// <remarks>The drawing shows the plane across the rods. Where the plane of incidence is another, directions are drawn as seen in it.</remarks>
 internal sealed class LightArrows
 {
-    private const double LengthPt = 36;
+    private const double MostLengthPt = 36;
+    private const double LabelPt = 26;
     private const double HeadPt = 4.5;
     private const double HeadShare = 0.55;
     private const double WidthPt = 0.7;
@@ -21,17 +22,20 @@ internal sealed class LightArrows
     private readonly Point _spot;
     private readonly List<Box> _taken = [];
     private readonly SrgbColor _ground;
+    private readonly double _lengthPt;
 
-    private LightArrows(List<PageElement> elements, Point spot, SrgbColor ground) => (_elements, _spot, _ground) = (elements, spot, ground);
+    private LightArrows(List<PageElement> elements, Point spot, double lengthPt, SrgbColor ground) => (_elements, _spot, _lengthPt, _ground) = (elements, spot, lengthPt, ground);
 
     public static void Draw(List<PageElement> elements, SectionLayout layout, IReadOnlyList<Angle> angles, SrgbColor ground)
     {
         Box box = layout.Box;
         var spot = new Point(box.Center.X, layout.Depth.At(0));
-        var arrows = new LightArrows(elements, spot, ground);
+        // A grazing ray and its angle must fit beside the middle.
+        double length = Math.Min(MostLengthPt, box.Width / 2 - LabelPt);
+        var arrows = new LightArrows(elements, spot, length, ground);
         arrows.Write(new TextRun("incident", new(box.Left + 3, box.Top + 8), Ink.SmallPt, TextAlign.Start, Ink.Text));
         arrows.Write(new TextRun("specular", new(box.Right - 3, box.Top + 8), Ink.SmallPt, TextAlign.End, Ink.Text));
-        elements.Add(new StrokedShape(Shape.Line(spot, spot with { Y = spot.Y - LengthPt }), Normal));
+        elements.Add(new StrokedShape(Shape.Line(spot, spot with { Y = spot.Y - length }), Normal));
         if (layout.Section.IsAlong)
             arrows.Pair(0, string.Join(", ", angles.Count <= 3 ? angles.Select(Degrees.Text) : [Range(angles)]));
         else
@@ -60,14 +64,14 @@ internal sealed class LightArrows
         // Along the normal both would lie on one line.
         double aside = tilt < 0.05 ? 2.2 : 0;
         (double sin, double cos) = Math.SinCos(tilt);
-        var from = new Point(_spot.X - sin * LengthPt - aside, _spot.Y - cos * LengthPt);
-        var to = new Point(_spot.X + sin * LengthPt + aside, from.Y);
+        var from = new Point(_spot.X - sin * _lengthPt - aside, _spot.Y - cos * _lengthPt);
+        var to = new Point(_spot.X + sin * _lengthPt + aside, from.Y);
         // The head half way: at the surface the heads of several angles would run together.
         var hit = new Point(_spot.X - aside, _spot.Y);
         var head = new Point(from.X + HeadShare * (hit.X - from.X), from.Y + HeadShare * (hit.Y - from.Y));
         _elements.Add(new StrokedShape(Shape.Line(head, hit), new Stroke(Ink.Text, WidthPt)));
-        Arrow.Draw(_elements, from, head, Ink.Text, WidthPt, HeadPt);
-        Arrow.Draw(_elements, new(_spot.X + aside, _spot.Y), to, Ink.Text, WidthPt, HeadPt);
+        Arrow.Draw(_elements, from, head, Ink.Text, WidthPt, HeadPt, "incident");
+        Arrow.Draw(_elements, new(_spot.X + aside, _spot.Y), to, Ink.Text, WidthPt, HeadPt, "specular");
 
         Write(Label(text, from, sin, cos, aside > 0));
     }

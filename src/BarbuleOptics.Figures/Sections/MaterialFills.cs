@@ -55,7 +55,15 @@ internal sealed class MaterialFills
     }
 
     private MaterialFill Plain(MaterialReference material)
-        => Known.TryGetValue(material.ToString() ?? "", out MaterialFill? known) ? known : Others[_taken++ % Others.Length];
+        => Known.TryGetValue(material.ToString() ?? "", out MaterialFill? known) ? known : Other(_taken++);
+
+    /// <summary>Fills come again with other lines.</summary>
+    private static MaterialFill Other(int number)
+    {
+        MaterialFill fill = Others[number % Others.Length];
+        int turns = number / Others.Length;
+        return fill with { Hatch = (Hatch)(((int)fill.Hatch + turns) % Enum.GetValues<Hatch>().Length) };
+    }
 
     /// <summary>The ground by the shares of both, hatched in the color of the solid.</summary>
     private static MaterialFill Averaged(SectionMaterial material, MaterialFill solid, MaterialFill filler)

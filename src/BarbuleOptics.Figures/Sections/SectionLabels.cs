@@ -34,8 +34,13 @@ internal sealed class SectionLabels
     }
 
     /// <summary>A material as a label names it: a table by its file's name.</summary>
-    public static string NameOf(MaterialReference material)
-        => material is MaterialReference.TablePath table ? Path.GetFileNameWithoutExtension(table.Path.Replace('\\', '/')) : material.ToString() ?? "";
+    public static string NameOf(MaterialReference material) => material switch
+    {
+        MaterialReference.TablePath table => Path.GetFileNameWithoutExtension(table.Path.Replace('\\', '/')),
+        MaterialReference.Inline { K: 0 } constants => Unbroken(string.Create(CultureInfo.InvariantCulture, $"n = {constants.N:G4}")),
+        MaterialReference.Inline constants => string.Create(CultureInfo.InvariantCulture, $"n\u00a0=\u00a0{constants.N:G4}, k\u00a0=\u00a0{constants.K:G4}"),
+        _ => material.ToString() ?? "",
+    };
 
     private void Surround()
         => Add(NameOf(Section.Surround), "surround", Edge(-SectionLayout.SurroundPt * 0.4 / _layout.PtPerNm));
@@ -44,7 +49,7 @@ internal sealed class SectionLabels
     {
         string name = NameOf(Section.Materials[Section.Matrix].Main);
         if (Section.CortexNm > 0)
-            Add(name, "cortex, " + Unbroken(Nm(Section.CortexNm) + " nm"), Edge(_layout.Depth.MiddleShown(0, Section.CortexNm)));
+            Add(name, "cortex, " + LengthText.Of(Section.CortexNm), Edge(_layout.Depth.MiddleShown(0, Section.CortexNm)));
         else if (DepthCuts.Bare(Section, Section.DepthNm).Select(bare => _layout.Depth.MiddleShown(bare.FromNm, bare.ToNm)).FirstOrDefault(middle => middle is not null) is double shownNm)
             Add(name, "matrix", Edge(shownNm));
         else if (Section.Runs.FirstOrDefault(run => run.Cell.Count == 1 && run.SpacingNm > 2 * run.Cell[0].Outer.HalfWidthNm) is SectionRun apart)
@@ -53,7 +58,7 @@ internal sealed class SectionLabels
 
     private void Film(SectionFilm film)
     {
-        string detail = $"{(Section.Films.Count(other => other.LayerNumber == film.LayerNumber) > 1 ? "films" : "film")}, {Unbroken(Nm(film.ThicknessNm) + " nm")}";
+        string detail = $"{(Section.Films.Count(other => other.LayerNumber == film.LayerNumber) > 1 ? "films" : "film")}, {LengthText.Of(film.ThicknessNm)}";
         Add(NameOf(Section.Materials[film.Material].Main), detail, Edge(_layout.Depth.MiddleShown(film.TopNm, film.BottomNm)));
     }
 
@@ -81,7 +86,7 @@ internal sealed class SectionLabels
             Add(name, detail, Edge(_layout.Depth.MiddleShown(_layout.BottomNm, double.MaxValue)));
             return;
         }
-        Add(name, $"{detail}, {Unbroken(Nm(Section.Back.Thickness.CentralNm) + " nm")}", Edge(_layout.Depth.MiddleShown(Section.DepthNm, _layout.BottomNm)));
+        Add(name, $"{detail}, {LengthText.Of(Section.Back.Thickness.CentralNm)}", Edge(_layout.Depth.MiddleShown(Section.DepthNm, _layout.BottomNm)));
         Add(NameOf(Section.Back.Behind), "behind", Edge(_layout.Depth.MiddleShown(_layout.BottomNm, double.MaxValue)));
     }
 
@@ -92,7 +97,7 @@ internal sealed class SectionLabels
             int rows = Section.Runs.Sum(run => run.Rows.Count(row => row.CentreNm > fromNm && row.CentreNm < toNm))
                 + Section.Films.Count(film => film.TopNm + film.ThicknessNm / 2 > fromNm && film.TopNm + film.ThicknessNm / 2 < toNm);
             string what = rows > 0 ? Unbroken($"{rows} {(Section.Runs.Count > 0 ? "rows" : "films")}") + ", " : "";
-            Add("not drawn", what + Unbroken(Nm(toNm - fromNm) + " nm"), new Point(_layout.Box.Right, _layout.Depth.At((fromNm + toNm) / 2)));
+            Add("not drawn", what + LengthText.Of(toNm - fromNm), new Point(_layout.Box.Right, _layout.Depth.At((fromNm + toNm) / 2)));
         }
     }
 
@@ -130,7 +135,19 @@ internal sealed class SectionLabels
         double mostNm = last.ToNm - 3 / _layout.PtPerNm;
         double[] points = [.. new[] { -asideNm, asideNm }.SelectMany(aside =>
             BodyPlaces.Within(Section, run, row, body, last.FromNm - aside, mostNm - aside).Select(place => place + aside))];
-        return points.Length == 0 ? null : _layout.At(points.Max(), row.CentreNm + body.ZNm + sink * fallNm);
+        return points.Length == 0 ? InsideLong(run, row, body, core) : _layout.At(points.Max(), row.CentreNm + body.ZNm + sink * fallNm);
+    }
+
+    /// <summary>A point of a body too long to be drawn whole: on its axis, or in the lower wall round a core.</summary>
+    private Point? InsideLong(SectionRun run, SectionRow row, CellBody body, bool core)
+    {
+        Stretch last = _layout.Across.Stretches[^1];
+        double halfNm = 0.9 * (core && body.Core is Outline inner ? inner.HalfWidthNm : body.Outer.HalfWidthNm), mostNm = last.ToNm - 3 / _layout.PtPerNm;
+        double[] places = [.. BodyPlaces.Within(Section, run, row, body, last.FromNm - halfNm, mostNm + halfNm)];
+        if (places.Length == 0)
+            return null;
+        double wallNm = !core && body.Core is Outline hollow ? (hollow.HalfHeightNm + body.Outer.HalfHeightNm) / 2 : 0;
+        return _layout.At(Math.Min(mostNm, places[^1] + halfNm), row.CentreNm + body.ZNm + wallNm);
     }
 
     private Point? Between(SectionRun run)
@@ -147,13 +164,11 @@ internal sealed class SectionLabels
 
     private static string SizeOf(Outline outline) => Unbroken(
         outline.Shape == OutlineShape.Ellipse && IsRound(outline)
-            ? $"Ø {Nm(2 * outline.HalfWidthNm)} nm"
-            : $"{Nm(2 * outline.HalfWidthNm)} × {Nm(2 * outline.HalfHeightNm)} nm");
+            ? "Ø " + LengthText.Of(2 * outline.HalfWidthNm)
+            : $"{LengthText.Number(2 * outline.HalfWidthNm)} × {LengthText.Number(2 * outline.HalfHeightNm)} nm");
 
     /// <summary>The text in words that stay on one line.</summary>
     private static string Unbroken(string text) => text.Replace(' ', '\u00a0');
 
     private static bool IsRound(Outline outline) => outline.HalfWidthNm.Equals(outline.HalfHeightNm);
-
-    private static string Nm(double nm) => nm.ToString("0.#", CultureInfo.InvariantCulture);
 }

@@ -15,11 +15,14 @@ internal sealed class SectionPanes(SectionLayout layout, MaterialFills fills)
 
     public void Draw(List<PageElement> elements)
     {
+        Surround(elements);
         for (int i = 0; i < layout.Across.Stretches.Count; i++)
         {
             for (int j = 0; j < layout.Depth.Stretches.Count; j++)
             {
                 Stretch x = layout.Across.Stretches[i], z = layout.Depth.Stretches[j];
+                if (j == 0)
+                    z = z with { FromNm = 0, StartPt = z.At(0) };
                 var box = new Box(x.StartPt, z.StartPt, x.EndPt, z.EndPt);
                 var edges = new Shape();
                 Shape outline = Outline(box, i > 0, i < layout.Across.Stretches.Count - 1, j > 0, j < layout.Depth.Stretches.Count - 1, edges);
@@ -29,12 +32,20 @@ internal sealed class SectionPanes(SectionLayout layout, MaterialFills fills)
         }
     }
 
+    /// <summary>The surround in one piece, since the light is drawn in it.</summary>
+    private void Surround(List<PageElement> elements)
+    {
+        var box = new Box(layout.Across.StartPt, layout.Depth.StartPt, layout.Across.EndPt, layout.Depth.At(0));
+        elements.AddRange(fills.Of(Section.Surround).Fill(Shape.Rectangle(box), box));
+        var frame = new Stroke(Ink.Axis, Ink.LinePt);
+        elements.Add(new StrokedShape(Shape.Polyline([new(box.Left, box.Bottom), new(box.Left, box.Top), new(box.Right, box.Top), new(box.Right, box.Bottom)]), frame));
+    }
+
     private IEnumerable<PageElement> Content(Stretch x, Stretch z, Box box)
     {
         // Each ground reaches on under the next, so that no seam shows between two of one material.
         IEnumerable<PageElement> elements =
         [
-            .. Band(fills.Of(Section.Surround), z.FromNm, z.ToNm, z, box),
             .. Band(fills.Of(Section.Backing), 0, z.ToNm, z, box),
             .. Section.Back is null ? [] : Band(fills.Of(Section.Back.Behind), layout.BottomNm, z.ToNm, z, box),
             .. Band(fills.Of(Section.Materials[Section.Matrix]), 0, Section.DepthNm, z, box),

@@ -161,6 +161,26 @@ public sealed class PredictRunTests
         Assert.Contains("doi", keratin, StringComparison.OrdinalIgnoreCase);
     }
 
+    [Theory]
+    [InlineData("170", "170mm")]
+    [InlineData("62.5", "62.5mm")]
+    public async Task Figures_have_the_width_asked_for(string width, string written)
+    {
+        using var folder = new TemporaryFolder();
+        string file = SampleFiles.Write("nested-runs", folder.Path);
+        (await Barbule.Call(["predict", file, .. Coarse, "--out", folder["out"], "--width", width])).Good();
+
+        Assert.Contains($" width=\"{written}\"", folder.Text("out/reflectance.svg"), StringComparison.Ordinal);
+        Assert.Contains($" width=\"{written}\"", folder.Text("out/section.svg"), StringComparison.Ordinal);
+    }
+
+    [Theory]
+    [InlineData("59")]
+    [InlineData("201")]
+    [InlineData("wide")]
+    public async Task A_width_that_no_page_has_is_refused(string width)
+        => Assert.Contains("60 to 200 mm", (await Barbule.Call("predict", "x.toml", "--width", width)).Refusal(2), StringComparison.Ordinal);
+
     /// <summary>Every file that a prediction writes, in the order of their names.</summary>
     private static IEnumerable<string> Results(string folder) => ResultNames.Select(name => $"{folder}/{name}");
 }

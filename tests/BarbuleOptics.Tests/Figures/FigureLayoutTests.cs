@@ -1,0 +1,55 @@
+using BarbuleOptics.Figures;
+using BarbuleOptics.Figures.Drawing;
+using Xunit;
+
+namespace BarbuleOptics.Tests.Figures;
+
+/// <summary>What an editor sends a figure back for: cut words, words over words, type too small, lines too thin.</summary>
+public sealed class FigureLayoutTests
+{
+    public static TheoryData<string> Cases => FigureCases.All;
+
+    [Theory]
+    [MemberData(nameof(Cases))]
+    public void Words_lie_on_the_page_and_not_over_one_another(string name)
+    {
+        foreach (double widthMm in new[] { 60.0, 85, 170, 200 })
+        {
+            foreach (Figure figure in FigureCases.Figures(name, FigureSize.FromWidth(widthMm)))
+            {
+                TextRun[] texts = [.. figure.Page.Texts];
+                Assert.All(texts, text => Assert.True(figure.Page.Box.Holds(text.Box), $"'{text.Text}' leaves the page of {widthMm} mm"));
+                for (int i = 0; i < texts.Length; i++)
+                {
+                    TextRun? covered = texts.Skip(i + 1).FirstOrDefault(other => other.Box.Overlaps(texts[i].Box));
+                    Assert.True(covered is null, $"'{texts[i].Text}' and '{covered?.Text}' overlap at {widthMm} mm");
+                }
+            }
+        }
+    }
+
+    // Type of 7 to 8 points, lines of 0.35 to 1.5 points (common practice of journals, no source).
+    [Theory]
+    [MemberData(nameof(Cases))]
+    public void Type_and_lines_have_the_sizes_of_print(string name)
+    {
+        foreach (Figure figure in FigureCases.Figures(name, FigureSize.OneColumn))
+        {
+            Assert.All(figure.Page.Texts, text => Assert.InRange(text.SizePt, 7, 8));
+            Assert.All(figure.Page.Lines, line => Assert.InRange(line.Stroke.WidthPt, 0.35, 1.6));
+            Assert.InRange(figure.HeightMm, 40, 230);
+        }
+    }
+
+    [Theory]
+    [MemberData(nameof(Cases))]
+    public void Curves_stay_within_the_page(string name)
+    {
+        foreach (Figure figure in FigureCases.Figures(name, FigureSize.OneColumn))
+        {
+            IEnumerable<Point> points = figure.Page.Lines.Where(line => line.Role is "curve" or "axes" or "incident" or "specular" or "leader" or "scale-bar")
+                .SelectMany(line => line.Shape.Steps).Where(step => step.Verb is Verb.Move or Verb.Line).Select(step => step.A);
+            Assert.All(points, point => Assert.True(figure.Page.Box.Holds(new Box(point.X, point.Y, point.X, point.Y)), $"{point} leaves the page"));
+        }
+    }
+}

@@ -1,0 +1,128 @@
+using BarbuleOptics.Color;
+using BarbuleOptics.Figures.Drawing;
+using BarbuleOptics.Figures.Sections;
+using BarbuleOptics.Layering;
+using BarbuleOptics.Prediction;
+using Xunit;
+
+namespace BarbuleOptics.Tests.Figures;
+
+/// <summary>Sections to scale, with everything named and nothing left out in silence.</summary>
+public sealed class SectionDrawingTests
+{
+    public static TheoryData<string> Cases => FigureCases.All;
+
+    [Theory]
+    [MemberData(nameof(Cases))]
+    public void Every_material_is_named(string name)
+    {
+        StructurePrediction prediction = FigureCases.Predict(name);
+        string words = string.Join('|', SectionFigure.Draw(prediction, default).Page.Texts.Select(text => text.Text.Replace('\u00a0', ' ')));
+        Section section = prediction.Section;
+
+        foreach (var material in section.Materials.Select(material => material.Main).Append(section.Surround).Append(section.Backing))
+            Assert.Contains(SectionLabels.NameOf(material).Replace('\u00a0', ' ').Split(',')[0], words, StringComparison.Ordinal);
+    }
+
+    [Theory]
+    [MemberData(nameof(Cases))]
+    public void What_is_drawn_and_what_is_left_out_make_up_the_depth(string name)
+    {
+        Section section = FigureCases.Predict(name).Section;
+        SectionLayout layout = SectionLayout.Fit(section, 4, 4, 165, 200);
+        IEnumerable<(double FromNm, double ToNm)> parts = layout.Depth.Stretches.Select(stretch => (stretch.FromNm, stretch.ToNm)).Concat(layout.Depth.Cuts).Order();
+
+        double reachedNm = layout.Depth.Stretches[0].FromNm;
+        foreach ((double fromNm, double toNm) in parts)
+        {
+            Assert.Equal(reachedNm, fromNm, 1e-6);
+            Assert.True(toNm > fromNm);
+            reachedNm = toNm;
+        }
+        Assert.True(reachedNm > section.DepthNm);
+        // Breaks beside the 200 pt of depth, the 52 pt of surround and the 22 pt of backing.
+        Assert.InRange(layout.Box.Height, 52 + 22, 52 + 22 + 200 + 3 * SectionAxis.BreakPt + 14);
+    }
+
+    [Fact]
+    public void A_break_says_how_many_rows_are_missing()
+    {
+        StructurePrediction prediction = FigureCases.Predict("deep");
+        SectionLayout layout = SectionLayout.Fit(prediction.Section, 4, 4, 165, 200);
+        (double fromNm, double toNm) = Assert.Single(layout.Depth.Cuts);
+        int missing = prediction.Section.Runs[0].Rows.Count(row => row.CentreNm > fromNm && row.CentreNm < toNm);
+
+        Assert.InRange(missing, 150, 199);
+        SectionLabel label = Assert.Single(SectionLabels.Of(layout, prediction.Barbule), label => label.Name == "not drawn");
+        Assert.StartsWith($"{missing}\u00a0rows", label.Detail, StringComparison.Ordinal);
+    }
+
+    // Reflection: both rays make the angle of incidence with the normal, on either side of it.
+    [Theory]
+    [InlineData(10)]
+    [InlineData(30)]
+    [InlineData(75)]
+    [InlineData(89)]
+    public void Rays_make_the_angle_of_incidence(double degrees)
+    {
+        Page page = SectionFigure.Draw(FigureCases.Predict("[cortex]\nthickness = 100", degrees), default).Page;
+        Point[] incident = Ends(page, "incident"), specular = Ends(page, "specular");
+
+        // z grows into the barbule: light comes from the upper left and goes to the upper right.
+        Assert.Equal(degrees, double.RadiansToDegrees(Math.Atan2(incident[1].X - incident[0].X, incident[1].Y - incident[0].Y)), 1e-6);
+        Assert.Equal(degrees, double.RadiansToDegrees(Math.Atan2(specular[1].X - specular[0].X, specular[0].Y - specular[1].Y)), 1e-6);
+    }
+
+    [Fact]
+    public void A_cell_is_one_spacing_wide_and_a_rod_as_wide_as_it_is_high()
+    {
+        StructurePrediction prediction = FigureCases.Predict("[cortex]\nthickness = 200\n[[layer]]\nform = \"rod\"\ndiameter = 100\nspacing = 180", 0);
+        Page page = SectionFigure.Draw(prediction, default).Page;
+        Box cell = Extent(page.Lines.Single(line => line.Role == "cell").Shape), bar = Extent(page.Lines.Single(line => line.Role == "scale-bar").Shape);
+        double ptPerNm = bar.Width / 100;
+
+        Assert.Contains(page.Texts, text => text.Text == "100 nm");
+        Assert.Contains(page.Texts, text => text.Text == "period 180\u00a0nm");
+        Assert.Equal(180, cell.Width / ptPerNm, 1e-6);
+        Step[] first = [.. page.Lines.First(line => line.Role == "bodies").Shape.Steps.Take(5)];
+        // An ellipse starts at its right end; the ends of its quarters are bottom, left and top.
+        Assert.Equal(100, (first[0].A.X - first[2].C.X) / ptPerNm, 1e-6);
+        Assert.Equal(100, (first[1].C.Y - first[3].C.Y) / ptPerNm, 1e-6);
+    }
+
+    // A difference of 5 in L* of neighbors is seen at a glance (common practice, no source); hatches are another mark.
+    [Fact]
+    public void Fills_differ_in_gray()
+    {
+        Section section = FigureCases.Predict("many-films").Section;
+        var fills = new MaterialFills(section);
+        (double Lightness, Hatch Hatch)[] looks = [.. section.Materials.Select(fills.Of).Select(fill => (Lightness(fill.Color), fill.Hatch))];
+
+        for (int i = 0; i < looks.Length; i++)
+        {
+            for (int j = 0; j < i; j++)
+                Assert.True(Math.Abs(looks[i].Lightness - looks[j].Lightness) >= 5 || looks[i].Hatch != looks[j].Hatch, $"fills {j} and {i}");
+        }
+    }
+
+    private static Point[] Ends(Page page, string role)
+    {
+        Shape shape = page.Lines.First(line => line.Role == role).Shape;
+        return [shape.Steps[0].A, shape.Steps[^1].A];
+    }
+
+    private static Box Extent(Shape shape)
+    {
+        Point[] points = [.. shape.Steps.Where(step => step.Verb != Verb.Close).Select(step => step.A)];
+        return new Box(points.Min(point => point.X), points.Min(point => point.Y), points.Max(point => point.X), points.Max(point => point.Y));
+    }
+
+    // ISO/CIE 11664-4 for a gray of the same luminance.
+    private static double Lightness(SrgbColor color)
+    {
+        double y = 0.2126 * Linear(color.Red) + 0.7152 * Linear(color.Green) + 0.0722 * Linear(color.Blue);
+        return 116 * Math.Cbrt(y) - 16;
+    }
+
+    private static double Linear(byte channel) => channel / 255.0 <= 0.04045 ? channel / 255.0 / 12.92 : Math.Pow((channel / 255.0 + 0.055) / 1.055, 2.4);
+}
