@@ -46,7 +46,7 @@ internal static class FigureCases
             gap = 60
             [[layer]]
             form = "platelet"
-            material = "tio2-rutile"
+            material = "melanin-older"
             thickness = 80
             width = 300
             wall = 20
@@ -62,7 +62,7 @@ internal static class FigureCases
             rows = 3
             pitch = 60
             """,
-        ["many-films"] = string.Concat(new[] { "\"chitin\"", "\"tio2-rutile\"", "\"air\"", "{ n = 1.4 }", "{ n = 1.6, k = 0.123456789 }", "\"mgf2\"", "\"n-bk7\"", "\"silver\"", "\"water\"" }
+        ["many-films"] = string.Concat(new[] { "\"chitin\"", "\"melanin-older\"", "\"air\"", "{ n = 1.4 }", "{ n = 1.6, k = 0.123456789 }", "\"mgf2\"", "\"n-bk7\"", "\"silver\"", "\"water\"" }
             .Select(material => $"[[layer]]\nform = \"film\"\nmaterial = {material}\nthickness = 60\n")),
     };
 
