@@ -25,8 +25,8 @@ public static class NearMiss
         return nearest;
     }
 
-    /// <summary>Least number of letters to insert, delete, replace or swap with their neighbour (optimal string alignment).</summary>
-    /// <remarks>Levenshtein (1966), with the neighbour swap of Damerau (1964), Comm. ACM 7:171.</remarks>
+    /// <summary>Least number of letters to insert, delete, replace or swap with their neighbor (optimal string alignment).</summary>
+    /// <remarks>Levenshtein (1966), with the neighbor swap of Damerau (1964), Comm. ACM 7:171.</remarks>
     public static int Distance(string left, string right)
     {
         ArgumentNullException.ThrowIfNull(left);

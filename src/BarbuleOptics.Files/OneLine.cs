@@ -31,5 +31,8 @@ public static class OneLine
     /// <summary>A number as the files write it.</summary>
     public static string Number(double value) => value.ToString("R", CultureInfo.InvariantCulture);
 
+    /// <summary>A number that was computed, without the digits that only rounding gave it.</summary>
+    internal static string Rounded(double value) => Number(Math.Round(value, 6));
+
     private static bool MustEscape(char c) => char.IsControl(c) || c is '\u2028' or '\u2029';
 }

@@ -24,7 +24,7 @@ internal static class CellMarks
         // Narrow ones first, so that the guides of the wide ones pass outside.
         foreach (IGrouping<double, SectionRun> runs in layout.Section.Runs.GroupBy(run => Math.Round(run.SpacingNm, 3)).OrderBy(runs => runs.Key).Take(MostMarks))
         {
-            double topNm = runs.Min(run => run.Rows[0].CentreNm + run.CellTopNm), bottomNm = runs.Max(run => run.Rows[^1].CentreNm + run.CellBottomNm);
+            double topNm = runs.Min(run => run.Rows[0].CenterNm + run.CellTopNm), bottomNm = runs.Max(run => run.Rows[^1].CenterNm + run.CellBottomNm);
             Point upper = layout.At(-runs.Key / 2, topNm), lower = layout.At(runs.Key / 2, bottomNm);
             var cell = new Box(upper.X, upper.Y - AsidePt, lower.X, lower.Y + AsidePt);
             Cell(elements, cell, layout.Box);

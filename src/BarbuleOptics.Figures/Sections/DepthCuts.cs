@@ -38,7 +38,7 @@ internal static class DepthCuts
     /// <summary>Stretches of depth without bodies and films.</summary>
     public static IEnumerable<(double FromNm, double ToNm)> Bare(Section section, double bottomNm)
     {
-        IEnumerable<(double From, double To)> rows = section.Runs.SelectMany(run => run.Rows.Select(row => (row.CentreNm + run.CellTopNm, row.CentreNm + run.CellBottomNm)));
+        IEnumerable<(double From, double To)> rows = section.Runs.SelectMany(run => run.Rows.Select(row => (row.CenterNm + run.CellTopNm, row.CenterNm + run.CellBottomNm)));
         IEnumerable<(double From, double To)> films = section.Films.Select(film => (film.TopNm, film.BottomNm));
         double freeFrom = 0;
         foreach ((double from, double to) in rows.Concat(films).Order())

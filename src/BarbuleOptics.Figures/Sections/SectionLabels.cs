@@ -94,7 +94,7 @@ internal sealed class SectionLabels
     {
         foreach ((double fromNm, double toNm) in _layout.Depth.Cuts)
         {
-            int rows = Section.Runs.Sum(run => run.Rows.Count(row => row.CentreNm > fromNm && row.CentreNm < toNm))
+            int rows = Section.Runs.Sum(run => run.Rows.Count(row => row.CenterNm > fromNm && row.CenterNm < toNm))
                 + Section.Films.Count(film => film.TopNm + film.ThicknessNm / 2 > fromNm && film.TopNm + film.ThicknessNm / 2 < toNm);
             string what = rows > 0 ? Unbroken($"{rows} {(Section.Runs.Count > 0 ? "rows" : "films")}") + ", " : "";
             Add("not drawn", what + LengthText.Of(toNm - fromNm), new Point(_layout.Box.Right, _layout.Depth.At((fromNm + toNm) / 2)));
@@ -117,7 +117,7 @@ internal sealed class SectionLabels
     /// <param name="leader">How many leaders point into these rows already: each gets a row, or a height within a row, of its own.</param>
     private Point? TargetOf(SectionRun run, CellBody body, bool core, int leader)
     {
-        SectionRow[] shown = [.. run.Rows.Where(row => _layout.Depth.Shows(row.CentreNm + body.ZNm))];
+        SectionRow[] shown = [.. run.Rows.Where(row => _layout.Depth.Shows(row.CenterNm + body.ZNm))];
         if (shown.Length == 0)
             return null;
         SectionRow row = shown[leader % shown.Length];
@@ -135,7 +135,7 @@ internal sealed class SectionLabels
         double mostNm = last.ToNm - 3 / _layout.PtPerNm;
         double[] points = [.. new[] { -asideNm, asideNm }.SelectMany(aside =>
             BodyPlaces.Within(Section, run, row, body, last.FromNm - aside, mostNm - aside).Select(place => place + aside))];
-        return points.Length == 0 ? InsideLong(run, row, body, core) : _layout.At(points.Max(), row.CentreNm + body.ZNm + sink * fallNm);
+        return points.Length == 0 ? InsideLong(run, row, body, core) : _layout.At(points.Max(), row.CenterNm + body.ZNm + sink * fallNm);
     }
 
     /// <summary>A point of a body too long to be drawn whole: on its axis, or in the lower wall round a core.</summary>
@@ -147,13 +147,13 @@ internal sealed class SectionLabels
         if (places.Length == 0)
             return null;
         double wallNm = !core && body.Core is Outline hollow ? (hollow.HalfHeightNm + body.Outer.HalfHeightNm) / 2 : 0;
-        return _layout.At(Math.Min(mostNm, places[^1] + halfNm), row.CentreNm + body.ZNm + wallNm);
+        return _layout.At(Math.Min(mostNm, places[^1] + halfNm), row.CenterNm + body.ZNm + wallNm);
     }
 
     private Point? Between(SectionRun run)
     {
         double[] places = [.. BodyPlaces.Within(Section, run, run.Rows[0], run.Cell[0], _layout.Across.Stretches[^1].FromNm, _layout.Across.Stretches[^1].ToNm - run.SpacingNm / 2)];
-        return places.Length > 0 && _layout.Depth.Shows(run.Rows[0].CentreNm) ? _layout.At(places[^1] + run.SpacingNm / 2, run.Rows[0].CentreNm) : null;
+        return places.Length > 0 && _layout.Depth.Shows(run.Rows[0].CenterNm) ? _layout.At(places[^1] + run.SpacingNm / 2, run.Rows[0].CenterNm) : null;
     }
 
     private static string FormOf(Outline outline, int rows)

@@ -83,12 +83,12 @@ internal sealed class SectionPanes(SectionLayout layout, MaterialFills fills)
             Shape outer = new(), core = new();
             foreach (SectionRow row in run.Rows)
             {
-                double centreNm = row.CentreNm + body.ZNm;
-                if (centreNm + body.Outer.HalfHeightNm < z.FromNm || centreNm - body.Outer.HalfHeightNm > z.ToNm)
+                double centerNm = row.CenterNm + body.ZNm;
+                if (centerNm + body.Outer.HalfHeightNm < z.FromNm || centerNm - body.Outer.HalfHeightNm > z.ToNm)
                     continue;
                 foreach (double placeNm in BodyPlaces.Within(layout.Section, run, row, body, x.FromNm - body.Outer.HalfWidthNm, x.ToNm + body.Outer.HalfWidthNm))
                 {
-                    var place = new Point(x.At(placeNm), z.At(centreNm));
+                    var place = new Point(x.At(placeNm), z.At(centerNm));
                     Add(outer, body.Outer, place);
                     if (body.Core is Outline hollow)
                         Add(core, hollow, place);

@@ -78,7 +78,7 @@ internal sealed class FormReader(ReadingLog log)
             return null;
         double half = Math.Min(thickness.CentralNm, width.CentralNm) / 2;
         if (wall is not null && wall.CentralNm >= half)
-            reader.Refuse("wall", $"found {OneLine.Number(wall.CentralNm)}; allowed above 0 to below half of thickness and width, {OneLine.Number(half)}");
+            reader.Refuse("wall", $"found {OneLine.Rounded(wall.CentralNm)}; allowed above 0 to below half of thickness and width, {OneLine.Rounded(half)}");
         return new MelanosomeForm.Platelet(thickness, width, wall, coreAir);
     }
 
@@ -86,7 +86,7 @@ internal sealed class FormReader(ReadingLog log)
     {
         MeasuredLength? core = LengthReader.Read(reader, key, LengthReader.Distance, log);
         if (core is not null && outer is not null && core.CentralNm >= outer.CentralNm)
-            reader.Refuse(key, $"found {OneLine.Number(core.CentralNm)}; allowed 0 to below {outerName}, {OneLine.Number(outer.CentralNm)}");
+            reader.Refuse(key, $"found {OneLine.Rounded(core.CentralNm)}; allowed 0 to below {outerName}, {OneLine.Rounded(outer.CentralNm)}");
         return core;
     }
 

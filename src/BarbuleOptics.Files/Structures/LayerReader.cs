@@ -97,14 +97,14 @@ internal sealed class LayerReader(MaterialReader materials, ReadingLog log)
     {
         Packing? packing = ReadPacking(reader, "spacing", "separation");
         if (packing is null && !reader.Has("spacing") && !reader.Has("separation"))
-            reader.RefuseMissing("spacing", "spacing (centre to centre) or separation (surface to surface)");
+            reader.RefuseMissing("spacing", "spacing (center to center) or separation (surface to surface)");
         if (packing is { BetweenSurfaces: true } && bodies?.Count > 1)
-            reader.Refuse("separation", "found with several bodies in a cell; allowed spacing (centre to centre)");
+            reader.Refuse("separation", "found with several bodies in a cell; allowed spacing (center to center)");
         if (packing is { BetweenSurfaces: false } && bodies is not null)
         {
             double width = bodies.Max(body => FormReader.WidthNm(body.Form) ?? 0);
             if (packing.Distance.CentralNm < width - LengthReader.TouchingNm)
-                reader.Refuse("spacing", $"found {OneLine.Number(packing.Distance.CentralNm)}; allowed the width or above, {OneLine.Number(width)}");
+                reader.Refuse("spacing", $"found {OneLine.Rounded(packing.Distance.CentralNm)}; allowed the width or above, {OneLine.Rounded(width)}");
         }
         return packing;
     }
@@ -118,7 +118,7 @@ internal sealed class LayerReader(MaterialReader materials, ReadingLog log)
             return null;
         bool isSingle = rows.Counts.All(count => count == 1);
         if (!isSingle && given is null)
-            reader.RefuseMissing("pitch", $"pitch (centre to centre) or row_separation (surface to surface) for {rows.Counts.Max()} rows");
+            reader.RefuseMissing("pitch", $"pitch (center to center) or row_separation (surface to surface) for {rows.Counts.Max()} rows");
         if (!isSingle || given is null)
             return packing;
         reader.TryGet(given, out TomlNode? value);
@@ -126,12 +126,12 @@ internal sealed class LayerReader(MaterialReader materials, ReadingLog log)
         return null;
     }
 
-    private Packing? ReadPacking(TableReader reader, string centres, string surfaces)
+    private Packing? ReadPacking(TableReader reader, string centers, string surfaces)
     {
-        MeasuredLength? pitch = LengthReader.Read(reader, centres, LengthReader.Size, log);
+        MeasuredLength? pitch = LengthReader.Read(reader, centers, LengthReader.Size, log);
         MeasuredLength? separation = LengthReader.Read(reader, surfaces, LengthReader.Distance, log);
-        if (reader.Has(centres) && reader.Has(surfaces))
-            reader.Refuse(surfaces, $"found beside {centres}; allowed one of the two");
+        if (reader.Has(centers) && reader.Has(surfaces))
+            reader.Refuse(surfaces, $"found beside {centers}; allowed one of the two");
         return pitch is not null ? new Packing(pitch, false) : separation is not null ? new Packing(separation, true) : null;
     }
 

@@ -57,7 +57,7 @@ public abstract record MeasuredLength
         public override (double LeastNm, double MostNm) Extremes => (ValuesNm.Min(), ValuesNm.Max());
     }
 
-    /// <summary>At least two inner lists, one for each independent unit. The centre is the mean of the units' means.</summary>
+    /// <summary>At least two inner lists, one for each independent unit. The center is the mean of the units' means.</summary>
     public sealed record NestedReplicates(ValueList<ValueList<double>> UnitsNm) : MeasuredLength
     {
         /// <inheritdoc/>

@@ -1,6 +1,6 @@
 namespace BarbuleOptics.Anatomy;
 
-/// <summary>A distance between neighbours.</summary>
+/// <summary>A distance between neighbors.</summary>
 /// <param name="Distance">The length as measured.</param>
-/// <param name="BetweenSurfaces">True: from surface to surface, 0 = touching. False: from centre to centre.</param>
+/// <param name="BetweenSurfaces">True: from surface to surface, 0 = touching. False: from center to center.</param>
 public sealed record Packing(MeasuredLength Distance, bool BetweenSurfaces);

@@ -4,7 +4,7 @@ namespace BarbuleOptics.Color;
 
 /// <summary>Sprague's fifth-order interpolation between equally spaced samples, which CIE 167:2005 recommends for spectra.</summary>
 /// <remarks>
-/// The polynomial through six neighbours whose first and second derivative are continuous at the samples. The interpolant is linear in
+/// The polynomial through six neighbors whose first and second derivative are continuous at the samples. The interpolant is linear in
 /// the samples, so that it is given here as the weights of the samples. Beyond either end the two samples it lacks are the linear
 /// combinations of the six nearest ones that CIE 167:2005 prints. Exact for polynomials up to the fourth degree, in the last two steps
 /// before an end for straight lines only, since the end formulas reflect the curve through its end point.
@@ -46,7 +46,7 @@ internal static class SpragueInterpolation
         return sum;
     }
 
-    /// <summary>Weights of the samples -2, -1, 0, 1, 2, 3 steps from the left neighbour, at <paramref name="x"/> steps from it, 0 to 1.</summary>
+    /// <summary>Weights of the samples -2, -1, 0, 1, 2, 3 steps from the left neighbor, at <paramref name="x"/> steps from it, 0 to 1.</summary>
     private static void Basis(double x, Span<double> basis)
     {
         double x2 = x * x, x3 = x2 * x, x4 = x3 * x, x5 = x4 * x;

@@ -2,7 +2,7 @@ namespace BarbuleOptics.Layering;
 
 /// <summary>Distance from surface to surface of two convex outlines.</summary>
 /// <remarks>The distance of two convex bodies is the greatest, over all unit directions u, of d.u - h1(u) - h2(-u), with d the
-/// vector between centres and h the support functions (separating-axis theorem); where they overlap that same maximum is
+/// vector between centers and h the support functions (separating-axis theorem); where they overlap that same maximum is
 /// minus the least shift that parts them. Outlines here are symmetric, so one quadrant of directions serves. For two equal
 /// ellipses it is zero exactly at the scaled distance 1. The best of 49 directions is refined between its neighbors, where the maximum is
 /// single for outlines that do not overlap; for deep overlaps the value is a lower bound, and only its sign is used.</remarks>
@@ -11,7 +11,7 @@ internal static class Clearance
     private const int Samples = 48;
     private static readonly double GoldenSection = (Math.Sqrt(5) - 1) / 2;
 
-    /// <summary>Distance in nm, negative where they overlap, of two outlines whose centres are (dx, dz) apart.</summary>
+    /// <summary>Distance in nm, negative where they overlap, of two outlines whose centers are (dx, dz) apart.</summary>
     public static double Between(in Outline first, in Outline second, double dxNm, double dzNm)
     {
         double dx = Math.Abs(dxNm), dz = Math.Abs(dzNm);

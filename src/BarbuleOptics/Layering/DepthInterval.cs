@@ -52,7 +52,7 @@ internal sealed record DepthInterval(double ThicknessNm, int Background, double 
             if (xNm < -PeriodNm / 2 + 1e-6)
                 xNm += PeriodNm;
             CellBody body = placed.Body;
-            Append(key, xNm, placed.CentreNm, body.Material, body.CoreMaterial);
+            Append(key, xNm, placed.CenterNm, body.Material, body.CoreMaterial);
             AppendOutline(key, body.Outer);
             if (body.Core is Outline core)
                 AppendOutline(key, core);
@@ -73,7 +73,7 @@ internal sealed record DepthInterval(double ThicknessNm, int Background, double 
     {
         public static Chord Of(PlacedOutline placed, double depthNm)
         {
-            double below = depthNm - placed.CentreNm;
+            double below = depthNm - placed.CenterNm;
             double half = placed.Body.Outer.HalfChordNm(below);
             double halfCore = placed.Body.Core?.HalfChordNm(below) ?? 0;
             return new Chord(placed.Body, placed.XNm - half, half, Math.Min(halfCore, half));

@@ -58,10 +58,10 @@ public sealed class DepthProfile
             {
                 foreach (CellBody body in run.Cell)
                 {
-                    double centreNm = row.CentreNm + body.ZNm;
-                    edges.AddRange([centreNm - body.Outer.HalfHeightNm, centreNm + body.Outer.HalfHeightNm]);
+                    double centerNm = row.CenterNm + body.ZNm;
+                    edges.AddRange([centerNm - body.Outer.HalfHeightNm, centerNm + body.Outer.HalfHeightNm]);
                     if (body.Core is Outline core)
-                        edges.AddRange([centreNm - core.HalfHeightNm, centreNm + core.HalfHeightNm]);
+                        edges.AddRange([centerNm - core.HalfHeightNm, centerNm + core.HalfHeightNm]);
                 }
             }
         }
@@ -87,9 +87,9 @@ public sealed class DepthProfile
             {
                 foreach (CellBody body in run.Cell)
                 {
-                    double centreNm = run.Rows[row].CentreNm + body.ZNm;
-                    if (Math.Abs(middleNm - centreNm) < body.Outer.HalfHeightNm)
-                        met.Add((run, new PlacedOutline(body, run.Rows[row].ShiftNm + body.XNm, centreNm - topNm)));
+                    double centerNm = run.Rows[row].CenterNm + body.ZNm;
+                    if (Math.Abs(middleNm - centerNm) < body.Outer.HalfHeightNm)
+                        met.Add((run, new PlacedOutline(body, run.Rows[row].ShiftNm + body.XNm, centerNm - topNm)));
                 }
             }
         }
@@ -125,9 +125,9 @@ public sealed class DepthProfile
     // Rows lie at equal steps; one more on each side covers rounding.
     private static (int First, int Last) RowsAt(SectionRun run, double depthNm)
     {
-        double firstNm = run.Rows[0].CentreNm;
+        double firstNm = run.Rows[0].CenterNm;
         if (run.Rows.Count == 1 || run.PitchNm <= 0)
-            return depthNm < firstNm + run.CellTopNm || depthNm > run.Rows[^1].CentreNm + run.CellBottomNm ? (0, -1) : (0, run.Rows.Count - 1);
+            return depthNm < firstNm + run.CellTopNm || depthNm > run.Rows[^1].CenterNm + run.CellBottomNm ? (0, -1) : (0, run.Rows.Count - 1);
         double first = Math.Floor((depthNm - run.CellBottomNm - firstNm) / run.PitchNm) - 1;
         double last = Math.Ceiling((depthNm - run.CellTopNm - firstNm) / run.PitchNm) + 1;
         return ((int)Math.Clamp(first, 0, run.Rows.Count), (int)Math.Clamp(last, -1, run.Rows.Count - 1));

@@ -63,7 +63,7 @@ internal static class LayerOverlap
             foreach (CellBody second in lower.Cell)
                 needed = Math.Max(needed, NeededNm(first, second, upper.SpacingNm, lower.SpacingNm, below.ShiftNm - above.ShiftNm, period));
         }
-        return needed - (below.CentreNm - above.CentreNm);
+        return needed - (below.CenterNm - above.CenterNm);
     }
 
     private static double NeededNm(CellBody first, CellBody second, double upperSpacingNm, double lowerSpacingNm, double shiftNm, double? periodNm)
@@ -80,7 +80,7 @@ internal static class LayerOverlap
         return needed;
     }
 
-    private readonly record struct Slab(double TopNm, double BottomNm, double CentreNm, double ShiftNm);
+    private readonly record struct Slab(double TopNm, double BottomNm, double CenterNm, double ShiftNm);
 
     private sealed class Extent
     {
@@ -88,7 +88,7 @@ internal static class LayerOverlap
         {
             Layer = run.LayerNumber;
             Run = run;
-            Slabs = [.. run.Rows.Select(row => new Slab(row.CentreNm + run.CellTopNm, row.CentreNm + run.CellBottomNm, row.CentreNm, row.ShiftNm))];
+            Slabs = [.. run.Rows.Select(row => new Slab(row.CenterNm + run.CellTopNm, row.CenterNm + run.CellBottomNm, row.CenterNm, row.ShiftNm))];
         }
 
         public Extent(IReadOnlyList<SectionFilm> films)

@@ -26,7 +26,7 @@ public readonly record struct Outline
     /// <summary>Area, in nm^2.</summary>
     public double AreaNm2 => (Shape == OutlineShape.Ellipse ? Math.PI : 4) * HalfWidthNm * HalfHeightNm;
 
-    /// <summary>Half of the chord along the surface at a depth below the centre; 0 outside.</summary>
+    /// <summary>Half of the chord along the surface at a depth below the center; 0 outside.</summary>
     public double HalfChordNm(double depthNm)
     {
         double u = depthNm / HalfHeightNm;
@@ -36,7 +36,7 @@ public readonly record struct Outline
         return Shape == OutlineShape.Ellipse ? HalfWidthNm * Math.Sqrt((1 - u) * (1 + u)) : HalfWidthNm;
     }
 
-    /// <summary>Support function: how far the outline reaches from its centre in a unit direction (ux, uz).</summary>
+    /// <summary>Support function: how far the outline reaches from its center in a unit direction (ux, uz).</summary>
     internal double Reach(double ux, double uz)
         => Shape == OutlineShape.Ellipse
             ? Math.Sqrt(HalfWidthNm * HalfWidthNm * ux * ux + HalfHeightNm * HalfHeightNm * uz * uz)

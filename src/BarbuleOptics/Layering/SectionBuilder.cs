@@ -108,16 +108,16 @@ public sealed class SectionBuilder
         if (!FitsSideways(cell, spacingNm, number) || PitchOf(layer, cell, spacingNm, number) is not double pitchNm)
             return null;
 
-        double centreNm = topNm - cell.Min(body => body.TopNm);
+        double centerNm = topNm - cell.Min(body => body.TopNm);
         var rows = new SectionRow[layer.Rows.Central];
         for (int row = 0; row < rows.Length; row++)
         {
             double stagger = layer.Stacking == Stacking.Staggered && row % 2 == 1 ? 0.5 : 0;
-            rows[row] = new SectionRow(centreNm + row * pitchNm, (layer.ShiftShare + stagger) * spacingNm);
+            rows[row] = new SectionRow(centerNm + row * pitchNm, (layer.ShiftShare + stagger) * spacingNm);
         }
         var run = new SectionRun(number, spacingNm, pitchNm, cell, ValueList.Create<SectionRow>(rows));
         _runs.Add(run);
-        return rows[^1].CentreNm + run.CellBottomNm;
+        return rows[^1].CenterNm + run.CellBottomNm;
     }
 
     private double? SpacingOf(BarbuleLayer layer, int number)
@@ -139,7 +139,7 @@ public sealed class SectionBuilder
             double widthNm = 2 * cell[b].Outer.HalfWidthNm;
             if (spacingNm < widthNm - TouchingNm)
             {
-                Refuse(number, "spacing", FormattableString.Invariant($"found {spacingNm:0.######} nm, neighbours overlap; allowed at least the width, {widthNm:0.######} nm"));
+                Refuse(number, "spacing", FormattableString.Invariant($"found {spacingNm:0.######} nm, neighbors overlap; allowed at least the width, {widthNm:0.######} nm"));
                 return false;
             }
             for (int other = 0; other < b; other++)

@@ -4,15 +4,15 @@ namespace BarbuleOptics.Layering;
 
 /// <summary>Rows that repeat one cell.</summary>
 /// <param name="LayerNumber">The layer of the structure it came from, counted from 1.</param>
-/// <param name="SpacingNm">Centre-to-centre distance of cells along the surface, in nm.</param>
-/// <param name="PitchNm">Centre-to-centre distance of rows in depth, in nm; 0 with one row.</param>
+/// <param name="SpacingNm">Center-to-center distance of cells along the surface, in nm.</param>
+/// <param name="PitchNm">Center-to-center distance of rows in depth, in nm; 0 with one row.</param>
 /// <param name="Cell">What each cell holds.</param>
 /// <param name="Rows">Where the rows lie, from the outside in.</param>
 public sealed record SectionRun(int LayerNumber, double SpacingNm, double PitchNm, ValueList<CellBody> Cell, ValueList<SectionRow> Rows)
 {
-    /// <summary>Depth of the cell's top below a row's centre, in nm (negative above it).</summary>
+    /// <summary>Depth of the cell's top below a row's center, in nm (negative above it).</summary>
     public double CellTopNm { get; } = Cell.Min(body => body.TopNm);
 
-    /// <summary>Depth of the cell's bottom below a row's centre, in nm.</summary>
+    /// <summary>Depth of the cell's bottom below a row's center, in nm.</summary>
     public double CellBottomNm { get; } = Cell.Max(body => body.BottomNm);
 }

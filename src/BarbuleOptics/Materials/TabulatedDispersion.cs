@@ -4,7 +4,7 @@ using MathNet.Numerics.Interpolation;
 namespace BarbuleOptics.Materials;
 
 /// <summary>A table joined by a shape-preserving cubic (Fritsch and Carlson 1980, SIAM J. Numer. Anal. 17:238): monotone
-/// between neighbours, never above or below them, so no false k below zero and no invented absorption band.</summary>
+/// between neighbors, never above or below them, so no false k below zero and no invented absorption band.</summary>
 public sealed class TabulatedDispersion : IDispersion
 {
     private readonly CubicSpline? _spline;
@@ -52,7 +52,7 @@ public sealed class TabulatedDispersion : IDispersion
             return _values[0] + (_values[1] - _values[0]) * (wavelengthNm - _wavelengthsNm[0]) / (_wavelengthsNm[1] - _wavelengthsNm[0]);
         int upper = Array.BinarySearch(_wavelengthsNm, wavelengthNm);
         upper = upper >= 0 ? Math.Max(upper, 1) : ~upper;
-        // Rounding may step over a neighbour by one unit in the last place; the promise is that it never does.
+        // Rounding may step over a neighbor by one unit in the last place; the promise is that it never does.
         return Math.Clamp(_spline.Interpolate(wavelengthNm), Math.Min(_values[upper - 1], _values[upper]), Math.Max(_values[upper - 1], _values[upper]));
     }
 }

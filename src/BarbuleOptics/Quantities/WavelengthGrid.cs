@@ -27,7 +27,7 @@ public sealed class WavelengthGrid : IEquatable<WavelengthGrid>
     /// <summary>First wavelength, in nanometres.</summary>
     public double StartNm { get; }
 
-    /// <summary>Distance between neighbours, in nanometres; above zero even for a grid of one.</summary>
+    /// <summary>Distance between neighbors, in nanometres; above zero even for a grid of one.</summary>
     public double StepNm { get; }
 
     /// <summary>Last wavelength, in nanometres.</summary>
@@ -42,7 +42,7 @@ public sealed class WavelengthGrid : IEquatable<WavelengthGrid>
     /// <summary>A grid that runs from <paramref name="start"/> in equal steps to the last value not above <paramref name="stop"/>.</summary>
     /// <param name="start">First wavelength, 10 nm to 100 um.</param>
     /// <param name="stop">Upper end, not below <paramref name="start"/>, 10 nm to 100 um.</param>
-    /// <param name="step">Distance between neighbours, above zero.</param>
+    /// <param name="step">Distance between neighbors, above zero.</param>
     /// <exception cref="ArgumentOutOfRangeException">A value lies outside its range, or there would be over 100,000 wavelengths.</exception>
     public static WavelengthGrid FromRange(Length start, Length stop, Length step)
     {

@@ -59,7 +59,7 @@ public sealed partial class ReadmeTests
     public void Every_option_of_the_readme_is_one_of_the_program()
     {
         string help = string.Join('\n', File.ReadAllLines(Path.Combine(Repository.Root, "src", "BarbuleOptics.Cli", "PredictCommand.cs")));
-        foreach (string option in Option().Matches(Readme).Select(match => match.Value).Distinct().Where(option => option is not ("--project" or "--help" or "--version")))
+        foreach (string option in Option().Matches(Readme).Select(match => match.Value).Distinct().Where(option => option is not ("--project" or "--help" or "--version" or "--global" or "--source")))
             Assert.Contains($"\"{option}\"", help, StringComparison.Ordinal);
     }
 

@@ -50,7 +50,7 @@ public sealed class SectionDrawingTests
         StructurePrediction prediction = FigureCases.Predict("deep");
         SectionLayout layout = SectionLayout.Fit(prediction.Section, 4, 4, 165, 200);
         (double fromNm, double toNm) = Assert.Single(layout.Depth.Cuts);
-        int missing = prediction.Section.Runs[0].Rows.Count(row => row.CentreNm > fromNm && row.CentreNm < toNm);
+        int missing = prediction.Section.Runs[0].Rows.Count(row => row.CenterNm > fromNm && row.CenterNm < toNm);
 
         Assert.InRange(missing, 150, 199);
         SectionLabel label = Assert.Single(SectionLabels.Of(layout, prediction.Barbule), label => label.Name == "not drawn");

@@ -47,14 +47,14 @@ internal static class BarbuleGenerator
 
     private static readonly Gen<Body> Placed = Gen.Select(Plain, Share, Gen.Double[-500, 500], (body, x, z) => body with { SpacingShare = x, OffsetNm = z });
 
-    private static readonly Gen<Packing> Centres = Lengths(501, 2000).Select(distance => new Packing(distance, false));
+    private static readonly Gen<Packing> Centers = Lengths(501, 2000).Select(distance => new Packing(distance, false));
 
-    private static readonly Gen<Packing> Lateral = Gen.OneOf(Centres, Lengths(0, 100).Select(distance => new Packing(distance, true)));
+    private static readonly Gen<Packing> Lateral = Gen.OneOf(Centers, Lengths(0, 100).Select(distance => new Packing(distance, true)));
 
     private static readonly Gen<(ValueList<Body> Bodies, Packing Lateral)> Cells = Gen.OneOf(
         Gen.Select(Plain, Lateral, (body, lateral) => ((ValueList<Body>)[body], lateral)),
         Gen.Select(Placed, Lateral, (body, lateral) => ((ValueList<Body>)[body], lateral)),
-        Gen.Select(Placed.Array[2, 4], Centres, (bodies, lateral) => ((ValueList<Body>)[.. bodies], lateral)));
+        Gen.Select(Placed.Array[2, 4], Centers, (bodies, lateral) => ((ValueList<Body>)[.. bodies], lateral)));
 
     private static readonly Gen<BarbuleLayer> Rows = Gen.Select(Cells, Depths, AnyOf(Stacking.Aligned, Stacking.Staggered), Share, Gap, (cell, depth, stacking, shift, gap)
         => new BarbuleLayer(cell.Bodies, cell.Lateral, depth.Rows, depth.Depth, stacking, shift, gap));

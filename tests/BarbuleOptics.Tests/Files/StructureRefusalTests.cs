@@ -120,7 +120,7 @@ public sealed class StructureRefusalTests
         { Head + Platelet + "wall = 5\ncore_air = 1.5\n", 10, "layer1.core_air", "found 1.5; allowed 0 to 1" },
 
         // Rows.
-        { Head + "[[layer]]\nform = 'rod'\ndiameter = 100\n", 4, "layer1.spacing", "spacing (centre to centre) or separation" },
+        { Head + "[[layer]]\nform = 'rod'\ndiameter = 100\n", 4, "layer1.spacing", "spacing (center to center) or separation" },
         { Head + Rod + "separation = 5\n", 8, "layer1.separation", "found beside spacing" },
         { Head + "[[layer]]\nform = 'rod'\ndiameter = 100\nspacing = 99\n", 7, "layer1.spacing", "found 99; allowed the width or above, 100" },
         { Head + "[[layer]]\nform = 'rod'\ndiameter = 100\nseparation = -1\n", 7, "layer1.separation", "found -1; allowed 0 to" },

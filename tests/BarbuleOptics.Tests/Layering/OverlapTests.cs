@@ -117,7 +117,7 @@ public sealed class OverlapTests
             """;
         // Centers 100 nm apart sideways touch at equal depth: the second row may lie as deep as the first, a gap of -100 nm.
         Section section = Structures.Section(Nested.Replace("{0}", "-100", StringComparison.Ordinal));
-        Assert.Equal(section.Runs[0].Rows[0].CentreNm, section.Runs[1].Rows[0].CentreNm, 1e-9);
+        Assert.Equal(section.Runs[0].Rows[0].CenterNm, section.Runs[1].Rows[0].CenterNm, 1e-9);
         AnatomyProblem problem = Structures.Problem(Nested.Replace("{0}", "-100", StringComparison.Ordinal).Replace("shift = 0.5", "shift = 0.4", StringComparison.Ordinal));
         Assert.Equal("layer1.gap", problem.Key);
         // Centers 80 nm apart sideways must lie 60 nm apart in depth (3-4-5 triangle).

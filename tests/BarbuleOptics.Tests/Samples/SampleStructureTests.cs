@@ -79,7 +79,7 @@ public partial class SampleStructureTests
         Section section = SectionOf("samples/nested-runs.toml");
         SectionRow last = section.Runs[0].Rows[^1], first = section.Runs[1].Rows[0];
 
-        Assert.Equal(70, first.CentreNm - last.CentreNm, 1e-9);
+        Assert.Equal(70, first.CenterNm - last.CenterNm, 1e-9);
         Assert.Equal(85, Math.Abs(first.ShiftNm - last.ShiftNm), 1e-9);
     }
 

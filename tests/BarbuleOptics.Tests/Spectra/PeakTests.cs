@@ -15,11 +15,11 @@ public class PeakTests
     [InlineData(449.51, 5)]
     [InlineData(523.37, 12)]
     [InlineData(600.83, 40)]
-    public void A_gaussian_peaks_at_its_center(double centreNm, double sdNm)
+    public void A_gaussian_peaks_at_its_center(double centerNm, double sdNm)
     {
-        SpectralPeak peak = Assert.Single(Gaussian(centreNm, sdNm, 1).Peaks);
+        SpectralPeak peak = Assert.Single(Gaussian(centerNm, sdNm, 1).Peaks);
 
-        Assert.Equal(centreNm, peak.WavelengthNm, 0.0025);
+        Assert.Equal(centerNm, peak.WavelengthNm, 0.0025);
         Assert.Equal(0.4, peak.Reflectance, 5e-5);
     }
 
@@ -187,6 +187,6 @@ public class PeakTests
         Assert.Equal(49_999, features.Peaks.Count);
     }
 
-    private static SpectrumFeatures Gaussian(double centreNm, double sdNm, double stepNm)
-        => SpectrumFeatures.Of(Sampled.Over(300, 780, stepNm, x => 0.4 * Sampled.Gaussian(x, centreNm, sdNm)));
+    private static SpectrumFeatures Gaussian(double centerNm, double sdNm, double stepNm)
+        => SpectrumFeatures.Of(Sampled.Over(300, 780, stepNm, x => 0.4 * Sampled.Gaussian(x, centerNm, sdNm)));
 }

@@ -70,11 +70,11 @@ public class PeakTrackTests
     [Fact]
     public void Angles_close_together_do_not_mislead_the_next_step()
     {
-        double[] centresNm = [560, 560.03, 559.98, Law(560, 1.6, 1, 60)];
+        double[] centersNm = [560, 560.03, 559.98, Law(560, 1.6, 1, 60)];
         double[] anglesDeg = [0, 0.5, 0.7, 60];
-        PeakTrack track = PeakTrack.Follow(Views(anglesDeg, (angle, x) => 0.5 * Sampled.Gaussian(x, centresNm[Array.IndexOf(anglesDeg, angle)], 6)));
+        PeakTrack track = PeakTrack.Follow(Views(anglesDeg, (angle, x) => 0.5 * Sampled.Gaussian(x, centersNm[Array.IndexOf(anglesDeg, angle)], 6)));
 
-        Assert.Equal(centresNm[3], track.Sightings[3].Peak!.WavelengthNm, 0.05);
+        Assert.Equal(centersNm[3], track.Sightings[3].Peak!.WavelengthNm, 0.05);
     }
 
     [Theory]

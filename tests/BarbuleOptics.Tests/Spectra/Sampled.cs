@@ -18,5 +18,5 @@ internal static class Sampled
     public static Spectrum From(double startNm, params double[] valuesAtOneNm)
         => Over(startNm, startNm + valuesAtOneNm.Length - 1, 1, wavelengthNm => valuesAtOneNm[(int)Math.Round(wavelengthNm - startNm)]);
 
-    public static double Gaussian(double x, double centre, double sd) => Math.Exp(-Math.Pow((x - centre) / sd, 2) / 2);
+    public static double Gaussian(double x, double center, double sd) => Math.Exp(-Math.Pow((x - center) / sd, 2) / 2);
 }

@@ -110,8 +110,8 @@ public class SpectrumFeaturesTests
     [InlineData(500, false)]
     [InlineData(695, false)]
     [InlineData(710, true)]
-    public void A_spectrum_is_at_the_edge_when_its_top_lies_beyond_the_grid(double centreNm, bool atEdge)
-        => Assert.Equal(atEdge, SpectrumFeatures.Of(Sampled.Over(400, 700, 1, x => Sampled.Gaussian(x, centreNm, 100))).AtEdge);
+    public void A_spectrum_is_at_the_edge_when_its_top_lies_beyond_the_grid(double centerNm, bool atEdge)
+        => Assert.Equal(atEdge, SpectrumFeatures.Of(Sampled.Over(400, 700, 1, x => Sampled.Gaussian(x, centerNm, 100))).AtEdge);
 
     [Theory]
     [InlineData(0.004, false)]
