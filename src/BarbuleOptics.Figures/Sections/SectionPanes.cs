@@ -70,11 +70,14 @@ internal sealed class SectionPanes(SectionLayout layout, MaterialFills fills)
             return [];
         SectionMaterial material = Section.Materials[film.Material];
         // A film on a backing of its own material has no lower face, and no seam either.
-        bool joinsBacking = film.BottomNm.Equals(Section.DepthNm) && material == SectionMaterial.Plain(Section.Backing);
+        bool joinsBacking = JoinsBacking(film);
         double bottomNm = film.BottomNm + (joinsBacking ? 1 / layout.PtPerNm : 0);
         IEnumerable<PageElement> band = Band(fills.Of(material), film.TopNm, bottomNm, z, box).Append(Level(box, z.At(film.TopNm), Edge));
         return joinsBacking ? band : band.Append(Level(box, z.At(film.BottomNm), Edge));
     }
+
+    private bool JoinsBacking(SectionFilm film)
+        => film.BottomNm.Equals(Section.DepthNm) && Section.Materials[film.Material] == SectionMaterial.Plain(Section.Backing);
 
     private IEnumerable<PageElement> Run(SectionRun run, Stretch x, Stretch z, Box box)
     {
@@ -116,7 +119,7 @@ internal sealed class SectionPanes(SectionLayout layout, MaterialFills fills)
             yield return Level(box, z.At(0), face);
         if (Section.Back is not null && z.Holds(layout.BottomNm))
             yield return Level(box, z.At(layout.BottomNm), face);
-        if (Section.Backing != Section.Materials[Section.Matrix].Main && z.Holds(Section.DepthNm))
+        if (Section.Backing != Section.Materials[Section.Matrix].Main && !Section.Films.Any(JoinsBacking) && z.Holds(Section.DepthNm))
             yield return Level(box, z.At(Section.DepthNm), Edge);
     }
 

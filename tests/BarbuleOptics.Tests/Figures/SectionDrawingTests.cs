@@ -90,6 +90,19 @@ public sealed class SectionDrawingTests
         Assert.Equal(100, (first[1].C.Y - first[3].C.Y) / ptPerNm, 1e-6);
     }
 
+    // By hand: the second row of a staggered layer lies half a spacing aside, a second layer by its own shift; rows count from the first body.
+    [Fact]
+    public void Rows_lie_aside_as_stacking_and_shift_say()
+    {
+        Section section = FigureCases.Predict(
+            "[cortex]\nthickness = 100\n[[layer]]\nform = \"rod\"\ndiameter = 80\nspacing = 200\nrows = 2\npitch = 100\nstacking = \"staggered\"\n[[layer]]\nform = \"rod\"\ndiameter = 80\nspacing = 200\nshift = 0.25", 0).Section;
+        double[] First(int run, int row) => [.. BodyPlaces.Within(section, section.Runs[run], section.Runs[run].Rows[row], section.Runs[run].Cell[0], -1, 399)];
+
+        Assert.Equal([0, 200], First(0, 0));
+        Assert.Equal([100, 300], First(0, 1));
+        Assert.Equal([50, 250], First(1, 0));
+    }
+
     // A difference of 5 in L* of neighbors is seen at a glance (common practice, no source); hatches are another mark.
     [Fact]
     public void Fills_differ_in_gray()
