@@ -41,29 +41,35 @@ internal sealed class FormReader(ReadingLog log)
     };
 
     /// <summary>The form with its sizes; null when it was refused.</summary>
-    public MelanosomeForm? Read(TableReader reader, string form) => form switch
+    public MelanosomeForm? Read(TableReader reader, string form)
     {
-        Rod => ReadRod(reader),
-        FlattenedRod => ReadFlattenedRod(reader),
-        Platelet => ReadPlatelet(reader),
-        _ => Need(reader, "thickness") is { } thickness ? new MelanosomeForm.Film(thickness) : null,
-    };
+        MelanosomeForm? read = form switch
+        {
+            Rod => ReadRod(reader),
+            FlattenedRod => ReadFlattenedRod(reader),
+            Platelet => ReadPlatelet(reader),
+            _ => Need(reader, "thickness") is { } thickness ? new MelanosomeForm.Film(thickness) : null,
+        };
+        if (read is not null)
+        {
+            foreach ((string key, string message) in FormCheck.Faults(read))
+                reader.Refuse(key, message);
+        }
+        return read;
+    }
 
     private MelanosomeForm.Rod? ReadRod(TableReader reader)
     {
-        MeasuredLength? diameter = Need(reader, "diameter"), lumen = ReadCore(reader, "lumen", diameter, "the diameter");
+        MeasuredLength? diameter = Need(reader, "diameter"), lumen = ReadCore(reader, "lumen");
         return diameter is null ? null : new MelanosomeForm.Rod(diameter, lumen);
     }
 
     private MelanosomeForm.FlattenedRod? ReadFlattenedRod(TableReader reader)
     {
         MeasuredLength? height = Need(reader, "height"), width = Need(reader, "width");
-        MeasuredLength? lumenHeight = ReadCore(reader, "lumen_height", height, "the height");
-        MeasuredLength? lumenWidth = ReadCore(reader, "lumen_width", width, "the width");
+        MeasuredLength? lumenHeight = ReadCore(reader, "lumen_height"), lumenWidth = ReadCore(reader, "lumen_width");
         if (reader.Has("lumen_height") != reader.Has("lumen_width"))
             reader.RefuseMissing(reader.Has("lumen_height") ? "lumen_width" : "lumen_height", "for lumen_height and lumen_width come together");
-        else if (lumenHeight is not null && lumenWidth is not null && (lumenHeight.CentralNm == 0) != (lumenWidth.CentralNm == 0))
-            reader.Refuse("lumen_width", $"found {OneLine.Number(lumenWidth.CentralNm)} with lumen_height {OneLine.Number(lumenHeight.CentralNm)}; allowed both 0 or both above 0");
         return height is null || width is null ? null : new MelanosomeForm.FlattenedRod(height, width, lumenHeight, lumenWidth);
     }
 
@@ -74,21 +80,10 @@ internal sealed class FormReader(ReadingLog log)
         double coreAir = reader.Number("core_air", Share) ?? 1;
         if (reader.Has("core_air") && !reader.Has("wall"))
             reader.Refuse("core_air", "found without a wall; allowed where wall gives the shell round a core");
-        if (thickness is null || width is null)
-            return null;
-        double half = Math.Min(thickness.CentralNm, width.CentralNm) / 2;
-        if (wall is not null && wall.CentralNm >= half)
-            reader.Refuse("wall", $"found {OneLine.Rounded(wall.CentralNm)}; allowed above 0 to below half of thickness and width, {OneLine.Rounded(half)}");
-        return new MelanosomeForm.Platelet(thickness, width, wall, coreAir);
+        return thickness is null || width is null ? null : new MelanosomeForm.Platelet(thickness, width, wall, coreAir);
     }
 
-    private MeasuredLength? ReadCore(TableReader reader, string key, MeasuredLength? outer, string outerName)
-    {
-        MeasuredLength? core = LengthReader.Read(reader, key, LengthReader.Distance, log);
-        if (core is not null && outer is not null && core.CentralNm >= outer.CentralNm)
-            reader.Refuse(key, $"found {OneLine.Rounded(core.CentralNm)}; allowed 0 to below {outerName}, {OneLine.Rounded(outer.CentralNm)}");
-        return core;
-    }
+    private MeasuredLength? ReadCore(TableReader reader, string key) => LengthReader.Read(reader, key, LengthReader.Distance, log);
 
     private MeasuredLength? Need(TableReader reader, string key) => LengthReader.Need(reader, key, LengthReader.Size, log);
 }

@@ -1,5 +1,6 @@
 using BarbuleOptics.Anatomy;
 using BarbuleOptics.Files.Toml;
+using BarbuleOptics.Layering;
 using BarbuleOptics.Quantities;
 
 namespace BarbuleOptics.Files;
@@ -34,7 +35,7 @@ internal sealed class LayerReader(MaterialReader materials, ReadingLog log)
         MeasuredLength? gap = reader.Has("gap") ? LengthReader.Read(reader, "gap", LengthReader.Signed, log) : MeasuredLength.FromNanometres(0);
         if (bodies is null || rows is null || gap is null)
             return null;
-        if (bodies[0].Form is MelanosomeForm.Film film && depth is { BetweenSurfaces: false } && depth.Distance.CentralNm < film.Thickness.CentralNm - LengthReader.TouchingNm)
+        if (bodies[0].Form is MelanosomeForm.Film film && depth is { BetweenSurfaces: false } && depth.Distance.CentralNm < film.Thickness.CentralNm - SectionBuilder.TouchingNm)
             reader.Refuse("pitch", $"found {OneLine.Number(depth.Distance.CentralNm)}; allowed the thickness or above, {OneLine.Number(film.Thickness.CentralNm)}");
         return new BarbuleLayer(bodies, lateral, rows, depth, stacking, shift, gap);
     }
@@ -103,7 +104,7 @@ internal sealed class LayerReader(MaterialReader materials, ReadingLog log)
         if (packing is { BetweenSurfaces: false } && bodies is not null)
         {
             double width = bodies.Max(body => FormReader.WidthNm(body.Form) ?? 0);
-            if (packing.Distance.CentralNm < width - LengthReader.TouchingNm)
+            if (packing.Distance.CentralNm < width - SectionBuilder.TouchingNm)
                 reader.Refuse("spacing", $"found {OneLine.Rounded(packing.Distance.CentralNm)}; allowed the width or above, {OneLine.Rounded(width)}");
         }
         return packing;

@@ -19,9 +19,6 @@ internal static class LengthReader
     /// <summary>A gap or an offset: of either sign.</summary>
     public static readonly NumberRange Signed = new(-MostNm, MostNm);
 
-    /// <summary>How far two sizes may miss each other and still count as touching, in nm: the rounding of means.</summary>
-    public const double TouchingNm = 1e-6;
-
     private static readonly string[] SummaryKeys = ["mean", "sd", "n", "sd_between"];
     private static readonly string[] IntervalKeys = ["min", "max"];
 

@@ -31,17 +31,6 @@ internal static class CellBuilder
     public static bool HasLumen(MelanosomeForm form)
         => form is not MelanosomeForm.Film && OutlinesOf(form).Core is not null && form is not MelanosomeForm.Platelet { CoreAir: 0 };
 
-    /// <summary>Why a form cannot exist; null when it can.</summary>
-    public static (string Key, string Message)? Fault(MelanosomeForm form) => form switch
-    {
-        MelanosomeForm.Rod { Lumen: MeasuredLength lumen } rod => Below("lumen", lumen, "diameter", rod.Diameter.CentralNm),
-        MelanosomeForm.FlattenedRod { LumenHeight: MeasuredLength height, LumenWidth: MeasuredLength width } rod
-            => Below("lumen_height", height, "height", rod.Height.CentralNm) ?? Below("lumen_width", width, "width", rod.Width.CentralNm),
-        MelanosomeForm.Platelet { Wall: MeasuredLength wall } platelet
-            => Below("wall", wall, "half of the smaller of thickness and width", Math.Min(platelet.Thickness.CentralNm, platelet.Width.CentralNm) / 2),
-        _ => null,
-    };
-
     /// <summary>The cell's bodies at a known spacing.</summary>
     public static ValueList<CellBody> Place(BarbuleLayer layer, double spacingNm, MaterialNumbers materials)
     {
@@ -66,9 +55,4 @@ internal static class CellBuilder
 
     private static Outline? CoreEllipse(MeasuredLength? width, MeasuredLength? height)
         => width is { CentralNm: > 0 } && height is { CentralNm: > 0 } ? Ellipse(width.CentralNm, height.CentralNm) : null;
-
-    private static (string Key, string Message)? Below(string key, MeasuredLength inner, string limitName, double limitNm)
-        => inner.CentralNm < limitNm
-            ? null
-            : (key, FormattableString.Invariant($"found {inner.CentralNm:0.######} nm; allowed below the {limitName}, {limitNm:0.######} nm"));
 }

@@ -10,7 +10,7 @@ namespace BarbuleOptics.Layering;
 public sealed class SectionBuilder
 {
     /// <summary>Overlap that is taken for rounding, in nm: touching bodies may be given to this precision.</summary>
-    internal const double TouchingNm = 1e-6;
+    public const double TouchingNm = 1e-6;
 
     /// <summary>Most rows of all layers together.</summary>
     private const int MostRows = 20_000;
@@ -98,7 +98,7 @@ public sealed class SectionBuilder
             return Refuse(number, "body", FormattableString.Invariant($"found {layer.Bodies.Count} bodies in one cell; allowed up to {MostBodies}"));
         for (int b = 0; b < layer.Bodies.Count; b++)
         {
-            if (CellBuilder.Fault(layer.Bodies[b].Form) is (string key, string message))
+            if (FormCheck.Faults(layer.Bodies[b].Form).FirstOrDefault() is (string key, string message))
                 return Refuse(number, BodyKey(layer, b, key), message);
         }
 
