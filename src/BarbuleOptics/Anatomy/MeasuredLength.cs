@@ -13,9 +13,6 @@ public abstract record MeasuredLength
     /// <summary>The value that the mean geometry takes: the mean, or the middle of the bounds.</summary>
     public abstract double CentralNm { get; }
 
-    /// <summary>Least and greatest value given: the bounds or the extreme replicates; the central value alone where no more is known.</summary>
-    public virtual (double LeastNm, double MostNm) Extremes => (CentralNm, CentralNm);
-
     /// <summary>A length without spread.</summary>
     public static MeasuredLength FromNanometres(double nanometres) => new Exact(Guard.Finite(nanometres));
 
@@ -42,9 +39,6 @@ public abstract record MeasuredLength
     {
         /// <inheritdoc/>
         public override double CentralNm => LeastNm + (MostNm - LeastNm) / 2;
-
-        /// <inheritdoc/>
-        public override (double LeastNm, double MostNm) Extremes => (LeastNm, MostNm);
     }
 
     /// <summary>At least two replicates, each an independent unit.</summary>
@@ -52,9 +46,6 @@ public abstract record MeasuredLength
     {
         /// <inheritdoc/>
         public override double CentralNm => ValuesNm.Average();
-
-        /// <inheritdoc/>
-        public override (double LeastNm, double MostNm) Extremes => (ValuesNm.Min(), ValuesNm.Max());
     }
 
     /// <summary>At least two inner lists, one for each independent unit. The center is the mean of the units' means.</summary>
@@ -62,8 +53,5 @@ public abstract record MeasuredLength
     {
         /// <inheritdoc/>
         public override double CentralNm => UnitsNm.Average(unit => unit.Average());
-
-        /// <inheritdoc/>
-        public override (double LeastNm, double MostNm) Extremes => (UnitsNm.Min(unit => unit.Min()), UnitsNm.Max(unit => unit.Max()));
     }
 }

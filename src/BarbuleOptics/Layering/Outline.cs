@@ -23,9 +23,6 @@ public readonly record struct Outline
     /// <summary>Half of the extent in depth, in nm.</summary>
     public double HalfHeightNm { get; }
 
-    /// <summary>Area, in nm^2.</summary>
-    public double AreaNm2 => (Shape == OutlineShape.Ellipse ? Math.PI : 4) * HalfWidthNm * HalfHeightNm;
-
     /// <summary>Half of the chord along the surface at a depth below the center; 0 outside.</summary>
     public double HalfChordNm(double depthNm)
     {
