@@ -1,29 +1,27 @@
-using BarbuleOptics.Figures.Drawing;
 using BarbuleOptics.Quantities;
 
 namespace BarbuleOptics.Figures.Curves;
 
-/// <summary>The points of a curve on the page, no more of them than can be told apart.</summary>
+/// <summary>The samples of a curve that can be told apart on the page.</summary>
 internal static class CurveTrace
 {
     // Finer than a printer's dot.
     private const double ColumnPt = 0.1;
 
     /// <summary>Every sample; where several fall into one narrow column, its first, least, greatest and last.</summary>
-    public static IReadOnlyList<Point> Of(Spectrum reflectance, PlotFrame frame)
+    public static IReadOnlyList<int> Of(Spectrum reflectance, PlotFrame frame)
     {
-        var points = new List<Point>();
+        var kept = new List<int>();
         ReadOnlySpan<double> wavelengthsNm = reflectance.Grid.Nanometres;
         int first = 0;
         for (int i = 1; i <= wavelengthsNm.Length; i++)
         {
             if (i < wavelengthsNm.Length && Column(frame.X(wavelengthsNm[i])) == Column(frame.X(wavelengthsNm[first])))
                 continue;
-            foreach (int kept in Extremes(reflectance.Values, first, i - 1))
-                points.Add(frame.At(wavelengthsNm[kept], reflectance[kept]));
+            kept.AddRange(Extremes(reflectance.Values, first, i - 1));
             first = i;
         }
-        return points;
+        return kept;
     }
 
     private static long Column(double x) => (long)Math.Floor(x / ColumnPt);

@@ -1,12 +1,13 @@
 using BarbuleOptics.Color;
 using BarbuleOptics.Figures.Drawing;
+using BarbuleOptics.Figures.Plots;
 
 namespace BarbuleOptics.Figures.Curves;
 
 /// <summary>Writes the wavelength at each main peak where it covers neither a curve nor another label.</summary>
 internal sealed class PeakLabels(Box plot, IReadOnlyList<IReadOnlyList<Point>> curves, IEnumerable<Box> taken)
 {
-    private const double MarkerPt = 1.7;
+    private const double MarkerPt = PlotPeak.RadiusPt;
     private const double ClearPt = 1.2;
     private const double NearPt = 8;
 
@@ -18,13 +19,7 @@ internal sealed class PeakLabels(Box plot, IReadOnlyList<IReadOnlyList<Point>> c
     private readonly List<Box> _taken = [.. taken];
 
     /// <summary>Keeps labels off a marker; call it for all peaks before the first label.</summary>
-    public void Mark(List<PageElement> elements, Point peak, SrgbColor color)
-    {
-        Shape circle = Shape.Circle(peak, MarkerPt);
-        elements.Add(new FilledShape(circle, Ink.White));
-        elements.Add(new StrokedShape(circle, new Stroke(color, 0.7), "peak"));
-        _taken.Add(Box.Around(peak, 2 * MarkerPt, 2 * MarkerPt));
-    }
+    public void KeepOff(Point peak) => _taken.Add(Box.Around(peak, 2 * MarkerPt, 2 * MarkerPt));
 
     /// <summary>False when no place was found.</summary>
     public bool TryWrite(List<PageElement> elements, string text, Point peak, SrgbColor color)

@@ -1,5 +1,5 @@
 using BarbuleOptics.Figures.Drawing;
-using BarbuleOptics.Figures.Layout;
+using BarbuleOptics.Figures.Plots;
 using BarbuleOptics.Quantities;
 
 namespace BarbuleOptics.Figures.Curves;
@@ -7,31 +7,33 @@ namespace BarbuleOptics.Figures.Curves;
 /// <summary>The axes: wavelength from left to right, reflectance in percent from the bottom up.</summary>
 internal sealed class PlotFrame
 {
-    private const double TickPt = 3;
-    private const double MinorTickPt = 1.6;
+    private const double TickPt = PlotPanel.TickPt;
     private const double GapPt = 2.5;
     private const double LeastTopPercent = 0.01;
 
-    private readonly AxisTicks _percents;
-    private readonly AxisTicks _wavelengths;
+    // Room along its axis that a number takes.
+    private const double WidthPt = 27;
+    private const double HeightPt = 16;
+
+    private readonly PlotAxis _percents;
+    private readonly PlotAxis _wavelengths;
 
     private PlotFrame(Box plot, double startNm, double stopNm, double topPercent)
     {
         Plot = plot;
-        (StartNm, StopNm, TopPercent) = (startNm, stopNm, topPercent);
-        _percents = PercentTicks(topPercent, plot.Height);
-        _wavelengths = WavelengthTicks(startNm, stopNm, plot.Width);
+        _percents = Percents(topPercent, plot.Height);
+        _wavelengths = new PlotAxis(startNm, stopNm, plot.Width, WidthPt);
     }
 
     /// <summary>The area that curves lie in.</summary>
     public Box Plot { get; }
 
-    public double StartNm { get; }
+    public double StartNm => _wavelengths.From;
 
-    public double StopNm { get; }
+    public double StopNm => _wavelengths.To;
 
     /// <summary>Reflectance at the upper end, in percent.</summary>
-    public double TopPercent { get; }
+    public double TopPercent => _percents.To;
 
     /// <summary>Lays the axes out.</summary>
     /// <param name="grid">The wavelengths.</param>
@@ -44,46 +46,38 @@ internal sealed class PlotFrame
         (double startNm, double stopNm) = (grid.StartNm - aside, grid.StopNm + aside);
         double bottom = outside.Bottom - TickPt - GapPt - 2 * Ink.SmallPt - GapPt;
         double top = TopFor(greatest, bottom - outside.Top);
-        AxisTicks percents = PercentTicks(top, bottom - outside.Top);
-        double numbers = percents.Major(0, top).Max(value => FigureFont.WidthPt(percents.Text(value), Ink.SmallPt));
+        PlotAxis percents = Percents(top, bottom - outside.Top);
+        double numbers = percents.Major.Max(value => FigureFont.WidthPt(percents.Text(value), Ink.SmallPt));
         double left = outside.Left + Ink.LabelPt + GapPt + numbers + GapPt + TickPt;
         return new PlotFrame(new Box(left, outside.Top, outside.Right, bottom), startNm, stopNm, top);
     }
 
     public double X(double wavelengthNm) => Plot.Left + (wavelengthNm - StartNm) / (StopNm - StartNm) * Plot.Width;
 
-    public double Y(double reflectance) => Plot.Bottom - Math.Max(0, 100 * reflectance) / TopPercent * Plot.Height;
+    /// <summary>A reflectance in the unit of the vertical axis.</summary>
+    public static double Percent(double reflectance) => Math.Max(0, 100 * reflectance);
+
+    public double Y(double reflectance) => Plot.Bottom - Percent(reflectance) / TopPercent * Plot.Height;
 
     public Point At(double wavelengthNm, double reflectance) => new(X(wavelengthNm), Y(reflectance));
 
-    /// <summary>Draws lines, ticks, numbers and labels.</summary>
-    public void Draw(List<PageElement> elements)
+    /// <summary>The axes with what they measure.</summary>
+    public PlotPanel Panel(IReadOnlyList<PlotMark> marks) => new(Plot, _wavelengths, _percents, marks);
+
+    /// <summary>Writes numbers and labels.</summary>
+    public void Write(List<PageElement> elements)
     {
-        var lines = new Shape();
-        lines.MoveTo(new(Plot.Left, Plot.Top)).LineTo(new(Plot.Left, Plot.Bottom)).LineTo(new(Plot.Right, Plot.Bottom));
-        foreach (double value in _percents.Minor(0, TopPercent))
-            lines.AddLine(new(Plot.Left - MinorTickPt, Y(value / 100)), new(Plot.Left, Y(value / 100)));
-        foreach (double value in _wavelengths.Minor(StartNm, StopNm))
-            lines.AddLine(new(X(value), Plot.Bottom), new(X(value), Plot.Bottom + MinorTickPt));
-        foreach (double value in _percents.Major(0, TopPercent))
-        {
-            double y = Y(value / 100);
-            lines.AddLine(new(Plot.Left - TickPt, y), new(Plot.Left, y));
-            elements.Add(TextRun.CenteredAt(_percents.Text(value), new(Plot.Left - TickPt - GapPt, y), Ink.SmallPt, TextAlign.End, Ink.Text));
-        }
+        foreach (double value in _percents.Major)
+            elements.Add(TextRun.CenteredAt(_percents.Text(value), new(Plot.Left - TickPt - GapPt, Y(value / 100)), Ink.SmallPt, TextAlign.End, Ink.Text));
         double baseline = Plot.Bottom + TickPt + GapPt + FigureFont.CapHeight * Ink.SmallPt;
-        foreach (double value in _wavelengths.Major(StartNm, StopNm))
-        {
-            lines.AddLine(new(X(value), Plot.Bottom), new(X(value), Plot.Bottom + TickPt));
+        foreach (double value in _wavelengths.Major)
             elements.Add(new TextRun(_wavelengths.Text(value), new(X(value), baseline), Ink.SmallPt, TextAlign.Middle, Ink.Text));
-        }
-        elements.Add(new StrokedShape(lines, new Stroke(Ink.Axis, Ink.LinePt), "axes"));
         Name(elements, baseline);
     }
 
     private void Name(List<PageElement> elements, double numbersBaseline)
     {
-        double numbers = _percents.Major(0, TopPercent).Max(value => FigureFont.WidthPt(_percents.Text(value), Ink.SmallPt));
+        double numbers = _percents.Major.Max(value => FigureFont.WidthPt(_percents.Text(value), Ink.SmallPt));
         double x = Plot.Left - TickPt - 2 * GapPt - numbers - FigureFont.Descent * Ink.LabelPt;
         elements.Add(new TextRun("Reflectance (%)", new(x, Plot.Center.Y), Ink.LabelPt, TextAlign.Middle, Ink.Text, Upward: true));
         double y = numbersBaseline + GapPt + Ink.LabelPt;
@@ -94,13 +88,10 @@ internal sealed class PlotFrame
     private static double TopFor(double greatest, double heightPt)
     {
         double percent = Math.Max(LeastTopPercent, 100 * greatest);
-        AxisTicks ticks = PercentTicks(percent, heightPt);
+        PlotAxis ticks = Percents(percent, heightPt);
         double top = ticks.MinorStep * Math.Ceiling(percent * 1.14 / ticks.MinorStep - 1e-9);
         return percent <= 100 ? Math.Min(100, top) : top;
     }
 
-    private static AxisTicks PercentTicks(double topPercent, double heightPt) => AxisTicks.For(topPercent, Math.Max(2, heightPt / 24));
-
-    private static AxisTicks WavelengthTicks(double startNm, double stopNm, double widthPt)
-        => AxisTicks.For(stopNm - startNm, Math.Max(2, widthPt / 32));
+    private static PlotAxis Percents(double topPercent, double heightPt) => new(0, topPercent, heightPt, HeightPt);
 }

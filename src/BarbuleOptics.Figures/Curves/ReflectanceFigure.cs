@@ -2,6 +2,7 @@ using System.Globalization;
 using BarbuleOptics.Color;
 using BarbuleOptics.Figures.Drawing;
 using BarbuleOptics.Figures.Layout;
+using BarbuleOptics.Figures.Plots;
 using BarbuleOptics.Multilayer;
 using BarbuleOptics.Prediction;
 using BarbuleOptics.Quantities;
@@ -52,14 +53,22 @@ public sealed class ReflectanceFigure
 
     private Page Compose()
     {
-        IReadOnlyList<Point>[] traces = [.. _views.Select(view => CurveTrace.Of(view.Reflectance, _frame))];
-        TintUltraviolet(traces);
+        IReadOnlyList<int>[] samples = [.. _views.Select(view => CurveTrace.Of(view.Reflectance, _frame))];
+        IReadOnlyList<Point>[] traces = [.. _views.Select((view, i) => samples[i].Select(k => _frame.At(Grid.Nanometres[k], view.Reflectance[k])).ToArray())];
         Stroke[] strokes = [.. _views.Select((view, i) => CurveStyle.Of(i, view.Color))];
-        for (int i = 0; i < traces.Length; i++)
-            AddCurve(traces[i], strokes[i]);
-        _frame.Draw(_elements);
+        var marks = new List<PlotMark>();
+        if (Ultraviolet is (double fromNm, double toNm))
+            marks.Add(new PlotBand(fromNm, toNm, Ink.Tint));
+        marks.AddRange(_views.Select((view, i) => new PlotCurve([.. samples[i].Select(k => (Grid.Nanometres[k], PlotFrame.Percent(view.Reflectance[k])))], strokes[i])));
+        (SpectralPeak Peak, SrgbColor Color)[] peaks = [.. _views.Select((view, i) => (Peak: PeakOf(view)!, strokes[i].Color)).Where(pair => pair.Peak is not null)];
+        bool marksPeaks = _views.Count <= MostLabels;
+        if (marksPeaks)
+            marks.AddRange(peaks.Select(pair => new PlotPeak(pair.Peak.WavelengthNm, PlotFrame.Percent(pair.Peak.Reflectance), pair.Color)));
+        _elements.Add(_frame.Panel(marks));
+        NameUltraviolet(traces);
+        _frame.Write(_elements);
         EndLabels.Draw(_elements, _frame.Plot, [.. _views.Select((view, i) => (Degrees.Text(view.Incidence), traces[i][^1], strokes[i])).Where((_, i) => IsLabelled(i))]);
-        bool allPeaks = MarkPeaks(traces, strokes);
+        bool allPeaks = marksPeaks && NamePeaks(traces, peaks);
 
         double bottom = _frame.Plot.Bottom + 26 + LabelGapPt;
         bottom = SwatchTable.Draw(_elements, _views, allPeaks ? null : PeakOf, MarginPt, _widthPt - MarginPt, bottom);
@@ -67,22 +76,22 @@ public sealed class ReflectanceFigure
         return new Page($"Reflectance of {_prediction.Barbule.Name}", _widthPt, bottom + MarginPt, _elements);
     }
 
-    private void AddCurve(IReadOnlyList<Point> trace, Stroke stroke)
+    /// <summary>Wavelengths that birds see and people do not, as far as they are shown: they lie on light gray.</summary>
+    private (double FromNm, double ToNm)? Ultraviolet
     {
-        if (trace.Count > 1)
-            _elements.Add(new StrokedShape(Shape.Polyline(trace), stroke, "curve"));
-        else
-            _elements.Add(new StrokedShape(Shape.Circle(trace[0], 1.8), stroke with { Dash = null }, "curve"));
+        get
+        {
+            double from = Math.Max(SpectrumFeatures.UltravioletStartNm, _frame.StartNm), to = Math.Min(SpectrumFeatures.VisibleStartNm, _frame.StopNm);
+            return to > from ? (from, to) : null;
+        }
     }
 
-    /// <summary>Light gray behind wavelengths that birds see and people do not; named where no curve runs.</summary>
-    private void TintUltraviolet(IReadOnlyList<Point>[] traces)
+    /// <summary>Names the gray where no curve runs.</summary>
+    private void NameUltraviolet(IReadOnlyList<Point>[] traces)
     {
-        double from = Math.Max(SpectrumFeatures.UltravioletStartNm, _frame.StartNm), to = Math.Min(SpectrumFeatures.VisibleStartNm, _frame.StopNm);
-        if (to <= from)
+        if (Ultraviolet is not (double fromNm, double toNm))
             return;
-        var band = new Box(_frame.X(from), _frame.Plot.Top, _frame.X(to), _frame.Plot.Bottom);
-        _elements.Add(new FilledShape(Shape.Rectangle(band), Ink.Tint));
+        Box band = _frame.Plot with { Left = _frame.X(fromNm), Right = _frame.X(toNm) };
         for (double baseline = band.Top + Ink.SmallPt; baseline < band.Bottom; baseline += Ink.SmallPt)
         {
             var name = new TextRun("UV", new(band.Center.X, baseline), Ink.SmallPt, TextAlign.Middle, Ink.Note);
@@ -97,15 +106,12 @@ public sealed class ReflectanceFigure
     }
 
     /// <summary>False when a peak's wavelength found no place.</summary>
-    private bool MarkPeaks(IReadOnlyList<Point>[] traces, Stroke[] strokes)
+    private bool NamePeaks(IReadOnlyList<Point>[] traces, (SpectralPeak Peak, SrgbColor Color)[] found)
     {
         var labels = new PeakLabels(_frame.Plot with { Right = _frame.Plot.Right + LabelGapPt }, traces, _elements.OfType<TextRun>().Select(text => text.Box));
-        (string Text, Point At, SrgbColor Color)[] peaks = [.. _views.Select((view, i) => (Peak: PeakOf(view), i)).Where(pair => pair.Peak is not null)
-            .Select(pair => (Text(pair.Peak!), _frame.At(pair.Peak!.WavelengthNm, pair.Peak.Reflectance), strokes[pair.i].Color))];
-        if (_views.Count > MostLabels)
-            return false;
-        foreach ((_, Point at, SrgbColor color) in peaks)
-            labels.Mark(_elements, at, color);
+        (string Text, Point At, SrgbColor Color)[] peaks = [.. found.Select(pair => (Text(pair.Peak), _frame.At(pair.Peak.WavelengthNm, pair.Peak.Reflectance), pair.Color))];
+        foreach ((_, Point at, _) in peaks)
+            labels.KeepOff(at);
         // All or none: half of the wavelengths in the plot and half below would be hard to read.
         var written = new List<PageElement>();
         bool all = peaks.OrderBy(peak => peak.At.Y).All(peak => labels.TryWrite(written, peak.Text, peak.At, peak.Color));

@@ -1,3 +1,5 @@
+using BarbuleOptics.Figures.Plots;
+
 namespace BarbuleOptics.Figures.Drawing;
 
 /// <summary>What a figure consists of, in drawing order, before any format.</summary>
@@ -24,6 +26,9 @@ internal sealed class Page(string title, double widthPt, double heightPt, IReadO
 
     /// <summary>All lines.</summary>
     public IEnumerable<StrokedShape> Lines => Flat(Elements).OfType<StrokedShape>();
+
+    /// <summary>All plots.</summary>
+    public IEnumerable<PlotPanel> Plots => Flat(Elements).OfType<PlotPanel>();
 
     private static IEnumerable<PageElement> Flat(IEnumerable<PageElement> elements)
         => elements.SelectMany(element => element is ClippedGroup group ? Flat(group.Elements) : [element]);

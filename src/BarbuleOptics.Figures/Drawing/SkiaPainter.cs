@@ -1,4 +1,5 @@
 using BarbuleOptics.Color;
+using BarbuleOptics.Figures.Plots;
 using SkiaSharp;
 
 namespace BarbuleOptics.Figures.Drawing;
@@ -26,6 +27,9 @@ internal static class SkiaPainter
                 break;
             case TextRun text:
                 Write(text, canvas);
+                break;
+            case PlotPanel panel:
+                PlotPainter.Paint(panel, canvas);
                 break;
             case ClippedGroup group:
                 using (SKPath window = PathOf(group.Window))

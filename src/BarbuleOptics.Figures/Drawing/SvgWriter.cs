@@ -1,6 +1,8 @@
 using System.Globalization;
 using System.Text;
 using System.Xml;
+using System.Xml.Linq;
+using BarbuleOptics.Figures.Plots;
 
 namespace BarbuleOptics.Figures.Drawing;
 
@@ -63,6 +65,9 @@ internal sealed class SvgWriter
             case TextRun text:
                 Path(TextOutline.Of(text), text.Color.Hex, null, "text", text.Text);
                 break;
+            case PlotPanel panel:
+                Plot(panel);
+                break;
             case ClippedGroup group:
                 Clipped(group);
                 break;
@@ -81,6 +86,26 @@ internal sealed class SvgWriter
         Start("g");
         Attribute("clip-path", $"url(#{id})");
         Write(group.Elements);
+        _xml.WriteEndElement();
+    }
+
+    private void Plot(PlotPanel panel)
+    {
+        foreach (PlotMark mark in panel.Marks)
+            Layer(mark.Role, mark.Stroke?.Dash, PlotPainter.Svg(panel, mark));
+        Layer("axes", null, PlotPainter.SvgAxes(panel));
+    }
+
+    /// <summary>Takes the elements of another document, which has the same scale; they inherit the dashes.</summary>
+    private void Layer(string role, IReadOnlyList<double>? dash, byte[] document)
+    {
+        Start("g");
+        Attribute("class", role);
+        if (dash is not null)
+            Attribute("stroke-dasharray", string.Join(' ', dash.Select(Number)));
+        using var stream = new MemoryStream(document);
+        foreach (XElement element in XDocument.Load(stream).Root!.Elements())
+            element.WriteTo(_xml);
         _xml.WriteEndElement();
     }
 

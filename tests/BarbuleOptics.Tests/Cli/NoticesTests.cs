@@ -24,6 +24,8 @@ public sealed class NoticesTests
 
     [Theory]
     [InlineData("LiberationSans-LICENSE.txt", "SIL OPEN FONT LICENSE Version 1.1")]
+    [InlineData("SCOTTPLOT-THIRD-PARTY-NOTICES.txt", "Some third-party components it includes require attribution")]
+    [InlineData("SKIA-THIRD-PARTY-NOTICES.txt", "HarfBuzz")]
     [InlineData("SKIA-THIRD-PARTY-NOTICES.txt", "The FreeType Project LICENSE")]
     public void Font_and_drawing_library_bring_their_licenses(string file, string words)
         => Assert.Contains(words, File.ReadAllText(Path.Combine(AppContext.BaseDirectory, file)), StringComparison.Ordinal);

@@ -29,7 +29,7 @@ public sealed class CurveTests
     {
         var grid = WavelengthGrid.FromRange(Length.FromNanometres(400), Length.FromNanometres(700), Length.FromNanometres(100));
         var frame = PlotFrame.Within(grid, 0.95, new Box(0, 0, 200, 150));
-        IReadOnlyList<Point> points = CurveTrace.Of(new Spectrum(grid, [0, 0.5, 1, 0.25]), frame);
+        IReadOnlyList<Point> points = Points(new Spectrum(grid, [0, 0.5, 1, 0.25]), frame);
 
         Assert.Equal(100, frame.TopPercent);
         Assert.Equal(4, points.Count);
@@ -48,7 +48,7 @@ public sealed class CurveTests
         double[] values = new double[grid.Count];
         values[61_803] = 1;
         var frame = PlotFrame.Within(grid, 1, new Box(0, 0, 240, 150));
-        IReadOnlyList<Point> points = CurveTrace.Of(new Spectrum(grid, values), frame);
+        IReadOnlyList<Point> points = Points(new Spectrum(grid, values), frame);
 
         Assert.Equal(frame.X(918.03), points.MinBy(point => point.Y).X, 0.01);
         Assert.Equal(frame.Plot.Top, points.Min(point => point.Y), 1e-9);
@@ -67,6 +67,9 @@ public sealed class CurveTests
             Assert.Contains(view.Color.SrgbBrightened, filled);
         }
     }
+
+    private static IReadOnlyList<Point> Points(Spectrum spectrum, PlotFrame frame)
+        => [.. CurveTrace.Of(spectrum, frame).Select(i => frame.At(spectrum.Grid.Nanometres[i], spectrum[i]))];
 
     private static double Luminance(SrgbColor color) => 0.2126 * Linear(color.Red) + 0.7152 * Linear(color.Green) + 0.0722 * Linear(color.Blue);
 

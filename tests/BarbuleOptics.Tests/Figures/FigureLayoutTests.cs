@@ -1,5 +1,7 @@
 using BarbuleOptics.Figures;
+using BarbuleOptics.Figures.Curves;
 using BarbuleOptics.Figures.Drawing;
+using BarbuleOptics.Figures.Plots;
 using Xunit;
 
 namespace BarbuleOptics.Tests.Figures;
@@ -37,19 +39,35 @@ public sealed class FigureLayoutTests
         {
             Assert.All(figure.Page.Texts, text => Assert.InRange(text.SizePt, 7, 8));
             Assert.All(figure.Page.Lines, line => Assert.InRange(line.Stroke.WidthPt, 0.35, 1.6));
+            Assert.All(figure.Page.Plots.SelectMany(plot => plot.Marks).Select(mark => mark.Stroke).OfType<Stroke>(), stroke => Assert.InRange(stroke.WidthPt, 0.35, 1.6));
             Assert.InRange(figure.HeightMm, 40, 230);
         }
     }
 
     [Theory]
     [MemberData(nameof(Cases))]
-    public void Curves_stay_within_the_page(string name)
+    public void Lines_stay_within_the_page(string name)
     {
         foreach (Figure figure in FigureCases.Figures(name, FigureSize.OneColumn))
         {
-            IEnumerable<Point> points = figure.Page.Lines.Where(line => line.Role is "curve" or "axes" or "incident" or "specular" or "leader" or "scale-bar")
+            IEnumerable<Point> points = figure.Page.Lines.Where(line => line.Role is "incident" or "specular" or "leader" or "scale-bar")
                 .SelectMany(line => line.Shape.Steps).Where(step => step.Verb is Verb.Move or Verb.Line).Select(step => step.A);
             Assert.All(points, point => Assert.True(figure.Page.Box.Holds(new Box(point.X, point.Y, point.X, point.Y)), $"{point} leaves the page"));
         }
+    }
+
+    [Theory]
+    [MemberData(nameof(Cases))]
+    public void Curves_stay_within_their_axes_and_these_within_the_page(string name)
+    {
+        Figure figure = ReflectanceFigure.Draw(FigureCases.Predict(name), FigureSize.OneColumn);
+        PlotPanel plot = Assert.Single(figure.Page.Plots);
+
+        Assert.True(figure.Page.Box.Holds(plot.Area.Grown(PlotPanel.TickPt)));
+        Assert.All(plot.Marks.OfType<PlotCurve>().SelectMany(curve => curve.Points), point =>
+        {
+            Assert.InRange(point.X, plot.Horizontal.From, plot.Horizontal.To);
+            Assert.InRange(point.Y, plot.Vertical.From, plot.Vertical.To * (1 + 1e-12));
+        });
     }
 }

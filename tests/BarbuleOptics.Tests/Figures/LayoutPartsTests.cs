@@ -1,5 +1,6 @@
 using BarbuleOptics.Figures.Drawing;
 using BarbuleOptics.Figures.Layout;
+using BarbuleOptics.Figures.Plots;
 using BarbuleOptics.Figures.Sections;
 using Xunit;
 
@@ -19,24 +20,26 @@ public sealed class LayoutPartsTests
     public void Letters_are_as_wide_as_in_Helvetica(string text, double thousandths)
         => Assert.Equal(thousandths / 1000 * 7, FigureFont.WidthPt(text, 7), 0.005);
 
-    // By hand.
+    // By hand: steps of 1, 2 or 5 times a power of ten, and no two numbers closer than the room they take.
     [Theory]
-    [InlineData(480, 7.5, 100, 20)]
-    [InlineData(100, 5, 20, 5)]
-    [InlineData(0.013, 6, 0.005, 0.001)]
-    [InlineData(36.8, 4, 10, 2)]
-    public void Ticks_are_round_numbers(double span, double most, double step, double minor)
+    [InlineData(300, 780, 176, 27, 100, 20, "300", "700")]
+    [InlineData(300, 780, 400, 27, 50, 10, "300", "750")]
+    [InlineData(0, 100, 130, 16, 20, 5, "0", "100")]
+    [InlineData(0, 0.013, 150, 16, 0.005, 0.001, "0.000", "0.010")]
+    [InlineData(0, 36.8, 100, 16, 10, 2, "0", "30")]
+    [InlineData(0, 0.6, 100, 16, 0.2, 0.05, "0.0", "0.6")]
+    public void Ticks_are_round_numbers_with_the_decimals_of_their_step(double from, double to, double lengthPt, double numberPt, double step, double minor, string first, string last)
     {
-        AxisTicks ticks = AxisTicks.For(span, most);
+        var axis = new PlotAxis(from, to, lengthPt, numberPt);
 
-        Assert.Equal(step, ticks.Step, step * 1e-9);
-        Assert.Equal(minor, ticks.MinorStep, minor * 1e-9);
-        Assert.InRange(ticks.Major(0, span).Count(), 2, most + 1);
+        Assert.Equal(minor, axis.MinorStep, minor * 1e-9);
+        Assert.Equal([first, last], [axis.Text(axis.Major[0]), axis.Text(axis.Major[^1])]);
+        for (int i = 1; i < axis.Major.Count; i++)
+            Assert.Equal(step, axis.Major[i] - axis.Major[i - 1], step * 1e-6);
+        Assert.True(step / (to - from) * lengthPt > numberPt);
+        Assert.All(axis.Major.Concat(axis.Minor), value => Assert.InRange(value, from, to));
+        Assert.All(axis.Minor, value => Assert.Equal(0, Math.IEEERemainder(value, minor), minor * 1e-6));
     }
-
-    [Fact]
-    public void Ticks_are_written_with_the_decimals_of_their_step()
-        => Assert.Equal(["0.000", "0.005", "0.010"], AxisTicks.For(0.013, 6).Major(0, 0.013).Select(AxisTicks.For(0.013, 6).Text));
 
     [Fact]
     public void Labels_are_spread_apart_in_order_and_no_farther_than_needed()

@@ -1,10 +1,13 @@
 using System.Globalization;
 using System.Text;
 using System.Xml.Linq;
+using BarbuleOptics.Color;
 using BarbuleOptics.Figures;
 using BarbuleOptics.Figures.Curves;
 using BarbuleOptics.Figures.Drawing;
+using BarbuleOptics.Figures.Plots;
 using BarbuleOptics.Prediction;
+using BarbuleOptics.Quantities;
 using Xunit;
 
 namespace BarbuleOptics.Tests.Figures;
@@ -36,16 +39,57 @@ public sealed class SvgTests
 
     [Theory]
     [MemberData(nameof(Cases))]
-    public void There_is_one_path_a_curve_and_every_word_is_drawn_as_outlines(string name)
+    public void Every_word_is_drawn_as_outlines(string name)
     {
-        StructurePrediction prediction = FigureCases.Predict(name);
-        Figure figure = ReflectanceFigure.Draw(prediction, FigureSize.OneColumn);
+        Figure figure = ReflectanceFigure.Draw(FigureCases.Predict(name), FigureSize.OneColumn);
         XElement[] paths = [.. Parse(figure).Descendants(Svg + "path")];
 
-        Assert.Equal(prediction.Views.Count, paths.Count(path => path.Attribute("class")?.Value == "curve"));
         Assert.Equal(figure.Page.Texts.Select(text => text.Text), paths.Select(path => path.Attribute("aria-label")?.Value).OfType<string>());
         Assert.All(paths.Where(path => path.Attribute("aria-label") is not null), path => Assert.StartsWith("M", path.Attribute("d")!.Value, StringComparison.Ordinal));
         Assert.DoesNotContain(Parse(figure).Descendants(), element => element.Name == Svg + "text");
+    }
+
+    // A curve with all its samples, in its color, its dashes and its place: the page's own mapping of the first and the last sample.
+    [Theory]
+    [MemberData(nameof(Cases))]
+    public void There_is_one_line_a_curve_in_its_color_from_its_first_to_its_last_sample(string name)
+    {
+        StructurePrediction prediction = FigureCases.Predict(name);
+        Figure figure = ReflectanceFigure.Draw(prediction, FigureSize.OneColumn);
+        PlotPanel plot = Assert.Single(figure.Page.Plots);
+        XElement[] curves = [.. Groups(figure, "curve")];
+
+        Assert.Equal(prediction.Views.Count, curves.Length);
+        for (int i = 0; i < curves.Length; i++)
+        {
+            XElement line = Assert.Single(curves[i].Elements());
+            Stroke stroke = CurveStyle.Of(i, prediction.Views[i].Color);
+            Spectrum reflectance = prediction.Views[i].Reflectance;
+            Assert.Equal(stroke.Color, ColorOf(line.Attribute("stroke")!.Value));
+            Assert.Equal(stroke.WidthPt, Number(line.Attribute("stroke-width")?.Value ?? "1"), 1e-6);
+            if (reflectance.Grid.Count == 1)
+                continue;
+            Assert.Equal(stroke.Dash ?? [], (curves[i].Attribute("stroke-dasharray")?.Value.Split(' ') ?? []).Select(Number));
+            double[] at = [.. line.Attribute("d")!.Value.Split(['M', 'L', ' '], StringSplitOptions.RemoveEmptyEntries).Select(Number)];
+            double rise = plot.Area.Height / plot.Vertical.To * 100;
+            Assert.Equal(plot.Area.Left, at[0], 1e-3);
+            Assert.Equal(plot.Area.Bottom - rise * reflectance[0], at[1], 1e-3);
+            Assert.Equal(plot.Area.Right, at[^2], 1e-3);
+            Assert.Equal(plot.Area.Bottom - rise * reflectance[reflectance.Grid.Count - 1], at[^1], 1e-3);
+        }
+    }
+
+    // Two lines of the frame, and a line a tick.
+    [Theory]
+    [MemberData(nameof(Cases))]
+    public void Axes_have_their_ticks_and_peaks_their_rings(string name)
+    {
+        Figure figure = ReflectanceFigure.Draw(FigureCases.Predict(name), FigureSize.OneColumn);
+        PlotPanel plot = Assert.Single(figure.Page.Plots);
+
+        int ticks = plot.Horizontal.Major.Count + plot.Horizontal.Minor.Count + plot.Vertical.Major.Count + plot.Vertical.Minor.Count;
+        Assert.Equal(2 + ticks, Assert.Single(Groups(figure, "axes")).Elements().Count());
+        Assert.Equal(plot.Marks.OfType<PlotPeak>().Select(peak => peak.Color), Groups(figure, "peak").Select(ring => ColorOf(ring.Elements().Last().Attribute("stroke")!.Value)));
     }
 
     [Fact]
@@ -87,6 +131,15 @@ public sealed class SvgTests
         Assert.All(points, point => Assert.True(run.Box.Grown(0.3).Holds(new Box(point.X, point.Y, point.X, point.Y)), $"{point} outside {run.Box}"));
         Assert.InRange(points.Min(point => point.Y), 45, 47);
         Assert.InRange(points.Max(point => point.X), 49.9, 50.1);
+    }
+
+    private static IEnumerable<XElement> Groups(Figure figure, string role)
+        => Parse(figure).Descendants(Svg + "g").Where(group => group.Attribute("class")?.Value == role);
+
+    private static SrgbColor ColorOf(string text)
+    {
+        System.Drawing.Color color = System.Drawing.ColorTranslator.FromHtml(text);
+        return new SrgbColor(color.R, color.G, color.B);
     }
 
     private static XElement Parse(Figure figure) => XElement.Parse(Encoding.UTF8.GetString(figure.Render(FigureFormat.Svg)));
