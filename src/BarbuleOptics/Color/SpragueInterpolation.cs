@@ -35,17 +35,6 @@ internal static class SpragueInterpolation
             AddSample(left - 2 + j, share * basis[j], weights);
     }
 
-    /// <summary>The value at <paramref name="position"/>, in steps from the first sample.</summary>
-    public static double Interpolate(ReadOnlySpan<double> samples, double position)
-    {
-        var weights = new double[samples.Length];
-        AddWeights(position, 1, weights);
-        double sum = 0;
-        for (int i = 0; i < samples.Length; i++)
-            sum += weights[i] * samples[i];
-        return sum;
-    }
-
     /// <summary>Weights of the samples -2, -1, 0, 1, 2, 3 steps from the left neighbor, at <paramref name="x"/> steps from it, 0 to 1.</summary>
     private static void Basis(double x, Span<double> basis)
     {
