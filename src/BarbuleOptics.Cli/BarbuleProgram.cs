@@ -35,6 +35,12 @@ internal static class BarbuleProgram
             error.WriteLine("barbule: interrupted");
             return ExitCode.Interrupted;
         }
+        catch (IOException fault)
+        {
+            // Files of the user are read and written where their own messages are; what is left is what the results are printed to.
+            error.WriteLine(OneLine.Escape($"barbule: standard output cannot be written: {OutputFolder.Reason(fault)}"));
+            return ExitCode.OutputFailed;
+        }
 #pragma warning disable CA1031 // The last line of defense: whatever is left is a fault of ours, and a user sees one line of it.
         catch (Exception fault)
 #pragma warning restore CA1031
@@ -45,5 +51,7 @@ internal static class BarbuleProgram
     }
 
     /// <summary>What to tell the user of a fault of ours.</summary>
-    public static string Describe(Exception fault) => $"a fault of the program, not of your input: {fault.GetType().Name}: {fault.Message}; please report it with the command line and the input file";
+    public static string Describe(Exception fault) => fault.GetBaseException() is DllNotFoundException missing
+        ? $"a library of the program is missing beside it, keep its folder together: {missing.Message}"
+        : $"a fault of the program, not of your input: {fault.GetBaseException().GetType().Name}: {fault.GetBaseException().Message}; please report it with the command line and the input file";
 }

@@ -33,6 +33,13 @@ internal static class CommandLineErrors
             argument.AddError(UnknownOption(text, command));
     }
 
+    /// <summary>Refuses names without a letter.</summary>
+    public static void RefuseEmpty(SymbolResult result, string what, IEnumerable<Token> tokens, string allowed)
+    {
+        if (tokens.Any(token => string.IsNullOrWhiteSpace(token.Value)))
+            result.AddError($"{what}: found an empty name; allowed {allowed}");
+    }
+
     private static string Unmatched(string token, Command command)
     {
         if (token.StartsWith('-'))

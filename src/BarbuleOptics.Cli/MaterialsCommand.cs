@@ -21,6 +21,8 @@ internal static class MaterialsCommand
             return (catalog.Succeeded ? catalog.Value : EmbeddedMaterials.Catalog).Names.Select(known => new CompletionItem(known));
         });
         var command = new Command("materials", "Optical constants: what there is, where it was published and for which wavelengths") { name, folder };
+        name.Validators.Add(result => CommandLineErrors.RefuseOptions(result, command));
+        folder.Validators.Add(result => CommandLineErrors.RefuseEmpty(result, "--materials", result.Tokens, "the name of a folder"));
         command.SetAction(parse => Execute(parse.GetValue(name), parse.GetValue(folder), parse.InvocationConfiguration.Output, parse.InvocationConfiguration.Error));
         return command;
     }

@@ -35,7 +35,7 @@ internal static class OptionReaders
     public static bool Angles(string text, out ValueList<Angle> angles, out string allowed)
     {
         angles = [];
-        allowed = "a list such as 0,30,60 or a range from:to:step such as 0:60:15, each angle 0 to below 90 degrees, at most 1000 of them";
+        allowed = "a list such as 0,30,60 or a range from:to:step such as 0:60:15, each angle once, 0 to below 90 degrees, at most 1000 of them";
         double[] degrees;
         if (text.Contains(':', StringComparison.Ordinal))
         {

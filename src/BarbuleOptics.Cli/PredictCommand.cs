@@ -41,6 +41,9 @@ internal sealed class PredictCommand
             options._force, options._json, options._materials, options._sets, options._threads.Option, options._width.Option,
         };
         options._files.Validators.Add(result => CommandLineErrors.RefuseOptions(result, command));
+        options._files.Validators.Add(result => CommandLineErrors.RefuseEmpty(result, "FILE", result.Tokens, "the name of a structure file"));
+        options._output.Validators.Add(result => CommandLineErrors.RefuseEmpty(result, "--out", result.Tokens, "the name of a folder"));
+        options._materials.Validators.Add(result => CommandLineErrors.RefuseEmpty(result, "--materials", result.Tokens, "the name of a folder"));
         // The parser counts values, so that `--out here --out` would pass.
         command.Validators.Add(result =>
         {

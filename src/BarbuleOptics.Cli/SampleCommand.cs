@@ -15,11 +15,7 @@ internal static class SampleCommand
         var force = new Option<bool>("--force") { Description = "Replace files of the same names", Arity = ArgumentArity.Zero };
         var command = new Command("sample", "Write sample structures to start from, each with comments on what it shows") { folder, force };
         folder.Validators.Add(result => CommandLineErrors.RefuseOptions(result, command));
-        folder.Validators.Add(result =>
-        {
-            if (result.Tokens[0].Value.Length == 0)
-                result.AddError("DIR: found an empty name; allowed the name of a folder");
-        });
+        folder.Validators.Add(result => CommandLineErrors.RefuseEmpty(result, "DIR", result.Tokens, "the name of a folder"));
         command.SetAction((parse, cancellation) =>
         {
             InvocationConfiguration configuration = parse.InvocationConfiguration;

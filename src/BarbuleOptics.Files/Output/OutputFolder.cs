@@ -1,3 +1,5 @@
+using System.Globalization;
+
 namespace BarbuleOptics.Files;
 
 /// <summary>Writes a set of files into a folder, all of them or none.</summary>
@@ -54,6 +56,7 @@ public static class OutputFolder
         ArgumentException.ThrowIfNullOrEmpty(folder);
         ArgumentNullException.ThrowIfNull(names);
         RefuseExisting(folder, names, force);
+        Guarded(folder, () => RefuseUnwritable(folder));
     }
 
     private static void RefuseExisting(string folder, IEnumerable<string> names, bool force)
@@ -66,6 +69,22 @@ public static class OutputFolder
                 throw new OutputException(OutputFault.NotWritable, $"{OneLine.Escape(path)}: is a folder, where a file is to be written");
             if (!force && File.Exists(path))
                 throw new OutputException(OutputFault.Exists, $"{OneLine.Escape(path)}: exists; --force replaces it");
+        }
+    }
+
+    // The nearest folder that is there decides: a file of a moment within it tells whether it takes any.
+    private static void RefuseUnwritable(string folder)
+    {
+        string nearest = Path.GetFullPath(folder);
+        while (!Directory.Exists(nearest))
+        {
+            if (File.Exists(nearest))
+                throw new OutputException(OutputFault.NotWritable, $"{OneLine.Escape(nearest)}: is a file, not a folder");
+            nearest = Path.GetDirectoryName(nearest) ?? throw new DirectoryNotFoundException();
+        }
+        string probe = Path.Combine(nearest, $".{Path.GetRandomFileName()}.tmp");
+        using (new FileStream(probe, FileMode.CreateNew, FileAccess.Write, FileShare.None, bufferSize: 1, FileOptions.DeleteOnClose))
+        {
         }
     }
 
@@ -99,6 +118,10 @@ public static class OutputFolder
             undo.Add(() => File.Move(aside, final, overwrite: true));
             replaced.Add(aside);
         }
+        else if (File.Exists(final))
+        {
+            throw new OutputException(OutputFault.Exists, $"{OneLine.Escape(final)}: exists; --force replaces it");
+        }
         File.Move(temporary, final);
         undo.Add(() => File.Delete(final));
     }
@@ -120,15 +143,25 @@ public static class OutputFolder
     }
 
     private static OutputException Translate(string path, Exception cause)
+        => new(IsFull(cause) ? OutputFault.DiskFull : OutputFault.NotWritable, $"{OneLine.Escape(path)}: {(IsFull(cause) ? "" : "cannot be written: ")}{Reason(cause)}", cause);
+
+    /// <summary>Why something could not be written, in words that name no temporary file.</summary>
+    public static string Reason(Exception cause)
     {
-        // 28 is ENOSPC, 122 EDQUOT (Linux), 69 EDQUOT (macOS); 0x80070027 and 0x80070070 are Windows' two kinds of a full disk.
-        bool isFull = cause is IOException && cause.HResult is 28 or 122 or 69 or unchecked((int)0x80070027) or unchecked((int)0x80070070);
-        if (isFull)
-            return new OutputException(OutputFault.DiskFull, $"{OneLine.Escape(path)}: no space is left on the disk", cause);
-        return File.Exists(path) && cause is IOException
-            ? new OutputException(OutputFault.Exists, $"{OneLine.Escape(path)}: exists; --force replaces it", cause)
-            : new OutputException(OutputFault.NotWritable, $"{OneLine.Escape(path)}: cannot be written: {OneLine.Escape(cause.Message)}", cause);
+        ArgumentNullException.ThrowIfNull(cause);
+        return cause switch
+        {
+            _ when IsFull(cause) => "no space is left on the disk",
+            UnauthorizedAccessException => "permission is denied",
+            PathTooLongException => "the path is too long",
+            DirectoryNotFoundException or FileNotFoundException => "no folder can be made there",
+            _ => string.Create(CultureInfo.InvariantCulture, $"the system refuses (error {cause.HResult & 0xFFFF})"),
+        };
     }
+
+    // 28 is ENOSPC, 122 EDQUOT (Linux), 69 EDQUOT (macOS); 0x80070027 and 0x80070070 are Windows' two kinds of a full disk.
+    private static bool IsFull(Exception cause)
+        => cause is IOException && cause.HResult is 28 or 122 or 69 or unchecked((int)0x80070027) or unchecked((int)0x80070070);
 
     private static void DeleteQuietly(string path) => Undo.Quietly(() => File.Delete(path));
 }

@@ -55,7 +55,7 @@ internal sealed class MaterialReader(MaterialCatalog catalog, string? baseDirect
             _ => Catalog.TryFind(reference, out Material? material) ? LeastExtinction(material) is > Tiny and var k ? k : null : null,
         };
         if (least is { } found)
-            reader.Refuse(key, $"found a material with k = {OneLine.Number(found)}{(reference is MaterialReference.Inline ? "" : " or more")}; allowed a lossless one, k = 0");
+            reader.Refuse(key, $"found a material with k = {OneLine.Rounded(found)}{(reference is MaterialReference.Inline ? "" : " or more")}; allowed a lossless one, k = 0");
         return reference;
     }
 

@@ -97,8 +97,11 @@ internal sealed class StructureReader(MaterialReader materials, ReadingLog log)
         return thickness is null ? null : new Back(thickness, behind, coherent);
     }
 
+    // Only when nothing else is wrong: a misspelled [cortx] is named already.
     private void RefuseNothing(TableReader reader, MeasuredLength? cortex)
     {
+        if (log.HasProblems)
+            return;
         bool hasLayers = reader.TryGet("layer", out TomlNode? layers) && layers is not TomlArray { Items.Count: 0 };
         if (!hasLayers && !reader.Has("cortex"))
             log.Refuse(reader.Table.Location, null, "found neither [[layer]] nor [cortex]; needed at least one layer or a cortex");

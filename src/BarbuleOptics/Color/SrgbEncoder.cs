@@ -12,9 +12,6 @@ public static class SrgbEncoder
     /// <summary>L* to which <see cref="EncodeBrightened"/> lifts a darker color.</summary>
     public const double BrightenedLightness = 60;
 
-    /// <summary>Y below which a color is rounding noise, a reflectance of 1e-9, and has nothing to brighten.</summary>
-    private const double LeastY = 1e-7;
-
     private const int Halvings = 40;
     private const double HalfStep = 0.5 / 255;
 
@@ -51,7 +48,7 @@ public static class SrgbEncoder
     public static SrgbColor EncodeBrightened(Tristimulus color, Tristimulus white)
     {
         double wantedY = new CieLab(BrightenedLightness, 0, 0).ToTristimulus(white).Y;
-        bool darker = color.Y > LeastY && color.Y < wantedY;
+        bool darker = color.Y > Tristimulus.LeastY && color.Y < wantedY;
         // The factor of an all but black color may overflow: there is nothing to brighten then.
         double factor = darker ? wantedY / color.Y : 1;
         return Encode(double.IsFinite(factor * (Math.Abs(color.X) + Math.Abs(color.Z))) ? color.Scale(factor) : color, white, out _);

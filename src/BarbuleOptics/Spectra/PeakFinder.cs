@@ -8,6 +8,9 @@ internal static class PeakFinder
     /// <summary>Least prominence of a peak, as a share of the highest reflectance.</summary>
     private const double LeastProminenceShare = 0.01;
 
+    /// <summary>Least prominence of a peak whatever the spectrum: below lies the rounding of a solver.</summary>
+    public const double LeastProminence = 1e-9;
+
     /// <summary>The peaks, from the highest reflectance down.</summary>
     public static IEnumerable<SpectralPeak> Find(Spectrum reflectance)
     {
@@ -20,7 +23,7 @@ internal static class PeakFinder
             highest = Math.Max(highest, summit.Height);
 
         // The test takes the sample: on a shelf beside a cliff the parabola's vertex stands above all samples.
-        summits.RemoveAll(summit => reflectance[summit.First] - Valley(summit) < LeastProminenceShare * highest);
+        summits.RemoveAll(summit => reflectance[summit.First] - Valley(summit) < Math.Max(LeastProminence, LeastProminenceShare * highest));
 
         var peaks = new SpectralPeak[summits.Count];
         for (int i = 0; i < peaks.Length; i++)
@@ -44,7 +47,7 @@ internal static class PeakFinder
         double highest = 0;
         foreach (double value in values)
             highest = Math.Max(highest, value);
-        double least = LeastProminenceShare * highest;
+        double least = Math.Max(LeastProminence, LeastProminenceShare * highest);
         return (Stands(values[0] - LowestSinceHigher(values, fromLeft: false)[0]), Stands(values[^1] - LowestSinceHigher(values, fromLeft: true)[^1]));
 
         bool Stands(double rise) => rise > 0 && rise >= least;

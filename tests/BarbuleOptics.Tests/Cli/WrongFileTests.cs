@@ -92,7 +92,6 @@ public sealed class WrongFileTests
     [MemberData(nameof(NoText))]
     public async Task A_file_that_is_no_text_is_refused(string words, byte[] bytes) => Assert.Contains(words, await Refusal(bytes, []), StringComparison.Ordinal);
 
-    // Two things are missing, and each has its line.
     [Fact]
     public async Task An_empty_file_is_refused()
     {
@@ -100,9 +99,7 @@ public sealed class WrongFileTests
         await File.WriteAllTextAsync(folder["empty.toml"], "", TestContext.Current.CancellationToken);
         Outcome outcome = await Barbule.Call("predict", folder["empty.toml"], "--out", folder["out"]);
 
-        Assert.Equal((3, ""), (outcome.ExitCode, outcome.Output));
-        Assert.Equal(2, outcome.ErrorLines.Length);
-        Assert.All(outcome.ErrorLines, line => Assert.StartsWith(folder["empty.toml"] + ":1:1: ", line, StringComparison.Ordinal));
+        Assert.StartsWith(folder["empty.toml"] + ":1:1: ", outcome.Refusal(3), StringComparison.Ordinal);
         Assert.Equal(["empty.toml"], folder.Content());
     }
 

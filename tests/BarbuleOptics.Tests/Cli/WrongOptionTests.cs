@@ -97,6 +97,9 @@ public sealed class WrongOptionTests
         Assert.Contains("eumelanin", (await Barbule.Call("materials", "unobtainium")).Refusal(2), StringComparison.Ordinal);
         Assert.Contains("\"water\"", (await Barbule.Call("materials", "keratin", "water")).Refusal(2), StringComparison.Ordinal);
         Assert.Contains("FILE", (await Barbule.Call("predict")).Refusal(2), StringComparison.Ordinal);
+        Assert.Equal("barbule: there is no option \"--material\"; did you mean --materials?", (await Barbule.Call("materials", "--material")).Refusal(2));
+        Assert.Equal("barbule: FILE: found an empty name; allowed the name of a structure file", (await Barbule.Call("predict", "")).Refusal(2));
+        Assert.Equal("barbule: --out: found an empty name; allowed the name of a folder", (await Barbule.Call("predict", "a.toml", "--out", "")).Refusal(2));
     }
 
     private static async Task<string> Refusal(params string[] words)

@@ -40,6 +40,19 @@ public sealed class PhysicalSenseTests
         }
     }
 
+    // Air in air: what the solver leaves is rounding, and rounding has neither peaks nor a color.
+    [Fact]
+    public void What_reflects_nothing_has_no_peaks_and_is_black()
+    {
+        StructurePrediction prediction = Predictions.Of("barbule.matrix = 'air'\nbarbule.backing = 'air'\n[cortex]\nthickness = 100\n", Predictions.At(300, 780, 1, 0, 45, 80));
+        foreach (View view in prediction.Views)
+        {
+            Assert.Empty(view.Features.Peaks);
+            Assert.False(view.Features.AtEdge);
+            Assert.Equal(("black", "#000000", "#000000"), (view.Color!.HueTerm, view.Color.Srgb.Hex, view.Color.SrgbBrightened.Hex));
+        }
+    }
+
     [Fact]
     public void A_cortex_in_a_surround_of_its_own_index_is_not_seen()
     {
