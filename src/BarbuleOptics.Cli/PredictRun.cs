@@ -165,11 +165,8 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
     {
         yield return new OutputFile(SpectraCsv.FileName, stream => SpectraCsv.Write(predicted.Prediction, stream));
         yield return OutputFile.FromBytes(PredictionJson.FileName, PredictionJson.Write(predicted));
-        foreach ((string name, byte[] bytes) in PredictionFigures.Render(predicted.Prediction, request.FigureSize))
-        {
-            cancellation.ThrowIfCancellationRequested();
+        foreach ((string name, byte[] bytes) in PredictionFigures.Render(predicted.Prediction, request.FigureSize, cancellation))
             yield return OutputFile.FromBytes(name, bytes);
-        }
     }
 
     private bool TryOutput(Action write)

@@ -12,24 +12,22 @@ public static class PredictionFigures
 
     private static readonly FigureFormat[] Formats = [FigureFormat.Svg, FigureFormat.Pdf, FigureFormat.Png];
 
-    /// <summary>The names of all files, in the order in which <see cref="Render"/> yields them.</summary>
+    /// <summary>The names of all files, in the order in which <see cref="Render"/> returns them.</summary>
     public static IReadOnlyList<string> FileNames { get; } = [.. Formats.Select(format => Name(Reflectance, format)), .. Formats.Select(format => Name(Section, format))];
 
-    /// <summary>Every figure in every format, one file at a time.</summary>
-    public static IEnumerable<(string FileName, byte[] Bytes)> Render(StructurePrediction prediction, FigureSize size)
+    /// <summary>Every figure in every format, drawn on as many threads as the prediction was given; the bytes do not depend on them.</summary>
+    /// <param name="prediction">What to draw.</param>
+    /// <param name="size">Width of both figures.</param>
+    /// <param name="cancellation">Ends the drawing early with an <see cref="OperationCanceledException"/>.</param>
+    public static IReadOnlyList<(string FileName, byte[] Bytes)> Render(StructurePrediction prediction, FigureSize size, CancellationToken cancellation = default)
     {
         ArgumentNullException.ThrowIfNull(prediction);
-        return Each(prediction, size);
-    }
-
-    private static IEnumerable<(string FileName, byte[] Bytes)> Each(StructurePrediction prediction, FigureSize size)
-    {
-        Figure reflectance = ReflectanceFigure.Draw(prediction, size);
-        foreach (FigureFormat format in Formats)
-            yield return (Name(Reflectance, format), reflectance.Render(format));
-        Figure section = SectionFigure.Draw(prediction, size);
-        foreach (FigureFormat format in Formats)
-            yield return (Name(Section, format), section.Render(format));
+        var figures = new Lazy<Figure>[] { new(() => ReflectanceFigure.Draw(prediction, size)), new(() => SectionFigure.Draw(prediction, size)) };
+        var files = new (string, byte[])[FileNames.Count];
+        var options = new ParallelOptions { MaxDegreeOfParallelism = prediction.Conditions.Threads, CancellationToken = cancellation };
+        Parallel.For(0, files.Length, options, file =>
+            files[file] = (FileNames[file], figures[file / Formats.Length].Value.Render(Formats[file % Formats.Length])));
+        return files;
     }
 
     private static string Name(string figure, FigureFormat format) => format switch
