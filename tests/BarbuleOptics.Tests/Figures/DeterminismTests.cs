@@ -33,7 +33,11 @@ public sealed class DeterminismTests
             comma.NumberFormat.NumberDecimalSeparator = ",";
             comma.NumberFormat.NegativeSign = "~";
             CultureInfo.CurrentCulture = comma;
-            Assert.Equal(usual, PredictionFigures.Render(prediction, default, TestContext.Current.CancellationToken));
+            foreach (((string name, byte[] expected), (string again, byte[] found)) in usual.Zip(PredictionFigures.Render(prediction, default, TestContext.Current.CancellationToken)))
+            {
+                Assert.Equal(name, again);
+                Assert.Equal(expected, found);
+            }
         }
         finally
         {
