@@ -49,6 +49,19 @@ internal static class FigureFont
         return printable.ToString();
     }
 
+    /// <summary>The text without line breaks and control characters, and with nothing that XML 1.0 forbids.</summary>
+    public static string OneLine(string text)
+    {
+        var line = new StringBuilder(text.Length);
+        foreach (Rune rune in text.EnumerateRunes())
+        {
+            // Lone surrogates come as the replacement character already.
+            Rune allowed = Rune.IsControl(rune) ? new Rune(' ') : rune.Value is 0xfffe or 0xffff ? Rune.ReplacementChar : rune;
+            line.Append(allowed.ToString());
+        }
+        return line.ToString();
+    }
+
     private static SKTypeface Load()
     {
         using Stream stream = typeof(FigureFont).Assembly.GetManifestResourceStream("figure-font.ttf")

@@ -7,7 +7,8 @@ internal sealed class Page(string title, double widthPt, double heightPt, IReadO
 {
     private const double MmInPt = 25.4 / 72;
 
-    public string Title { get; } = FigureFont.Printable(title);
+    /// <summary>What the file says it shows; read by programs, so that it may hold characters that the font lacks.</summary>
+    public string Title { get; } = FigureFont.OneLine(title);
 
     public double WidthPt { get; } = widthPt;
 

@@ -28,7 +28,7 @@ internal static class CellMarks
             Point upper = layout.At(-runs.Key / 2, topNm), lower = layout.At(runs.Key / 2, bottomNm);
             var cell = new Box(upper.X, upper.Y - AsidePt, lower.X, lower.Y + AsidePt);
             Cell(elements, cell, layout.Box);
-            Guides(elements, cell, bottom + RowPt / 2);
+            Guides(elements, cell, bottom + RowPt / 2, layout.Box);
             bottom += Width(widths, cell, bottom + RowPt / 2, runs.Key, layout.Box);
         }
         elements.AddRange(widths);
@@ -41,8 +41,14 @@ internal static class CellMarks
         elements.Add(new ClippedGroup(Shape.Rectangle(window), [new StrokedShape(outline, Under), new StrokedShape(outline, Dashed, "cell")]));
     }
 
-    private static void Guides(List<PageElement> elements, Box cell, double y)
-        => elements.Add(new StrokedShape(new Shape().AddLine(new(cell.Left, cell.Bottom), new(cell.Left, y + 2)).AddLine(new(cell.Right, cell.Bottom), new(cell.Right, y + 2)), Hair));
+    private static void Guides(List<PageElement> elements, Box cell, double y, Box window)
+    {
+        // White beside the lines, so that they are seen on dark fills too; not on the frame of the section.
+        elements.Add(new StrokedShape(Both(window.Bottom - Ink.LinePt), Under));
+        elements.Add(new StrokedShape(Both(y + 2), Hair, "guides"));
+
+        Shape Both(double end) => new Shape().AddLine(new(cell.Left, cell.Bottom), new(cell.Left, end)).AddLine(new(cell.Right, cell.Bottom), new(cell.Right, end));
+    }
 
     /// <summary>Draws the width of a cell; the height that it takes.</summary>
     private static double Width(List<PageElement> elements, Box cell, double y, double spacingNm, Box window)

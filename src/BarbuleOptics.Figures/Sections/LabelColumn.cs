@@ -20,7 +20,7 @@ internal static class LabelColumn
         double left = section.Right + LeaderPt;
         (string Text, SrgbColor Color)[][] blocks = [.. labels.Select(label => Lines(label, right - left))];
         double[] heights = [.. blocks.Select(block => block.Length * LinePt + GapPt)];
-        double[] middles = LabelSpread.Middles([.. labels.Select(label => label.Target.Y)], heights, section.Top, double.MaxValue);
+        double[] middles = Middles(labels, heights, section.Top);
         double bottom = section.Top;
         for (int i = 0; i < labels.Count; i++)
         {
@@ -31,6 +31,26 @@ internal static class LabelColumn
             bottom = Math.Max(bottom, top + blocks[i].Length * LinePt);
         }
         return bottom;
+    }
+
+    /// <summary>The middles of the labels; the label of a core stays right under that of its body.</summary>
+    private static double[] Middles(IReadOnlyList<SectionLabel> labels, double[] heights, double top)
+    {
+        int[] firsts = [.. Enumerable.Range(0, labels.Count).Where(i => !labels[i].IsCore)];
+        int[][] groups = [.. firsts.Select((first, g) => Enumerable.Range(first, (g + 1 < firsts.Length ? firsts[g + 1] : labels.Count) - first).ToArray())];
+        double[] groupMiddles = LabelSpread.Middles(
+            [.. groups.Select(group => group.Average(i => labels[i].Target.Y))], [.. groups.Select(group => group.Sum(i => heights[i]))], top, double.MaxValue);
+        double[] middles = new double[labels.Count];
+        for (int g = 0; g < groups.Length; g++)
+        {
+            double reached = groupMiddles[g] - groups[g].Sum(i => heights[i]) / 2;
+            foreach (int i in groups[g])
+            {
+                middles[i] = reached + heights[i] / 2;
+                reached += heights[i];
+            }
+        }
+        return middles;
     }
 
     private static (string Text, SrgbColor Color)[] Lines(SectionLabel label, double width)

@@ -23,10 +23,12 @@ internal sealed class LightArrows
     private readonly List<Box> _taken = [];
     private readonly SrgbColor _ground;
     private readonly double _lengthPt;
+    private int _drawn;
 
     private LightArrows(List<PageElement> elements, Point spot, double lengthPt, SrgbColor ground) => (_elements, _spot, _lengthPt, _ground) = (elements, spot, lengthPt, ground);
 
-    public static void Draw(List<PageElement> elements, SectionLayout layout, IReadOnlyList<Angle> angles, SrgbColor ground)
+    /// <summary>Draws the rays, each with its angle; the number of angles drawn.</summary>
+    public static int Draw(List<PageElement> elements, SectionLayout layout, IReadOnlyList<Angle> angles, SrgbColor ground)
     {
         Box box = layout.Box;
         var spot = new Point(box.Center.X, layout.Depth.At(0));
@@ -40,19 +42,17 @@ internal sealed class LightArrows
             arrows.Pair(0, string.Join(", ", angles.Count <= 3 ? angles.Select(Degrees.Text) : [Range(angles)]));
         else
             arrows.Fan(angles, layout.Section.Axis);
+        return arrows._drawn;
     }
 
     /// <summary>The least and the greatest of many angles.</summary>
     public static string Range(IReadOnlyList<Angle> angles)
         => $"{Degrees.Text(angles.MinBy(angle => angle.Degrees))} to {Degrees.Text(angles.MaxBy(angle => angle.Degrees))}";
 
-    /// <summary>How many of the angles are drawn.</summary>
-    public static int DrawnOf(int count) => Math.Min(count, MostDrawn);
-
     private void Fan(IReadOnlyList<Angle> angles, Angle axis)
     {
         Angle[] sorted = [.. angles.OrderBy(angle => angle.Degrees)];
-        int count = DrawnOf(sorted.Length);
+        int count = Math.Min(sorted.Length, MostDrawn);
         // The least and the greatest first: they keep their labels.
         IEnumerable<int> picked = Enumerable.Range(0, count).Select(i => count == 1 ? 0 : (int)Math.Round((double)i * (sorted.Length - 1) / (count - 1)));
         foreach (int i in picked.OrderBy(i => i != 0 && i != sorted.Length - 1).ThenBy(i => i))
@@ -66,25 +66,29 @@ internal sealed class LightArrows
         (double sin, double cos) = Math.SinCos(tilt);
         var from = new Point(_spot.X - sin * _lengthPt - aside, _spot.Y - cos * _lengthPt);
         var to = new Point(_spot.X + sin * _lengthPt + aside, from.Y);
+        TextRun label = Label(text, from, sin, cos, aside > 0);
+        // A ray without its angle says nothing.
+        if (_drawn > 0 && IsTaken(label))
+            return;
         // The head half way: at the surface the heads of several angles would run together.
         var hit = new Point(_spot.X - aside, _spot.Y);
-        var head = new Point(from.X + HeadShare * (hit.X - from.X), from.Y + HeadShare * (hit.Y - from.Y));
-        _elements.Add(new StrokedShape(Shape.Line(head, hit), new Stroke(Ink.Text, WidthPt)));
-        Arrow.Draw(_elements, from, head, Ink.Text, WidthPt, HeadPt, "incident");
+        Arrow.DrawThrough(_elements, from, hit, HeadShare, Ink.Text, WidthPt, HeadPt, "incident");
         Arrow.Draw(_elements, new(_spot.X + aside, _spot.Y), to, Ink.Text, WidthPt, HeadPt, "specular");
-
-        Write(Label(text, from, sin, cos, aside > 0));
+        Write(label);
+        _drawn++;
     }
 
     /// <summary>Writes on a plain ground, unless another text is there.</summary>
     private void Write(TextRun text)
     {
-        if (_taken.Any(text.Box.Grown(0.8).Overlaps))
+        if (IsTaken(text))
             return;
         _taken.Add(text.Box);
         _elements.Add(new FilledShape(Shape.Rectangle(text.Box.Grown(0.6)), _ground));
         _elements.Add(text);
     }
+
+    private bool IsTaken(TextRun text) => _taken.Any(text.Box.Grown(0.8).Overlaps);
 
     /// <summary>The label beyond the tail of the arrow, above the surface in any case.</summary>
     private TextRun Label(string text, Point tail, double sin, double cos, bool upright)

@@ -28,15 +28,15 @@ public static class SectionFigure
         var elements = new List<PageElement>();
         var fills = new MaterialFills(prediction.Section);
         new SectionPanes(layout, fills).Draw(elements);
-        LightArrows.Draw(elements, layout, prediction.Conditions.Incidences, fills.Of(prediction.Section.Surround).Color);
+        int rays = LightArrows.Draw(elements, layout, prediction.Conditions.Incidences, fills.Of(prediction.Section.Surround).Color);
         double cells = CellMarks.Draw(elements, layout);
         double column = LabelColumn.Draw(elements, SectionLabels.Of(layout, prediction.Barbule), layout.Box, width - MarginPt);
         double bottom = ScaleBar.Draw(elements, new(MarginPt, cells + GapPt), layout.PtPerNm);
-        bottom = NoteBlock.Add(elements, Notes(prediction), MarginPt, width - MarginPt, Math.Max(bottom, column) + GapPt);
+        bottom = NoteBlock.Add(elements, Notes(prediction, rays), MarginPt, width - MarginPt, Math.Max(bottom, column) + GapPt);
         return new Figure(new Page($"Section of {prediction.Barbule.Name}", width, bottom + MarginPt, elements));
     }
 
-    private static IEnumerable<string> Notes(StructurePrediction prediction)
+    private static IEnumerable<string> Notes(StructurePrediction prediction, int rays)
     {
         Section section = prediction.Section;
         yield return "To scale, at the central measurements.";
@@ -50,7 +50,7 @@ public static class SectionFigure
             };
         }
         ValueList<Angle> angles = prediction.Conditions.Incidences;
-        if (!section.IsAlong && LightArrows.DrawnOf(angles.Count) < angles.Count)
-            yield return $"{angles.Count} angles of incidence, {LightArrows.Range(angles)}; {LightArrows.DrawnOf(angles.Count)} are drawn.";
+        if (!section.IsAlong && rays < angles.Count)
+            yield return $"{angles.Count} angles of incidence, {LightArrows.Range(angles)}; {rays} {(rays == 1 ? "is" : "are")} drawn.";
     }
 }

@@ -6,4 +6,5 @@ namespace BarbuleOptics.Figures.Sections;
 /// <param name="Name">The material.</param>
 /// <param name="Detail">What it forms, with its size; empty for nothing.</param>
 /// <param name="Target">What the leader points at.</param>
-internal sealed record SectionLabel(string Name, string Detail, Point Target);
+/// <param name="IsCore">Whether this is the core of the body that the label before names: both stay together.</param>
+internal sealed record SectionLabel(string Name, string Detail, Point Target, bool IsCore = false);

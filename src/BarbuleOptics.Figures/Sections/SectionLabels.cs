@@ -24,10 +24,8 @@ internal sealed class SectionLabels
         var labels = new SectionLabels(layout, barbule);
         labels.Surround();
         labels.Matrix();
-        foreach (SectionFilm film in layout.Section.Films)
-            labels.Film(film);
-        foreach (SectionRun run in layout.Section.Runs)
-            labels.Run(run);
+        labels.Films();
+        labels.Bodies();
         labels.Back();
         labels.Breaks();
         return labels._labels;
@@ -56,25 +54,45 @@ internal sealed class SectionLabels
             Add(name, "matrix", Between(apart));
     }
 
-    private void Film(SectionFilm film)
+    /// <summary>One label for all films that are alike, with their number.</summary>
+    private void Films()
     {
-        string detail = $"{(Section.Films.Count(other => other.LayerNumber == film.LayerNumber) > 1 ? "films" : "film")}, {LengthText.Of(film.ThicknessNm)}";
-        Add(NameOf(Section.Materials[film.Material].Main), detail, Edge(_layout.Depth.MiddleShown(film.TopNm, film.BottomNm)));
+        foreach (IGrouping<(string Name, string Thickness), SectionFilm> alike in Section.Films.GroupBy(film => (NameOf(Section.Materials[film.Material].Main), LengthText.Of(film.ThicknessNm))))
+        {
+            string count = alike.Count() > 1 ? Unbroken($"{alike.Count()} films") : "film";
+            double? shownNm = alike.Select(film => _layout.Depth.MiddleShown(film.TopNm, film.BottomNm)).FirstOrDefault(middle => middle is not null);
+            Add(alike.Key.Name, $"{count}, {alike.Key.Thickness}", Edge(shownNm));
+        }
     }
 
-    private void Run(SectionRun run)
+    /// <summary>One label for all bodies that are alike, with the number of their rows, and right after it one for their cores.</summary>
+    private void Bodies()
     {
-        int leaders = 0;
-        foreach (CellBody body in run.Cell)
+        IEnumerable<(SectionRun Run, CellBody Body)> bodies = Section.Runs.SelectMany(run => run.Cell.Select(body => (run, body)));
+        foreach (var alike in bodies.GroupBy(member => TextsOf(member.Body)))
         {
-            Add(NameOf(Section.Materials[body.Material].Main), FormOf(body.Outer, run.Rows.Count), TargetOf(run, body, core: false, leaders++));
-            if (body.Core is Outline core)
+            int rows = alike.Select(member => member.Run).Distinct().Sum(run => run.Rows.Count);
+            string detail = alike.Key.Form + (rows > 1 ? ", " + Unbroken(rows.ToString(CultureInfo.InvariantCulture) + " rows") : "");
+            foreach ((SectionRun run, CellBody body) in alike)
             {
-                SectionMaterial inside = Section.Materials[body.CoreMaterial];
-                string name = inside.Filler is null ? NameOf(inside.Main) : string.Create(CultureInfo.InvariantCulture, $"{inside.FillerShare * 100:0.#} % {NameOf(inside.Filler)} in {NameOf(inside.Main)}");
-                Add(name, $"core, {SizeOf(core)}", TargetOf(run, body, core: true, leaders++));
+                if (TargetOf(run, body, core: false) is not Point target)
+                    continue;
+                _labels.Add(new SectionLabel(alike.Key.Name, detail, target));
+                if (body.Core is not null && TargetOf(run, body, core: true) is Point inside)
+                    _labels.Add(new SectionLabel(alike.Key.CoreName, alike.Key.Core, inside, IsCore: true));
+                break;
             }
         }
+    }
+
+    private (string Name, string Form, string CoreName, string Core) TextsOf(CellBody body)
+    {
+        string name = NameOf(Section.Materials[body.Material].Main);
+        if (body.Core is not Outline core)
+            return (name, FormOf(body.Outer), "", "");
+        SectionMaterial inside = Section.Materials[body.CoreMaterial];
+        string filling = inside.Filler is null ? NameOf(inside.Main) : string.Create(CultureInfo.InvariantCulture, $"{inside.FillerShare * 100:0.#} % {NameOf(inside.Filler)} in {NameOf(inside.Main)}");
+        return (name, FormOf(body.Outer), filling, $"core, {SizeOf(core)}");
     }
 
     private void Back()
@@ -114,14 +132,14 @@ internal sealed class SectionLabels
     /// <param name="run">The rows.</param>
     /// <param name="body">The body.</param>
     /// <param name="core">Whether the core is meant.</param>
-    /// <param name="leader">How many leaders point into these rows already: each gets a row, or a height within a row, of its own.</param>
-    private Point? TargetOf(SectionRun run, CellBody body, bool core, int leader)
+    private Point? TargetOf(SectionRun run, CellBody body, bool core)
     {
         SectionRow[] shown = [.. run.Rows.Where(row => _layout.Depth.Shows(row.CenterNm + body.ZNm))];
         if (shown.Length == 0)
             return null;
-        SectionRow row = shown[leader % shown.Length];
-        double sink = (leader / shown.Length % 3) switch { 0 => 0, 1 => 0.55, _ => -0.55 };
+        int number = run.Cell.TakeWhile(other => !ReferenceEquals(other, body)).Count();
+        SectionRow row = shown[number % shown.Length];
+        double sink = SinkOf(run, number, shown.Length, core);
         double outerNm = body.Outer.HalfWidthNm, coreNm = body.Core?.HalfWidthNm ?? 0;
         (double reachNm, double fallNm) = (core, body.Core) switch
         {
@@ -136,6 +154,17 @@ internal sealed class SectionLabels
         double[] points = [.. new[] { -asideNm, asideNm }.SelectMany(aside =>
             BodyPlaces.Within(Section, run, row, body, last.FromNm - aside, mostNm - aside).Select(place => place + aside))];
         return points.Length == 0 ? InsideLong(run, row, body, core) : _layout.At(points.Max(), row.CenterNm + body.ZNm + sink * fallNm);
+    }
+
+    /// <summary>The height of a leader's end within a row, from -1 at the top to 1: a body and its core share a row, and each leader has a height of its own.</summary>
+    private static double SinkOf(SectionRun run, int number, int rowsShown, bool core)
+    {
+        const double Most = 0.55;
+        int[] sharing = [.. Enumerable.Range(0, run.Cell.Count).Where(other => other % rowsShown == number % rowsShown)];
+        int leaders = sharing.Sum(LeadersOf), before = sharing.Where(other => other < number).Sum(LeadersOf) + (core ? 1 : 0);
+        return leaders == 1 ? 0 : Most * (2.0 * before / (leaders - 1) - 1);
+
+        int LeadersOf(int other) => run.Cell[other].Core is null ? 1 : 2;
     }
 
     /// <summary>A point of a body too long to be drawn whole: on its axis, or in the lower wall round a core.</summary>
@@ -156,10 +185,10 @@ internal sealed class SectionLabels
         return places.Length > 0 && _layout.Depth.Shows(run.Rows[0].CenterNm) ? _layout.At(places[^1] + run.SpacingNm / 2, run.Rows[0].CenterNm) : null;
     }
 
-    private static string FormOf(Outline outline, int rows)
+    private static string FormOf(Outline outline)
     {
         string form = outline.Shape == OutlineShape.Rectangle ? "platelets" : IsRound(outline) ? "rods" : "flattened rods";
-        return $"{form}, {SizeOf(outline)}{(rows > 1 ? ", " + Unbroken(rows.ToString(CultureInfo.InvariantCulture) + " rows") : "")}";
+        return $"{form}, {SizeOf(outline)}";
     }
 
     private static string SizeOf(Outline outline) => Unbroken(

@@ -2,6 +2,7 @@ using System.Globalization;
 using System.Text;
 using System.Text.RegularExpressions;
 using BarbuleOptics.Figures;
+using BarbuleOptics.Figures.Drawing;
 using Xunit;
 
 namespace BarbuleOptics.Tests.Figures;
@@ -37,6 +38,15 @@ public sealed partial class PdfTests
         Assert.Contains("LiberationSans", text, StringComparison.Ordinal);
         Assert.Contains("/FontFile2", text, StringComparison.Ordinal);
         Assert.All(Date().Matches(text).Select(match => match.Groups[1].Value), date => Assert.Equal("20000101", date));
+    }
+
+    // A text string in UTF-16BE begins with FE FF (ISO 32000-1, 7.9.2.2); U+4E2D U+6587 are 4E 2D 65 87.
+    [Fact]
+    public void A_title_keeps_characters_that_the_font_lacks()
+    {
+        string text = Encoding.Latin1.GetString(new Figure(new Page("\u4e2d\u6587", 100, 50, [])).Render(FigureFormat.Pdf));
+
+        Assert.Contains("/Title <FEFF4E2D6587>", text, StringComparison.OrdinalIgnoreCase);
     }
 
     [GeneratedRegex(@"/MediaBox \[([^\]]*)\]")]

@@ -1,5 +1,7 @@
 using BarbuleOptics.Color;
+using BarbuleOptics.Figures;
 using BarbuleOptics.Figures.Drawing;
+using BarbuleOptics.Figures.Layout;
 using BarbuleOptics.Figures.Sections;
 using BarbuleOptics.Layering;
 using BarbuleOptics.Prediction;
@@ -55,6 +57,67 @@ public sealed class SectionDrawingTests
         Assert.InRange(missing, 150, 199);
         SectionLabel label = Assert.Single(SectionLabels.Of(layout, prediction.Barbule), label => label.Name == "not drawn");
         Assert.StartsWith($"{missing}\u00a0rows", label.Detail, StringComparison.Ordinal);
+    }
+
+    [Theory]
+    [MemberData(nameof(Cases))]
+    public void The_label_of_a_core_stands_right_under_that_of_its_body(string name)
+    {
+        StructurePrediction prediction = FigureCases.Predict(name);
+        IReadOnlyList<SectionLabel> labels = SectionLabels.Of(SectionLayout.Fit(prediction.Section, 4, 4, 140, 200), prediction.Barbule);
+        var elements = new List<PageElement>();
+        LabelColumn.Draw(elements, labels, new Box(4, 4, 144, 300), 237);
+        string[] drawn = [.. elements.OfType<TextRun>().OrderBy(text => text.Box.Top).Select(text => text.Text)];
+
+        Assert.Equal(prediction.Section.Runs.SelectMany(run => run.Cell).Any(body => body.Core is not null), labels.Any(label => label.IsCore));
+        for (int i = 0; i < labels.Count; i++)
+        {
+            if (!labels[i].IsCore)
+                continue;
+            Assert.Matches("^(rods|flattened rods|platelets), ", labels[i - 1].Detail);
+            string[] pair = [.. Lines(labels[i - 1]), .. Lines(labels[i])];
+            Assert.Contains(Enumerable.Range(0, drawn.Length - pair.Length + 1), first => drawn.Skip(first).Take(pair.Length).SequenceEqual(pair));
+        }
+
+        static string[] Lines(SectionLabel label)
+            => [.. new[] { label.Name, label.Detail }.SelectMany(text => TextWrap.Lines(text, Ink.SmallPt, 237 - 144 - LabelColumn.LeaderPt))];
+    }
+
+    [Fact]
+    public void Cores_go_with_the_rods_that_hold_them()
+    {
+        StructurePrediction prediction = FigureCases.Predict("two-sizes-along");
+        string[] details = [.. SectionLabels.Of(SectionLayout.Fit(prediction.Section, 4, 4, 140, 200), prediction.Barbule).Select(label => label.Detail.Replace('\u00a0', ' '))];
+
+        // From the sample's file.
+        Assert.Equal(["rods, Ø 140 nm, 3 rows", "core, Ø 70 nm", "rods, Ø 110 nm, 3 rows", "core, Ø 50 nm"], details.Where(detail => detail.Contains('Ø', StringComparison.Ordinal)));
+    }
+
+    [Theory]
+    [InlineData("[[layer]]\nform = \"film\"\nthickness = 60\nrows = 12\npitch = 165", "12 films, 60 nm")]
+    [InlineData("[[layer]]\nform = \"film\"\nthickness = 60\n[[layer]]\nform = \"rod\"\ndiameter = 90\nspacing = 100\n[[layer]]\nform = \"film\"\nthickness = 60", "2 films, 60 nm")]
+    [InlineData("[[layer]]\nform = \"rod\"\ndiameter = 100\nspacing = 120\nrows = 2\npitch = 130\ngap = 50\n[[layer]]\nform = \"rod\"\ndiameter = 100\nspacing = 140\nrows = 2\npitch = 130", "rods, Ø 100 nm, 4 rows")]
+    public void Films_and_rows_that_are_alike_are_counted(string layers, string expected)
+    {
+        StructurePrediction prediction = FigureCases.Predict("[cortex]\nthickness = 100\n" + layers, 0);
+        IEnumerable<string> details = SectionLabels.Of(SectionLayout.Fit(prediction.Section, 4, 4, 165, 200), prediction.Barbule).Select(label => label.Detail.Replace('\u00a0', ' '));
+
+        Assert.Single(details, detail => detail == expected);
+    }
+
+    [Fact]
+    public void Every_ray_has_its_angle_and_the_note_counts_the_rays()
+    {
+        StructurePrediction prediction = FigureCases.Predict("ninety-angles");
+        foreach (double widthMm in new[] { 60.0, 85, 170 })
+        {
+            Page page = SectionFigure.Draw(prediction, FigureSize.FromWidth(widthMm)).Page;
+            int rays = page.Lines.Count(line => line.Role == "incident");
+
+            Assert.InRange(rays, 2, 5);
+            Assert.Equal(rays, page.Texts.Count(text => text.Text.EndsWith('°') && !text.Text.Contains(' ', StringComparison.Ordinal) && text.Box.Bottom < 60));
+            Assert.Contains($"{rays} are drawn", string.Join(' ', page.Texts.Select(text => text.Text)), StringComparison.Ordinal);
+        }
     }
 
     // Reflection: both rays make the angle of incidence with the normal, on either side of it.

@@ -118,7 +118,7 @@ public sealed class SvgTests
         XElement root = Parse(new Figure(page));
 
         Assert.Equal("<x>& \"??", Assert.Single(root.Descendants(Svg + "path")).Attribute("aria-label")!.Value);
-        Assert.StartsWith("a <b>&\"' ", root.Element(Svg + "title")!.Value, StringComparison.Ordinal);
+        Assert.Equal("a <b>&\"' \ufffd \u4e2d", root.Element(Svg + "title")!.Value);
     }
 
     // By hand: a quarter turn counter-clockwise puts the start of the text below its end.
