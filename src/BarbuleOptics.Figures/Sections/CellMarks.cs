@@ -27,8 +27,8 @@ internal static class CellMarks
             double topNm = runs.Min(run => run.Rows[0].CenterNm + run.CellTopNm), bottomNm = runs.Max(run => run.Rows[^1].CenterNm + run.CellBottomNm);
             Point upper = layout.At(-runs.Key / 2, topNm), lower = layout.At(runs.Key / 2, bottomNm);
             var cell = new Box(upper.X, upper.Y - AsidePt, lower.X, lower.Y + AsidePt);
-            Cell(elements, cell, layout.Box);
             Guides(elements, cell, bottom + RowPt / 2, layout.Box);
+            Cell(elements, cell, layout.Box);
             bottom += Width(widths, cell, bottom + RowPt / 2, runs.Key, layout.Box);
         }
         elements.AddRange(widths);

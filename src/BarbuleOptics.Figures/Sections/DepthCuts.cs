@@ -9,6 +9,8 @@ internal static class DepthCuts
     private const double KeptPt = 16;
     private const double LeastCutPt = 14;
     private const double TopShare = 0.62;
+    private const double LongNm = 1000;
+    private const double LongKeptNm = 150;
 
     /// <summary>The parts left out, from the top down; none when everything fits.</summary>
     /// <param name="section">The section.</param>
@@ -18,13 +20,13 @@ internal static class DepthCuts
     public static IReadOnlyList<(double FromNm, double ToNm)> Find(Section section, double bottomNm, double roomNm, double ptPerNm)
     {
         double excessNm = bottomNm - roomNm;
-        if (excessNm <= 0)
+        if (excessNm <= 0 && SpareNm(section, bottomNm) == 0)
             return [];
         var cuts = new List<(double FromNm, double ToNm)>();
         double keptNm = KeptPt / ptPerNm;
         foreach ((double fromNm, double toNm) in Bare(section, bottomNm).OrderByDescending(bare => bare.ToNm - bare.FromNm).ThenBy(bare => bare.FromNm).Take(MostBareCuts))
         {
-            double lengthNm = Math.Min(toNm - fromNm - 2 * keptNm, excessNm);
+            double lengthNm = Math.Max(Math.Min(toNm - fromNm - 2 * keptNm, excessNm), SpareNm(section, (fromNm, toNm), bottomNm));
             if (lengthNm < LeastCutPt / ptPerNm)
                 continue;
             double startNm = (fromNm + toNm - lengthNm) / 2;
@@ -33,6 +35,17 @@ internal static class DepthCuts
         }
         cuts.Sort();
         return excessNm > LeastCutPt / ptPerNm ? WithMiddle(cuts, bottomNm, roomNm) : cuts;
+    }
+
+    /// <summary>How much of the depth is left out even where there is room: the middle of what is bare, long and more than all the rest.</summary>
+    /// <remarks>A barbule's thick back would else take the page from its rows.</remarks>
+    public static double SpareNm(Section section, double bottomNm) => Bare(section, bottomNm).Sum(bare => SpareNm(section, bare, bottomNm));
+
+    private static double SpareNm(Section section, (double FromNm, double ToNm) bare, double bottomNm)
+    {
+        double lengthNm = bare.ToNm - bare.FromNm;
+        bool isSpare = section.Runs.Count + section.Films.Count > 0 && lengthNm > LongNm && lengthNm > bottomNm - lengthNm;
+        return isSpare ? lengthNm - 2 * LongKeptNm : 0;
     }
 
     /// <summary>Stretches of depth without bodies and films.</summary>

@@ -42,7 +42,8 @@ internal sealed class SectionLayout
     public static SectionLayout Fit(Section section, double leftPt, double topPt, double widthPt, double mostDepthPt)
     {
         double bottomNm = Math.Max(1, section.DepthNm + (section.Back?.Thickness.CentralNm ?? 0));
-        double scale = section.Runs.Count > 0 ? ScaleOfRows(section, bottomNm, widthPt, mostDepthPt) : ScaleOfFilms(section, bottomNm, widthPt, mostDepthPt);
+        double worthNm = bottomNm - DepthCuts.SpareNm(section, bottomNm);
+        double scale = section.Runs.Count > 0 ? ScaleOfRows(section, worthNm, widthPt, mostDepthPt) : ScaleOfFilms(section, worthNm, widthPt, mostDepthPt);
         IReadOnlyList<(double FromNm, double ToNm)> cuts = DepthCuts.Find(section, bottomNm, mostDepthPt / scale, scale);
         var depth = SectionAxis.Create(-SurroundPt / scale, bottomNm + BackingPt / scale, cuts, topPt, scale);
         return new SectionLayout(section, AcrossOf(section, leftPt, widthPt, scale), depth, scale, bottomNm);

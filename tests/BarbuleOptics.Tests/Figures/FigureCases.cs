@@ -25,6 +25,7 @@ internal static class FigureCases
     {
         ["deep"] = "[cortex]\nthickness = 120\n[[layer]]\nform = \"rod\"\ndiameter = 100\nlumen = 50\nspacing = 120\nrows = 200\npitch = 130\nstacking = \"staggered\"",
         ["thick-cortex"] = "[cortex]\nthickness = 9000\n[[layer]]\nform = \"rod\"\ndiameter = 100\nspacing = 120\nrows = 2\npitch = 130",
+        ["thick-back"] = "[cortex]\nthickness = 120\n[[layer]]\nform = \"rod\"\ndiameter = 100\nspacing = 120\nrows = 3\npitch = 130\n[back]\nthickness = 30000\nbehind = \"air\"",
         ["wide"] = "[cortex]\nthickness = 120\n[[layer]]\nform = \"platelet\"\nthickness = 60\nwidth = 8000\nwall = 10\nspacing = 8200\nrows = 4\npitch = 150\nstacking = \"staggered\"",
         ["thin-films"] = "[cortex]\nthickness = 3000\n[[layer]]\nform = \"film\"\nthickness = 0.5\nrows = 3\npitch = 400",
         ["only-cortex"] = "[cortex]\nthickness = 500",

@@ -120,6 +120,20 @@ public sealed class SectionDrawingTests
         }
     }
 
+    // By hand: the rows end 120 + 2 * 130 + 100 = 480 nm below the surface; with 150 nm on either side of the break 780 nm are drawn.
+    [Fact]
+    public void A_thick_back_leaves_the_page_to_the_rows()
+    {
+        StructurePrediction prediction = FigureCases.Predict("thick-back");
+        SectionLayout layout = SectionLayout.Fit(prediction.Section, 4, 4, 165, 200);
+        (double fromNm, double toNm) = Assert.Single(layout.Depth.Cuts);
+
+        Assert.Equal(480 + 150, fromNm, 1e-6);
+        Assert.Equal(480 + 30000 - 150, toNm, 1e-6);
+        Assert.Equal(200.0 / 780, layout.PtPerNm, 1e-6);
+        Assert.Contains(SectionLabels.Of(layout, prediction.Barbule), label => label.Name == "not drawn" && label.Detail == "29.7\u00a0µm");
+    }
+
     // Reflection: both rays make the angle of incidence with the normal, on either side of it.
     [Theory]
     [InlineData(10)]
