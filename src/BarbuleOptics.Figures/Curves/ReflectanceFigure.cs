@@ -31,17 +31,17 @@ public sealed class ReflectanceFigure
         (_prediction, _views, _widthPt) = (prediction, prediction.Views, size.WidthPt);
         double height = Math.Min(215, Math.Max(130, _widthPt * 0.62));
         _labelEvery = (int)Math.Ceiling(_views.Count / Math.Min(MostLabels, EndLabels.Capacity(height - 40)));
-        double right = _widthPt - MarginPt - EndLabels.RoomPt(Labelled.Select(view => Degrees.Text(view.Incidence)));
+        double right = _widthPt - MarginPt - EndLabels.RoomPt(Labeled.Select(view => Degrees.Text(view.Incidence)));
         _frame = PlotFrame.Within(Grid, _views.Max(view => Greatest(view.Reflectance)), new Box(MarginPt, MarginPt + Ink.SmallPt / 2, right, height));
     }
 
     private WavelengthGrid Grid => _prediction.Conditions.Wavelengths;
 
-    private IEnumerable<View> Labelled => _views.Where((_, i) => IsLabelled(i));
+    private IEnumerable<View> Labeled => _views.Where((_, i) => IsLabeled(i));
 
     /// <summary>Lays the figure out.</summary>
     /// <remarks>Curves are drawn in the predicted color, brought to a lightness that reads on white; the swatches hold the colors
-    /// themselves. Beyond twelve angles not every curve is labelled, and the note says so.</remarks>
+    /// themselves. Beyond twelve angles not every curve is labeled, and the note says so.</remarks>
     /// <exception cref="ArgumentException">The prediction has no view.</exception>
     public static Figure Draw(StructurePrediction prediction, FigureSize size)
     {
@@ -67,7 +67,7 @@ public sealed class ReflectanceFigure
         _elements.Add(_frame.Panel(marks));
         NameUltraviolet(traces);
         _frame.Write(_elements);
-        EndLabels.Draw(_elements, _frame.Plot, [.. _views.Select((view, i) => (Degrees.Text(view.Incidence), traces[i][^1], strokes[i])).Where((_, i) => IsLabelled(i))]);
+        EndLabels.Draw(_elements, _frame.Plot, [.. _views.Select((view, i) => (Degrees.Text(view.Incidence), traces[i][^1], strokes[i])).Where((_, i) => IsLabeled(i))]);
         bool allPeaks = marksPeaks && NamePeaks(traces, peaks);
 
         double bottom = _frame.Plot.Bottom + 26 + LabelGapPt;
@@ -140,10 +140,10 @@ public sealed class ReflectanceFigure
         if (_explainsTint)
             yield return "Gray: ultraviolet.";
         if (_labelEvery > 1)
-            yield return string.Create(CultureInfo.InvariantCulture, $"{_views.Count} angles; one curve in {_labelEvery} is labelled, and the last.");
+            yield return string.Create(CultureInfo.InvariantCulture, $"{_views.Count} angles; one curve in {_labelEvery} is labeled, and the last.");
     }
 
-    private bool IsLabelled(int view) => view % _labelEvery == 0 && view + _labelEvery / 2 < _views.Count - 1 || view == _views.Count - 1;
+    private bool IsLabeled(int view) => view % _labelEvery == 0 && view + _labelEvery / 2 < _views.Count - 1 || view == _views.Count - 1;
 
     /// <summary>The main peak; null where there is none, or it is too low to be told from the axis.</summary>
     private SpectralPeak? PeakOf(View view)
