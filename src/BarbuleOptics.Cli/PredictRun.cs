@@ -109,7 +109,7 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
     {
         PredictionTable.Write(predicted, loaded.Notes, output, colors);
         if (folder is not null)
-            output.WriteLine($"Written: {string.Join(", ", ResultNames)} in {Path.TrimEndingDirectorySeparator(folder)}{Path.DirectorySeparatorChar}");
+            PredictionTable.Wrap($"Written into {OneLine.Escape(Path.TrimEndingDirectorySeparator(folder))}{Path.DirectorySeparatorChar}: {string.Join(", ", ResultNames)}.", output);
         output.WriteLine();
     }
 

@@ -102,7 +102,8 @@ internal static class PredictionTable
 
     private static string Text(double? value, string format) => value?.ToString(format, CultureInfo.InvariantCulture) ?? "-";
 
-    private static void Wrap(string text, TextWriter output)
+    /// <summary>A text in lines of a readable length, the second and later ones set in.</summary>
+    public static void Wrap(string text, TextWriter output)
     {
         string line = "";
         foreach (string word in text.Split(' '))

@@ -23,7 +23,7 @@ public sealed class ProcessTests
         (await Barbule.Call("predict", path, "--angles", "0,30.5", "--out", folder["three"])).Good();
 
         Assert.Equal(first.Good().Output.Replace("one/", "two/", StringComparison.Ordinal), second.Good().Output);
-        Assert.Contains("Written: ", first.Output, StringComparison.Ordinal);
+        Assert.Contains("Written into ", first.Output, StringComparison.Ordinal);
         string spectra = folder.Text("one/" + SpectraCsv.FileName), json = folder.Text("one/" + PredictionJson.FileName);
         Assert.Equal(spectra, folder.Text("two/" + SpectraCsv.FileName));
         Assert.Equal(spectra, folder.Text("three/" + SpectraCsv.FileName));
