@@ -7,7 +7,7 @@ using BarbuleOptics.Prediction;
 
 namespace BarbuleOptics.Cli;
 
-/// <summary>Carries out <c>barbule predict</c>: reads everything, solves, and only then writes.</summary>
+/// <summary>Carries out <c>barbule predict</c>, file after file: each is read and solved before any of its results is written.</summary>
 internal sealed class PredictRun(PredictRequest request, TextWriter output, TextWriter error, TerminalColors colors)
 {
     /// <summary>Most wavelengths times angles of one file: 2 million are a table of 0.6 GB.</summary>

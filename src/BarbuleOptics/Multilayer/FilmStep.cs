@@ -73,9 +73,9 @@ internal readonly struct FilmStep
     // Neither is negative but for the last digit of a difference.
     private static (double Phi, double Psi) Entering(Complex eta, double spent, double swing)
     {
-        double travelling = 0.5 * eta.Real * spent;
+        double traveling = 0.5 * eta.Real * spent;
         double standing = eta.Imaginary * swing;
-        return (Math.Max(0, travelling + standing), Math.Max(0, travelling - standing) / Norm(eta));
+        return (Math.Max(0, traveling + standing), Math.Max(0, traveling - standing) / Norm(eta));
     }
 
     private static (double Phi, double Psi) Lost(
