@@ -16,11 +16,11 @@ public sealed class CompletionTests
         { "predict --", "--angles --mixing --set --out", "predict" },
         { "predict --an", "--angles", "--mixing" },
         { "predict throat.toml --illum", "--illuminant", "--mixing" },
-        { "predict --mixing ", "mean-index mean-permittivity form-birefringence form-birefringence-2 maxwell-garnett bruggeman", "D65" },
-        { "predict --mixing max", "maxwell-garnett", "bruggeman" },
-        { "predict --mixing=max", "maxwell-garnett", "bruggeman" },
+        { "predict --mixing ", "mean-index mean-permittivity form-birefringence form-birefringence-2 maxwell-garnett maxwell-garnett-2 bruggeman bruggeman-2", "D65" },
+        { "predict --mixing max", "maxwell-garnett maxwell-garnett-2", "bruggeman" },
+        { "predict --mixing=max", "maxwell-garnett maxwell-garnett-2", "bruggeman" },
         { "predict --set barbule.surround=water --set 'layer1.lumen=0' --obs", "--observer", "--mixing" },
-        { "predict --set \"barbule.matrix={ n = 1.5 }\" --mixing max", "maxwell-garnett", "bruggeman" },
+        { "predict --set \"barbule.matrix={ n = 1.5 }\" --mixing max", "maxwell-garnett maxwell-garnett-2", "bruggeman" },
         { "predict --set ", "", "throat.toml" },
         { "predict --mixing=", "maxwell-garnett bruggeman", "D65" },
         { "predict throat.toml --illuminant D", "D50 D55 D65 D75", "A" },
@@ -116,7 +116,7 @@ public sealed class CompletionTests
 
         string[] offered = OutsideProgram.Run(bash, folder.Path, "--norc", "try.bash").Split('\n');
         // Nothing is offered for FILE, so that bash falls back to file names ("-o default").
-        Assert.Equal(["complete -o default -F _barbule barbule", "materials", "D65", "maxwell-garnett", "1931-2deg 1964-10deg", "", "--accuracy", "", ""], offered);
+        Assert.Equal(["complete -o default -F _barbule barbule", "materials", "D65", "maxwell-garnett maxwell-garnett-2", "1931-2deg 1964-10deg", "", "--accuracy", "", ""], offered);
     }
 
     private static string[] Words(string text) => text.Split(' ', StringSplitOptions.RemoveEmptyEntries);

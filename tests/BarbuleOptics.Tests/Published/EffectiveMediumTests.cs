@@ -52,6 +52,21 @@ public sealed class EffectiveMediumTests
         Assert.InRange(Complex.Abs(mixed.X - across), 0, 1e-14);
     }
 
+    // The same source along the rods; across them and in depth the closed forms of the two quasi-static rules: Maxwell Garnett
+    // eh (1 + f a)/(1 - f a), a = (ei - eh)/(ei + eh); Bruggeman at equal shares sqrt(e1 e2).
+    [Fact]
+    public void Second_order_along_the_rods_joins_Rytov_with_the_rule_across()
+    {
+        DiagonalPermittivity garnett = new SecondOrderAlongRods(new MaxwellGarnett()).Mix(Lamellae(0.5), [1.0, 2.25], 500);
+        DiagonalPermittivity bruggeman = new SecondOrderAlongRods(new Bruggeman()).Mix(Lamellae(0.5), [1.0, 2.25], 500);
+        Assert.Equal(1.279786, Complex.Sqrt(garnett.Y).Real, 5e-7);
+        Assert.Equal(garnett.Y, bruggeman.Y);
+        const double Polarizability = 1.25 / 3.25;
+        Near((1 + 0.5 * Polarizability) / (1 - 0.5 * Polarizability), garnett.X);
+        Near(1.5, bruggeman.Z);
+        Assert.Equal(garnett.X, garnett.Z);
+    }
+
     // Permittivity 4 in 1, share 0.3, and melanin in keratin, share 0.5: closed forms of each rule (Maxwell Garnett 1904 and
     // Bruggeman 1935 in two dimensions, Wiener 1912), computed twice outside this project.
     [Fact]

@@ -7,10 +7,13 @@ public static class MixingRules
 {
     /// <summary>Every rule, in the order of the documentation.</summary>
     public static IReadOnlyList<IMixingRule> All { get; } =
-        [new MeanIndex(), new MeanPermittivity(), new FormBirefringence(), new SecondOrderFormBirefringence(), new MaxwellGarnett(), new Bruggeman()];
+    [
+        new MeanIndex(), new MeanPermittivity(), new FormBirefringence(), new SecondOrderFormBirefringence(), new MaxwellGarnett(),
+        new SecondOrderAlongRods(new MaxwellGarnett()), new Bruggeman(), new SecondOrderAlongRods(new Bruggeman()),
+    ];
 
     /// <summary>The rule used where none is named.</summary>
-    public static IMixingRule Default { get; } = All[^1];
+    public static IMixingRule Default { get; } = All.Single(rule => rule.Name == "bruggeman");
 
     /// <summary>Finds a rule by its name.</summary>
     public static bool TryFind(string name, [NotNullWhen(true)] out IMixingRule? rule)

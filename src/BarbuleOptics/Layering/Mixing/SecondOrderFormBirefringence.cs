@@ -23,12 +23,22 @@ public sealed class SecondOrderFormBirefringence : IMixingRule
     {
         Complex mean = Averages.Permittivity(cut, permittivities);
         Complex series = Averages.SeriesPermittivity(cut, permittivities);
-        // g is kept in units of the period, so k0 enters with it: (k0 P)^2.
+        Complex across = series + series * Scale(cut, wavelengthNm) * WeightedVariance(cut, permittivities, mean, series);
+        return new(PassiveRoot.Passive(across), Along(cut, permittivities, wavelengthNm), mean);
+    }
+
+    /// <summary>The permittivity along the rods.</summary>
+    internal static Complex Along(SectionCut cut, ReadOnlySpan<Complex> permittivities, double wavelengthNm)
+    {
+        Complex mean = Averages.Permittivity(cut, permittivities);
+        return PassiveRoot.Passive(mean + Scale(cut, wavelengthNm) * Variance(cut, permittivities, mean));
+    }
+
+    /// <summary>g is kept in units of the period, so k0 enters with it: (k0 P)^2.</summary>
+    private static double Scale(SectionCut cut, double wavelengthNm)
+    {
         double k0P = 2 * Math.PI * cut.PeriodNm / wavelengthNm;
-        double scale = k0P * k0P;
-        Complex along = mean + scale * Variance(cut, permittivities, mean);
-        Complex across = series + series * scale * WeightedVariance(cut, permittivities, mean, series);
-        return new(PassiveRoot.Passive(across), PassiveRoot.Passive(along), mean);
+        return k0P * k0P;
     }
 
     /// <summary>&lt;g^2&gt; - &lt;g&gt;^2 with g' = e - &lt;e&gt;; g is piecewise linear, so both integrals are exact.</summary>
