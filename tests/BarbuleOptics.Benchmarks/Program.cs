@@ -1,0 +1,22 @@
+using BarbuleOptics.Benchmarks.MixingRules;
+
+namespace BarbuleOptics.Benchmarks;
+
+/// <summary>Programs that take minutes and so are no tests: what they print goes into the documentation.</summary>
+internal static class Program
+{
+    private static readonly Dictionary<string, (string About, Func<string[], int> Run)> Programs = new()
+    {
+        ["rules"] = ("how far each mixing rule is from the rigorous solution; prints the README's tables", RuleProgram.Run),
+    };
+
+    private static int Main(string[] words)
+    {
+        if (words.Length > 0 && Programs.TryGetValue(words[0], out var program))
+            return program.Run(words[1..]);
+        Console.Error.WriteLine("Which program?");
+        foreach ((string name, (string about, _)) in Programs)
+            Console.Error.WriteLine($"  {name,-8} {about}");
+        return 2;
+    }
+}
