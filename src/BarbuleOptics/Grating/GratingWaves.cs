@@ -17,7 +17,7 @@ namespace BarbuleOptics.Grating;
 internal sealed class GratingWaves
 {
     /// <summary>Smallest |kz|/k0 a wave is given: a grazing order is moved by this much, which shifts no result by more than its square.</summary>
-    private const double LeastKz = 1e-7;
+    internal const double LeastKz = 1e-7;
 
     private double[] _kx = [];
     private Complex[] _kz = [];

@@ -1,0 +1,107 @@
+using System.Numerics;
+using BarbuleOptics.Layering;
+
+namespace BarbuleOptics.Grating.Modal;
+
+/// <summary>Everything between two planes of one period: any bodies, by the Fourier modal method without eigenvalues.</summary>
+/// <remarks>
+/// Galerkin's method: harmonics -N..N along x (<see cref="CutOperators"/>), elements of high order in depth
+/// (<see cref="DepthMesh"/>), joined from one plane to the other (<see cref="SlabChain"/>). At any N and mesh power is kept and source and
+/// receiver may be exchanged, to rounding. Bodies may touch and lie within others; where outlines cross, depth converges slowly.
+/// Error in R of five staggered rows of 120 nm rods at 170 nm, 300-780 nm, 30 degrees, against 28 harmonics: solid 2.6e-5 at N = 2
+/// and 1.6e-6 at N = 7 in either field; with a 70 nm lumen 6.2e-4 and 2.5e-5 (E), 4.3e-3 and 1.2e-5 (H).
+/// </remarks>
+internal sealed class ModalSlab : IGratingElement
+{
+    private readonly SlabShape _shape;
+    private readonly Dictionary<(int, int, RodField, bool), ModalSpace> _spaces = [];
+    private readonly Dictionary<int, OperatorStore> _stores = [];
+    private readonly Dictionary<(int, int, RodField, int), LossSplit> _losses = [];
+    private readonly bool[] _meets;
+    private double[] _split = [];
+    private LossSplit? _prepared;
+
+    /// <summary>Describes the bodies by their place below the top plane; they may reach beyond the planes, what lies between counts.</summary>
+    /// <param name="bodies">Bodies of one period; where two cover each other the later one counts.</param>
+    /// <param name="heightNm">Distance between the planes, above zero, in nm.</param>
+    /// <param name="periodNm">The period, above zero, in nm.</param>
+    public ModalSlab(IReadOnlyList<PlacedOutline> bodies, double heightNm, double periodNm)
+    {
+        _shape = new SlabShape(bodies, heightNm, periodNm);
+        _meets = new bool[1 + bodies.Select(placed => Math.Max(placed.Body.Material, placed.Body.CoreMaterial)).DefaultIfEmpty(0).Max()];
+        _meets[Section.Matrix] = true;
+        foreach (PlacedOutline placed in bodies)
+            _meets[placed.Body.Material] = _meets[placed.Body.CoreMaterial] = true;
+    }
+
+    /// <inheritdoc/>
+    public double HeightNm => _shape.HeightNm;
+
+    /// <summary>Whether mirrors of the bodies are made use of; off, everything is solved the plain way.</summary>
+    internal bool UseMirrors { get; set; } = true;
+
+    /// <inheritdoc/>
+    public bool TryScatter(GratingWaves waves, in Resolution resolution, ScatteringBlock block)
+    {
+        _prepared = null;
+        ModalSpace space = SpaceFor(waves, resolution);
+        bool done = space.TrySolve(waves, resolution.Depth, UseMirrors && _shape.HasAxis) || space.TrySolve(waves, resolution.Depth, false);
+        if (!done)
+            return false;
+        space.FillBlock(waves, block);
+        return true;
+    }
+
+    /// <inheritdoc/>
+    public void AddLoss(GratingWaves waves, in Resolution resolution, ReadOnlySpan<Complex> down, ReadOnlySpan<Complex> up, Span<double> byMaterial)
+    {
+        double total = SpaceFor(waves, resolution).PowerIn(waves, down, up);
+        int absorbing = 0, only = Section.Matrix;
+        for (int m = 0; m < _meets.Length; m++)
+        {
+            if (_meets[m] && waves.Permittivities[m].Imaginary != 0)
+                (absorbing, only) = (absorbing + 1, m);
+        }
+        if (absorbing > 1 && TrySplit(waves, resolution, down, up))
+        {
+            double sum = 0;
+            foreach (double loss in _split)
+                sum += loss;
+            for (int m = 0; m < _split.Length; m++)
+                byMaterial[m] += total * (_split[m] / sum);
+            return;
+        }
+        byMaterial[only] += total;
+    }
+
+    // Losses by the fields inside, into _split; false where they come out as nothing.
+    private bool TrySplit(GratingWaves waves, in Resolution resolution, ReadOnlySpan<Complex> down, ReadOnlySpan<Complex> up)
+    {
+        (int, int, RodField, int) key = (Math.Max(resolution.Harmonics, waves.MostOrder), waves.MostOrder, waves.Field, resolution.Depth);
+        if (!_losses.TryGetValue(key, out LossSplit? losses))
+            losses = _losses[key] = new LossSplit(_shape, key.Item1, key.Item2, key.Item3, key.Item4);
+        if (!ReferenceEquals(_prepared, losses) && !losses.TryPrepare(waves))
+            return false;
+        _prepared = losses;
+        if (_split.Length < waves.Permittivities.Length)
+            _split = new double[waves.Permittivities.Length];
+        Array.Clear(_split);
+        losses.Add(waves, down, up, _split);
+        double sum = 0;
+        foreach (double loss in _split)
+            sum += loss;
+        return sum > 0 && double.IsFinite(sum);
+    }
+
+    private ModalSpace SpaceFor(GratingWaves waves, in Resolution resolution)
+    {
+        int harmonics = Math.Max(resolution.Harmonics, waves.MostOrder);
+        bool split = UseMirrors && _shape.HasAxis && waves.Kx0 == 0;
+        if (!_stores.TryGetValue(harmonics, out OperatorStore? store))
+            store = _stores[harmonics] = new OperatorStore(_shape, harmonics);
+        (int, int, RodField, bool) key = (harmonics, waves.MostOrder, waves.Field, split);
+        if (!_spaces.TryGetValue(key, out ModalSpace? space))
+            space = _spaces[key] = new ModalSpace(_shape, store, harmonics, waves.MostOrder, waves.Field, split, UseMirrors && _shape.HasMiddle);
+        return space;
+    }
+}
