@@ -51,30 +51,56 @@ def film(period, top, thickness, e, most):
             for x in (-period / 2, 0) for z0, z1 in zip(edges[:-1], edges[1:])]
 
 
-def row(period, top, height, outer, core, e_matrix, e_shell, e_core, shifted=False):
-    """A row of hollow ellipses (half axes outer, core) in the middle of a slab; shifted by half a period if asked."""
-    angles = np.arange(9) * np.pi / 4
-    rim = [(period / 2, 0), (period / 2, height / 2), (0, height / 2), (-period / 2, height / 2), (-period / 2, 0),
-           (-period / 2, -height / 2), (0, -height / 2), (period / 2, -height / 2), (period / 2, 0)]
+def quarter(half_period, half_height, outer, pitch):
+    """Rim of a tile from (half_period, 0) to (0, deepest), x, z >= 0: flat at half_height, or, towards a row at a distance pitch that is
+    moved by half a period, along the line of equal distance from both rods (distances in units of their half axes)."""
+    if pitch is None:
+        return [(half_period, 0), (half_period, half_height), (0, half_height)]
+    x, z = half_period / outer[0] ** 2, pitch / outer[1] ** 2
+    reach = (x * half_period + z * pitch) / 2
+    side, tip = (reach - x * half_period) / z, reach / z
+    slope = [(half_period * (1 - u), side + (tip - side) * u) for u in (0, 1 / 3, 2 / 3, 1)]
+    return [(half_period, 0)] + slope
+
+
+def row(period, center, outer, core, e_matrix, e_shell, e_core, above, below, shifted=False):
+    """A row of hollow ellipses (half axes outer, core); above and below are ("flat", distance) or ("nested", pitch)."""
+    def part(kind):
+        return quarter(period / 2, kind[1], outer, kind[1] if kind[0] == "nested" else None)
+
+    low, high = part(below), part(above)
+    rim = low + [(-x, z) for x, z in low[-2::-1]] + [(-x, -z) for x, z in high[1:]] + [(x, -z) for x, z in high[-2::-1]]
+    angles = np.unwrap([np.arctan2(z / outer[1], x / outer[0]) for x, z in rim])
     hub = [(0.5 * core[0] * np.cos(t), 0.5 * core[1] * np.sin(t)) for t in angles]
+    move = np.array([[period / 2 if shifted else 0.0], [center]])
     parts = []
-    for j in range(8):
-        inner, shell = arc(*core, angles[j], angles[j + 1]), arc(*outer, angles[j], angles[j + 1])
-        parts.append((segment(hub[j], hub[j + 1]), inner, e_core))
-        parts.append((inner, shell, e_shell))
-        parts.append((shell, segment(rim[j], rim[j + 1]), e_matrix))
-    for j in range(0, 8, 2):
-        parts.append((segment((0, 0), hub[j]), segment(hub[j + 2], hub[j + 1]), e_core))
 
-    def place(curve, move):
-        return lambda s: curve(s) + np.array([[move], [top + height / 2]])
+    def add(inner, outside, e):
+        parts.append((lambda s: inner(s) + move, lambda s: outside(s) + move, e))
 
-    placed = []
-    for low, high, e in parts:
-        middle = 0.25 * (low(np.array([0, 1.0])).sum(1) + high(np.array([0, 1.0])).sum(1))[0]
-        move = 0.0 if not shifted else (-period / 2 if middle > 0 else period / 2)
-        placed.append((place(low, move), place(high, move), e))
-    return placed
+    for j in range(len(rim) - 1):
+        inside, shell = arc(*core, angles[j], angles[j + 1]), arc(*outer, angles[j], angles[j + 1])
+        add(segment(hub[j], hub[j + 1]), inside, e_core)
+        add(inside, shell, e_shell)
+        add(shell, segment(rim[j], rim[j + 1]), e_matrix)
+    for j in range(0, len(rim) - 1, 2):
+        add(segment((0, 0), hub[j]), segment(hub[j + 2], hub[j + 1]), e_core)
+    return parts
+
+
+def graded(corners, ends, levels, ratio=0.15):
+    """Breaks between the ends that crowd geometrically towards every corner, where the magnetic field is singular."""
+    base = sorted(set(corners) | set(ends))
+    breaks = set(base)
+    for low, high in zip(base[:-1], base[1:]):
+        at_low, at_high = low in corners, high in corners
+        reach = (high - low) / 2 if at_low and at_high else high - low
+        for k in range(0 if at_low and at_high else 1, levels + 1):
+            if at_low:
+                breaks.add(low + reach * ratio ** k)
+            if at_high:
+                breaks.add(high - reach * ratio ** k)
+    return sorted(breaks)
 
 
 # --- the solution -----------------------------------------------------------------------------------------------------------
@@ -117,24 +143,25 @@ class Mesh:
         return sp.csr_matrix((data, (rows, columns)), shape=(len(self.xz), len(self.xz)))
 
 
-def projections(mesh, z, kx, period):
-    """Row n: integral of exp(-i kx_n x) times each basis function over the two edges at depth z, divided by the period."""
+def projections(mesh, z, kx, period, breaks):
+    """Row n: integral of exp(-i kx_n x) times each basis function over the edges at depth z, divided by the period."""
     points, weights = np.polynomial.legendre.leggauss(mesh.degree + 30)
     value, _ = lagrange(mesh.nodes, points)
     result = np.zeros((len(kx), len(mesh.xz)), complex)
     on = np.flatnonzero(np.abs(mesh.xz[:, 1] - z) < 1e-6 * period)
-    for start in (-period / 2, 0.0):
-        mine = on[(mesh.xz[on, 0] > start - 1e-6 * period) & (mesh.xz[on, 0] < start + period / 2 * (1 + 1e-5))]
+    for start, end in zip(breaks[:-1], breaks[1:]):
+        mine = on[(mesh.xz[on, 0] > start - 1e-7 * period) & (mesh.xz[on, 0] < end + 1e-7 * period)]
         mine = mine[np.argsort(mesh.xz[mine, 0])]
-        x = start + (points + 1) / 2 * period / 2
-        result[:, mine] += (np.exp(-1j * np.outer(kx, x)) * weights * period / 4) @ value / period
+        x = start + (points + 1) / 2 * (end - start)
+        result[:, mine] += (np.exp(-1j * np.outer(kx, x)) * weights * (end - start) / 2) @ value / period
     return result
 
 
-def solve(elements, period, height, wavelength, degree, n_surround, e_backing, incidence, axis, is_p, orders=16):
+def solve(elements, period, height, wavelength, degree, n_surround, e_backing, incidence, axis, is_p, orders=16, breaks=None):
     """Powers (R, T) of the orders -orders..orders; lengths in nm, angles in degrees, as in PlainLight."""
     k0 = 2 * np.pi / wavelength
     period, height = period * k0, height * k0
+    breaks = np.array([-period / 2, 0, period / 2]) if breaks is None else np.array(breaks) * k0
     scaled = [(lambda s, f=low: k0 * f(s), lambda s, f=high: k0 * f(s), e) for low, high, e in elements]
     mesh = Mesh(scaled, degree)
     theta, phi = np.radians(incidence), np.radians(axis)
@@ -150,15 +177,15 @@ def solve(elements, period, height, wavelength, degree, n_surround, e_backing, i
     eh = mesh.assemble(lambda e, xx, zz, zx, m: kappa / (e - kappa ** 2) * (zx - zx.T))
     count = len(mesh.xz)
 
-    right = np.flatnonzero(np.abs(mesh.xz[:, 0] - period / 2) < 1e-7 * period)
-    left = np.flatnonzero(np.abs(mesh.xz[:, 0] + period / 2) < 1e-7 * period)
-    right, left = right[np.argsort(mesh.xz[right, 1])], left[np.argsort(mesh.xz[left, 1])]
-    assert np.allclose(mesh.xz[right, 1], mesh.xz[left, 1])
-    free = np.setdiff1d(np.arange(count), right)
+    # Nodes one period apart are one unknown, up to the phase.
+    known = {(round(x / period * 1e6), round(z / period * 1e6)): i for i, (x, z) in enumerate(mesh.xz)}
+    partner = np.array([known.get((round(x / period * 1e6) - 1000000, round(z / period * 1e6)), -1) for x, z in mesh.xz])
+    free, right = np.flatnonzero(partner < 0), np.flatnonzero(partner >= 0)
     place = np.full(count, -1)
     place[free] = np.arange(len(free))
+    assert np.all(place[partner[right]] >= 0)
     tie = sp.csr_matrix((np.concatenate([np.ones(len(free)), np.full(len(right), np.exp(1j * kx[orders] * period))]),
-                         (np.concatenate([free, right]), np.concatenate([place[free], place[left]]))), shape=(count, len(free)))
+                         (np.concatenate([free, right]), np.concatenate([place[free], place[partner[right]]]))), shape=(count, len(free)))
     tie_h = tie.conj().T
 
     def leaving(e, downward):
@@ -168,7 +195,7 @@ def solve(elements, period, height, wavelength, degree, n_surround, e_backing, i
         # F_E = sign a i kz E + c i kx H, F_H = sign b i kz H - c i kx E
         return kz, e / q, 1 / q, sign * 1j * kz * e / q, sign * 1j * kz / q, 1j * kx * kappa / q
 
-    top, bottom = projections(mesh, 0.0, kx, period) @ tie, projections(mesh, height, kx, period) @ tie
+    top, bottom = projections(mesh, 0.0, kx, period, breaks) @ tie, projections(mesh, height, kx, period, breaks) @ tie
     kz_top, a_top, b_top, te, th, tc = leaving(n_surround ** 2 + 0j, False)
     kz_bottom, a_bottom, b_bottom, be, bh, bc = leaving(e_backing, True)
 
@@ -205,7 +232,7 @@ def solve(elements, period, height, wavelength, degree, n_surround, e_backing, i
 
 
 # --- the table --------------------------------------------------------------------------------------------------------------
-COLUMNS = ("spacing,height,width,lumen_height,lumen_width,rows,pitch,cortex,gap,surround_n,rod_n,rod_k,backing_n,backing_k,"
+COLUMNS = ("spacing,height,width,lumen_height,lumen_width,rows,pitch,cortex,gap,surround_n,body_n,body_k,backing_n,backing_k,"
            "wavelength,incidence,axis,polarization").split(",")
 MATRIX_N = 1.55
 FLAT = (170, 80, 140, 40, 90)
@@ -220,16 +247,23 @@ CASES = [
     *[(170, 80, 140, 72, 132, 1, 0, 100, 30, 1, 1.8, .02, 1.55, 0, 480, 30, 0, pol) for pol in "ps"],
     *[(150, 160, 100, 110, 50, 2, 180, 50, 30, 1, 1.75, .1, 1.55, 0, 350, 20, 0, pol) for pol in "ps"],
     *[(480, 120, 300, 70, 200, 1, 0, 60, 60, 1, 1.75, 0, 1.55, 0, 430, 25, 0, pol) for pol in "ps"],
+    # round rods: one row at azimuths, five staggered rows, orders that leave beside the plane of incidence
+    *[(170, 120, 120, 70, 70, 1, 0, 150, 40, 1, 1.75, .1, 1.65, .05, 430, i, a, pol) for i, a in ((30, 0), (45, 35), (60, 90)) for pol in "ps"],
+    *[(170, 120, 120, 70, 70, 5, 150, 150, 0, 1, 1.75, .1, 1.55, 0, w, i, a, pol) for w, i, a in ((400, 30, 0), (560, 50, 60)) for pol in "ps"],
+    *[(450, 240, 240, 120, 120, 1, 0, 60, 60, 1, 1.8, 0, 1.55, 0, 400, 35, 50, pol) for pol in "ps"],
+    # rows that reach into each other
+    *[(170, 120, 120, 70, 70, 3, 90, 100, 40, 1, 1.75, .1, 1.55, 0, w, i, a, pol) for w, i, a in ((410, 0, 0), (520, 40, 0), (450, 50, 40)) for pol in "ps"],
+    *[(170, 80, 140, 40, 90, 4, 68, 100, 40, 1, 1.75, .1, 1.55, 0, w, 30, 0, pol) for w in (400, 550) for pol in "ps"],
 ]
 
 
 def answer(case, degree):
     """Specular and diffracted reflectance, total transmittance."""
     c = dict(zip(COLUMNS, case))
-    e_matrix, e_rod = MATRIX_N ** 2, (c["rod_n"] + 1j * c["rod_k"]) ** 2
+    e_matrix, e_body = MATRIX_N ** 2, (c["body_n"] + 1j * c["body_k"]) ** 2
     backing = (c["backing_n"] + 1j * c["backing_k"]) ** 2
-    margin = (c["pitch"] - c["height"]) / 2 if c["rows"] > 1 else 25
-    slab = c["height"] + 2 * margin
+    outer, core = (c["width"] / 2, c["height"] / 2), (c["lumen_width"] / 2, c["lumen_height"] / 2)
+    margin = (c["pitch"] - c["height"]) / 2 if c["rows"] > 1 and c["pitch"] > c["height"] + 10 else 25
     most = 0.6 * c["spacing"]
     # Enough of the surround above that few orders are left at the boundary.
     above = 0.4 * c["spacing"]
@@ -240,10 +274,13 @@ def answer(case, degree):
     if lead > 0:
         elements += film(c["spacing"], z, lead, e_matrix, most)
         z += lead
+    z += margin + outer[1]
+    between = ("flat", c["pitch"] / 2) if c["pitch"] > c["height"] + 10 else ("nested", c["pitch"])
     for j in range(c["rows"]):
-        elements += row(c["spacing"], z, slab, (c["width"] / 2, c["height"] / 2), (c["lumen_width"] / 2, c["lumen_height"] / 2),
-                        e_matrix, e_rod, 1.0, j % 2 == 1)
-        z += slab
+        elements += row(c["spacing"], z + j * c["pitch"], outer, core, e_matrix, e_body, 1.0,
+                        between if j > 0 else ("flat", outer[1] + margin), between if j + 1 < c["rows"] else ("flat", outer[1] + margin), j % 2 == 1)
+    # What lies below is laid out from the last row, which may be moved: its edges are the same up to a period.
+    z += (c["rows"] - 1) * c["pitch"] + outer[1] + margin
     tail = c["gap"] - margin
     if tail > 0:
         elements += film(c["spacing"], z, tail, e_matrix, most)
