@@ -68,10 +68,13 @@ internal sealed class GratingWaves
     /// <summary>k0^2 e - ky^2 in a medium, in 1/nm^2.</summary>
     public Complex AcrossSquared(Complex permittivity) => K0 * K0 * permittivity - Ky * Ky;
 
-    /// <summary>Wave vector in depth of order n (from -M to M) in a medium, in 1/nm; Im >= 0, never zero.</summary>
+    /// <summary>Wave vector of an order across the rods, in 1/nm; also beyond the orders kept.</summary>
+    public double KxOf(int order) => Kx0 + 2 * Math.PI * order / PeriodNm;
+
+    /// <summary>Wave vector in depth of an order in a medium, in 1/nm; Im >= 0, never zero; also beyond the orders kept.</summary>
     public Complex KzIn(Complex permittivity, int order)
     {
-        double kx = _kx[order + MostOrder];
+        double kx = KxOf(order);
         Complex root = Complex.Sqrt(AcrossSquared(permittivity) - kx * kx);
         if (root.Imaginary < 0 || (root.Imaginary == 0 && root.Real < 0))
             root = -root;
@@ -106,7 +109,7 @@ internal sealed class GratingWaves
         permittivities.CopyTo(_permittivities);
         for (int n = -mostOrder; n <= mostOrder; n++)
         {
-            _kx[n + mostOrder] = kx0 + 2 * Math.PI * n / periodNm;
+            _kx[n + mostOrder] = KxOf(n);
             _kz[n + mostOrder] = KzIn(Matrix, n);
         }
     }
