@@ -1,0 +1,212 @@
+using System.Numerics;
+
+namespace BarbuleOptics.Grating.Multipoles;
+
+/// <summary>The equations of a row for fields of one mirror symmetry about the plane of the rods' centers, which round rods never mix
+/// with the other: Ey even and Hy odd in z, or Ey odd and Hy even.</summary>
+/// <remarks>
+/// Unknowns are the outgoing amplitudes b of one rod, b = Answer (a + coupling b), a from the plane waves. The amplitude w of an order that
+/// grazes the row is an unknown of its own, P kz/2 w = sum of cos(m a) b_m, and falls back on the rods as w eps_m cos(m a):
+/// so nothing large is formed, and the outgoing amplitude of that order is w, where 2/(P kz) times a sum would lose all digits.
+/// </remarks>
+internal sealed class MirrorHalf
+{
+    private readonly int _top;
+    private readonly int _orders;
+    private readonly int _grazing;
+    private readonly Part[] _parts;
+    private readonly ComplexMatrix _matrix;
+    private readonly ComplexMatrix _solution;
+    private readonly LinearSolver _solver;
+    private readonly Complex[] _incoming;
+    private readonly Complex[] _outgoing;
+
+    /// <summary>Room for one half.</summary>
+    /// <param name="field">Which fields are followed.</param>
+    /// <param name="electricEven">Whether Ey is even and Hy odd in z, or the other way round; with one field, whether that is even.</param>
+    /// <param name="top">Largest multipole.</param>
+    /// <param name="orders">Number of plane-wave orders.</param>
+    /// <param name="grazing">Number of grazing orders.</param>
+    public MirrorHalf(RodField field, bool electricEven, int top, int orders, int grazing)
+    {
+        (_top, _orders, _grazing) = (top, orders, grazing);
+        int size = 0;
+        _parts = field switch
+        {
+            RodField.Electric => [MakePart(0, electricEven, 0, ref size)],
+            RodField.Magnetic => [MakePart(1, electricEven, 0, ref size)],
+            _ => [MakePart(0, electricEven, 0, ref size), MakePart(1, !electricEven, orders, ref size)],
+        };
+        FlipsCoupling = field == RodField.Both && !electricEven;
+        BorderStart = size;
+        if (HasEven)
+            size += grazing;
+        _matrix = new ComplexMatrix(size, size);
+        _solution = new ComplexMatrix(size, orders * _parts.Length);
+        _solver = new LinearSolver(size);
+        Response = new ComplexMatrix(orders * _parts.Length, orders * _parts.Length);
+        _incoming = new Complex[size];
+        _outgoing = new Complex[size];
+    }
+
+    /// <summary>One field of the half.</summary>
+    /// <param name="Field">0 for Ey, 1 for Hy.</param>
+    /// <param name="IsEven">Whether it is even in z.</param>
+    /// <param name="Start">Number of the unknown that multipole 0 has, or would have.</param>
+    /// <param name="Channel">Its first channel.</param>
+    public readonly record struct Part(int Field, bool IsEven, int Start, int Channel)
+    {
+        /// <summary>The least multipole: a sine of order 0 does not exist.</summary>
+        public int Least => IsEven ? 0 : 1;
+
+        /// <summary>The sign above the row of what has the sign + below it.</summary>
+        public int SignAbove => IsEven ? 1 : -1;
+    }
+
+    /// <summary>The fields.</summary>
+    public ReadOnlySpan<Part> Parts => _parts;
+
+    /// <summary>Outgoing amplitudes below the row, channel by channel, from incoming ones, all at the plane of the centers.</summary>
+    public ComplexMatrix Response { get; }
+
+    private bool FlipsCoupling { get; }
+
+    private int BorderStart { get; }
+
+    private bool HasEven => Array.Exists(_parts, part => part.IsEven);
+
+    /// <summary>Solves for all incoming waves at once.</summary>
+    /// <param name="rod">The rod's answer, ready.</param>
+    /// <param name="coupling">The coupling, ready.</param>
+    /// <param name="waves">Plane waves as multipoles: the orders, then the grazing ones.</param>
+    /// <param name="gains">2/(P kz) by wave.</param>
+    /// <param name="grazingOrders">For each grazing wave its place among the orders; negative where it is not kept.</param>
+    /// <returns>False where the equations have no solution.</returns>
+    public bool TrySolve(
+        RodScatterer rod, RowCoupling coupling, MultipoleWaves waves, ReadOnlySpan<Complex> gains, ReadOnlySpan<int> grazingOrders)
+    {
+        _matrix.SetIdentity();
+        _solution.Clear();
+        foreach (Part to in _parts)
+        {
+            foreach (Part from in _parts)
+                FillBlock(to, from, rod, coupling, waves);
+        }
+        foreach (Part part in _parts)
+        {
+            if (part.IsEven)
+                FillBorder(part, waves, gains);
+        }
+        if (!_solver.TryFactor(_matrix))
+            return false;
+        _solver.Solve(_solution);
+        Response.Clear();
+        foreach (Part part in _parts)
+        {
+            for (int n = 0; n < _orders; n++)
+                FillResponse(part, n, part.IsEven ? grazingOrders.IndexOf(n) : -1, waves, gains[n]);
+        }
+        return AreFinite(Response);
+    }
+
+    // The element of the rod's answer between two fields; turning the sign of one field exchanges the two halves.
+    private Complex Answer(RodScatterer rod, int l, in Part to, in Part from)
+    {
+        FieldPair pair = rod.Answer[l];
+        if (to.Field == from.Field)
+            return to.Field == 0 ? pair.EE : pair.HH;
+        Complex cross = to.Field == 0 ? pair.EH : pair.HE;
+        return FlipsCoupling ? -cross : cross;
+    }
+
+    private void FillBlock(in Part to, in Part from, RodScatterer rod, RowCoupling coupling, MultipoleWaves waves)
+    {
+        ComplexMatrix lattice = from.IsEven ? coupling.Even : coupling.Odd;
+        int least = Math.Max(to.Least, from.Least);
+        for (int l = least; l <= _top; l++)
+        {
+            Complex twice = (l == 0 ? 1 : 2) * Answer(rod, l, to, from), once = 0.5 * twice;
+            Span<Complex> row = _matrix.Row(to.Start + l);
+            ReadOnlySpan<Complex> received = lattice.Row(l);
+            for (int m = from.Least; m <= _top; m++)
+                row[from.Start + m] -= once * received[m];
+            Span<Complex> right = _solution.Row(to.Start + l);
+            for (int n = 0; n < _orders; n++)
+                right[from.Channel + n] = twice * Table(waves, from, n)[l];
+            for (int g = 0; from.IsEven && g < _grazing; g++)
+                row[BorderStart + g] = -twice * waves.Even(_orders + g)[l];
+        }
+    }
+
+    private void FillBorder(in Part part, MultipoleWaves waves, ReadOnlySpan<Complex> gains)
+    {
+        for (int g = 0; g < _grazing; g++)
+        {
+            Span<Complex> row = _matrix.Row(BorderStart + g);
+            for (int m = 0; m <= _top; m++)
+                row[part.Start + m] = -waves.Even(_orders + g)[m];
+            row[BorderStart + g] = 1 / gains[_orders + g];
+        }
+    }
+
+    private void FillResponse(in Part part, int order, int grazing, MultipoleWaves waves, Complex gain)
+    {
+        Span<Complex> response = Response.Row(part.Channel + order);
+        if (grazing >= 0)
+        {
+            _solution.Row(BorderStart + grazing).CopyTo(response);
+            return;
+        }
+        ReadOnlySpan<Complex> table = Table(waves, part, order);
+        for (int m = part.Least; m <= _top; m++)
+            ComplexMatrix.SubtractScaled(response, -gain * table[m], _solution.Row(part.Start + m));
+    }
+
+    /// <summary>Incoming amplitudes on a rod, multipole by multipole of each part, made by plane waves.</summary>
+    /// <param name="coefficients">Amplitudes of the waves of this symmetry, by channel.</param>
+    /// <param name="coupling">The coupling of the last solution.</param>
+    /// <param name="waves">The waves of the last solution.</param>
+    public ReadOnlySpan<Complex> Incoming(ReadOnlySpan<Complex> coefficients, RowCoupling coupling, MultipoleWaves waves)
+    {
+        _solution.Apply(coefficients, _outgoing);
+        foreach (Part part in _parts)
+        {
+            ComplexMatrix lattice = part.IsEven ? coupling.Even : coupling.Odd;
+            for (int l = part.Least; l <= _top; l++)
+            {
+                Complex sum = Complex.Zero;
+                for (int m = part.Least; m <= _top; m++)
+                    sum += lattice[l, m] * _outgoing[part.Start + m];
+                sum *= 0.5;
+                for (int n = 0; n < _orders; n++)
+                    sum += Table(waves, part, n)[l] * coefficients[part.Channel + n];
+                for (int g = 0; part.IsEven && g < _grazing; g++)
+                    sum += waves.Even(_orders + g)[l] * _outgoing[BorderStart + g];
+                _incoming[part.Start + l] = (l == 0 ? 1 : 2) * sum;
+            }
+        }
+        return _incoming;
+    }
+
+    /// <summary>Whether the sign between the fields is turned against <see cref="RodScatterer"/>.</summary>
+    public int CouplingSign => FlipsCoupling ? -1 : 1;
+
+    private Part MakePart(int field, bool even, int channel, ref int size)
+    {
+        var part = new Part(field, even, even ? size : size - 1, channel);
+        size += even ? _top + 1 : _top;
+        return part;
+    }
+
+    private static ReadOnlySpan<Complex> Table(MultipoleWaves waves, in Part part, int wave) => part.IsEven ? waves.Even(wave) : waves.Odd(wave);
+
+    private static bool AreFinite(ComplexMatrix matrix)
+    {
+        foreach (Complex element in matrix.Elements)
+        {
+            if (!Complex.IsFinite(element))
+                return false;
+        }
+        return true;
+    }
+}
