@@ -1,3 +1,4 @@
+using BarbuleOptics.Grating.Joining;
 using BarbuleOptics.Layering;
 using BarbuleOptics.Multilayer;
 using BarbuleOptics.Quantities;
@@ -5,6 +6,11 @@ using BarbuleOptics.Quantities;
 namespace BarbuleOptics.Grating;
 
 /// <summary>Solves a section as it is: infinite, flat and perfectly periodic, with every order of diffraction.</summary>
+/// <remarks>
+/// Rows of round rods by multipoles, other bodies by Fourier modal slabs, joined with flat interfaces and films by a recursion in which nothing
+/// grows. Resolution rises until answers agree; the estimate returned says to what. R counts both outgoing polarizations. The powers
+/// R, diffracted R, T and A are found one by one from the fields, and that they add up to 1 is tested.
+/// </remarks>
 public sealed class GratingSolver : ISpectralSolver<SectionPermittivities, GratingWorkspace>
 {
     /// <summary>A solver that refines until its estimate of the largest error of R, T, A and diffracted R is <paramref name="accuracy"/> or less.</summary>
@@ -22,10 +28,93 @@ public sealed class GratingSolver : ISpectralSolver<SectionPermittivities, Grati
     }
 
     /// <inheritdoc/>
+    /// <exception cref="ArgumentException">A span that is to be filled has the wrong length, no polarization is asked for, or the workspace was made
+    /// for another section.</exception>
+    /// <exception cref="ArgumentOutOfRangeException">The block lies outside the structure's wavelengths, or the angle outside 0 to below
+    /// 90 degrees.</exception>
+    /// <exception cref="ArithmeticException">The equations have no finite solution at some wavelength.</exception>
     public double Solve(SectionPermittivities structure, in SolverRequest request, GratingWorkspace workspace, in SolverResponse response)
     {
-        ArgumentNullException.ThrowIfNull(structure);
-        ArgumentNullException.ThrowIfNull(workspace);
-        throw new NotSupportedException($"No section is solved at {Accuracy} yet.");
+        GratingRequestCheck.Check(structure, request, workspace, response);
+        var layout = new OutcomeLayout(
+            structure.MaterialCount, workspace.Solver.BackingMaterial, Most(response.ReflectedOrders, request.Count), Most(response.TransmittedOrders, request.Count));
+        workspace.Prepare(structure, request, layout);
+        if ((request.Polarization & ~workspace.Known) != 0)
+            SolveBlock(structure, request, workspace, layout);
+        return Fill(request, workspace, layout, response);
+    }
+
+    private static int Most(ReadOnlySpan<double> orders, int count) => orders.IsEmpty || count == 0 ? 0 : (orders.Length / count - 1) / 2;
+
+    private void SolveBlock(SectionPermittivities structure, in SolverRequest request, GratingWorkspace workspace, in OutcomeLayout layout)
+    {
+        Polarizations wanted = request.Polarization & ~workspace.Known;
+        (double across, double along) = DiffractionOrders.Incident(structure.Section, request.Incidence);
+        workspace.Solver.StartBlock();
+        for (int at = 0; at < request.Count; at++)
+        {
+            int wavelength = request.First + at;
+            Span<double> s = workspace.Outcome(at, Polarizations.S), p = workspace.Outcome(at, Polarizations.P);
+            if (along != 0)
+            {
+                workspace.Solver.Solve(structure, wavelength, request.Incidence, RodField.Both, Accuracy, layout, s, p);
+            }
+            else if (across != 0 || structure.Section.IsAcross)
+            {
+                if ((wanted & Polarizations.S) != 0)
+                    workspace.Solver.Solve(structure, wavelength, request.Incidence, RodField.Electric, Accuracy, layout, s, []);
+                if ((wanted & Polarizations.P) != 0)
+                    workspace.Solver.Solve(structure, wavelength, request.Incidence, RodField.Magnetic, Accuracy, layout, p, []);
+            }
+            else
+            {
+                workspace.Solver.Solve(structure, wavelength, request.Incidence, RodField.Electric, Accuracy, layout, s, []);
+                workspace.Solver.Solve(structure, wavelength, request.Incidence, RodField.Magnetic, Accuracy, layout, p, []);
+                Turn(structure.Section, s, p);
+            }
+        }
+        workspace.Mark(along == 0 && (across != 0 || structure.Section.IsAcross) ? wanted : Polarizations.Unpolarized);
+    }
+
+    // At normal incidence s has its electric field at the axis angle from the rods, and the powers of both parts add.
+    private static void Turn(Section section, Span<double> s, Span<double> p)
+    {
+        double cosine = section.IsAlong ? 0 : Math.Cos(section.Axis.Radians);
+        double alongRods = cosine * cosine, acrossRods = section.IsAlong ? 1 : Math.Sin(section.Axis.Radians) * Math.Sin(section.Axis.Radians);
+        for (int i = 0; i < s.Length; i++)
+            (s[i], p[i]) = (alongRods * s[i] + acrossRods * p[i], acrossRods * s[i] + alongRods * p[i]);
+    }
+
+    private static double Fill(in SolverRequest request, GratingWorkspace workspace, in OutcomeLayout layout, in SolverResponse response)
+    {
+        double largest = 0;
+        for (int at = 0; at < request.Count; at++)
+        {
+            ReadOnlySpan<double> outcome = workspace.Mean(at, request.Polarization);
+            largest = Math.Max(largest, outcome[OutcomeLayout.Error]);
+            Set(response.Reflectance, at, outcome[OutcomeLayout.Reflected]);
+            Set(response.DiffractedReflectance, at, outcome[OutcomeLayout.Diffracted]);
+            Set(response.ErrorEstimates, at, outcome[OutcomeLayout.Error]);
+            if ((request.Outputs & SolverOutputs.Transmittance) != 0)
+                Set(response.Transmittance, at, outcome[OutcomeLayout.Transmitted]);
+            if ((request.Outputs & SolverOutputs.Absorptance) != 0)
+                Set(response.Absorptance, at, outcome[OutcomeLayout.Lost]);
+            Spread(response.MaterialAbsorptance, at, request.Count, outcome.Slice(OutcomeLayout.FirstMaterial, layout.Materials));
+            Spread(response.ReflectedOrders, at, request.Count, outcome.Slice(layout.ReflectedZeroth - layout.MostReflected, 2 * layout.MostReflected + 1));
+            Spread(response.TransmittedOrders, at, request.Count, outcome.Slice(layout.TransmittedZeroth - layout.MostTransmitted, 2 * layout.MostTransmitted + 1));
+        }
+        return largest;
+    }
+
+    private static void Set(Span<double> values, int at, double value)
+    {
+        if (!values.IsEmpty)
+            values[at] = value;
+    }
+
+    private static void Spread(Span<double> values, int at, int count, ReadOnlySpan<double> ofOne)
+    {
+        for (int i = 0; i < ofOne.Length && !values.IsEmpty; i++)
+            values[i * count + at] = ofOne[i];
     }
 }

@@ -1,0 +1,119 @@
+using System.Numerics;
+
+namespace BarbuleOptics.Grating.Joining;
+
+/// <summary>Solves at rising resolutions until the answers agree, and tells how far they may still be off.</summary>
+/// <remarks>With d the largest change of R, diffracted R, T and A in the last step and rho the ratio by which changes fall from step
+/// to step there, what all further steps would change is d rho/(1 - rho); rho is measured at neighboring wavelengths by going one
+/// step further than needed.</remarks>
+internal sealed class RefinedPoint(StackPlan plan)
+{
+    /// <summary>Factor on the estimate that covers changes which happen to be small.</summary>
+    private const double Safety = 2.0;
+
+    /// <summary>No estimate is smaller: rounding.</summary>
+    private const double Rounding = 1e-12;
+
+    private readonly PointSolver _point = new(plan);
+    private readonly ResolutionLadder _ladder = new(plan);
+    private readonly RefinementMemory[] _memories = [.. Enumerable.Range(0, 3).Select(_ => new RefinementMemory(11, new ResolutionLadder(plan).IsSlow ? 0.6 : 0.35))];
+    private double[][] _current = [[], []];
+    private double[][] _previous = [[], []];
+
+    /// <summary>The plan.</summary>
+    public StackPlan Plan => plan;
+
+    /// <summary>Forgets what neighboring wavelengths taught, so that answers do not depend on what was solved before.</summary>
+    public void StartBlock()
+    {
+        foreach (RefinementMemory memory in _memories)
+            memory.Clear();
+    }
+
+    /// <summary>Solves for light of one polarization, or of both where the rods couple them.</summary>
+    /// <param name="light">The incident light.</param>
+    /// <param name="media">Permittivities of all media.</param>
+    /// <param name="field">Which fields are followed.</param>
+    /// <param name="periods">The period of all rows, the one orders are counted by, the largest order that travels.</param>
+    /// <param name="accuracy">Error to stop at.</param>
+    /// <param name="layout">Where the answers stand.</param>
+    /// <param name="first">Receives the answer: for s with both fields.</param>
+    /// <param name="second">Receives that for p with both fields.</param>
+    /// <exception cref="ArithmeticException">No resolution gave a finite solution.</exception>
+    public void Solve(
+        in PointLight light, ReadOnlySpan<Complex> media, RodField field, in PointPeriods periods, double accuracy, in OutcomeLayout layout,
+        Span<double> first, Span<double> second)
+    {
+        Reserve(layout.Length);
+        RefinementMemory memory = _memories[(int)field];
+        bool stands = false;
+        double lastChange = double.NaN, error = double.NaN;
+        int step = Math.Max(0, memory.Accepted - 1), accepted = -1;
+        for (; step < _ladder.Count; step++)
+        {
+            (_current, _previous) = (_previous, _current);
+            Resolution resolution = _ladder.At(step, periods.MostOrder, periods.PeriodNm);
+            if (!_point.TrySolve(light, media, resolution, field, periods.PeriodNm, periods.OrderPeriodNm, layout, _current[0], _current[1]))
+            {
+                (_current, _previous) = (_previous, _current);
+                lastChange = double.NaN;
+                continue;
+            }
+            if (!stands)
+            {
+                stands = true;
+                if (plan.Kinds.Length > 0)
+                    continue;
+                error = Rounding;
+                break;
+            }
+            double change = Change(field == RodField.Both);
+            if (!double.IsNaN(lastChange) && lastChange > Rounding)
+                memory.Note(step - 1, change / lastChange);
+            error = Math.Max(Rounding, Safety * change * memory.Ratio(step) / (1 - memory.Ratio(step)));
+            if (accepted >= 0)
+                break;
+            if (error <= accuracy)
+            {
+                accepted = step;
+                // One step further, once, measures how fast changes fall here.
+                if (memory.Knows(step) || step + 1 == _ladder.Count)
+                    break;
+            }
+            lastChange = change;
+        }
+        if (!stands)
+            throw new ArithmeticException(FormattableString.Invariant($"The section has no finite solution at {light.WavelengthNm} nm at any resolution."));
+        memory.Accepted = accepted >= 0 ? accepted : _ladder.Count - 1;
+        Deliver(double.IsNaN(error) ? 1 : Math.Min(1, error), field, first, second);
+    }
+
+    private void Deliver(double error, RodField field, Span<double> first, Span<double> second)
+    {
+        _current[0][OutcomeLayout.Error] = error;
+        _current[0].CopyTo(first);
+        if (field != RodField.Both)
+            return;
+        _current[1][OutcomeLayout.Error] = error;
+        _current[1].CopyTo(second);
+    }
+
+    private double Change(bool both)
+    {
+        double change = 0;
+        for (int which = 0; which < (both ? 2 : 1); which++)
+        {
+            for (int i = 0; i < OutcomeLayout.Judged; i++)
+                change = Math.Max(change, Math.Abs(_current[which][i] - _previous[which][i]));
+        }
+        return change;
+    }
+
+    private void Reserve(int length)
+    {
+        if (_current[0].Length == length)
+            return;
+        _current = [new double[length], new double[length]];
+        _previous = [new double[length], new double[length]];
+    }
+}

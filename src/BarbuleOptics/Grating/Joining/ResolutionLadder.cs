@@ -1,0 +1,54 @@
+namespace BarbuleOptics.Grating.Joining;
+
+/// <summary>The resolutions that refinement climbs through, for one plan.</summary>
+/// <remarks>
+/// Rows of rods: multipoles of degree L pass between rows whose centers lie D apart in depth mainly by orders n near L P/(pi D), where
+/// k^(2 L) exp(-k D) with k = 2 pi n/P is largest; orders are kept to a little beyond.
+/// Slabs: what the orders left out would carry, exp(-2 k g) over a gap g and back, stays below what the harmonics leave, about 1/N^2.
+/// </remarks>
+internal sealed class ResolutionLadder(StackPlan plan)
+{
+    private static readonly int[] Multipoles = [3, 4, 6, 8, 10, 12, 15, 18, 22, 26, 30];
+    private static readonly int[] Harmonics = [2, 3, 5, 7, 10, 14, 20, 28, 40, 56, 80];
+    private static readonly int[] Depths = [0, 0, 0, 1, 1, 1, 2, 2, 2, 3, 3];
+
+    /// <summary>Number of steps.</summary>
+    public int Count { get; } = plan.Groups.Any(group => group.HasSlabs) ? 8 : Multipoles.Length;
+
+    /// <summary>Whether errors fall by a factor a step only like a power of the harmonics.</summary>
+    public bool IsSlow { get; } = plan.Groups.Any(group => group.HasSlabs);
+
+    /// <summary>One step.</summary>
+    /// <param name="step">From 0.</param>
+    /// <param name="leastOrders">Largest order that travels in any medium, counted by <paramref name="periodNm"/>.</param>
+    /// <param name="periodNm">The period of all rows; null when each group keeps its own.</param>
+    public Resolution At(int step, int leastOrders, double? periodNm)
+    {
+        int orders = plan.Kinds.Length == 0 ? 0 : Math.Max(1, leastOrders);
+        int harmonics = Harmonics[step];
+        foreach (PlanGroup group in plan.Groups)
+        {
+            if (group.PeriodNm <= 0)
+                continue;
+            int cells = periodNm is double period ? (int)Math.Round(period / group.PeriodNm) : 1;
+            orders = Math.Max(orders, cells * OrdersOf(group, step) + cells / 2);
+            harmonics = Math.Max(harmonics, leastOrders / cells + 1);
+        }
+        return new Resolution(orders, Multipoles[step], harmonics, Depths[step]);
+    }
+
+    private static int OrdersOf(in PlanGroup group, int step)
+    {
+        int orders = 1;
+        if (group.HasRods)
+            orders = Math.Max(orders, (int)Math.Ceiling(1.3 * Multipoles[step] * group.PeriodNm / (Math.PI * group.NearestNm)));
+        if (group.HasCuts)
+            return Math.Max(orders, Harmonics[step]);
+        if (group.HasSlabs)
+        {
+            double needed = group.PeriodNm * Math.Log(30.0 * Harmonics[step] * Harmonics[step]) / (4 * Math.PI * Math.Max(group.ClearNm, 1e-3 * group.PeriodNm));
+            orders = Math.Max(orders, (int)Math.Min(Harmonics[step], Math.Ceiling(needed)));
+        }
+        return orders;
+    }
+}

@@ -1,0 +1,49 @@
+namespace BarbuleOptics.Grating.Joining;
+
+/// <summary>Finds rows that must be solved together because they share depths.</summary>
+/// <remarks>Rows of round rods may share depths with each other: waves between them are exact off the lines of centers, and only rows whose
+/// centers lie too close in depth need too many orders.</remarks>
+internal static class RowClusters
+{
+    /// <summary>Overlap in depth that is taken for touching, in nm.</summary>
+    private const double TouchingNm = 1e-6;
+
+    /// <summary>Least distance in depth of the centers of two rows of rods that are solved one by one, as a share of the sum of their radii.</summary>
+    public const double LeastShare = 0.6;
+
+    /// <summary>The clusters from the top down; most hold one row.</summary>
+    public static List<List<PlannedRow>> Of(IEnumerable<PlannedRow> rows)
+    {
+        var clusters = rows.OrderBy(row => row.TopNm).ThenBy(row => row.CenterNm).Select(row => new List<PlannedRow> { row }).ToList();
+        // A cluster grows over what it meets, which may make it meet more.
+        for (bool grown = true; grown;)
+        {
+            grown = false;
+            for (int i = 0; i + 1 < clusters.Count; i++)
+            {
+                double bottomNm = clusters[i].Max(row => row.BottomNm);
+                for (int j = i + 1; j < clusters.Count && clusters[j][0].TopNm < bottomNm - TouchingNm;)
+                {
+                    if (!MustJoin(clusters[i], clusters[j]))
+                    {
+                        j++;
+                        continue;
+                    }
+                    clusters[i].AddRange(clusters[j]);
+                    clusters.RemoveAt(j);
+                    bottomNm = clusters[i].Max(row => row.BottomNm);
+                    grown = true;
+                }
+            }
+        }
+        return [.. clusters.OrderBy(cluster => cluster.Average(row => row.CenterNm))];
+    }
+
+    private static bool MustJoin(List<PlannedRow> first, List<PlannedRow> second)
+    {
+        if (first is not [{ Rod: not null } one] || second is not [{ Rod: not null } other])
+            return true;
+        double reachNm = one.Rod.Outer.HalfHeightNm + other.Rod.Outer.HalfHeightNm;
+        return Math.Abs(other.CenterNm - one.CenterNm) < LeastShare * reachNm;
+    }
+}

@@ -1,0 +1,103 @@
+using System.Numerics;
+using BarbuleOptics.Layering;
+using BarbuleOptics.Quantities;
+
+namespace BarbuleOptics.Grating.Joining;
+
+/// <summary>Solves a section at one wavelength and direction: chooses how spacings are joined and how the backing ends.</summary>
+internal sealed class SectionSolver
+{
+    private readonly Section _section;
+    private readonly SpacingPlan _spacing;
+    private readonly bool _slabsOnly;
+    private readonly Complex[] _media;
+    private readonly RefinedPoint?[] _points = new RefinedPoint?[4];
+
+    public SectionSolver(Section section, bool slabsOnly = false)
+    {
+        _section = section;
+        _slabsOnly = slabsOnly;
+        _spacing = SpacingPlan.Of(section);
+        _media = new Complex[section.Materials.Count + 3];
+        BackingMaterial = section.Materials.AsSpan().IndexOf(SectionMaterial.Plain(section.Backing));
+    }
+
+    /// <summary>Number of the material that the backing is made of; -1 when it is none of the section's.</summary>
+    public int BackingMaterial { get; }
+
+    /// <summary>Forgets what neighboring wavelengths taught.</summary>
+    public void StartBlock()
+    {
+        foreach (RefinedPoint? point in _points)
+            point?.StartBlock();
+    }
+
+    /// <summary>Solves for light of one polarization, or of both where the rods couple them.</summary>
+    public void Solve(
+        SectionPermittivities structure, int wavelength, Angle incidence, RodField field, double accuracy, in OutcomeLayout layout,
+        Span<double> first, Span<double> second)
+    {
+        PointLight light = LightOf(structure, wavelength, incidence);
+        SetMedia(structure, wavelength, light.Index);
+        bool coherent = _section.Back is { Coherent: false } back
+            && !AveragedBack.HasFringes(light, structure.Backing[wavelength], back.Thickness.CentralNm);
+        RefinedPoint point = PointFor(moved: false, coherent);
+        double? periodNm = _section.PeriodNm;
+        double joinError = 0;
+        if (point.Plan.Joints.Length > 0)
+        {
+            joinError = SpacingJoin.Error(point.Plan, light, _media[Section.Matrix]);
+            double most = periodNm is null ? Math.Max(SpacingJoin.MostError, accuracy) : SpacingJoin.ShareOfAccuracy * accuracy;
+            if (joinError <= most)
+                periodNm = null;
+            else if (periodNm is null)
+                (point, periodNm, joinError) = (PointFor(moved: true, coherent), _spacing.PeriodNm, 0);
+            else
+                joinError = 0;
+        }
+        double orderPeriodNm = _spacing.PeriodNm ?? 0;
+        double wavesNm = periodNm ?? Shortest(point.Plan);
+        if (point.Plan.Kinds.Length > 0)
+            light = OrderCount.AwayFromGrazing(light, _media, wavesNm);
+        int orders = point.Plan.Kinds.Length > 0 ? OrderCount.Most(light, _media, wavesNm) : 0;
+        point.Solve(light, _media, field, new PointPeriods(periodNm, orderPeriodNm, orders), accuracy, layout, first, second);
+        first[OutcomeLayout.Error] += joinError;
+        if (field == RodField.Both)
+            second[OutcomeLayout.Error] += joinError;
+    }
+
+    private static double Shortest(StackPlan plan)
+    {
+        double shortestNm = double.PositiveInfinity;
+        foreach (PlanGroup group in plan.Groups)
+            shortestNm = Math.Min(shortestNm, group.PeriodNm > 0 ? group.PeriodNm : double.PositiveInfinity);
+        return shortestNm;
+    }
+
+    private PointLight LightOf(SectionPermittivities structure, int wavelength, Angle incidence)
+    {
+        (double across, double along) = DiffractionOrders.Incident(_section, incidence);
+        // The sine of the complement, which keeps its digits at grazing incidence.
+        double cosine = Math.Sin(double.DegreesToRadians(90 - incidence.Degrees));
+        return new PointLight(structure.WavelengthsNm[wavelength], structure.SurroundIndex[wavelength], across, along, cosine);
+    }
+
+    private void SetMedia(SectionPermittivities structure, int wavelength, double index)
+    {
+        structure.Inside(wavelength).CopyTo(_media);
+        _media[^3] = index * index;
+        _media[^2] = structure.Backing[wavelength];
+        _media[^1] = structure.Behind.IsEmpty ? structure.Backing[wavelength] : structure.Behind[wavelength];
+    }
+
+    private RefinedPoint PointFor(bool moved, bool coherent)
+    {
+        int number = (moved ? 1 : 0) + (coherent ? 2 : 0);
+        if (_points[number] is RefinedPoint known)
+            return known;
+        Section section = moved ? _spacing.Nearest : _section;
+        if (coherent)
+            section = section with { Back = section.Back! with { Coherent = true } };
+        return _points[number] = new RefinedPoint(StackPlan.Of(section, _slabsOnly));
+    }
+}
