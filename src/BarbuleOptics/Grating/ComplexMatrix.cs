@@ -1,4 +1,6 @@
 using System.Numerics;
+using System.Runtime.InteropServices;
+using System.Runtime.Intrinsics;
 
 namespace BarbuleOptics.Grating;
 
@@ -94,14 +96,28 @@ internal sealed class ComplexMatrix
     /// <summary>Subtracts <paramref name="factor"/> times <paramref name="row"/> from <paramref name="target"/>.</summary>
     internal static void SubtractScaled(Span<Complex> target, Complex factor, ReadOnlySpan<Complex> row) => AddScaled(target, -factor, row);
 
+    // Complex numbers lie as (re, im) pairs; two fit one vector: target + re * row + im * (-imaginary, real) of row.
     private static void AddScaled(Span<Complex> target, Complex factor, ReadOnlySpan<Complex> row)
     {
+        Span<double> sums = MemoryMarshal.Cast<Complex, double>(target);
+        ReadOnlySpan<double> values = MemoryMarshal.Cast<Complex, double>(row);
         double re = factor.Real, im = factor.Imaginary;
-        for (int i = 0; i < row.Length; i++)
+        int i = 0;
+        if (Vector256.IsHardwareAccelerated)
         {
-            Complex value = row[i];
-            target[i] = new Complex(
-                target[i].Real + (re * value.Real - im * value.Imaginary), target[i].Imaginary + (re * value.Imaginary + im * value.Real));
+            Vector256<double> real = Vector256.Create(re), imaginary = Vector256.Create(-im, im, -im, im);
+            for (; i + Vector256<double>.Count <= values.Length; i += Vector256<double>.Count)
+            {
+                Vector256<double> value = Vector256.Create(values[i..]);
+                Vector256<double> turned = Vector256.Shuffle(value, Vector256.Create(1L, 0, 3, 2));
+                (Vector256.Create<double>(sums[i..]) + (real * value + imaginary * turned)).CopyTo(sums[i..]);
+            }
+        }
+        for (; i < values.Length; i += 2)
+        {
+            double valueRe = values[i], valueIm = values[i + 1];
+            sums[i] += re * valueRe - im * valueIm;
+            sums[i + 1] += re * valueIm + im * valueRe;
         }
     }
 }

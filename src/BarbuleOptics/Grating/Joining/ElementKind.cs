@@ -1,3 +1,5 @@
+using BarbuleOptics.Grating.Multipoles;
+
 namespace BarbuleOptics.Grating.Joining;
 
 /// <summary>What a row or slab is made of; equal ones share their answers.</summary>
@@ -7,5 +9,6 @@ namespace BarbuleOptics.Grating.Joining;
 internal abstract record ElementKind(double PeriodNm, double HeightNm, bool IsCut)
 {
     /// <summary>Makes the element that solves it.</summary>
-    public abstract IGratingElement Create();
+    /// <param name="sums">Lattice sums, shared by elements of one period that see the same waves.</param>
+    public abstract IGratingElement Create(LatticeSums sums);
 }

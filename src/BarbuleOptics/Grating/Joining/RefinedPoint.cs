@@ -11,12 +11,15 @@ internal sealed class RefinedPoint(StackPlan plan)
     /// <summary>Factor on the estimate that covers changes which happen to be small.</summary>
     private const double Safety = 2.0;
 
+    /// <summary>Wavelengths between those that are solved a step further than needed.</summary>
+    private const int ProbeEvery = 8;
+
     /// <summary>No estimate is smaller: rounding.</summary>
     private const double Rounding = 1e-12;
 
     private readonly PointSolver _point = new(plan);
     private readonly ResolutionLadder _ladder = new(plan);
-    private readonly RefinementMemory[] _memories = [.. Enumerable.Range(0, 3).Select(_ => new RefinementMemory(11, new ResolutionLadder(plan).IsSlow ? 0.6 : 0.35))];
+    private readonly RefinementMemory[] _memories = [.. Enumerable.Range(0, 3).Select(_ => new RefinementMemory(12, new ResolutionLadder(plan).IsSlow ? 0.6 : 0.35))];
     private double[][] _current = [[], []];
     private double[][] _previous = [[], []];
 
@@ -70,20 +73,23 @@ internal sealed class RefinedPoint(StackPlan plan)
             double change = Change(field == RodField.Both);
             if (!double.IsNaN(lastChange) && lastChange > Rounding)
                 memory.Note(step - 1, change / lastChange);
-            error = Math.Max(Rounding, Safety * change * memory.Ratio(step) / (1 - memory.Ratio(step)));
-            if (accepted >= 0)
-                break;
+            double ratio = Math.Min(0.8, memory.Ratio(step));
+            error = Math.Max(Rounding, Safety * change * ratio / (1 - ratio));
             if (error <= accuracy)
             {
-                accepted = step;
-                // One step further, once, measures how fast changes fall here.
-                if (memory.Knows(step) || step + 1 == _ladder.Count)
+                if (accepted < 0)
+                    accepted = step;
+                // One step further, now and then, measures how fast changes fall here.
+                bool probe = !memory.Knows(step) || memory.SinceProbe >= ProbeEvery;
+                if (accepted < step || !probe || step + 1 == _ladder.Count)
                     break;
+                memory.SinceProbe = -1;
             }
             lastChange = change;
         }
         if (!stands)
             throw new ArithmeticException(FormattableString.Invariant($"The section has no finite solution at {light.WavelengthNm} nm at any resolution."));
+        memory.SinceProbe++;
         memory.Accepted = accepted >= 0 ? accepted : _ladder.Count - 1;
         Deliver(double.IsNaN(error) ? 1 : Math.Min(1, error), field, first, second);
     }

@@ -1,38 +1,55 @@
 namespace BarbuleOptics.Grating.Joining;
 
-/// <summary>What refinement learned at neighboring wavelengths: where it stopped, and how fast differences fall.</summary>
+/// <summary>What refinement learned at neighboring wavelengths: where it stopped, and by which ratio changes fall from step to step.</summary>
+/// <remarks>Single ratios scatter, for a change may happen to be small; so their logarithms are averaged, the newer ones counting more, and
+/// the mean deviation from the average is added.</remarks>
 internal sealed class RefinementMemory(int steps, double cautious)
 {
-    private const double LeastRatio = 0.02;
-    private const double MostRatio = 0.9;
+    private const double LeastRatio = 1e-3;
+    private const double MostRatio = 2;
 
-    private readonly double[] _ratios = new double[steps];
+    /// <summary>Weight of the newest ratio.</summary>
+    private const double Newest = 0.3;
+
+    private readonly double[] _means = new double[steps];
+    private readonly double[] _deviations = new double[steps];
+    private readonly int[] _counts = new int[steps];
 
     /// <summary>The step that was accurate enough; -1 before the first.</summary>
     public int Accepted { get; set; } = -1;
 
+    /// <summary>Number of wavelengths since the last one that was solved a step further than needed.</summary>
+    public int SinceProbe { get; set; }
+
     /// <summary>Forgets.</summary>
     public void Clear()
     {
-        Array.Clear(_ratios);
+        Array.Clear(_counts);
         Accepted = -1;
+        SinceProbe = 0;
     }
 
     /// <summary>Whether a ratio was measured from a step to the next.</summary>
-    public bool Knows(int step) => step < steps && _ratios[step] > 0;
+    public bool Knows(int step) => step < steps && _counts[step] > 0;
 
-    /// <summary>Notes the difference a step made, divided into that which the next one made.</summary>
+    /// <summary>Notes the change a step made, divided into that which the next one made.</summary>
     public void Note(int step, double ratio)
     {
-        double clamped = Math.Clamp(ratio, LeastRatio, MostRatio);
-        _ratios[step] = Math.Max(clamped, 0.7 * _ratios[step] + 0.3 * clamped);
+        double log = Math.Log(Math.Clamp(ratio, LeastRatio, MostRatio));
+        if (_counts[step]++ == 0)
+        {
+            (_means[step], _deviations[step]) = (log, Math.Log(2));
+            return;
+        }
+        _deviations[step] += Newest * (Math.Abs(log - _means[step]) - _deviations[step]);
+        _means[step] += Newest * (log - _means[step]);
     }
 
-    /// <summary>Expected difference of the next step, divided by that of this one.</summary>
+    /// <summary>Expected change of the next step, divided by that of this one.</summary>
     public double Ratio(int step)
     {
         if (Knows(step))
-            return _ratios[step];
-        return step > 0 && Knows(step - 1) ? Math.Max(_ratios[step - 1], 0.5 * cautious) : cautious;
+            return Math.Exp(_means[step] + _deviations[step]);
+        return step > 0 && Knows(step - 1) ? Math.Max(Math.Exp(_means[step - 1] + _deviations[step - 1]), 0.3 * cautious) : cautious;
     }
 }

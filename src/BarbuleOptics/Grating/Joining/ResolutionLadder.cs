@@ -8,12 +8,12 @@ namespace BarbuleOptics.Grating.Joining;
 /// </remarks>
 internal sealed class ResolutionLadder(StackPlan plan)
 {
-    private static readonly int[] Multipoles = [3, 4, 6, 8, 10, 12, 15, 18, 22, 26, 30];
-    private static readonly int[] Harmonics = [2, 3, 5, 7, 10, 14, 20, 28, 40, 56, 80];
-    private static readonly int[] Depths = [0, 0, 0, 1, 1, 1, 2, 2, 2, 3, 3];
+    private static readonly int[] Multipoles = [2, 3, 4, 6, 8, 10, 12, 15, 18, 22, 26, 30];
+    private static readonly int[] Harmonics = [1, 2, 3, 5, 7, 10, 14, 20, 28, 40, 56, 80];
+    private static readonly int[] Depths = [0, 0, 0, 0, 1, 1, 1, 2, 2, 2, 3, 3];
 
     /// <summary>Number of steps.</summary>
-    public int Count { get; } = plan.Groups.Any(group => group.HasSlabs) ? 8 : Multipoles.Length;
+    public int Count { get; } = plan.Groups.Any(group => group.HasSlabs) ? 9 : Multipoles.Length;
 
     /// <summary>Whether errors fall by a factor a step only like a power of the harmonics.</summary>
     public bool IsSlow { get; } = plan.Groups.Any(group => group.HasSlabs);

@@ -14,5 +14,6 @@ internal sealed record RodKind(double PeriodNm, double RadiusNm, double CoreRadi
     : ElementKind(PeriodNm, 2 * ReachNm, IsCut: false)
 {
     /// <inheritdoc/>
-    public override IGratingElement Create() => new RodRow(RadiusNm, CoreRadiusNm, Material, CoreMaterial, 0, ReachNm, ReachNm);
+    public override IGratingElement Create(LatticeSums sums)
+        => new RodRow(RadiusNm, CoreRadiusNm, Material, CoreMaterial, 0, ReachNm, ReachNm, sums);
 }

@@ -1,4 +1,5 @@
 using BarbuleOptics.Grating.Modal;
+using BarbuleOptics.Grating.Multipoles;
 using BarbuleOptics.Layering;
 using BarbuleOptics.Quantities;
 
@@ -13,5 +14,5 @@ internal sealed record SlabKind(double PeriodNm, double HeightNm, bool IsCut, Va
     : ElementKind(PeriodNm, HeightNm, IsCut)
 {
     /// <inheritdoc/>
-    public override IGratingElement Create() => new ModalSlab(Bodies, HeightNm, PeriodNm);
+    public override IGratingElement Create(LatticeSums sums) => new ModalSlab(Bodies, HeightNm, PeriodNm);
 }

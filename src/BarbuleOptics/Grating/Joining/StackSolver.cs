@@ -27,7 +27,8 @@ internal sealed class StackSolver
     public StackSolver(StackPlan plan)
     {
         _plan = plan;
-        _kinds = [.. plan.Kinds.Select(kind => new KindSolver(kind))];
+        var sums = new SharedSums();
+        _kinds = [.. plan.Kinds.Select(kind => new KindSolver(kind, sums))];
         _groupOfKind = new int[_kinds.Length];
         foreach (PlanPiece piece in plan.Pieces)
         {
