@@ -1,4 +1,5 @@
 using System.Numerics;
+using System.Runtime.CompilerServices;
 using System.Runtime.InteropServices;
 using System.Runtime.Intrinsics;
 
@@ -96,28 +97,75 @@ internal sealed class ComplexMatrix
     /// <summary>Subtracts <paramref name="factor"/> times <paramref name="row"/> from <paramref name="target"/>.</summary>
     internal static void SubtractScaled(Span<Complex> target, Complex factor, ReadOnlySpan<Complex> row) => AddScaled(target, -factor, row);
 
-    // Complex numbers lie as (re, im) pairs; two fit one vector: target + re * row + im * (-imaginary, real) of row.
-    private static void AddScaled(Span<Complex> target, Complex factor, ReadOnlySpan<Complex> row)
+    /// <summary>Subtracts four rows, each times its factor, from <paramref name="target"/>, whose length they have.</summary>
+    internal static void SubtractScaled(
+        Span<Complex> target, Complex factor0, ReadOnlySpan<Complex> row0, Complex factor1, ReadOnlySpan<Complex> row1,
+        Complex factor2, ReadOnlySpan<Complex> row2, Complex factor3, ReadOnlySpan<Complex> row3)
+    {
+        int i = 0;
+        if (Vector256.IsHardwareAccelerated && Math.Min(Math.Min(row0.Length, row1.Length), Math.Min(row2.Length, row3.Length)) >= target.Length)
+        {
+            (Vector256<double> re0, Vector256<double> im0) = Negated(factor0);
+            (Vector256<double> re1, Vector256<double> im1) = Negated(factor1);
+            (Vector256<double> re2, Vector256<double> im2) = Negated(factor2);
+            (Vector256<double> re3, Vector256<double> im3) = Negated(factor3);
+            for (; i <= target.Length - 2; i += 2)
+            {
+                Vector256<double> sum = At(target, i);
+                sum = AddTimes(re0, im0, At(row0, i), sum);
+                sum = AddTimes(re1, im1, At(row1, i), sum);
+                sum = AddTimes(re2, im2, At(row2, i), sum);
+                sum = AddTimes(re3, im3, At(row3, i), sum);
+                sum.StoreUnsafe(ref Unsafe.As<Complex, double>(ref MemoryMarshal.GetReference(target)), (nuint)(2 * i));
+            }
+        }
+        for (; i < target.Length; i++)
+            target[i] -= factor0 * row0[i] + factor1 * row1[i] + (factor2 * row2[i] + factor3 * row3[i]);
+    }
+
+    /// <summary>Adds a real <paramref name="factor"/> times <paramref name="row"/> to <paramref name="target"/>.</summary>
+    internal static void AddScaled(Span<Complex> target, double factor, ReadOnlySpan<Complex> row)
     {
         Span<double> sums = MemoryMarshal.Cast<Complex, double>(target);
         ReadOnlySpan<double> values = MemoryMarshal.Cast<Complex, double>(row);
-        double re = factor.Real, im = factor.Imaginary;
         int i = 0;
-        if (Vector256.IsHardwareAccelerated)
+        for (; i <= values.Length - Vector<double>.Count; i += Vector<double>.Count)
+            (new Vector<double>(sums[i..]) + factor * new Vector<double>(values[i..])).CopyTo(sums[i..]);
+        for (; i < values.Length; i++)
+            sums[i] += factor * values[i];
+    }
+
+    // Complex numbers lie as (re, im) pairs; two fit one vector: target + re * row + im * (-imaginary, real) of row.
+    private static void AddScaled(Span<Complex> target, Complex factor, ReadOnlySpan<Complex> row)
+    {
+        int i = 0;
+        if (Vector256.IsHardwareAccelerated && target.Length >= row.Length)
         {
-            Vector256<double> real = Vector256.Create(re), imaginary = Vector256.Create(-im, im, -im, im);
-            for (; i + Vector256<double>.Count <= values.Length; i += Vector256<double>.Count)
+            (Vector256<double> real, Vector256<double> imaginary) = Negated(-factor);
+            for (; i <= row.Length - 2; i += 2)
             {
-                Vector256<double> value = Vector256.Create(values[i..]);
-                Vector256<double> turned = Vector256.Shuffle(value, Vector256.Create(1L, 0, 3, 2));
-                (Vector256.Create<double>(sums[i..]) + (real * value + imaginary * turned)).CopyTo(sums[i..]);
+                AddTimes(real, imaginary, At(row, i), At(target, i))
+                    .StoreUnsafe(ref Unsafe.As<Complex, double>(ref MemoryMarshal.GetReference(target)), (nuint)(2 * i));
             }
         }
-        for (; i < values.Length; i += 2)
+        double re = factor.Real, im = factor.Imaginary;
+        for (; i < row.Length; i++)
         {
-            double valueRe = values[i], valueIm = values[i + 1];
-            sums[i] += re * valueRe - im * valueIm;
-            sums[i + 1] += re * valueIm + im * valueRe;
+            Complex value = row[i];
+            target[i] = new Complex(
+                target[i].Real + (re * value.Real - im * value.Imaginary), target[i].Imaginary + (re * value.Imaginary + im * value.Real));
         }
+    }
+
+    private static Vector256<double> At(ReadOnlySpan<Complex> row, int i)
+        => Vector256.LoadUnsafe(ref Unsafe.As<Complex, double>(ref MemoryMarshal.GetReference(row)), (nuint)(2 * i));
+
+    private static (Vector256<double> Real, Vector256<double> Imaginary) Negated(Complex factor)
+        => (Vector256.Create(-factor.Real), Vector256.Create(factor.Imaginary, -factor.Imaginary, factor.Imaginary, -factor.Imaginary));
+
+    private static Vector256<double> AddTimes(Vector256<double> real, Vector256<double> imaginary, Vector256<double> value, Vector256<double> sum)
+    {
+        Vector256<double> turned = Vector256.Shuffle(value, Vector256.Create(1L, 0, 3, 2));
+        return Vector256.MultiplyAddEstimate(real, value, Vector256.MultiplyAddEstimate(imaginary, turned, sum));
     }
 }

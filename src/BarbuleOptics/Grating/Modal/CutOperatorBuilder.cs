@@ -7,106 +7,79 @@ internal sealed class CutOperatorBuilder
 {
     private readonly int _count;
     private readonly Complex[] _coefficients;
-    private readonly Complex[] _normalXX;
-    private readonly Complex[] _normalXZ;
     private readonly Complex[] _inverses;
-    private readonly ComplexMatrix _along;
-    private readonly ComplexMatrix _normal;
-    private readonly ComplexMatrix _factor;
-    private readonly ComplexMatrix _difference;
-    private readonly LinearSolver _solver;
+    private readonly OperatorBlock _all;
+    private readonly OperatorBlock? _odd;
+    private readonly ComplexMatrix _mixed;
+    private readonly ComplexMatrix _normalMixed;
 
     /// <summary>Scratch for 2 N + 1 harmonics.</summary>
-    public CutOperatorBuilder(int harmonics)
+    /// <param name="harmonics">Largest harmonic, N.</param>
+    /// <param name="hasAxis">Whether cuts are their own mirror image about x = 0: even and odd combinations are then computed apart.</param>
+    public CutOperatorBuilder(int harmonics, bool hasAxis)
     {
         _count = 2 * harmonics + 1;
         _coefficients = new Complex[2 * _count - 1];
-        _normalXX = new Complex[2 * _count - 1];
-        _normalXZ = new Complex[2 * _count - 1];
         _inverses = new Complex[16];
-        _along = new ComplexMatrix(_count, _count);
-        _normal = new ComplexMatrix(_count, _count);
-        _factor = new ComplexMatrix(_count, _count);
-        _difference = new ComplexMatrix(_count, _count);
-        _solver = new LinearSolver(_count);
+        FieldBasis rows = hasAxis ? FieldBasis.Even(harmonics) : FieldBasis.All(harmonics), columns = hasAxis ? FieldBasis.Odd(harmonics) : rows;
+        _all = new OperatorBlock(rows);
+        _odd = hasAxis ? new OperatorBlock(columns) : null;
+        _mixed = new ComplexMatrix(rows.Count, columns.Count);
+        _normalMixed = new ComplexMatrix(rows.Count, columns.Count);
     }
 
     /// <summary>Fills <paramref name="operators"/>.</summary>
-    /// <param name="cut">The walls and materials.</param>
+    /// <param name="cut">Where the materials lie, and the normals.</param>
     /// <param name="permittivities">By the number of the material.</param>
     /// <param name="alpha">ky / k0.</param>
     /// <param name="isElectric">Whether the electric field is followed alone, which needs the permittivity only.</param>
     /// <param name="operators">Receives the operators.</param>
     /// <returns>False where an inverse does not exist.</returns>
-    public bool TryBuild(SlabCut cut, ReadOnlySpan<Complex> permittivities, double alpha, bool isElectric, CutOperators operators)
+    public bool TryBuild(CutTransform cut, ReadOnlySpan<Complex> permittivities, double alpha, bool isElectric, CutOperators operators)
     {
         cut.Transform(permittivities, operators.Permittivity);
         if (isElectric)
             return true;
-        // Q, along walls.
-        FillToeplitz(operators.Permittivity, _factor);
-        ShiftDiagonal(_factor, -alpha * alpha);
-        if (!TryInvert(_factor, _along))
-            return false;
-        // W, along the normal.
         Span<Complex> inverses = permittivities.Length <= _inverses.Length ? _inverses.AsSpan(0, permittivities.Length) : new Complex[permittivities.Length];
         for (int m = 0; m < inverses.Length; m++)
             inverses[m] = Complex.One / permittivities[m];
         cut.Transform(inverses, _coefficients);
-        FillToeplitz(_coefficients, _normal);
-        if (alpha != 0 && !(TryInvert(_normal, _factor) && TryInvertShifted(alpha)))
+        operators.Xx.Clear();
+        operators.Zz.Clear();
+        operators.Xz.Clear();
+        OperatorBlock odd = _odd ?? _all;
+        if (!TryBlock(_all, cut, alpha, operators) || (_odd is not null && !TryBlock(_odd, cut, alpha, operators)))
             return false;
 
-        cut.TransformNormals(_normalXX, _normalXZ);
-        _difference.CopyFrom(_normal);
-        _difference.Subtract(_along);
-        FillToeplitz(_normalXX, _factor);
-        SetSymmetricProduct(operators.Xz);
-        operators.Xx.CopyFrom(_along);
-        operators.Xx.Add(operators.Xz);
-        operators.Zz.CopyFrom(_normal);
-        operators.Zz.Subtract(operators.Xz);
-        FillToeplitz(_normalXZ, _factor);
-        SetSymmetricProduct(operators.Xz);
+        // Half of D n_x n_z + n_x n_z D; n_x n_z is odd and leads from odd combinations to even ones.
+        FieldBasis.FillBetween(_all.Basis, odd.Basis, cut.NormalXZ, _normalMixed);
+        _mixed.SetProduct(_all.Difference, _normalMixed);
+        _mixed.AddProduct(_normalMixed, odd.Difference);
+        FieldBasis.AddToFull(_all.Basis, odd.Basis, _mixed, 0.5, operators.Xz);
+        if (_odd is not null)
+            AddTransposed(operators.Xz);
         return true;
     }
 
-    private bool TryInvertShifted(double alpha)
+    private bool TryBlock(OperatorBlock block, CutTransform cut, double alpha, CutOperators operators)
     {
-        ShiftDiagonal(_factor, -alpha * alpha);
-        return TryInvert(_factor, _normal);
-    }
-
-    private bool TryInvert(ComplexMatrix matrix, ComplexMatrix inverse)
-    {
-        if (!_solver.TryFactor(matrix))
+        if (!block.TrySet(operators.Permittivity, _coefficients, cut.NormalXX, alpha))
             return false;
-        inverse.SetIdentity();
-        _solver.Solve(inverse);
+        FieldBasis.AddToFull(block.Basis, block.Basis, block.Along, 1, operators.Xx);
+        FieldBasis.AddToFull(block.Basis, block.Basis, block.Normal, 1, operators.Zz);
         return true;
     }
 
-    private void SetSymmetricProduct(ComplexMatrix product)
-    {
-        product.SetProduct(_difference, _factor);
-        product.AddProduct(_factor, _difference);
-        foreach (ref Complex element in product.Elements)
-            element *= 0.5;
-    }
-
-    private void ShiftDiagonal(ComplexMatrix matrix, double shift)
-    {
-        for (int i = 0; i < _count; i++)
-            matrix[i, i] += shift;
-    }
-
-    private void FillToeplitz(ReadOnlySpan<Complex> coefficients, ComplexMatrix matrix)
+    // From even combinations to odd ones it is minus the transpose.
+    private void AddTransposed(ComplexMatrix matrix)
     {
         for (int row = 0; row < _count; row++)
         {
-            Span<Complex> elements = matrix.Row(row);
-            for (int column = 0; column < _count; column++)
-                elements[column] = coefficients[row - column + _count - 1];
+            for (int column = 0; column <= row; column++)
+            {
+                Complex difference = matrix[row, column] - matrix[column, row];
+                (matrix[row, column], matrix[column, row]) = (difference, -difference);
+            }
         }
     }
 }

@@ -61,13 +61,24 @@ internal sealed class DepthElement
                 for (int q = 0; q < points.Length; q++)
                 {
                     double weight = rule.Weights[q];
-                    AddScaled(points[q].Zz, weight * slope[q, i] * slope[q, j] / half, row, column);
-                    AddScaled(points[q].Zx, weight * slope[q, i] * value[q, j], row, column);
-                    AddScaled(points[q].Xz, weight * value[q, i] * slope[q, j], row, column);
+                    if (points[q].IsPlain)
+                        AddDiagonal(weight * slope[q, i] * slope[q, j] / half, row, column);
+                    else
+                    {
+                        AddScaled(points[q].Zz, weight * slope[q, i] * slope[q, j] / half, row, column);
+                        AddScaled(points[q].Zx, weight * slope[q, i] * value[q, j], row, column);
+                        AddScaled(points[q].Xz, weight * value[q, i] * slope[q, j], row, column);
+                    }
                     AddScaled(points[q].Xx, weight * value[q, i] * value[q, j] * half, row, column);
                 }
             }
         }
+    }
+
+    private void AddDiagonal(double value, int row, int column)
+    {
+        for (int r = 0; r < _size; r++)
+            _system[row * _size + r, column * _size + r] += value;
     }
 
     private void AddScaled(ComplexMatrix block, double factor, int row, int column)
@@ -75,11 +86,6 @@ internal sealed class DepthElement
         if (factor == 0)
             return;
         for (int r = 0; r < _size; r++)
-        {
-            Span<Complex> target = _system.Row(row * _size + r).Slice(column * _size, _size);
-            ReadOnlySpan<Complex> source = block.Row(r);
-            for (int c = 0; c < target.Length; c++)
-                target[c] += factor * source[c];
-        }
+            ComplexMatrix.AddScaled(_system.Row(row * _size + r).Slice(column * _size, _size), factor, block.Row(r));
     }
 }

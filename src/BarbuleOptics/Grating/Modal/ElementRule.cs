@@ -51,7 +51,7 @@ internal sealed class ElementRule
     /// <summary>The rule of an element that ends in a tip.</summary>
     private static ElementRule AtTip(int order, bool tipAtTop)
     {
-        int points = order + 2;
+        int points = order + 1;
         var nodes = new LobattoRule(order);
         (double[] gauss, double[] gaussWeights) = GaussLegendre(points);
         var places = new double[points];

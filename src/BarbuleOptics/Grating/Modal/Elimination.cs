@@ -9,24 +9,46 @@ internal static class Elimination
     /// <summary>Smallest pivot against the largest element of its row that elimination without interchanges may meet.</summary>
     private const double LeastPivot = 1e-7;
 
+    /// <summary>Number of unknowns removed together.</summary>
+    private const int Panel = 4;
+
     /// <summary>Removes the first <paramref name="count"/> of <paramref name="size"/> unknowns of a complex symmetric system, of
     /// which the upper triangle alone is read and written, without interchanges.</summary>
     /// <returns>False where a pivot is too small for that or not finite.</returns>
     public static bool TryReduceSymmetric(ComplexMatrix system, int count, int size)
     {
-        for (int k = 0; k < count; k++)
+        Span<Complex> inverses = stackalloc Complex[Panel];
+        for (int first = 0; first < count; first += Panel)
         {
-            Span<Complex> top = system.Row(k)[k..size];
-            if (!IsSafe(top))
-                return false;
-            Complex inverse = Complex.One / top[0];
-            for (int i = 1; i < top.Length; i++)
+            // A few rows are made ready, then all rows below are reduced by them at once, which reads and writes those less often.
+            int pivots = Math.Min(Panel, count - first);
+            for (int k = first; k < first + pivots; k++)
             {
-                if (top[i] != Complex.Zero)
-                    ComplexMatrix.SubtractScaled(system.Row(k + i)[(k + i)..size], top[i] * inverse, top[i..]);
+                Span<Complex> top = system.Row(k)[k..size];
+                if (!IsSafe(top))
+                    return false;
+                Complex inverse = inverses[k - first] = Complex.One / top[0];
+                for (int row = k + 1; row < first + pivots; row++)
+                    ComplexMatrix.SubtractScaled(system.Row(row)[row..size], top[row - k] * inverse, top[(row - k)..]);
             }
+            for (int row = first + pivots; row < size; row++)
+                Reduce(system, first, inverses[..pivots], row, size);
         }
         return true;
+    }
+
+    private static void Reduce(ComplexMatrix system, int first, ReadOnlySpan<Complex> inverses, int row, int size)
+    {
+        Span<Complex> target = system.Row(row)[row..size];
+        if (inverses.Length < Panel)
+        {
+            for (int p = 0; p < inverses.Length; p++)
+                ComplexMatrix.SubtractScaled(target, system[first + p, row] * inverses[p], system.Row(first + p)[row..size]);
+            return;
+        }
+        ComplexMatrix.SubtractScaled(
+            target, system[first, row] * inverses[0], system.Row(first)[row..size], system[first + 1, row] * inverses[1], system.Row(first + 1)[row..size],
+            system[first + 2, row] * inverses[2], system.Row(first + 2)[row..size], system[first + 3, row] * inverses[3], system.Row(first + 3)[row..size]);
     }
 
     /// <summary>Removes the first <paramref name="count"/> of <paramref name="size"/> unknowns of any system, with interchanges of rows

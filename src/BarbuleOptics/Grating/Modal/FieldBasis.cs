@@ -53,30 +53,93 @@ internal readonly struct FieldBasis
 
     /// <summary>Adds factor times a matrix over all harmonics, between the combinations of <paramref name="rows"/> and
     /// <paramref name="columns"/>, to a block of <paramref name="target"/>.</summary>
+    /// <param name="rows">Combinations of the rows.</param>
+    /// <param name="columns">Combinations of the columns.</param>
+    /// <param name="full">The matrix. With even and odd combinations it must lead from one parity to one parity, scaling included.</param>
+    /// <param name="factor">What all elements are multiplied by.</param>
+    /// <param name="rowScale">What rows of the matrix are multiplied by; empty for 1.</param>
+    /// <param name="columnScale">What columns of the matrix are multiplied by; empty for 1.</param>
+    /// <param name="target">Receives the sum.</param>
+    /// <param name="firstRow">First row of the block.</param>
+    /// <param name="firstColumn">First column of the block.</param>
     public static void AddBetween(
-        in FieldBasis rows, in FieldBasis columns, ComplexMatrix full, Complex factor, ComplexMatrix target, int firstRow, int firstColumn)
+        in FieldBasis rows, in FieldBasis columns, ComplexMatrix full, Complex factor, ReadOnlySpan<double> rowScale, ReadOnlySpan<double> columnScale,
+        ComplexMatrix target, int firstRow, int firstColumn)
     {
-        int center = rows._harmonics;
+        int center = full.Rows / 2;
         for (int r = 0; r < rows.Count; r++)
         {
             Span<Complex> sums = target.Row(firstRow + r).Slice(firstColumn, columns.Count);
             int m = rows.HarmonicOf(r);
             ReadOnlySpan<Complex> row = full.Row(center + m);
-            if (columns._parity == 0)
+            Complex scaled = rowScale.IsEmpty ? factor : factor * rowScale[center + m];
+            if (!rows.HasPairs)
             {
                 for (int c = 0; c < sums.Length; c++)
-                    sums[c] += factor * row[c];
+                    sums[c] += (columnScale.IsEmpty ? scaled : scaled * columnScale[c]) * row[c];
                 continue;
             }
-            ReadOnlySpan<Complex> opposite = full.Row(center - m);
-            double rowShare = rows.ShareOf(m) * (m == 0 ? 0.5 : 1);
+            // Both images of the row's harmonic give the same.
+            if (m != 0)
+                scaled *= 2 * Half;
+            int shift = columns._parity > 0 ? 0 : 1;
             for (int c = 0; c < sums.Length; c++)
             {
+                int n = c + shift;
+                Complex right = row[center + n], left = row[center - n];
+                Complex sum = columnScale.IsEmpty ? right + columns._parity * left : columnScale[center + n] * right + columns._parity * columnScale[center - n] * left;
+                sums[c] += scaled * (n == 0 ? 0.5 * sum : Half * sum);
+            }
+        }
+    }
+
+    /// <summary>Fills a matrix with a function of x given by its Fourier coefficients, between combinations.</summary>
+    public static void FillBetween(in FieldBasis rows, in FieldBasis columns, ReadOnlySpan<Complex> coefficients, ComplexMatrix target)
+    {
+        int zero = coefficients.Length / 2;
+        for (int r = 0; r < rows.Count; r++)
+        {
+            Span<Complex> elements = target.Row(r);
+            int m = rows.HarmonicOf(r);
+            double rowShare = m == 0 ? 1 : 2 * rows.ShareOf(m);
+            for (int c = 0; c < elements.Length; c++)
+            {
                 int n = columns.HarmonicOf(c);
-                Complex same = row[center + n] + columns._parity * row[center - n];
-                Complex other = opposite[center + n] + columns._parity * opposite[center - n];
-                double share = rowShare * columns.ShareOf(n) * (n == 0 ? 0.5 : 1);
-                sums[c] += factor * (share * (same + rows._parity * other));
+                if (!rows.HasPairs)
+                {
+                    elements[c] = coefficients[zero + m - n];
+                    continue;
+                }
+                // Both images of m give the same, since the function has the parity that leads from columns to rows.
+                Complex sum = coefficients[zero + m - n];
+                if (n != 0)
+                    sum += columns._parity * coefficients[zero + m + n];
+                elements[c] = rowShare * columns.ShareOf(n) * sum;
+            }
+        }
+    }
+
+    /// <summary>Adds factor times a matrix between combinations to one over all harmonics.</summary>
+    public static void AddToFull(in FieldBasis rows, in FieldBasis columns, ComplexMatrix block, double factor, ComplexMatrix full)
+    {
+        int center = full.Rows / 2;
+        for (int r = 0; r < rows.Count; r++)
+        {
+            int m = rows.HarmonicOf(r);
+            for (int image = 0; image < (rows.HasPairs && m != 0 ? 2 : 1); image++)
+            {
+                int harmonic = image == 0 ? m : -m;
+                double share = factor * rows.ShareOf(harmonic);
+                Span<Complex> target = full.Row(center + harmonic);
+                ReadOnlySpan<Complex> source = block.Row(r);
+                for (int c = 0; c < source.Length; c++)
+                {
+                    int n = columns.HarmonicOf(c);
+                    Complex value = share * columns.ShareOf(n) * source[c];
+                    target[center + n] += value;
+                    if (columns.HasPairs && n != 0)
+                        target[center - n] += columns._parity * value;
+                }
             }
         }
     }

@@ -32,7 +32,7 @@ internal sealed class LossSplit
         _sector = ModalSector.Of(harmonics, field, false)[0];
         int size = _sector.Size, ports = (2 * mostOrder + 1) * (field == RodField.Both ? 2 : 1), count = 2 * harmonics + 1;
         _record = new FieldRecord(size, ports, DepthMesh.OrderAt(depth));
-        _workspace = new ModalWorkspace(_sector, harmonics, mostOrder, _record);
+        _workspace = new ModalWorkspace(_sector, mostOrder, _record);
         _density = new LossDensity(shape, harmonics);
         _between = new ComplexMatrix(2 * ports, 2 * ports);
         _bottom = new Complex[size + 2 * ports];

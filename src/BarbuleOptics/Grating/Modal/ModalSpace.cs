@@ -28,7 +28,7 @@ internal sealed class ModalSpace
         _halved = halved;
         _mostOrder = mostOrder;
         _waves = new ModalWaves(harmonics);
-        _workspaces = [.. ModalSector.Of(harmonics, field, split).Select(sector => new ModalWorkspace(sector, harmonics, mostOrder))];
+        _workspaces = [.. ModalSector.Of(harmonics, field, split).Select(sector => new ModalWorkspace(sector, mostOrder))];
         int channels = (2 * mostOrder + 1) * (field == RodField.Both ? 2 : 1);
         _between = new ComplexMatrix(2 * channels, 2 * channels);
         _top = new ComplexMatrix(channels, channels);

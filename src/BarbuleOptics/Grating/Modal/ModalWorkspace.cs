@@ -24,17 +24,16 @@ internal sealed class ModalWorkspace
 
     /// <summary>Scratch for one sector.</summary>
     /// <param name="sector">The sector.</param>
-    /// <param name="harmonics">Largest harmonic.</param>
     /// <param name="mostOrder">Largest incoming order.</param>
     /// <param name="record">Receives what the fields inside are found from; null where they are not asked for.</param>
-    public ModalWorkspace(in ModalSector sector, int harmonics, int mostOrder, FieldRecord? record = null)
+    public ModalWorkspace(in ModalSector sector, int mostOrder, FieldRecord? record = null)
     {
         _record = record;
         _sector = sector;
         Chain = new SlabChain(sector, mostOrder);
         _points = new DepthPoint[DepthMesh.MostOrder + 2];
         for (int i = 0; i < _points.Length; i++)
-            _points[i] = new DepthPoint(sector, harmonics);
+            _points[i] = new DepthPoint(sector);
         _piece = new ComplexMatrix(2 * sector.Size, 2 * sector.Size);
         _double = new ComplexMatrix(3 * sector.Size, 3 * sector.Size);
     }
@@ -178,6 +177,8 @@ internal sealed class ModalWorkspace
         double most = 0;
         foreach (Complex permittivity in light.Permittivities)
             most = Math.Max(most, Complex.Sqrt(permittivity).Magnitude * waves.K0);
-        return (Math.Max(most, Math.Max(Math.Abs(waves.Kx[0]), Math.Abs(waves.Kx[^1]))), most);
+        // The same for all directions within the first zone, so that meshes and what is kept for them last.
+        double zone = 2 * Math.PI / light.PeriodNm;
+        return (Math.Max(most, zone * (waves.Harmonics + Math.Max(0.5, Math.Abs(light.Kx0) / zone))), most);
     }
 }

@@ -15,6 +15,8 @@ internal sealed class OperatorStore
     private readonly CutOperatorBuilder _builder;
     private readonly List<CutOperators> _operators = [];
     private readonly List<int> _built = [];
+    private readonly List<CutTransform> _transforms = [];
+    private readonly CutTransform _spareTransform;
     private readonly CutOperators _spare;
     private readonly int _most;
     private Complex[] _permittivities = [];
@@ -27,8 +29,9 @@ internal sealed class OperatorStore
         _shape = shape;
         _harmonics = harmonics;
         _cut = new SlabCut(shape);
-        _builder = new CutOperatorBuilder(harmonics);
+        _builder = new CutOperatorBuilder(harmonics, shape.HasAxis);
         _spare = new CutOperators(harmonics);
+        _spareTransform = new CutTransform(harmonics);
         int count = 2 * harmonics + 1;
         _most = (int)Math.Min(10_000, MostBytes / (3L * 16 * count * count));
     }
@@ -38,7 +41,9 @@ internal sealed class OperatorStore
     {
         if (alpha == _alpha && mesh == _mesh && permittivities.SequenceEqual(_permittivities))
             return;
-        _permittivities = permittivities.ToArray();
+        if (_permittivities.Length != permittivities.Length)
+            _permittivities = new Complex[permittivities.Length];
+        permittivities.CopyTo(_permittivities);
         _alpha = alpha;
         _mesh = mesh;
         for (int i = 0; i < _built.Count; i++)
@@ -74,24 +79,25 @@ internal sealed class OperatorStore
     {
         int needed = isElectric ? 1 : 2;
         if (number >= _most)
-            return Build(interval, zNm, isElectric, _spare);
+            return Build(interval, zNm, isElectric, _spareTransform, _spare);
         while (_operators.Count <= number)
         {
             _operators.Add(new CutOperators(_harmonics));
+            _transforms.Add(new CutTransform(_harmonics));
             _built.Add(0);
         }
         if (_built[number] < needed)
         {
-            if (Build(interval, zNm, isElectric, _operators[number]) is null)
+            if (Build(interval, zNm, isElectric, _transforms[number], _operators[number]) is null)
                 return null;
             _built[number] = needed;
         }
         return _operators[number];
     }
 
-    private CutOperators? Build(SlabInterval interval, double zNm, bool isElectric, CutOperators operators)
+    private CutOperators? Build(SlabInterval interval, double zNm, bool isElectric, CutTransform transform, CutOperators operators)
     {
-        _cut.Set(interval, zNm);
-        return _builder.TryBuild(_cut, _permittivities, _alpha, isElectric, operators) ? operators : null;
+        transform.Set(_cut, interval, zNm, _permittivities.Length);
+        return _builder.TryBuild(transform, _permittivities, _alpha, isElectric, operators) ? operators : null;
     }
 }

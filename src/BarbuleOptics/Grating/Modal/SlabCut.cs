@@ -75,28 +75,31 @@ internal sealed class SlabCut
     /// <summary>The only material, where there is no wall.</summary>
     public int OnlyMaterial { get; private set; }
 
-    /// <summary>Coefficients -(length - 1)/2 to (length - 1)/2 of a value that is constant in each material.</summary>
-    public void Transform(ReadOnlySpan<Complex> byMaterial, Span<Complex> coefficients)
+    /// <summary>Whether a material is met.</summary>
+    public bool Meets(int material) => WallCount == 0 ? material == OnlyMaterial : _materials.AsSpan(0, WallCount).Contains(material);
+
+    /// <summary>Coefficients -(length - 1)/2 to (length - 1)/2 of what is 1 within a material and 0 elsewhere.</summary>
+    public void TransformInside(int material, Span<Complex> inside)
     {
-        coefficients.Clear();
-        int zero = coefficients.Length / 2;
+        inside.Clear();
+        int zero = inside.Length / 2;
         if (WallCount == 0)
         {
-            coefficients[zero] = byMaterial[OnlyMaterial];
+            inside[zero] = OnlyMaterial == material ? 1 : 0;
             return;
         }
         for (int w = 0; w < WallCount; w++)
         {
-            Complex right = byMaterial[_materials[w]];
-            Complex jump = right - byMaterial[_materials[w == 0 ? WallCount - 1 : w - 1]];
-            coefficients[zero] += right * ((NextXNm(w) - _walls[w].XNm) / _shape.PeriodNm);
+            if (_materials[w] != material)
+                continue;
+            double length = NextXNm(w) - _walls[w].XNm, middle = _walls[w].XNm + length / 2, share = length / _shape.PeriodNm;
+            inside[zero] += share;
             for (int k = 1; k <= zero; k++)
             {
-                // The mean of exp(-i k G x) over a stretch is the difference of exp(-i k G x) / (-2 pi i k) at its ends.
-                (double sin, double cos) = Math.SinCos(2 * Math.PI * k * _walls[w].XNm / _shape.PeriodNm);
-                Complex term = jump / (2 * Math.PI * k);
-                coefficients[zero + k] += term * new Complex(-sin, -cos);
-                coefficients[zero - k] += term * new Complex(-sin, cos);
+                (double sin, double cos) = Math.SinCos(2 * Math.PI * k * middle / _shape.PeriodNm);
+                double size = share * Sinc(Math.PI * k * share);
+                inside[zero + k] += size * new Complex(cos, -sin);
+                inside[zero - k] += size * new Complex(cos, sin);
             }
         }
     }
@@ -127,7 +130,7 @@ internal sealed class SlabCut
         }
     }
 
-    /// <summary>Coefficients of what is 1 within a material and 0 elsewhere, and of that times the continued n_x^2 and n_x n_z.</summary>
+    /// <summary>The same, and of that times the continued n_x^2 and n_x n_z.</summary>
     /// <returns>False where the material is not met.</returns>
     public bool TransformInside(int material, Span<Complex> inside, Span<Complex> insideXX, Span<Complex> insideXZ)
     {
