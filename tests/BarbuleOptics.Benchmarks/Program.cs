@@ -1,4 +1,5 @@
 using BarbuleOptics.Benchmarks.MixingRules;
+using BarbuleOptics.Benchmarks.Rows;
 
 namespace BarbuleOptics.Benchmarks;
 
@@ -8,6 +9,7 @@ internal static class Program
     private static readonly Dictionary<string, (string About, Func<string[], int> Run)> Programs = new()
     {
         ["rules"] = ("how far each mixing rule is from the rigorous solution; prints the README's tables", RuleProgram.Run),
+        ["rows"] = ("what a solve of five staggered rows of rods costs and how far it is from a far finer run", RowsProgram.Run),
     };
 
     private static int Main(string[] words)

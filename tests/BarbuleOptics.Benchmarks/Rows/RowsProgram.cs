@@ -1,0 +1,90 @@
+using System.Diagnostics;
+using System.Globalization;
+using BarbuleOptics.Grating;
+using BarbuleOptics.Layering;
+using BarbuleOptics.Multilayer;
+
+namespace BarbuleOptics.Benchmarks.Rows;
+
+/// <summary>Times the rigorous solver on five staggered rows of rods, by multipoles and by the Fourier modal method, and says how far
+/// each is from a far finer run. A solve is one wavelength in one polarization.</summary>
+internal static class RowsProgram
+{
+    /// <summary>Repetitions of a block of 61 wavelengths, of which the median counts.</summary>
+    private const int Repeats = 7;
+
+    private const double FinestAccuracy = 1e-11;
+
+    private static readonly double[] WavelengthsNm = [.. Enumerable.Range(0, 61).Select(i => 300.0 + 8 * i)];
+
+    /// <summary>Runs it.</summary>
+    /// <param name="words">A file for the far finer run, or nothing.</param>
+    public static int Run(string[] words)
+    {
+        if (words.Length > 1)
+        {
+            Console.Error.WriteLine("rows [FILE]: FILE receives the reflectances of the far finer run, which plain_modal.py reads");
+            return 2;
+        }
+        Dictionary<RowsCase, double[]> finest = RowsCase.All.ToDictionary(rows => rows, rows => Solve(rows, false, FinestAccuracy).Reflectance);
+        if (words.Length == 1)
+            File.WriteAllLines(words[0], Lines(finest));
+        Print("multipole", false, _ => 1e-6, finest);
+        Print("modal", true, rows => rows is { LumenNm: > 0, Polarization: Polarizations.P } ? 1e-3 : 1e-4, finest);
+        return 0;
+    }
+
+    private static void Print(string method, bool isAlmostRound, Func<RowsCase, double> accuracy, Dictionary<RowsCase, double[]> finest)
+    {
+        foreach (IGrouping<(int, string), RowsCase> group in RowsCase.All.GroupBy(rows => (rows.LumenNm, rows.PolarizationName)))
+        {
+            double error = 0, estimate = 0;
+            var microseconds = new List<double>();
+            foreach (RowsCase rows in group)
+            {
+                (double[] found, double time, double told) = Solve(rows, isAlmostRound, accuracy(rows));
+                microseconds.Add(time);
+                estimate = Math.Max(estimate, told);
+                error = Math.Max(error, found.Zip(finest[rows], (one, other) => Math.Abs(one - other)).Max());
+            }
+            microseconds.Sort();
+            Console.WriteLine(string.Create(
+                CultureInfo.InvariantCulture,
+                $"{method}, accuracy asked {accuracy(group.First()):0e0}, lumen {group.Key.Item1} nm, {group.Key.Item2}: {Middle(microseconds):0.0} us, error {error:0.0e0}, estimate {estimate:0.0e0}"));
+        }
+    }
+
+    private static (double[] Reflectance, double Microseconds, double Estimate) Solve(RowsCase rows, bool isAlmostRound, double accuracy)
+    {
+        SectionPermittivities section = rows.Section(WavelengthsNm, isAlmostRound);
+        var solver = new GratingSolver(accuracy);
+        GratingWorkspace workspace = solver.CreateWorkspace(section);
+        double[] reflectance = new double[WavelengthsNm.Length], diffracted = new double[WavelengthsNm.Length];
+        var request = new SolverRequest(0, WavelengthsNm.Length, rows.Incidence, rows.Polarization, SolverOutputs.Reflectance);
+        double estimate = 0;
+        var microseconds = new List<double>();
+        for (int repeat = 0; repeat < (accuracy <= FinestAccuracy ? 1 : Repeats); repeat++)
+        {
+            long start = Stopwatch.GetTimestamp();
+            estimate = solver.Solve(section, request, workspace, new SolverResponse { Reflectance = reflectance, DiffractedReflectance = diffracted });
+            microseconds.Add(Stopwatch.GetElapsedTime(start).TotalMicroseconds / WavelengthsNm.Length);
+        }
+        microseconds.Sort();
+        return (reflectance, Middle(microseconds), estimate);
+    }
+
+    private static double Middle(List<double> sorted) => sorted[sorted.Count / 2];
+
+    private static IEnumerable<string> Lines(Dictionary<RowsCase, double[]> finest)
+    {
+        yield return "lumen_nm,cortex_nm,incidence_deg,polarization,wavelength_nm,reflectance";
+        foreach ((RowsCase rows, double[] reflectance) in finest)
+        {
+            for (int w = 0; w < reflectance.Length; w++)
+            {
+                yield return FormattableString.Invariant(
+                    $"{rows.LumenNm},{rows.CortexNm},{rows.IncidenceDeg},{rows.PolarizationName},{WavelengthsNm[w]},{reflectance[w]:R}");
+            }
+        }
+    }
+}
