@@ -32,7 +32,8 @@ internal sealed class ResolutionLadder(StackPlan plan)
                 continue;
             int cells = periodNm is double period ? (int)Math.Round(period / group.PeriodNm) : 1;
             orders = Math.Max(orders, cells * OrdersOf(group, step) + cells / 2);
-            harmonics = Math.Max(harmonics, leastOrders / cells + 1);
+            // Added, not a floor: steps of equal resolution would agree and be believed.
+            harmonics = Math.Max(harmonics, Harmonics[step] + leastOrders / cells);
         }
         return new Resolution(orders, Multipoles[step], harmonics, Depths[step]);
     }

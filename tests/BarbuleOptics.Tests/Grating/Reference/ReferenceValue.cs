@@ -30,6 +30,9 @@ internal sealed class ReferenceValue
     /// <summary>Whether the wall is thinner than a tenth of the body.</summary>
     public bool HasThinShell => !IsPlatelet && this["height"] - this["lumen_height"] < .2 * this["height"];
 
+    /// <summary>Whether the bodies are round rods.</summary>
+    public bool IsRound => !IsPlatelet && this["height"] == this["width"];
+
     /// <summary>Harmonics that resolve the period for a start.</summary>
     public int Harmonics => this["spacing"] > 300 ? 9 : 5;
 
