@@ -12,6 +12,8 @@ barbule predict src/BarbuleOptics.Cli/Samples/hollow-rods.toml --angles 0,30,60 
 mkdir -p tests/BarbuleOptics.Tests/Documentation
 cp "$results/reflectance.png" tests/BarbuleOptics.Tests/Documentation/reflectance.png
 cp "$results/section.png" tests/BarbuleOptics.Tests/Documentation/section.png
+barbule predict src/BarbuleOptics.Cli/Samples/spaced-hollow-rods.toml --angles 0,45 --overlay --out "$results" --force >/dev/null
+cp "$results/reflectance.png" tests/BarbuleOptics.Tests/Documentation/rods-are-not-films.png
 
 # A block that follows <!-- printed: WORDS --> holds what "barbule WORDS" prints.
 while IFS= read -r line; do

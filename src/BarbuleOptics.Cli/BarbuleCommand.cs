@@ -10,7 +10,7 @@ internal static class BarbuleCommand
     /// <summary>File beside the program that holds the licenses of what it is built with.</summary>
     public const string NoticesName = "THIRD-PARTY-NOTICES.txt";
 
-    public static RootCommand Create(TerminalColors colors)
+    public static RootCommand Create(TerminalColors colors, ProgressLine progress)
     {
         var root = new RootCommand("From the measured nanostructure of a feather barbule to its reflectance, its color and its hue.");
         // The stock option prints the bare number; results name the program with it.
@@ -19,7 +19,7 @@ internal static class BarbuleCommand
         root.Options.Add(version);
 
         var help = new CommandHelp();
-        Add(PredictCommand.Create(colors), "barbule predict throat.toml --angles 0:60:15 --set barbule.surround=water --out results");
+        Add(PredictCommand.Create(colors, progress), "barbule predict throat.toml --angles 0:60:15 --set barbule.surround=water --out results");
         Add(MaterialsCommand.Create(), "barbule materials eumelanin");
         Add(SampleCommand.Create(), "barbule sample samples");
         Add(CompletionCommand.Create(), "eval \"$(barbule completion bash)\"");

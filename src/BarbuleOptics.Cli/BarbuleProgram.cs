@@ -12,14 +12,16 @@ internal static class BarbuleProgram
     /// <param name="output">Takes results.</param>
     /// <param name="error">Takes what is wrong, one line each.</param>
     /// <param name="colors">What colors results are shown in; null for none.</param>
+    /// <param name="progress">Where long calculations say how far they are; null for nowhere.</param>
     /// <param name="cancellation">Interrupts the work, as the terminal does.</param>
     /// <returns>One of <see cref="ExitCode"/>.</returns>
     public static async Task<int> RunAsync(
-        string[] args, TextWriter output, TextWriter error, TerminalColors? colors = null, CancellationToken cancellation = default)
+        string[] args, TextWriter output, TextWriter error, TerminalColors? colors = null, ProgressLine? progress = null,
+        CancellationToken cancellation = default)
     {
         try
         {
-            RootCommand root = BarbuleCommand.Create(colors ?? TerminalColors.None);
+            RootCommand root = BarbuleCommand.Create(colors ?? TerminalColors.None, progress ?? ProgressLine.None);
             // Without the replacer a file named @results stays a file name.
             ParseResult result = root.Parse(SuggestLine.Prepare(args), new ParserConfiguration { ResponseFileTokenReplacer = null });
             if (result.Errors.Count > 0 && result.Action is ParseErrorAction)

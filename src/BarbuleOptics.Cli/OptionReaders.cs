@@ -4,6 +4,7 @@ using BarbuleOptics.Figures;
 using BarbuleOptics.Files;
 using BarbuleOptics.Layering.Mixing;
 using BarbuleOptics.Multilayer;
+using BarbuleOptics.Prediction;
 using BarbuleOptics.Quantities;
 
 namespace BarbuleOptics.Cli;
@@ -12,8 +13,6 @@ namespace BarbuleOptics.Cli;
 internal static class OptionReaders
 {
     public const double MostAngleCount = 1000;
-
-    public static IReadOnlyList<string> Solvers { get; } = ["auto", "multilayer"];
 
     public static bool Wavelengths(string text, out WavelengthGrid grid, out string allowed)
     {
@@ -62,10 +61,9 @@ internal static class OptionReaders
         return found;
     }
 
-    public static bool Mixing(string text, out IMixingRule rule, out string allowed)
+    public static bool Mixing(string text, out IMixingRule? rule, out string allowed)
     {
-        bool found = MixingRules.TryFind(text, out IMixingRule? value);
-        rule = value!;
+        bool found = MixingRules.TryFind(text, out rule);
         allowed = OneOf(MixingRules.All.Select(candidate => candidate.Name), text);
         return found;
     }
@@ -84,11 +82,10 @@ internal static class OptionReaders
         return StandardObservers.TryFind(text, out observer);
     }
 
-    public static bool Solver(string text, out string solver, out string allowed)
+    public static bool Solver(string text, out SolverChoice solver, out string allowed)
     {
-        solver = text;
-        allowed = OneOf(Solvers, text);
-        return Solvers.Contains(text);
+        allowed = OneOf(SolverNames.All, text);
+        return SolverNames.TryFind(text, out solver);
     }
 
     public static bool Accuracy(string text, out double accuracy, out string allowed)

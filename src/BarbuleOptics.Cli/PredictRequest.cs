@@ -12,6 +12,7 @@ namespace BarbuleOptics.Cli;
 /// <param name="MaterialFolder">Folder of the user's material tables; null for none.</param>
 /// <param name="Sets">KEY=VALUE texts.</param>
 /// <param name="FigureSize">Printed width of the figures.</param>
+/// <param name="Overlays">Whether the reflectance figure also holds what the other solver says.</param>
 internal sealed record PredictRequest(
     IReadOnlyList<string> Files, PredictionConditions Conditions, string? OutputFolder, bool Force, bool Json, string? MaterialFolder, IReadOnlyList<string> Sets,
-    FigureSize FigureSize);
+    FigureSize FigureSize, bool Overlays);

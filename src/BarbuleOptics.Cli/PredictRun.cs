@@ -8,10 +8,13 @@ using BarbuleOptics.Prediction;
 namespace BarbuleOptics.Cli;
 
 /// <summary>Carries out <c>barbule predict</c>, file after file: each is read and solved before any of its results is written.</summary>
-internal sealed class PredictRun(PredictRequest request, TextWriter output, TextWriter error, TerminalColors colors)
+internal sealed class PredictRun(PredictRequest request, TextWriter output, TextWriter error, TerminalColors colors, ProgressLine progress)
 {
     /// <summary>Most wavelengths times angles of one file: 2 million are a table of 0.6 GB.</summary>
     private const int MostPoints = 2_000_000;
+
+    /// <summary>Files that only the grating solver fills.</summary>
+    private static readonly string[] GratingNames = [OrdersCsv.FileName, AbsorptionCsv.FileName];
 
     private static readonly string[] ResultNames = [SpectraCsv.FileName, PredictionJson.FileName, .. PredictionFigures.FileNames];
 
@@ -89,7 +92,18 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
             return null;
         }
         LoadedStructure loaded = read.Value;
-        if (!Predictor.TryPredict(loaded.Barbule, request.Conditions, loaded.Catalog, out StructurePrediction? prediction, out IReadOnlyList<AnatomyProblem> problems, cancellation))
+        StructurePrediction? prediction;
+        IReadOnlyList<AnatomyProblem> problems;
+        progress.Begin(file);
+        try
+        {
+            Predictor.TryPredict(loaded.Barbule, request.Conditions, loaded.Catalog, out prediction, out problems, progress, cancellation);
+        }
+        finally
+        {
+            progress.End();
+        }
+        if (prediction is null)
         {
             Refuse([.. problems.Select(loaded.Locate)]);
             return null;
@@ -109,7 +123,7 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
     {
         PredictionTable.Write(predicted, loaded.Notes, output, colors);
         if (folder is not null)
-            PredictionTable.Wrap($"Written into {OneLine.Escape(Path.TrimEndingDirectorySeparator(folder))}{Path.DirectorySeparatorChar}: {string.Join(", ", ResultNames)}.", output);
+            PredictionTable.Wrap($"Written into {OneLine.Escape(Path.TrimEndingDirectorySeparator(folder))}{Path.DirectorySeparatorChar}: {string.Join(", ", predicted.Prediction.IsRigorous ? [.. ResultNames, .. GratingNames] : ResultNames)}.", output);
         output.WriteLine();
     }
 
@@ -155,17 +169,22 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
         => TryOutput(() =>
         {
             foreach (string folder in folders)
-                OutputFolder.Check(folder, ResultNames, request.Force);
+                OutputFolder.Check(folder, [.. ResultNames, .. GratingNames], request.Force);
         });
 
     private bool TryWrite(string folder, PredictedStructure predicted, CancellationToken cancellation)
-        => TryOutput(() => OutputFolder.Write(folder, [.. Results(predicted, cancellation)], request.Force, cancellation));
+        => TryOutput(() => OutputFolder.Write(folder, [.. Results(predicted, cancellation)], request.Force, predicted.Prediction.IsRigorous ? [] : GratingNames, cancellation));
 
     private IEnumerable<OutputFile> Results(PredictedStructure predicted, CancellationToken cancellation)
     {
         yield return new OutputFile(SpectraCsv.FileName, stream => SpectraCsv.Write(predicted.Prediction, stream));
         yield return OutputFile.FromBytes(PredictionJson.FileName, PredictionJson.Write(predicted));
-        foreach ((string name, byte[] bytes) in PredictionFigures.Render(predicted.Prediction, request.FigureSize, cancellation))
+        if (predicted.Prediction.IsRigorous)
+        {
+            yield return new OutputFile(OrdersCsv.FileName, stream => OrdersCsv.Write(predicted.Prediction, stream));
+            yield return new OutputFile(AbsorptionCsv.FileName, stream => AbsorptionCsv.Write(predicted.Prediction, stream));
+        }
+        foreach ((string name, byte[] bytes) in PredictionFigures.Render(predicted.Prediction, request.FigureSize, request.Overlays, cancellation))
             yield return OutputFile.FromBytes(name, bytes);
     }
 

@@ -36,10 +36,12 @@ internal static class PredictionTable
 
     private static string Summary(StructurePrediction prediction)
     {
-        string rule = prediction.Mixing is null ? "" : $", {prediction.Mixing} mixing";
+        string how = prediction.IsRigorous
+            ? "grating solver, rigorous for this section"
+            : string.Create(CultureInfo.InvariantCulture, $"multilayer solver{(prediction.Mixing is null ? "" : $", {prediction.Mixing} mixing")}, {prediction.FilmCount} films");
         PredictionConditions conditions = prediction.Conditions;
         return string.Create(CultureInfo.InvariantCulture,
-            $"{prediction.Solver} solver{rule}, {prediction.FilmCount} films, {PolarizationNames.Of(conditions.Polarization)}, {conditions.Illuminant.Name}, {StandardObservers.NameOf(conditions.Observer)}, error estimate {prediction.ErrorEstimate:0.0e+0}");
+            $"{how}, {PolarizationNames.Of(conditions.Polarization)}, {conditions.Illuminant.Name}, {StandardObservers.NameOf(conditions.Observer)}, error estimate {prediction.ErrorEstimate:0.0e+0}");
     }
 
     private static string Row(View view, TerminalColors colors)
@@ -77,6 +79,10 @@ internal static class PredictionTable
             yield return string.Create(CultureInfo.InvariantCulture,
                 $"The main peak of the smallest angle moves as for an effective index of {shift.EffectiveIndex:0.000} ({shift.NormalWavelengthNm:0.0} nm at normal incidence, {shift.ResidualNm:0.00} nm rms).");
         }
+        if (prediction.IsRigorous)
+            yield return $"'Rigorous' means: solved without averaging, for {prediction.Picture}.";
+        if (LayerModelLine.Of(prediction) is string compared)
+            yield return compared;
         WavelengthGrid grid = prediction.Conditions.Wavelengths;
         if (grid.StartNm > SpectrumFeatures.UltravioletStartNm || grid.StopNm < SpectrumFeatures.VisibleEndNm)
             yield return string.Create(CultureInfo.InvariantCulture, $"'mean R' is over the part of 300-700 nm that {grid.StartNm}-{grid.StopNm} nm covers.");

@@ -30,7 +30,7 @@ internal static class SampleCommand
         try
         {
             OutputFolder.Write(
-                folder, [OutputFile.FromText(ReadmeName, Readme(samples)), .. samples.Select(sample => OutputFile.FromText(sample.FileName, sample.Text))], force, cancellation);
+                folder, [OutputFile.FromText(ReadmeName, Readme(samples)), .. samples.Select(sample => OutputFile.FromText(sample.FileName, sample.Text))], force, [], cancellation);
         }
         catch (OutputException fault)
         {

@@ -18,11 +18,12 @@ public static class PredictionFigures
     /// <summary>Every figure in every format, drawn on as many threads as the prediction was given; the bytes do not depend on them.</summary>
     /// <param name="prediction">What to draw.</param>
     /// <param name="size">Width of both figures.</param>
+    /// <param name="overlays">Whether the reflectance figure also holds, dashed, what the layer model says beside the rigorous solution or the reverse.</param>
     /// <param name="cancellation">Ends the drawing early with an <see cref="OperationCanceledException"/>.</param>
-    public static IReadOnlyList<(string FileName, byte[] Bytes)> Render(StructurePrediction prediction, FigureSize size, CancellationToken cancellation = default)
+    public static IReadOnlyList<(string FileName, byte[] Bytes)> Render(StructurePrediction prediction, FigureSize size, bool overlays = false, CancellationToken cancellation = default)
     {
         ArgumentNullException.ThrowIfNull(prediction);
-        var figures = new Lazy<Figure>[] { new(() => ReflectanceFigure.Draw(prediction, size)), new(() => SectionFigure.Draw(prediction, size)) };
+        var figures = new Lazy<Figure>[] { new(() => ReflectanceFigure.Draw(prediction, size, overlays)), new(() => SectionFigure.Draw(prediction, size)) };
         var files = new (string, byte[])[FileNames.Count];
         var options = new ParallelOptions { MaxDegreeOfParallelism = prediction.Conditions.Threads, CancellationToken = cancellation };
         Parallel.For(0, files.Length, options, file =>

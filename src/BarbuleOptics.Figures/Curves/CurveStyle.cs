@@ -17,9 +17,15 @@ internal static class CurveStyle
         null, [5, 1.6], [1.2, 1.2], [6, 1.5, 1.2, 1.5], [2.6, 1.3], [6, 1.3, 1.2, 1.3, 1.2, 1.3],
     ];
 
+    // Shorter than the dashes of a second curve, longer than the dots of a third.
+    private static readonly double[] OtherDash = [3, 1.8];
+
     /// <summary>The line of curve number <paramref name="index"/>; dashes come again after six, then thinner.</summary>
     public static Stroke Of(int index, CieColor? color)
         => new(InkOf(color), index / Dashes.Length % 2 == 0 ? 1 : 0.6, Dashes[index % Dashes.Length]);
+
+    /// <summary>The line of what the other solver says.</summary>
+    public static Stroke OfOther(CieColor? color) => new(InkOf(color), 0.8, OtherDash);
 
     /// <summary>The brightened color, darkened in turn where it would be pale on white.</summary>
     public static SrgbColor InkOf(CieColor? color)

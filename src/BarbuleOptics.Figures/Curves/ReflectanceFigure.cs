@@ -24,56 +24,85 @@ public sealed class ReflectanceFigure
     private readonly List<PageElement> _elements = [];
     private readonly PlotFrame _frame;
     private readonly int _labelEvery;
+    private readonly LayerModelError?[] _others;
     private bool _explainsTint;
 
-    private ReflectanceFigure(StructurePrediction prediction, FigureSize size)
+    private ReflectanceFigure(StructurePrediction prediction, FigureSize size, bool overlays)
     {
         (_prediction, _views, _widthPt) = (prediction, prediction.Views, size.WidthPt);
+        _others = [.. _views.Select(view => overlays ? view.LayerModelError : null)];
         double height = Math.Min(215, Math.Max(130, _widthPt * 0.62));
-        _labelEvery = (int)Math.Ceiling(_views.Count / Math.Min(MostLabels, EndLabels.Capacity(height - 40)));
-        double right = _widthPt - MarginPt - EndLabels.RoomPt(Labeled.Select(view => Degrees.Text(view.Incidence)));
-        _frame = PlotFrame.Within(Grid, _views.Max(view => Greatest(view.Reflectance)), new Box(MarginPt, MarginPt + Ink.SmallPt / 2, right, height));
+        int labels = EndLabels.Capacity(height - 40) / (HasOthers ? 2 : 1);
+        _labelEvery = (int)Math.Ceiling(_views.Count / Math.Min(MostLabels, labels));
+        double right = _widthPt - MarginPt - EndLabels.RoomPt(Enumerable.Range(0, _views.Count).Where(IsLabeled).SelectMany(Labels));
+        double greatest = _views.Select(view => view.Reflectance).Concat(_others.OfType<LayerModelError>().Select(other => other.OtherReflectance)).Max(Greatest);
+        _frame = PlotFrame.Within(Grid, greatest, new Box(MarginPt, MarginPt + Ink.SmallPt / 2, right, height));
     }
 
     private WavelengthGrid Grid => _prediction.Conditions.Wavelengths;
 
-    private IEnumerable<View> Labeled => _views.Where((_, i) => IsLabeled(i));
+    private bool HasOthers => _others.Any(other => other is not null);
+
+    /// <summary>What the solver of the overlaid curves is called.</summary>
+    private string OtherName => _prediction.IsRigorous ? "layer model" : "rigorous";
 
     /// <summary>Lays the figure out.</summary>
     /// <remarks>Curves are drawn in the predicted color, brought to a lightness that reads on white; the swatches hold the colors
-    /// themselves. Beyond twelve angles not every curve is labeled, and the note says so.</remarks>
+    /// themselves. Overlaid curves, one beside each, are dashed, and their swatches lie under those of the others. Beyond twelve angles not every curve is labeled, and the note says so.</remarks>
     /// <exception cref="ArgumentException">The prediction has no view.</exception>
-    public static Figure Draw(StructurePrediction prediction, FigureSize size)
+    public static Figure Draw(StructurePrediction prediction, FigureSize size, bool overlays = false)
     {
         ArgumentNullException.ThrowIfNull(prediction);
         if (prediction.Views.Count == 0)
             throw new ArgumentException("Must have at least one view.", nameof(prediction));
-        return new Figure(new ReflectanceFigure(prediction, size).Compose());
+        return new Figure(new ReflectanceFigure(prediction, size, overlays).Compose());
     }
 
     private Page Compose()
     {
-        IReadOnlyList<int>[] samples = [.. _views.Select(view => CurveTrace.Of(view.Reflectance, _frame))];
-        IReadOnlyList<Point>[] traces = [.. _views.Select((view, i) => samples[i].Select(k => _frame.At(Grid.Nanometres[k], view.Reflectance[k])).ToArray())];
-        Stroke[] strokes = [.. _views.Select((view, i) => CurveStyle.Of(i, view.Color))];
+        (int View, string Label, Spectrum Reflectance, Stroke Stroke)[] curves = [.. Curves()];
+        IReadOnlyList<int>[] samples = [.. curves.Select(curve => CurveTrace.Of(curve.Reflectance, _frame))];
+        IReadOnlyList<Point>[] traces = [.. curves.Select((curve, i) => samples[i].Select(k => _frame.At(Grid.Nanometres[k], curve.Reflectance[k])).ToArray())];
         var marks = new List<PlotMark>();
         if (Ultraviolet is (double fromNm, double toNm))
             marks.Add(new PlotBand(fromNm, toNm, Ink.Tint));
-        marks.AddRange(_views.Select((view, i) => new PlotCurve([.. samples[i].Select(k => (Grid.Nanometres[k], PlotFrame.Percent(view.Reflectance[k])))], strokes[i])));
-        (SpectralPeak Peak, SrgbColor Color)[] peaks = [.. _views.Select((view, i) => (Peak: PeakOf(view)!, strokes[i].Color)).Where(pair => pair.Peak is not null)];
+        marks.AddRange(curves.Select((curve, i) => new PlotCurve([.. samples[i].Select(k => (Grid.Nanometres[k], PlotFrame.Percent(curve.Reflectance[k])))], curve.Stroke)));
+        (SpectralPeak Peak, SrgbColor Color)[] peaks = [.. _views.Select(view => (Peak: PeakOf(view)!, CurveStyle.InkOf(view.Color))).Where(pair => pair.Peak is not null)];
         bool marksPeaks = _views.Count <= MostLabels;
         if (marksPeaks)
             marks.AddRange(peaks.Select(pair => new PlotPeak(pair.Peak.WavelengthNm, PlotFrame.Percent(pair.Peak.Reflectance), pair.Color)));
         _elements.Add(_frame.Panel(marks));
         NameUltraviolet(traces);
         _frame.Write(_elements);
-        EndLabels.Draw(_elements, _frame.Plot, [.. _views.Select((view, i) => (Degrees.Text(view.Incidence), traces[i][^1], strokes[i])).Where((_, i) => IsLabeled(i))]);
+        EndLabels.Draw(_elements, _frame.Plot, [.. curves.Select((curve, i) => (curve.Label, traces[i][^1], curve.Stroke)).Where((_, i) => IsLabeled(curves[i].View))]);
         bool allPeaks = marksPeaks && NamePeaks(traces, peaks);
 
         double bottom = _frame.Plot.Bottom + 26 + LabelGapPt;
-        bottom = SwatchTable.Draw(_elements, _views, allPeaks ? null : PeakOf, MarginPt, _widthPt - MarginPt, bottom);
+        bottom = SwatchTable.Draw(_elements, _views, HasOthers ? (OtherName, _others) : null, allPeaks ? null : PeakOf, MarginPt, _widthPt - MarginPt, bottom);
         bottom = NoteBlock.Add(_elements, Notes(), MarginPt, _widthPt - MarginPt, bottom + LabelGapPt);
         return new Page($"Reflectance of {_prediction.Barbule.Name}", _widthPt, bottom + MarginPt, _elements);
+    }
+
+    /// <summary>A curve an angle, and where there are others, one of them behind each.</summary>
+    private IEnumerable<(int View, string Label, Spectrum Reflectance, Stroke Stroke)> Curves()
+    {
+        for (int i = 0; i < _views.Count; i++)
+        {
+            string[] labels = [.. Labels(i)];
+            // Dashes tell angles apart, or solvers.
+            yield return (i, labels[0], _views[i].Reflectance, CurveStyle.Of(HasOthers ? 0 : i, _views[i].Color));
+            if (_others[i] is LayerModelError other)
+                yield return (i, labels[1], other.OtherReflectance, CurveStyle.OfOther(other.OtherColor));
+        }
+    }
+
+    /// <summary>What is written beside the curves of a view; two solvers at one angle are told apart by their names.</summary>
+    private IEnumerable<string> Labels(int view)
+    {
+        string angle = Degrees.Text(_views[view].Incidence);
+        if (_others[view] is null)
+            return [angle];
+        return _views.Count == 1 ? [_prediction.IsRigorous ? "rigorous" : "layer model", OtherName] : [angle, $"{angle} {OtherName}"];
     }
 
     /// <summary>Wavelengths that birds see and people do not, as far as they are shown: they lie on light gray.</summary>
@@ -129,7 +158,9 @@ public sealed class ReflectanceFigure
             Polarizations.S => "s-polarized light",
             _ => "p-polarized light",
         };
-        yield return $"Specular reflectance, {light}.";
+        yield return _views.Count == 1 && HasOthers ? $"Specular reflectance at {Degrees.Text(_views[0].Incidence)}, {light}." : $"Specular reflectance, {light}.";
+        foreach (string sentence in SolverNotes())
+            yield return sentence;
         if (_views.Any(view => view.Color is not null))
             yield return $"Colors: illuminant {conditions.Illuminant.Name}, CIE 1931 2° observer; a perfect mirror is white.";
         string[] outside = [.. _views.Where(view => view.Color is { InSrgbGamut: false }).Select(view => Degrees.Text(view.Incidence))];
@@ -141,6 +172,14 @@ public sealed class ReflectanceFigure
             yield return "Gray: ultraviolet.";
         if (_labelEvery > 1)
             yield return string.Create(CultureInfo.InvariantCulture, $"{_views.Count} angles; one curve in {_labelEvery} is labeled, and the last.");
+    }
+
+    private IEnumerable<string> SolverNotes()
+    {
+        yield return _prediction.IsRigorous ? "Rigorous for this section (infinite, flat, perfectly periodic)."
+            : _prediction.Mixing is string rule ? $"Layer model, {rule} mixing." : "Multilayer solver.";
+        if (_others.OfType<LayerModelError>().FirstOrDefault() is LayerModelError other)
+            yield return _prediction.IsRigorous ? $"Dashed: layer model, {other.Mixing} mixing." : "Dashed: rigorous for this section (infinite, flat, perfectly periodic).";
     }
 
     private bool IsLabeled(int view) => view % _labelEvery == 0 && view + _labelEvery / 2 < _views.Count - 1 || view == _views.Count - 1;

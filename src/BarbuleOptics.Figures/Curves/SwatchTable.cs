@@ -35,12 +35,15 @@ internal sealed class SwatchTable
         _column = (right - widest / 2 - _firstColumn) / views.Count;
     }
 
+    private static string OtherText(string solver) => $"  by {(solver == "rigorous" ? "rigorous solver" : solver)}";
+
     private static string AsComputedText => "Color as computed";
 
     private static string BrightenedText => FormattableString.Invariant($"Brightened to L* {SrgbEncoder.BrightenedLightness}");
 
     /// <summary>Draws the table; its bottom.</summary>
-    public static double Draw(List<PageElement> elements, IReadOnlyList<View> views, Func<View, SpectralPeak?>? peak, double left, double right, double top)
+    public static double Draw(
+        List<PageElement> elements, IReadOnlyList<View> views, (string Solver, IReadOnlyList<LayerModelError?> Found)? others, Func<View, SpectralPeak?>? peak, double left, double right, double top)
     {
         var table = new SwatchTable(elements, views, left, right, top);
         bool withColors = views.Any(view => view.Color is not null);
@@ -52,8 +55,8 @@ internal sealed class SwatchTable
         table.Texts(rows);
         if (withColors)
         {
-            table.Swatches(AsComputedText, color => color.Srgb);
-            table.Swatches(BrightenedText, color => color.SrgbBrightened);
+            table.Swatches(AsComputedText, color => color.Srgb, others);
+            table.Swatches(BrightenedText, color => color.SrgbBrightened, others);
         }
         return table._top - RowGapPt;
     }
@@ -73,14 +76,21 @@ internal sealed class SwatchTable
         }
     }
 
-    private void Swatches(string name, Func<CieColor, SrgbColor> color)
+    private void Swatches(string name, Func<CieColor, SrgbColor> color, (string Solver, IReadOnlyList<LayerModelError?> Found)? others)
+    {
+        Swatches(name, color, [.. _views.Select(view => view.Color)]);
+        if (others is var (solver, found))
+            Swatches(OtherText(solver), color, [.. found.Select(other => other?.OtherColor)]);
+    }
+
+    private void Swatches(string name, Func<CieColor, SrgbColor> color, CieColor?[] colors)
     {
         Name(name, _top + SwatchPt / 2);
         double gap = _column > 8 ? 2 : 0;
         var outlines = new Shape();
         for (int i = 0; i < _views.Count; i++)
         {
-            if (_views[i].Color is not CieColor found)
+            if (colors[i] is not CieColor found)
                 continue;
             var box = new Box(_firstColumn + i * _column + gap / 2, _top, _firstColumn + (i + 1) * _column - gap / 2, _top + SwatchPt);
             _elements.Add(new FilledShape(Shape.Rectangle(box), color(found)));

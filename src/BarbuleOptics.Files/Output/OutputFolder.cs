@@ -14,18 +14,20 @@ public static class OutputFolder
     /// <param name="folder">As the user named it; messages repeat it.</param>
     /// <param name="files">What to write, each under a name of its own.</param>
     /// <param name="force">Whether files that are there are replaced; otherwise they are refused before anything is written.</param>
+    /// <param name="obsolete">Names of files of an earlier run that this one does not write: taken away where files may be replaced, refused otherwise.</param>
     /// <param name="cancellation">Ends the writing with nothing left behind; no longer heeded once the renames begin.</param>
     /// <exception cref="OutputException">The output cannot be written.</exception>
     /// <exception cref="OperationCanceledException">Cancelled.</exception>
     /// <exception cref="ArgumentException">Two files have one name, letter case aside.</exception>
-    public static void Write(string folder, IReadOnlyList<OutputFile> files, bool force, CancellationToken cancellation = default)
+    public static void Write(string folder, IReadOnlyList<OutputFile> files, bool force, IReadOnlyList<string> obsolete, CancellationToken cancellation = default)
     {
         ArgumentException.ThrowIfNullOrEmpty(folder);
         ArgumentNullException.ThrowIfNull(files);
+        ArgumentNullException.ThrowIfNull(obsolete);
         if (files.DistinctBy(file => file.Name, StringComparer.OrdinalIgnoreCase).Count() < files.Count)
             throw new ArgumentException("Must have names that differ.", nameof(files));
         cancellation.ThrowIfCancellationRequested();
-        RefuseExisting(folder, files.Select(file => file.Name), force);
+        RefuseExisting(folder, files.Select(file => file.Name).Concat(obsolete), force);
         using var undo = new Undo();
         Guarded(folder, () => MakeFolder(folder, undo));
         List<(string Temporary, string Final)> written = [];
@@ -41,6 +43,8 @@ public static class OutputFolder
         List<string> replaced = [];
         foreach ((string temporary, string final) in written)
             Guarded(final, () => Rename(temporary, final, force, replaced, undo));
+        foreach (string path in obsolete.Select(name => Path.Combine(folder, name)).Where(File.Exists))
+            Guarded(path, () => MoveAside(path, $"{path}.{Path.GetRandomFileName()}.old", replaced, undo));
         undo.Forget();
         foreach (string path in replaced)
             DeleteQuietly(path);
@@ -113,10 +117,7 @@ public static class OutputFolder
     {
         if (force && File.Exists(final))
         {
-            string aside = temporary + ".old";
-            File.Move(final, aside);
-            undo.Add(() => File.Move(aside, final, overwrite: true));
-            replaced.Add(aside);
+            MoveAside(final, temporary + ".old", replaced, undo);
         }
         else if (File.Exists(final))
         {
@@ -124,6 +125,13 @@ public static class OutputFolder
         }
         File.Move(temporary, final);
         undo.Add(() => File.Delete(final));
+    }
+
+    private static void MoveAside(string path, string aside, List<string> replaced, Undo undo)
+    {
+        File.Move(path, aside);
+        undo.Add(() => File.Move(aside, path, overwrite: true));
+        replaced.Add(aside);
     }
 
     private static void Guarded(string path, Action action)

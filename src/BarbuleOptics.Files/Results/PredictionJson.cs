@@ -59,9 +59,10 @@ public static class PredictionJson
         json.WriteEndObject();
         WriteStructure(json, predicted);
         json.WriteString("solver", prediction.Solver);
+        json.WriteString("picture", prediction.Picture);
         json.WriteString("mixing", prediction.Mixing);
         json.WriteString("core_mixing", prediction.CoreMixing);
-        json.WriteNumber("films", prediction.FilmCount);
+        WriteOptional(json, "films", prediction.FilmCount);
         json.WriteNumber("accuracy_asked", prediction.Conditions.Accuracy);
         json.WriteNumber("error_estimate", prediction.ErrorEstimate);
         json.WriteString("reference", "mirror");
@@ -74,7 +75,7 @@ public static class PredictionJson
         json.WriteEndObject();
         json.WriteStartArray("views");
         foreach (View view in prediction.Views)
-            WriteView(json, view);
+            WriteView(json, view, prediction);
         json.WriteEndArray();
         WriteTrack(json, prediction.Track);
         WriteWarnings(json, prediction.Warnings);
@@ -132,7 +133,7 @@ public static class PredictionJson
         json.WriteEndArray();
     }
 
-    private static void WriteView(Utf8JsonWriter json, View view)
+    private static void WriteView(Utf8JsonWriter json, View view, StructurePrediction prediction)
     {
         json.WriteStartObject();
         json.WriteNumber("incidence_deg", view.Incidence.Degrees);
@@ -151,7 +152,24 @@ public static class PredictionJson
             json.WriteNull("hue");
         }
         json.WriteNull("bird");
-        json.WriteNull("layer_model_error");
+        WriteLayerModelError(json, view.LayerModelError);
+        PowerJson.Write(json, view, prediction);
+        json.WriteEndObject();
+    }
+
+    private static void WriteLayerModelError(Utf8JsonWriter json, LayerModelError? error)
+    {
+        if (error is null)
+        {
+            json.WriteNull("layer_model_error");
+            return;
+        }
+        json.WriteStartObject("layer_model_error");
+        json.WriteString("mixing", error.Mixing);
+        WriteOptional(json, "peak_shift_nm", error.PeakShiftNm);
+        json.WriteNumber("largest_change", error.LargestChange);
+        json.WriteNumber("largest_change_at_nm", error.LargestChangeAtNm);
+        WriteOptional(json, "ciede2000", error.Ciede2000);
         json.WriteEndObject();
     }
 
@@ -238,7 +256,8 @@ public static class PredictionJson
         json.WriteEndArray();
     }
 
-    private static void WriteOptional(Utf8JsonWriter json, string name, double? value)
+    /// <summary>A number, or null.</summary>
+    internal static void WriteOptional(Utf8JsonWriter json, string name, double? value)
     {
         if (value is double number)
             json.WriteNumber(name, number);

@@ -27,6 +27,9 @@ public sealed record Section(
     /// <summary>Whether the rods lie along the plane of incidence.</summary>
     public bool IsAlong => Axis.Degrees == 90;
 
+    /// <summary>Whether all of it is films, so that the multilayer solver is exact and the direction of the rods means nothing.</summary>
+    public bool IsFilms => Runs.All(run => run.IsFilm);
+
     /// <summary>The period of the whole section along the surface, in nm; null without rows, or where the spacings have no common
     /// period of at most six cells of each.</summary>
     public double? PeriodNm => Runs.Count == 0 ? null : CommonPeriod.Of([.. Runs.Select(run => run.SpacingNm)]);

@@ -15,4 +15,8 @@ public sealed record SectionRun(int LayerNumber, double SpacingNm, double PitchN
 
     /// <summary>Depth of the cell's bottom below a row's center, in nm.</summary>
     public double CellBottomNm { get; } = Cell.Max(body => body.BottomNm);
+
+    /// <summary>Whether its rows are closed films: solid platelets that fill their spacing side by side, for which films are exact.</summary>
+    public bool IsFilm { get; } = Cell.Count == 1 && Cell[0].Core is null && Cell[0].Outer.Shape == OutlineShape.Rectangle
+        && 2 * Cell[0].Outer.HalfWidthNm >= SpacingNm - SectionBuilder.TouchingNm;
 }

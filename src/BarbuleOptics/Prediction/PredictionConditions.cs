@@ -31,8 +31,15 @@ public sealed record PredictionConditions
     /// <exception cref="ArgumentOutOfRangeException">Not a finite number above 0.</exception>
     public double Accuracy { get; init => field = Guard.Positive(value); } = 1e-4;
 
-    /// <summary>How rows are averaged into films.</summary>
-    public IMixingRule Mixing { get; init; } = MixingRules.Default;
+    /// <summary>Which solver is asked for; the rigorous one wherever films are not exact unless set.</summary>
+    public SolverChoice Solver { get; init; } = SolverChoice.Auto;
+
+    /// <summary>How rows are averaged into films; naming a rule asks for the layer model, and none is named unless set.</summary>
+    public IMixingRule? Mixing { get; init; }
+
+    /// <summary>Whether the layer model is solved beside every rigorous result, and the rigorous solution beside every result by a rule that was named,
+    /// so that views say how far apart they are; true unless set.</summary>
+    public bool ComparesSolvers { get; init; } = true;
 
     /// <summary>The light under which colors are computed; D65 unless set.</summary>
     public Illuminant Illuminant { get; init; } = Illuminant.D65;

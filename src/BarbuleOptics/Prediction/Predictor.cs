@@ -3,7 +3,6 @@ using BarbuleOptics.Anatomy;
 using BarbuleOptics.Color;
 using BarbuleOptics.Layering;
 using BarbuleOptics.Materials;
-using BarbuleOptics.Multilayer;
 using BarbuleOptics.Quantities;
 using BarbuleOptics.Spectra;
 
@@ -12,94 +11,111 @@ namespace BarbuleOptics.Prediction;
 /// <summary>The main job: from a measured structure to spectra, color and hue, with what they lean on.</summary>
 public static class Predictor
 {
-    /// <summary>Change of R on halving the slices that is allowed whatever accuracy is asked for.</summary>
-    private const double MostSliceChange = 1e-5;
-
-    /// <summary>The one place that names the solver of films.</summary>
-    private static readonly ReferenceFilmSolver Solver = new();
-
-    /// <summary>Predicts what <paramref name="barbule"/> does to light, by the multilayer solver.</summary>
+    /// <summary>Predicts what <paramref name="barbule"/> does to light.</summary>
     /// <param name="barbule">The structure; its central measurements are used.</param>
-    /// <param name="conditions">How it is looked at.</param>
+    /// <param name="conditions">How it is looked at, and by which solver.</param>
     /// <param name="catalog">Where its materials are.</param>
     /// <param name="prediction">The prediction; null when there are problems.</param>
     /// <param name="problems">Everything that forbids one, each with the key at fault.</param>
+    /// <param name="progress">Told the share of the work that is done, 0 to 1, from any thread; null for nobody.</param>
     /// <param name="cancellation">Ends the work early with an <see cref="OperationCanceledException"/>.</param>
+    /// <exception cref="ArgumentException">A mixing rule is named beside <see cref="SolverChoice.Grating"/>.</exception>
     public static bool TryPredict(
         Barbule barbule, PredictionConditions conditions, IMaterialCatalog catalog, [NotNullWhen(true)] out StructurePrediction? prediction,
-        out IReadOnlyList<AnatomyProblem> problems, CancellationToken cancellation = default)
+        out IReadOnlyList<AnatomyProblem> problems, IProgress<double>? progress = null, CancellationToken cancellation = default)
     {
         ArgumentNullException.ThrowIfNull(barbule);
         ArgumentNullException.ThrowIfNull(conditions);
         ArgumentNullException.ThrowIfNull(catalog);
+        if (conditions is { Solver: SolverChoice.Grating, Mixing: not null })
+            throw new ArgumentException("The grating solver averages nothing, so that no mixing rule can be named beside it.", nameof(conditions));
         prediction = null;
         if (!SectionBuilder.TryBuild(barbule, out Section? section, out problems))
             return false;
-        problems = [.. FilmProblems(section), .. MaterialCheck.Find(MaterialUse.Of(barbule, section), conditions.Wavelengths, catalog)];
+        SolverPlan plan = SolverPlan.Of(section, conditions);
+        problems = [.. AxisProblems(section, plan), .. MaterialCheck.Find(MaterialUse.Of(barbule, section), conditions.Wavelengths, catalog)];
         if (problems.Count > 0)
             return false;
-        prediction = Predict(barbule, section, conditions, catalog, cancellation);
+        prediction = Predict(barbule, section, plan, conditions, catalog, progress, cancellation);
         return true;
     }
 
-    private static IEnumerable<AnatomyProblem> FilmProblems(Section section)
+    private static IEnumerable<AnatomyProblem> AxisProblems(Section section, SolverPlan plan)
     {
-        if (!section.IsAcross && !section.IsAlong)
+        if (!plan.IsRigorous && !SolverPlan.HasLayerModel(section))
         {
             yield return new AnatomyProblem("barbule.axis", FormattableString.Invariant(
-                $"found {section.Axis.Degrees} degrees; the multilayer solver allows across (0) or along (90) only"));
+                $"found {section.Axis.Degrees} degrees; the layer model allows across (0) or along (90) only, the grating solver any angle: leave --mixing and --solver multilayer out"));
         }
     }
 
     private static StructurePrediction Predict(
-        Barbule barbule, Section section, PredictionConditions conditions, IMaterialCatalog catalog, CancellationToken cancellation)
+        Barbule barbule, Section section, SolverPlan plan, PredictionConditions conditions, IMaterialCatalog catalog, IProgress<double>? progress,
+        CancellationToken cancellation)
     {
-        // The estimate of the error is twice the change.
         bool thinBack = HoldsNoFringe(section, conditions.Wavelengths, catalog);
         if (thinBack)
             section = section with { Back = section.Back! with { Coherent = true } };
-        double ofAny = conditions.Accuracy / 2, ofReflectance = Math.Min(MostSliceChange, ofAny);
-        LayerModel model = LayerModel.Of(section, catalog, conditions.Mixing, conditions.Wavelengths, conditions.Incidences, ofReflectance, ofAny, Solver, cancellation);
-        FilmResponses responses = FilmResponses.Solve(Solver, model, conditions, cancellation);
+        GratingResponses? rigorous = plan.SolvesSection ? GratingResponses.Solve(section, conditions, catalog, progress, cancellation) : null;
+        LayerModelResponses? films = plan.SolvesFilms ? LayerModelResponses.Solve(section, plan, conditions, catalog, plan.SolvesSection ? null : progress, cancellation) : null;
+        double error = plan.IsRigorous ? rigorous!.ErrorEstimate : films!.ErrorEstimate;
 
         List<Material> materials = [.. MaterialUse.Of(barbule, section).Select(use => Find(catalog, use.Reference)).Distinct()];
-        var warnings = new WarningCollector(barbule, section, conditions);
+        Material surround = Find(catalog, section.Surround);
+        var warnings = new WarningCollector(barbule, section, conditions, plan.IsRigorous);
         warnings.AboutStructure(materials);
         if (thinBack)
             warnings.AboutThinBack();
-        Material surround = Find(catalog, section.Surround);
-        warnings.AboutSpacing(surround, Find(catalog, barbule.Matrix));
-        double error = Math.Max(model.SliceError, responses.ErrorEstimate);
-        warnings.AboutAccuracy(error, conditions.Accuracy);
+        warnings.AboutOrders(surround, Find(catalog, barbule.Matrix));
+        if (plan.IsRigorous)
+            warnings.AboutAccuracy(rigorous!);
+        else
+            warnings.AboutSlices(error);
 
         var colorimeter = new Colorimeter(conditions.Wavelengths, conditions.Illuminant, conditions.Observer);
         warnings.AboutCoverage(colorimeter.CanMeasure, colorimeter.CoversObserver);
-        var views = new List<View>();
-        foreach (SpectralResponse response in responses.Of(conditions.Polarization))
-        {
-            CieColor? color = colorimeter.CanMeasure ? colorimeter.Measure(response.Reflectance) : null;
-            var view = new View(response.Incidence, response.Polarization, response.Reflectance, SpectrumFeatures.Of(response.Reflectance), color);
-            views.Add(view);
+        View[] views = [.. ViewsOf(plan.IsRigorous ? rigorous!.Powers : films!.Powers, colorimeter)];
+        if (rigorous is not null && films is not null)
+            views = Compared(views, [.. ViewsOf(plan.IsRigorous ? films.Powers : rigorous.Powers, colorimeter)], plan);
+        foreach (View view in views)
             warnings.AboutView(view);
-        }
+        warnings.AboutLayerModel(views);
 
         return new StructurePrediction
         {
             Barbule = barbule,
             Section = section,
             Conditions = conditions,
-            Solver = StructurePrediction.MultilayerSolver,
-            Mixing = section.Runs.Count > 0 ? conditions.Mixing.Name : null,
+            Solver = plan.IsRigorous ? SolverNames.Grating : SolverNames.Multilayer,
+            Mixing = plan.IsRigorous || section.IsFilms ? null : plan.Rule.Name,
             CoreMixing = section.Materials.Any(material => material.IsAveraged) ? PorousCore.Name : null,
             ErrorEstimate = error,
-            FilmCount = model.FilmCount,
+            FilmCount = plan.IsRigorous ? null : films!.FilmCount,
             Materials = [.. materials],
-            Responses = [.. conditions.AllPolarizations ? responses.All : responses.Of(conditions.Polarization)],
+            Responses = [.. (plan.IsRigorous ? rigorous!.Powers : films!.Powers).All],
+            Orders = plan.IsRigorous ? [.. rigorous!.Orders] : [],
+            Losses = plan.IsRigorous ? [.. rigorous!.Losses] : [],
             Views = [.. views],
             Track = TrackOf(views, surround),
             Warnings = warnings.All,
         };
     }
+
+    private static IEnumerable<View> ViewsOf(PowerTable powers, Colorimeter colorimeter)
+        => powers.Seen.Select(response => new View(
+            response.Incidence, response.Polarization, response.Reflectance, SpectrumFeatures.Of(response.Reflectance),
+            colorimeter.CanMeasure ? colorimeter.Measure(response.Reflectance) : null)
+        {
+            Powers = PowerSummary.Of(response),
+        });
+
+    private static View[] Compared(View[] views, View[] others, SolverPlan plan)
+        => [.. views.Zip(others, (view, other) => view with
+        {
+            LayerModelError = plan.IsRigorous
+                ? LayerModelError.Between(plan.Rule.Name, layerModel: other, rigorous: view, showsLayerModel: false)
+                : LayerModelError.Between(plan.Rule.Name, layerModel: view, rigorous: other, showsLayerModel: true),
+        })];
 
     /// <summary>Whether the backing is to be averaged over thickness but is thinner than half a wave somewhere in the spectrum: no such
     /// thickness varies by a fringe. Decided once for the whole spectrum, so that it has no step.</summary>
@@ -108,7 +124,7 @@ public static class Predictor
             && back.Thickness.CentralNm < grid.StopNm / (2 * Find(catalog, section.Backing).N.At(grid.StopNm));
 
     /// <summary>The peak followed from the smallest angle up, in whatever order the angles were asked for.</summary>
-    private static PeakTrack TrackOf(List<View> views, Material surround)
+    private static PeakTrack TrackOf(IEnumerable<View> views, Material surround)
     {
         View[] ordered = [.. views.OrderBy(view => view.Incidence.Degrees)];
         double peakNm = ordered[0].Features.MainPeak?.WavelengthNm ?? ordered[0].Reflectance.Grid.StartNm;

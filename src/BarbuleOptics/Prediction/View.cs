@@ -11,4 +11,11 @@ namespace BarbuleOptics.Prediction;
 /// <param name="Reflectance">Specular reflectance.</param>
 /// <param name="Features">Its peaks, brightness and contrast.</param>
 /// <param name="Color">Its CIE color; null where the grid leaves out visible light.</param>
-public sealed record View(Angle Incidence, Polarizations Polarization, Spectrum Reflectance, SpectrumFeatures Features, CieColor? Color);
+public sealed record View(Angle Incidence, Polarizations Polarization, Spectrum Reflectance, SpectrumFeatures Features, CieColor? Color)
+{
+    /// <summary>Where the power goes on average.</summary>
+    public required PowerSummary Powers { get; init; }
+
+    /// <summary>How far the layer model is from the rigorous solution; null where they were not compared.</summary>
+    public LayerModelError? LayerModelError { get; init; }
+}

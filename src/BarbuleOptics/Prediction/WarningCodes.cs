@@ -6,7 +6,7 @@ public static class WarningCodes
     /// <summary>A dispersion formula is used beyond the wavelengths it was published for.</summary>
     public const string IndexExtrapolated = "index-extrapolated";
 
-    /// <summary>Diffraction orders propagate in the matrix at wavelengths shown.</summary>
+    /// <summary>Diffraction orders propagate in the matrix at wavelengths shown: no mixing rule holds, and disorder smears what a grating does.</summary>
     public const string OrdersInMatrix = "orders-in-matrix";
 
     /// <summary>Diffraction orders leave into the surround at wavelengths shown.</summary>
@@ -42,6 +42,12 @@ public static class WarningCodes
     /// <summary>The grid leaves out visible light, so there is no color.</summary>
     public const string NoColor = "no-color";
 
-    /// <summary>The slices could not be made fine enough for the accuracy asked for.</summary>
+    /// <summary>The solver could not be refined to the accuracy asked for.</summary>
     public const string AccuracyNotReached = "accuracy-not-reached";
+
+    /// <summary>The layer model, asked for, gives another color than the rigorous solution.</summary>
+    public const string LayerModelError = "layer-model-error";
+
+    /// <summary>Spacings without a common period were moved to the nearest one.</summary>
+    public const string SpacingMoved = "spacing-moved";
 }

@@ -6,10 +6,16 @@ using BarbuleOptics.Quantities;
 namespace BarbuleOptics.Prediction;
 
 /// <summary>Says in words what a prediction leans on.</summary>
-internal sealed class WarningCollector(Barbule barbule, Section section, PredictionConditions conditions)
+internal sealed class WarningCollector(Barbule barbule, Section section, PredictionConditions conditions, bool isRigorous)
 {
     /// <summary>L* below which a swatch is black on any screen.</summary>
     private const double DarkestShown = 5;
+
+    /// <summary>CIEDE2000 between layer model and rigorous solution above which is warned: 1 is just noticeable side by side.</summary>
+    private const double MostColorDifference = 3;
+
+    /// <summary>The same for the reflectance, where there is no color.</summary>
+    private const double MostReflectanceChange = 0.05;
 
     private readonly List<PredictionWarning> _warnings = [];
 
@@ -25,7 +31,7 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
             if (length is MeasuredLength.Interval interval && interval.MostNm > interval.LeastNm)
                 Add(WarningCodes.IntervalMiddle, FormattableString.Invariant($"{key} is only known to lie between {interval.LeastNm} and {interval.MostNm} nm; its middle, {interval.CentralNm:0.###} nm, was used; run again with --set {key}={interval.LeastNm} and with --set {key}={interval.MostNm} to see how much it matters"));
         }
-        if (section.Runs.Any(run => run.Cell.Any(body => body.Outer.Shape == OutlineShape.Rectangle) && IsUneven(run)))
+        if (section.Runs.Any(run => run.Cell.Any(body => body.Outer.Shape == OutlineShape.Rectangle) && !run.IsFilm))
             Add(WarningCodes.BarModel, "platelets are computed as bars without end along one direction; real ones end in both; say so where you report the result");
         if (section.Materials.Any(material => material.IsAveraged))
             Add(WarningCodes.CoreAveraged, "a porous core is computed as one permittivity (three-dimensional Bruggeman average); pores near a tenth of the wavelength also scatter; if yours are as large, expect a paler color");
@@ -36,30 +42,42 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
             $"the backing of {section.Back!.Thickness.CentralNm:0.##} nm is thinner than half a wave at {conditions.Wavelengths.StopNm} nm, too thin to average over fringes; it was solved at this one thickness, as with coherent = true"));
 
     /// <summary>Each layer opens orders by its own spacing, so the longest decides; what spacings do together is said beside it.</summary>
-    public void AboutSpacing(Material surround, Material matrix)
+    public void AboutOrders(Material surround, Material matrix)
     {
-        double[] spacingsNm = [.. section.Runs.Where(IsUneven).Select(run => run.SpacingNm).Distinct()];
+        double[] spacingsNm = [.. section.Runs.Where(run => !run.IsFilm).Select(run => run.SpacingNm).Distinct()];
         if (spacingsNm.Length == 0)
             return;
         double spacingNm = spacingsNm.Max();
-        string together = spacingsNm.Length == 1 ? "" : section.PeriodNm is double periodNm
-            ? FormattableString.Invariant($"; spacings that differ repeat together after {periodNm:0.##} nm, so that weaker orders open at longer wavelengths still")
-            : "; spacings that differ open weaker orders together at longer wavelengths still";
         ReadOnlySpan<double> wavelengthsNm = conditions.Wavelengths.Nanometres;
         double? coarseNm = DiffractionOnset.LongestWithin(wavelengthsNm, wavelength => 2 * spacingNm * matrix.N.At(wavelength));
-        if (coarseNm is double coarse)
-            Add(WarningCodes.CoarseSpacing, FormattableString.Invariant($"the spacing of {spacingNm:0.##} nm is over half a wavelength in the matrix up to {coarse:0.#} nm, where averaging rows into films is a rough picture; compare --mixing rules and rely on what they agree on{together}"));
+        if (coarseNm is double coarse && !isRigorous)
+            Add(WarningCodes.CoarseSpacing, FormattableString.Invariant($"the spacing of {spacingNm:0.##} nm is over half a wavelength in the matrix up to {coarse:0.#} nm, where averaging rows into films is a rough picture; rely on the grating solver, which runs where no --mixing rule is named{Together(spacingsNm)}"));
         foreach (Angle incidence in conditions.Incidences)
         {
             double sine = Math.Sin(incidence.Radians);
             double? inMatrix = DiffractionOnset.LongestWithin(wavelengthsNm, w => DiffractionOnset.InMatrixNm(section, spacingNm, sine, surround.N.At(w), matrix.N.At(w)));
             double? inSurround = DiffractionOnset.LongestWithin(wavelengthsNm, w => DiffractionOnset.InSurroundNm(section, spacingNm, sine, surround.N.At(w)));
             if (inMatrix is double m)
-                Add(WarningCodes.OrdersInMatrix, FormattableString.Invariant($"up to {m:0.#} nm the rows act as a diffraction grating inside the barbule, where no mixing rule holds; do not rely on the spectrum there, nor on a color that rests on it"), incidence);
+                Add(WarningCodes.OrdersInMatrix, InMatrix(m), incidence);
             if (inSurround is double s)
-                Add(WarningCodes.OrdersInSurround, FormattableString.Invariant($"up to {s:0.#} nm the rows also send light in other directions than that of a mirror, which films leave out; compare with measurements at longer wavelengths only"), incidence);
+                Add(WarningCodes.OrdersInSurround, InSurround(s), incidence);
         }
     }
+
+    private string InMatrix(double lastNm)
+        => FormattableString.Invariant($"up to {lastNm:0.#} nm the rows act as a diffraction grating inside the barbule") + (isRigorous
+            ? ", which was solved as such; but no barbule is a perfect lattice, and its disorder smears the narrow resonances of light trapped there: rely on the broad features"
+            : ", where no mixing rule holds; do not rely on the spectrum there, nor on a color that rests on it: leave --mixing out for the grating solver");
+
+    private string InSurround(double lastNm)
+        => FormattableString.Invariant($"up to {lastNm:0.#} nm the rows also send light in other directions than that of a mirror") + (isRigorous
+            ? "; R, peaks and color are those of the mirror's direction alone, and diffracted_reflectance has the rest: compare with measurements that leave it out"
+            : ", which films leave out; compare with measurements at longer wavelengths only");
+
+    private string Together(double[] spacingsNm)
+        => spacingsNm.Length == 1 ? "" : section.PeriodNm is double periodNm
+            ? FormattableString.Invariant($"; spacings that differ repeat together after {periodNm:0.##} nm, so that weaker orders open at longer wavelengths still")
+            : "; spacings that differ open weaker orders together at longer wavelengths still";
 
     public void AboutCoverage(bool coversVisible, bool coversObserver)
     {
@@ -78,6 +96,24 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
             Add(WarningCodes.OutsideSrgb, "the color lies outside sRGB; its swatch is the nearest that a screen shows; report x and y, or L*, C* and h", view.Incidence);
     }
 
+    /// <summary>Says how far the layer model is off at the angle where it is worst; only where it is the result, for beside a rigorous one its
+    /// error is no reason to worry.</summary>
+    public void AboutLayerModel(IReadOnlyList<View> views)
+    {
+        if (isRigorous)
+            return;
+        View[] off = [.. views.Where(view => view.LayerModelError is LayerModelError found
+            && (found.Ciede2000 is double difference ? difference > MostColorDifference : found.LargestChange > MostReflectanceChange))];
+        if (off.Length == 0)
+            return;
+        View worst = off.MaxBy(view => view.LayerModelError!.Ciede2000 ?? view.LayerModelError!.LargestChange)!;
+        LayerModelError error = worst.LayerModelError!;
+        string color = error.Ciede2000 is double ciede ? FormattableString.Invariant($", and the color differs by {ciede:0.0} in CIEDE2000") : "";
+        string others = off.Length == 1 ? "" : FormattableString.Invariant($", the worst of {off.Length} angles");
+        Add(WarningCodes.LayerModelError, FormattableString.Invariant(
+            $"the layer model is off by {error.LargestChange:0.000} in reflectance at {error.LargestChangeAtNm:0.#} nm{color}{others}; leave --mixing out for the rigorous solution"), worst.Incidence);
+    }
+
     private string EndsOf(View view)
     {
         WavelengthGrid grid = conditions.Wavelengths;
@@ -89,15 +125,29 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
         };
     }
 
-    public void AboutAccuracy(double reached, double asked)
+    /// <summary>Says what error the slices of the layer model leave.</summary>
+    public void AboutSlices(double reached)
     {
-        if (reached > asked)
-            Add(WarningCodes.AccuracyNotReached, FormattableString.Invariant($"the depth slices reach {reached:0.0e+0} in R and T, not the {asked:0.0e+0} asked for; report the error reached, or ask for less with --accuracy"));
+        if (reached > conditions.Accuracy)
+            Add(WarningCodes.AccuracyNotReached, FormattableString.Invariant($"the depth slices reach {reached:0.0e+0} in R and T, not the {conditions.Accuracy:0.0e+0} asked for; report the error reached, or ask for less with --accuracy"));
     }
 
-    /// <summary>Platelets that fill their spacing are films and diffract nothing.</summary>
-    private static bool IsUneven(SectionRun run) => run.Cell.Count > 1 || run.Cell.Any(body =>
-        body.Outer.Shape == OutlineShape.Ellipse || body.Core is not null || 2 * body.Outer.HalfWidthNm < run.SpacingNm - SectionBuilder.TouchingNm);
+    /// <summary>Says where the rigorous solution stayed above the error asked for.</summary>
+    public void AboutAccuracy(GratingResponses rigorous)
+    {
+        (Angle Incidence, double WavelengthNm, double Error)[] missed = [.. rigorous.Errors.Where(sample => sample.Error > conditions.Accuracy)];
+        if (missed.Length == 0)
+            return;
+        (Angle incidence, double worstNm, double worst) = missed.MaxBy(sample => sample.Error);
+        double fromNm = missed.Min(sample => sample.WavelengthNm), toNm = missed.Max(sample => sample.WavelengthNm);
+        string others = missed.Length == 1 ? "" : FormattableString.Invariant(
+            $"; {missed.Length} of {rigorous.Errors.Count()} values lie above it, at {fromNm:0.###} to {toNm:0.###} nm and {List([.. missed.Select(sample => sample.Incidence.Degrees).Distinct().Order()])} degrees");
+        Add(WarningCodes.AccuracyNotReached, FormattableString.Invariant(
+            $"at {worstNm:0.###} nm the error may reach {worst:0.0e+0}, above the {conditions.Accuracy:0.0e+0} asked for{others}; report the error reached, or ask for less with --accuracy"), incidence);
+    }
+
+    private static string List(double[] values)
+        => FormattableString.Invariant(values.Length == 1 ? (FormattableString)$"{values[0]:0.##}" : $"{values[0]:0.##} to {values[^1]:0.##}");
 
     private void AboutIndices(IReadOnlyList<Material> materials)
     {

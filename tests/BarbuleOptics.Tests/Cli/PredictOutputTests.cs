@@ -30,25 +30,97 @@ public sealed class PredictOutputTests
         Assert.Equal(expected, beams);
     }
 
-    // Nothing is diffracted by films, and unpolarized is the mean of s and p.
+    // Unpolarized is the mean of s and p.
     [Theory]
     [MemberData(nameof(Samples))]
     public async Task Power_closes_on_every_line_of_every_sample(string name)
     {
         using var folder = new TemporaryFolder();
         string file = SampleFiles.Write(name, folder.Path);
-        (await Barbule.Call("predict", file, "--wavelengths", "300:780:2", "--angles", "0,30,60,85", "--out", folder["out"])).Good();
+        (await Barbule.Call("predict", file, "--wavelengths", "300:780:60", "--angles", "0,30,60,85", "--accuracy", "1e-3", "--out", folder["out"])).Good();
 
         double[][] values = [.. folder.Text("out/spectra.csv").Split('\n')[1..^1].Select(line => line.Split(',')[3..].Select(text => double.Parse(text, CultureInfo.InvariantCulture)).ToArray())];
-        Assert.Equal(4 * 3 * 241, values.Length);
+        Assert.Equal(4 * 3 * 9, values.Length);
         Assert.All(values, parts =>
         {
             Assert.All(parts, part => Assert.InRange(part, 0, 1));
-            Assert.Equal(0, parts[3]);
-            Assert.Equal(1, parts.Sum(), 1e-12);
+            Assert.Equal(1, parts.Sum(), 1e-10);
         });
-        for (int i = 0; i < 241; i++)
-            Assert.Equal((values[723 + i][0] + values[964 + i][0]) / 2, values[1205 + i][0], 1e-15);
+        for (int i = 0; i < 9; i++)
+            Assert.Equal((values[27 + i][0] + values[36 + i][0]) / 2, values[45 + i][0], 1e-15);
+    }
+
+    // Orders and materials: two more tables, of which each adds up to what spectra.csv holds.
+    [Fact]
+    public async Task Orders_and_materials_add_up_to_the_spectra()
+    {
+        using var folder = new TemporaryFolder();
+        string file = SampleFiles.Write("two-sizes-along", folder.Path);
+        (await Barbule.Call("predict", file, "--wavelengths", "300:420:20", "--angles", "0,40", "--accuracy", "1e-3", "--set", "barbule.axis=20", "--out", folder["out"])).Good();
+
+        Dictionary<string, double[]> spectra = Rows(folder.Text("out/spectra.csv"), 3).ToDictionary(row => row.Key, row => row.Values);
+        string[] orders = folder.Text("out/orders.csv").Split('\n'), losses = folder.Text("out/absorption.csv").Split('\n');
+        Assert.Equal("wavelength_nm,incidence_deg,polarization,side,order,period_nm,efficiency", orders[0]);
+        Assert.Equal("wavelength_nm,incidence_deg,polarization,material,absorptance", losses[0]);
+        Assert.All(orders[1..^1], line => Assert.Matches("^[0-9]+,(0|40),(s|p|unpolarized),(reflected|transmitted),-?[0-9],280,[0-9.E-]+$", line));
+        Assert.All(losses[1..^1], line => Assert.Matches("^[0-9]+,(0|40),(s|p|unpolarized),eumelanin,[0-9.E-]+$", line));
+        Assert.Contains(orders, line => line.Contains(",reflected,-1,", StringComparison.Ordinal));
+        foreach ((string beam, double[] parts) in spectra)
+        {
+            double Sum(string[] lines, Func<string[], bool> which) => lines[1..^1].Where(line => line.StartsWith(beam + ",", StringComparison.Ordinal))
+                .Select(line => line.Split(',')).Where(which).Sum(cells => double.Parse(cells[^1], CultureInfo.InvariantCulture));
+            Assert.Equal(parts[0], Sum(orders, cells => cells[3] == "reflected" && cells[4] == "0"), 1e-12);
+            Assert.Equal(parts[3], Sum(orders, cells => cells[3] == "reflected" && cells[4] != "0"), 1e-12);
+            Assert.Equal(parts[1], Sum(orders, cells => cells[3] == "transmitted"), 1e-12);
+            Assert.Equal(parts[2], Sum(losses, _ => true), 1e-12);
+        }
+    }
+
+    [Fact]
+    public async Task A_layer_model_in_place_of_a_rigorous_result_leaves_no_table_of_orders_behind()
+    {
+        using var folder = new TemporaryFolder();
+        string file = SampleFiles.Write("solid-rods-one-row", folder.Path);
+        string[] run = ["predict", file, "--wavelengths", "400:700:20", "--out", folder["out"]];
+        (await Barbule.Call(run)).Good();
+        Assert.Contains("out/orders.csv", folder.Content());
+        Assert.Contains("--force", (await Barbule.Call([.. run, "--mixing", "bruggeman"])).Refusal(5), StringComparison.Ordinal);
+        (await Barbule.Call([.. run, "--mixing", "bruggeman", "--force"])).Good();
+        Assert.DoesNotContain(folder.Content(), path => path is "out/orders.csv" or "out/absorption.csv");
+    }
+
+    // The table says which solver ran and how far the other is from it.
+    [Theory]
+    [InlineData("", "grating solver, rigorous for this section, unpolarized", "The layer model (bruggeman) would be off from this by ")]
+    [InlineData("--solver grating", "grating solver, rigorous for this section", "The layer model (bruggeman) would be off from this by ")]
+    [InlineData("--mixing mean-index", "multilayer solver, mean-index mixing, ", "This layer model is off from the rigorous solution of the section by ")]
+    [InlineData("--solver multilayer --mixing mean-index", "multilayer solver, mean-index mixing, ", "This layer model is off from the rigorous solution of the section by ")]
+    [InlineData("--solver multilayer", "multilayer solver, bruggeman mixing, ", null)]
+    [InlineData("--set barbule.axis=35", "grating solver, rigorous for this section", null)]
+    public async Task The_table_names_the_solver_and_the_distance_to_the_other(string options, string solver, string? compared)
+    {
+        using var folder = new TemporaryFolder();
+        string file = SampleFiles.Write("solid-rods-one-row", folder.Path);
+        string[] words = options.Split(' ', StringSplitOptions.RemoveEmptyEntries);
+        string text = string.Join(' ', (await Barbule.Call(["predict", file, "--wavelengths", "360:780:10", "--angles", "0,30", .. words])).Good().Output
+            .Split(['\n', ' '], StringSplitOptions.RemoveEmptyEntries));
+        Assert.Contains(solver, text, StringComparison.Ordinal);
+        Assert.Equal(compared is null, !text.Contains("off from", StringComparison.Ordinal));
+        if (compared is not null)
+            Assert.Matches(System.Text.RegularExpressions.Regex.Escape(compared) + @"[+-]?\d+\.\d and [+-]?\d+\.\d nm in the main peak, 0\.\d{3} and 0\.\d{3} in R at most, CIEDE2000 \d+\.\d and \d+\.\d, at 0 and 30 degrees\.", text);
+    }
+
+    [Fact]
+    public async Task A_rule_that_is_named_is_compared_with_the_rigorous_solution()
+    {
+        using var folder = new TemporaryFolder();
+        string file = SampleFiles.Write("hollow-rods", folder.Path);
+        JsonElement root = (await Barbule.Call("predict", file, "--mixing", "form-birefringence", "--wavelengths", "360:780:5", "--json")).Json();
+        Assert.Equal(("multilayer", "form-birefringence"), (Text(root, "solver"), Text(root, "mixing")));
+        JsonElement compared = root.GetProperty("views")[0].GetProperty("layer_model_error");
+        AssertKeys(compared, "mixing", "peak_shift_nm", "largest_change", "largest_change_at_nm", "ciede2000");
+        Assert.Equal("form-birefringence", Text(compared, "mixing"));
+        Assert.InRange(Number(compared, "largest_change"), 0.01, 1);
     }
 
     [Fact]
@@ -70,20 +142,21 @@ public sealed class PredictOutputTests
     {
         using var folder = new TemporaryFolder();
         string file = SampleFiles.Write("porous-platelets", folder.Path);
-        JsonElement root = (await Barbule.Call("predict", file, "--angles", "0,30", "--json", "--observer", "1964-10deg", "--illuminant", "A", "--accuracy", "1e-3")).Json();
+        JsonElement root = (await Barbule.Call("predict", file, "--angles", "0,30", "--wavelengths", "300:780:20", "--json", "--observer", "1964-10deg", "--illuminant", "A", "--accuracy", "1e-3")).Json();
 
-        AssertKeys(root, "program", "structure", "solver", "mixing", "core_mixing", "films", "accuracy_asked", "error_estimate", "reference", "scope", "materials", "wavelengths_nm", "views", "main_peak_over_angle", "warnings");
+        AssertKeys(root, "program", "structure", "solver", "picture", "mixing", "core_mixing", "films", "accuracy_asked", "error_estimate", "reference", "scope", "materials", "wavelengths_nm", "views", "main_peak_over_angle", "warnings");
         Assert.Equal(("Barbule Optics", ProgramIdentity.Version), (Text(root, "program", "name"), Text(root, "program", "version")));
         Assert.Equal(file, Text(root, "structure", "file"));
         Assert.Equal(Convert.ToHexStringLower(System.Security.Cryptography.SHA256.HashData(File.ReadAllBytes(file))), Text(root, "structure", "sha256"));
-        Assert.Equal(("multilayer", "bruggeman", "bruggeman-3d", "mirror"), (Text(root, "solver"), Text(root, "mixing"), Text(root, "core_mixing"), Text(root, "reference")));
+        Assert.Equal(("grating", "bruggeman-3d", "mirror"), (Text(root, "solver"), Text(root, "core_mixing"), Text(root, "reference")));
+        Assert.Equal((JsonValueKind.Null, JsonValueKind.Null), (root.GetProperty("mixing").ValueKind, root.GetProperty("films").ValueKind));
         JsonElement structure = root.GetProperty("structure");
         AssertKeys(structure, "name", "file", "sha256", "set", "solved_as_nm", "solved_rows", "depth_nm");
         // The mean of the sample's four replicates, (84 + 88 + 91 + 85) / 4.
         Assert.Equal(87, Number(structure, "solved_as_nm", "cortex.thickness"));
         Assert.Equal(1e-3, Number(root, "accuracy_asked"));
         Assert.InRange(Number(root, "error_estimate"), 1e-13, 1e-3);
-        Assert.Equal((300, 780, 1), (Number(root, "wavelengths_nm", "start"), Number(root, "wavelengths_nm", "stop"), Number(root, "wavelengths_nm", "step")));
+        Assert.Equal((300, 780, 20), (Number(root, "wavelengths_nm", "start"), Number(root, "wavelengths_nm", "stop"), Number(root, "wavelengths_nm", "step")));
         Assert.All(root.GetProperty("materials").EnumerateArray(), material =>
         {
             AssertKeys(material, "name", "source", "obtained", "note", "range_nm");
@@ -113,6 +186,8 @@ public sealed class PredictOutputTests
         Assert.Equal(JsonValueKind.Null, view.GetProperty("cie").ValueKind);
         Assert.Equal(JsonValueKind.Null, view.GetProperty("bird").ValueKind);
         Assert.Equal(JsonValueKind.Null, view.GetProperty("layer_model_error").ValueKind);
+        Assert.Equal(JsonValueKind.Null, view.GetProperty("powers").GetProperty("absorbed_by").ValueKind);
+        Assert.Equal(JsonValueKind.Null, view.GetProperty("powers").GetProperty("orders").ValueKind);
     }
 
     [Fact]
@@ -151,7 +226,24 @@ public sealed class PredictOutputTests
 
     private static void AssertView(JsonElement view)
     {
-        AssertKeys(view, "incidence_deg", "polarization", "spectrum", "cie", "hue", "bird", "layer_model_error");
+        AssertKeys(view, "incidence_deg", "polarization", "spectrum", "cie", "hue", "bird", "layer_model_error", "powers");
+        JsonElement compared = view.GetProperty("layer_model_error"), powers = view.GetProperty("powers");
+        AssertKeys(compared, "mixing", "peak_shift_nm", "largest_change", "largest_change_at_nm", "ciede2000");
+        Assert.Equal("bruggeman", Text(compared, "mixing"));
+        Assert.InRange(Number(compared, "largest_change"), 1e-4, 1);
+        Assert.InRange(Number(compared, "largest_change_at_nm"), 300, 780);
+        Assert.InRange(Number(compared, "ciede2000"), 0.01, 100);
+        AssertKeys(powers, "mean_reflectance", "mean_diffracted_reflectance", "mean_transmittance", "mean_absorptance", "absorbed_by", "orders");
+        Assert.Equal(Number(view, "spectrum", "mean_reflectance"), Number(powers, "mean_reflectance"), 1e-12);
+        Assert.Equal(1, ((string[])["reflectance", "diffracted_reflectance", "transmittance", "absorptance"]).Sum(part => Number(powers, "mean_" + part)), 1e-10);
+        Assert.Equal(Number(powers, "mean_absorptance"), powers.GetProperty("absorbed_by").EnumerateArray().Sum(loss => Number(loss, "mean_absorptance")), 1e-10);
+        Assert.All(powers.GetProperty("absorbed_by").EnumerateArray(), loss => AssertKeys(loss, "material", "mean_absorptance"));
+        Assert.NotEqual(0, powers.GetProperty("orders").GetArrayLength());
+        Assert.All(powers.GetProperty("orders").EnumerateArray(), order =>
+        {
+            AssertKeys(order, "side", "order", "period_nm", "longest_nm", "largest_efficiency", "largest_at_nm");
+            Assert.InRange(Number(order, "largest_at_nm"), 300, Number(order, "longest_nm"));
+        });
         Assert.Equal("unpolarized", Text(view, "polarization"));
         JsonElement spectrum = view.GetProperty("spectrum"), cie = view.GetProperty("cie");
         AssertKeys(spectrum, "peaks", "at_edge", "mean_reflectance", "contrast", "ultraviolet_share");
@@ -173,6 +265,11 @@ public sealed class PredictOutputTests
         Assert.Matches("^#[0-9a-f]{6}$", Text(cie, "sRGB_brightened"));
         Assert.NotEqual("", Text(view, "hue", "term"));
     }
+
+    /// <summary>Lines by their first cells, with the numbers of the others.</summary>
+    private static IEnumerable<(string Key, double[] Values)> Rows(string csv, int keys)
+        => csv.Split('\n')[1..^1].Select(line => line.Split(',')).Select(cells => (
+            string.Join(',', cells[..keys]), cells[keys..].Select(cell => double.Parse(cell, CultureInfo.InvariantCulture)).ToArray()));
 
     private static void AssertKeys(JsonElement element, params string[] keys) => Assert.Equal(keys, element.EnumerateObject().Select(property => property.Name));
 

@@ -12,7 +12,7 @@ public sealed class PredictRunTests
     private const string Wrong = "format = 1\n[cortex]\nthickness = -5\n";
 
     private static readonly string[] ResultNames =
-        ["prediction.json", "reflectance.pdf", "reflectance.png", "reflectance.svg", "section.pdf", "section.png", "section.svg", "spectra.csv"];
+        ["absorption.csv", "orders.csv", "prediction.json", "reflectance.pdf", "reflectance.png", "reflectance.svg", "section.pdf", "section.png", "section.svg", "spectra.csv"];
 
     private static readonly string[] Coarse = ["--wavelengths", "400:700:10"];
 
@@ -143,7 +143,7 @@ public sealed class PredictRunTests
     public async Task Help_of_predict_names_every_option_and_default()
     {
         string text = (await Barbule.Call("predict", "--help")).Good().Output;
-        string[] options = ["--wavelengths", "--angles", "--polarization", "--solver", "--accuracy", "--mixing", "--illuminant", "--observer", "--out", "--force", "--json", "--materials", "--set", "--threads", "[300:780:1]", "[1e-4]", "[D65]", "[1931-2deg]", "[bruggeman]"];
+        string[] options = ["--wavelengths", "--angles", "--polarization", "--solver", "--accuracy", "--mixing", "--illuminant", "--observer", "--out", "--force", "--json", "--materials", "--set", "--threads", "--overlay", "--width", "[300:780:1]", "[1e-4]", "[D65]", "[1931-2deg]", "[auto]", "bruggeman with --solver multilayer"];
         Assert.All(options, option => Assert.Contains(option, text, StringComparison.Ordinal));
     }
 

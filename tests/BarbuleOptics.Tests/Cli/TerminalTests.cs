@@ -91,6 +91,20 @@ public sealed partial class TerminalTests
         Assert.DoesNotMatch(Swatch(), silenced);
     }
 
+    // An accuracy that nobody needs takes seconds; a pipe sees nothing of it.
+    [Fact]
+    public async Task A_long_calculation_shows_how_far_it_is_on_a_terminal_only()
+    {
+        using var folder = new TemporaryFolder();
+        SampleFiles.Write("hollow-rods", folder.Path);
+        string[] run = ["predict", "hollow-rods.toml", "--wavelengths", "300:700:0.5", "--angles", "60", "--accuracy", "1e-9", "--threads", "1"];
+        (await Barbule.Run(run, folder.Path)).Good();
+        string script = OutsideProgram.Find("script", "bsdutils");
+        string shown = OutsideProgram.Run(script, folder.Path, "-qec", $"{Barbule.CommandLine} {string.Join(' ', run)}", "/dev/null");
+        Assert.Matches(@"\rhollow-rods\.toml: \d+ %", shown);
+        Assert.Matches(@"\r +\r", shown);
+    }
+
     [Fact]
     public void Warnings_come_last_and_what_holds_of_several_angles_is_said_once()
     {
@@ -112,7 +126,7 @@ public sealed partial class TerminalTests
         string file = SampleFiles.Write("hollow-rods", folder.Path);
         var output = new StringWriter { NewLine = "\n" };
         int exitCode = BarbuleProgram.RunAsync(
-            ["predict", file, "--wavelengths", "300:780:5", "--angles", "0,30,60", "--accuracy", "1e-3"], output, TextWriter.Null, colors, TestContext.Current.CancellationToken)
+            ["predict", file, "--wavelengths", "300:780:5", "--angles", "0,30,60", "--accuracy", "1e-3"], output, TextWriter.Null, colors, cancellation: TestContext.Current.CancellationToken)
             .GetAwaiter().GetResult();
         Assert.Equal(0, exitCode);
         return output.ToString().Replace(folder.Path, "", StringComparison.Ordinal).Split('\n');

@@ -49,7 +49,6 @@ public sealed class WrongFileTests
         { "format = 1\n[[layer]]\nform = 'film'\nthickness = 20\ngap = -60\n[[layer]]\nform = 'film'\nthickness = 30\n", "", ":5:7: layer1.gap: ", "surface" },
 
         // What only the solver or the wavelengths show.
-        { "format = 1\n[barbule]\naxis = 30\n[cortex]\nthickness = 5\n", "", ":3:8: barbule.axis: ", "found 30 degrees" },
         { Film + "material = 'tio2-rutile'\n", "--wavelengths 250:280:1", ":7:12: layer1.material: ", "tio2-rutile has a resonance at 283.4 nm" },
         { Film + "material = 'silver'\n", "--wavelengths 1000:1300:10", ":7:12: layer1.material: ", "206.6-1240 nm" },
         { Film + "material = 'silver'\n", "--wavelengths 200:500:10", ":7:12: layer1.material: ", "206.6-1240 nm" },
@@ -63,7 +62,8 @@ public sealed class WrongFileTests
         { Film, "--set layer1.thickness", "--set layer1.thickness: ", "KEY=VALUE" },
         { Film, "--set layer1.thicknes=50", "--set layer1.thicknes=50: ", "thickness" },
         { Film, "--set barbule.surround=eumelanin", "--set barbule.surround=eumelanin: ", "lossless" },
-        { Film, "--set barbule.axis=45", "--set barbule.axis=45: ", "45 degrees" },
+        { Rod + "spacing = 150\n", "--set barbule.axis=45 --mixing bruggeman", "--set barbule.axis=45: ", "found 45 degrees; the layer model allows across (0) or along (90) only, the grating solver any angle" },
+        { Rod + "spacing = 150\n", "--set barbule.axis=45 --solver multilayer", "--set barbule.axis=45: ", "leave --mixing and --solver multilayer out" },
         { Film, "--set layer1.thickness=50,5", "--set layer1.thickness=50,5: ", "50,5" },
         { Rod + "spacing = 150\n", "--set layer1.rows=2 --set layer1.pitch=60", "--set layer1.pitch=60: ", "rows overlap" },
         { Rod + "spacing = 150\n", "--set layer1.lumen=200", "--set layer1.lumen=200: ", "200" },

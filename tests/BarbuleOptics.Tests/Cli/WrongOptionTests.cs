@@ -39,7 +39,8 @@ public sealed class WrongOptionTests
         { "--angles", "1e400", "1e400" },
         { "--polarization", "S", "did you mean s?" },
         { "--polarization", "te", "unpolarized, s, p" },
-        { "--solver", "exact", "auto, multilayer" },
+        { "--solver", "exact", "auto, multilayer, grating" },
+        { "--solver", "gratings", "did you mean grating?" },
         { "--accuracy", "0", "1e-10 to 0.1" },
         { "--accuracy", "-1e-4", "1e-10 to 0.1" },
         { "--accuracy", "1", "1e-10 to 0.1" },
@@ -78,6 +79,8 @@ public sealed class WrongOptionTests
         { "-x", "\"-x\"" },
         { "--angles", "--angles" },
         { "--out", "--out" },
+        { "--solver grating --mixing bruggeman", "--mixing: found 'bruggeman' with --solver grating" },
+        { "--mixing=mean-index --solver=grating", "--mixing: found 'mean-index' with --solver grating" },
         { "--angles 0 --angles 30", "--angles" },
         { "--wavelengths 300:399.999:0.001 --angles 0:30:1", "--angles: found 31 angles at 100000 wavelengths each" },
     };

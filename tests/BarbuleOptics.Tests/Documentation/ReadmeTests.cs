@@ -45,7 +45,7 @@ public sealed partial class ReadmeTests
         string text = StructureText().Match(Readme).Groups[1].Value;
         FileResult<LoadedStructure> read = StructureFile.Parse(Encoding.UTF8.GetBytes(text), "README.md", null, EmbeddedMaterials.Catalog);
         Assert.Empty(read.Problems);
-        Assert.True(Predictor.TryPredict(read.Value!.Barbule, new PredictionConditions(), read.Value.Catalog, out _, out _, TestContext.Current.CancellationToken));
+        Assert.True(Predictor.TryPredict(read.Value!.Barbule, new PredictionConditions(), read.Value.Catalog, out _, out _, cancellation: TestContext.Current.CancellationToken));
     }
 
     [Fact]

@@ -1,6 +1,7 @@
 using BarbuleOptics.Color;
 using BarbuleOptics.Figures.Curves;
 using BarbuleOptics.Figures.Drawing;
+using BarbuleOptics.Figures.Plots;
 using BarbuleOptics.Prediction;
 using BarbuleOptics.Quantities;
 using Xunit;
@@ -66,6 +67,38 @@ public sealed class CurveTests
             Assert.Contains(view.Color!.Srgb, filled);
             Assert.Contains(view.Color.SrgbBrightened, filled);
         }
+    }
+
+    [Fact]
+    public void What_the_other_solver_says_is_dashed_and_named_and_has_its_swatches()
+    {
+        foreach (string rule in (string[])["", "mean-index"])
+        {
+            StructurePrediction prediction = FigureCases.Compared("hollow-rods", rule, 0, 40);
+            Page page = ReflectanceFigure.Draw(prediction, default, overlays: true).Page;
+            PlotCurve[] curves = [.. page.Plots.Single().Marks.OfType<PlotCurve>()];
+            Assert.Equal([false, true, false, true], curves.Select(curve => curve.Line.Dash is not null));
+            SrgbColor[] filled = [.. page.Elements.OfType<FilledShape>().Select(shape => shape.Color)];
+            foreach (View view in prediction.Views)
+            {
+                Assert.Contains(view.LayerModelError!.OtherColor!.Srgb, filled);
+                Assert.Contains(view.LayerModelError.OtherColor.SrgbBrightened, filled);
+            }
+            string[] texts = [.. page.Texts.Select(text => text.Text)];
+            Assert.Contains(rule.Length == 0 ? "40° layer model" : "40° rigorous", texts);
+            Assert.Contains("Dashed: ", string.Join(' ', texts), StringComparison.Ordinal);
+            Assert.Equal(2, ReflectanceFigure.Draw(prediction, default).Page.Plots.Single().Marks.OfType<PlotCurve>().Count());
+        }
+    }
+
+    [Fact]
+    public void The_note_names_the_solver()
+    {
+        Assert.Contains("Rigorous for this section (infinite, flat, perfectly periodic).", Note(FigureCases.Compared("hollow-rods", "", 0)), StringComparison.Ordinal);
+        Assert.Contains("Layer model, mean-index mixing.", Note(FigureCases.Compared("hollow-rods", "mean-index", 0)), StringComparison.Ordinal);
+        Assert.Contains("Multilayer solver.", Note(FigureCases.Predict("deep-multilayer")), StringComparison.Ordinal);
+
+        static string Note(StructurePrediction prediction) => string.Join(' ', ReflectanceFigure.Draw(prediction, default).Page.Texts.Select(text => text.Text));
     }
 
     private static IReadOnlyList<Point> Points(Spectrum spectrum, PlotFrame frame)

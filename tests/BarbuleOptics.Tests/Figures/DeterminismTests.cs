@@ -14,10 +14,10 @@ public sealed class DeterminismTests
     public void Figures_drawn_again_and_at_once_are_the_same_bytes(string name)
     {
         StructurePrediction prediction = FigureCases.Predict(name);
-        var first = PredictionFigures.Render(prediction, default, TestContext.Current.CancellationToken).ToDictionary(file => file.FileName, file => file.Bytes);
+        var first = PredictionFigures.Render(prediction, default, cancellation: TestContext.Current.CancellationToken).ToDictionary(file => file.FileName, file => file.Bytes);
 
         Assert.Equal(PredictionFigures.FileNames, first.Keys);
-        Parallel.For(0, 4, _ => Assert.All(PredictionFigures.Render(FigureCases.Predict(name), default, TestContext.Current.CancellationToken), file => Assert.Equal(first[file.FileName], file.Bytes)));
+        Parallel.For(0, 4, _ => Assert.All(PredictionFigures.Render(FigureCases.Predict(name), default, cancellation: TestContext.Current.CancellationToken), file => Assert.Equal(first[file.FileName], file.Bytes)));
     }
 
     [Fact]
@@ -25,7 +25,7 @@ public sealed class DeterminismTests
     {
         CultureInfo before = CultureInfo.CurrentCulture;
         StructurePrediction prediction = FigureCases.Predict("porous-platelets");
-        (string, byte[])[] usual = [.. PredictionFigures.Render(prediction, default, TestContext.Current.CancellationToken)];
+        (string, byte[])[] usual = [.. PredictionFigures.Render(prediction, default, cancellation: TestContext.Current.CancellationToken)];
         try
         {
             // Decimal commas as in much of Europe.
@@ -33,7 +33,7 @@ public sealed class DeterminismTests
             comma.NumberFormat.NumberDecimalSeparator = ",";
             comma.NumberFormat.NegativeSign = "~";
             CultureInfo.CurrentCulture = comma;
-            foreach (((string name, byte[] expected), (string again, byte[] found)) in usual.Zip(PredictionFigures.Render(prediction, default, TestContext.Current.CancellationToken)))
+            foreach (((string name, byte[] expected), (string again, byte[] found)) in usual.Zip(PredictionFigures.Render(prediction, default, cancellation: TestContext.Current.CancellationToken)))
             {
                 Assert.Equal(name, again);
                 Assert.Equal(expected, found);

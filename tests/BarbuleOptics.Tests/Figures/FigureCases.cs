@@ -4,6 +4,7 @@ using BarbuleOptics.Files;
 using BarbuleOptics.Figures;
 using BarbuleOptics.Figures.Curves;
 using BarbuleOptics.Figures.Sections;
+using BarbuleOptics.Layering.Mixing;
 using BarbuleOptics.Multilayer;
 using BarbuleOptics.Prediction;
 using BarbuleOptics.Quantities;
@@ -17,6 +18,10 @@ namespace BarbuleOptics.Tests.Figures;
 internal static class FigureCases
 {
     private static readonly ConcurrentDictionary<string, StructurePrediction> Done = new();
+
+    private const string ComparedPrefix = "compared-";
+
+    private static readonly string[] ComparedNames = [ComparedPrefix + "one-angle", ComparedPrefix + "one-angle-rule", ComparedPrefix + "nine-angles"];
 
     private static readonly double[] Few = [0, 30, 60];
 
@@ -79,7 +84,7 @@ internal static class FigureCases
     };
 
     /// <summary>Names of everything that <see cref="Predict"/> knows.</summary>
-    public static TheoryData<string> All => [.. SampleFiles.Names, .. Structures.Keys, .. Conditions.Keys];
+    public static TheoryData<string> All => [.. SampleFiles.Names, .. Structures.Keys, .. Conditions.Keys, .. ComparedNames];
 
     /// <summary>The prediction of a case; computed once for all tests.</summary>
     public static StructurePrediction Predict(string name) => Done.GetOrAdd(name, Compute);
@@ -88,6 +93,8 @@ internal static class FigureCases
     {
         if (Structures.TryGetValue(name, out string? text))
             return Predict(Layering.Structures.Load(text), Seen(Few));
+        if (name.StartsWith(ComparedPrefix, StringComparison.Ordinal))
+            return Compared("hollow-rods", name.Contains("rule", StringComparison.Ordinal) ? "mean-index" : "", name.Contains("one", StringComparison.Ordinal) ? [0] : [.. Enumerable.Range(0, 9).Select(i => 10.0 * i)]);
         return Conditions.TryGetValue(name, out PredictionConditions? conditions)
             ? Predict(SampleFiles.Load("hollow-rods"), conditions)
             : Predict(SampleFiles.Load(name), Seen(Few));
@@ -95,15 +102,24 @@ internal static class FigureCases
 
     public static StructurePrediction Predict(string structure, params double[] degrees) => Predict(Layering.Structures.Load(structure), Seen(degrees));
 
+    /// <summary>A sample by the grating solver, or by a rule that is named, compared with the other; the angles in degrees.</summary>
+    public static StructurePrediction Compared(string sample, string rule, params double[] degrees)
+        => Done.GetOrAdd($"{sample} {rule} {string.Join(' ', degrees)}", _ => Predict(SampleFiles.Load(sample), Seen(degrees) with
+        {
+            Solver = SolverChoice.Auto,
+            Mixing = MixingRules.TryFind(rule, out IMixingRule? found) ? found : null,
+        }));
+
+    /// <summary>Both figures, with the other solver's curves where there are any.</summary>
     public static IEnumerable<Figure> Figures(string name, FigureSize size)
     {
         StructurePrediction prediction = Predict(name);
-        return [ReflectanceFigure.Draw(prediction, size), SectionFigure.Draw(prediction, size)];
+        return [ReflectanceFigure.Draw(prediction, size, overlays: true), SectionFigure.Draw(prediction, size)];
     }
 
     // Coarse: figures are looked at here, not spectra.
     private static PredictionConditions Seen(double[] degrees)
-        => new() { Incidences = [.. degrees.Select(Angle.FromDegrees)], Accuracy = 1e-2, Wavelengths = Grid(300, 780, 4) };
+        => new() { Incidences = [.. degrees.Select(Angle.FromDegrees)], Accuracy = 1e-2, Solver = SolverChoice.Multilayer, Wavelengths = Grid(300, 780, 4) };
 
     private static WavelengthGrid Grid(double fromNm, double toNm, double stepNm)
         => WavelengthGrid.FromRange(Length.FromNanometres(fromNm), Length.FromNanometres(toNm), Length.FromNanometres(stepNm));

@@ -11,7 +11,7 @@ public sealed class OutputFolderTests : IDisposable
     public void Dispose() => _folder.Dispose();
 
     private static void Write(string folder, OutputFile[] files, bool force, CancellationToken? cancellation = null)
-        => OutputFolder.Write(folder, files, force, cancellation ?? TestContext.Current.CancellationToken);
+        => OutputFolder.Write(folder, files, force, [], cancellation ?? TestContext.Current.CancellationToken);
 
     [Fact]
     public void Files_are_written_into_a_folder_that_is_made()
@@ -43,6 +43,17 @@ public sealed class OutputFolderTests : IDisposable
         Write(_folder.Path, [OutputFile.FromText("one.csv", "1"), OutputFile.FromText("two.csv", "new")], force: true);
         Assert.Equal(["one.csv", "two.csv"], _folder.Content());
         Assert.Equal("new", File.ReadAllText(_folder["two.csv"]));
+    }
+
+    [Fact]
+    public void A_file_that_an_earlier_run_wrote_and_this_one_does_not_is_taken_away_with_force_only()
+    {
+        File.WriteAllText(_folder["old.csv"], "old");
+        OutputFile[] files = [OutputFile.FromText("one.csv", "1")];
+        Assert.Contains("old.csv", Assert.Throws<OutputException>(() => OutputFolder.Write(_folder.Path, files, force: false, ["old.csv"], TestContext.Current.CancellationToken)).Message, StringComparison.Ordinal);
+        Assert.Equal(["old.csv"], _folder.Content());
+        OutputFolder.Write(_folder.Path, files, force: true, ["old.csv", "never.csv"], TestContext.Current.CancellationToken);
+        Assert.Equal(["one.csv"], _folder.Content());
     }
 
     [Fact]

@@ -48,7 +48,7 @@ public sealed class LargeStructureTests
     {
         FileResult<LoadedStructure> read = StructureFile.Parse(Encoding.UTF8.GetBytes("format = 1\n" + text), "large.toml", null, EmbeddedMaterials.Catalog);
         Assert.True(read.Succeeded, string.Join('\n', read.Problems));
-        var conditions = new PredictionConditions { Wavelengths = WavelengthGrid.FromRange(Length.FromNanometres(500), Length.FromNanometres(500), Length.FromNanometres(1)) };
+        var conditions = new PredictionConditions { Solver = SolverChoice.Multilayer, Wavelengths = WavelengthGrid.FromRange(Length.FromNanometres(500), Length.FromNanometres(500), Length.FromNanometres(1)) };
         return Predictor.TryPredict(read.Value.Barbule, conditions, read.Value.Catalog, out _, out IReadOnlyList<AnatomyProblem> problems) ? null : Assert.Single(problems);
     }
 }

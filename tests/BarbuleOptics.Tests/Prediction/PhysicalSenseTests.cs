@@ -115,7 +115,7 @@ public sealed class PhysicalSenseTests
     public void Water_in_the_hollows_takes_half_of_the_light()
     {
         string text = SampleFiles.Text("hollow-rods").Replace("format = 1", "", StringComparison.Ordinal);
-        PredictionConditions conditions = new();
+        PredictionConditions conditions = Predictions.Rigorously(400, 780, 2);
         double dry = Predictions.Of(text, conditions).Views[0].Features.MainPeak!.Reflectance;
         double wet = Predictions.Of(text, conditions, "layer1.lumen_material=water").Views[0].Features.MainPeak!.Reflectance;
         Assert.InRange(wet / dry, 0.3, 0.6);

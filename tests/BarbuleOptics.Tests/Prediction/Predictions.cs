@@ -14,17 +14,23 @@ internal static class Predictions
     {
         LoadedStructure loaded = Structures.Load(text, sets);
         Assert.True(
-            Predictor.TryPredict(loaded.Barbule, conditions, loaded.Catalog, out StructurePrediction? prediction, out var problems, TestContext.Current.CancellationToken),
+            Predictor.TryPredict(loaded.Barbule, conditions, loaded.Catalog, out StructurePrediction? prediction, out var problems, cancellation: TestContext.Current.CancellationToken),
             string.Join('\n', problems));
         return prediction;
     }
 
-    /// <summary>Wavelengths in nm and angles in degrees.</summary>
+    /// <summary>Wavelengths in nm and angles in degrees; by the layer model alone.</summary>
     public static PredictionConditions At(double fromNm, double toNm, double stepNm, params double[] degrees) => new()
     {
+        Solver = SolverChoice.Multilayer,
+        ComparesSolvers = false,
         Wavelengths = WavelengthGrid.FromRange(Length.FromNanometres(fromNm), Length.FromNanometres(toNm), Length.FromNanometres(stepNm)),
         Incidences = [.. (degrees.Length == 0 ? [0] : degrees).Select(Angle.FromDegrees)],
     };
+
+    /// <summary>The same by the solver that is taken where none is named.</summary>
+    public static PredictionConditions Rigorously(double fromNm, double toNm, double stepNm, params double[] degrees)
+        => At(fromNm, toNm, stepNm, degrees) with { Solver = SolverChoice.Auto };
 
     public static string[] Codes(StructurePrediction prediction) => [.. prediction.Warnings.Select(warning => warning.Code)];
 

@@ -79,6 +79,8 @@ public sealed class PredictorFuzzTests
             Incidences = [Angle.FromDegrees(AnglesDeg[number % AnglesDeg.Length])],
             Mixing = MixingRules.All[number / 7 % MixingRules.All.Count],
             Threads = 1,
+            Solver = SolverChoice.Multilayer,
+            ComparesSolvers = false,
         };
         if (!Predictor.TryPredict(read.Value.Barbule, conditions, read.Value.Catalog, out StructurePrediction? prediction, out IReadOnlyList<AnatomyProblem> problems))
             return Refused(problems.Select(problem => read.Value.Locate(problem).ToString()));

@@ -14,7 +14,7 @@ public sealed class SliceCountTests
 {
     private const double Promise = 1e-5;
 
-    private static readonly PredictionConditions Conditions = new() { Incidences = [.. ((double[])[0, 30, 60, 75]).Select(Angle.FromDegrees)] };
+    private static readonly PredictionConditions Conditions = new() { Solver = SolverChoice.Multilayer, Incidences = [.. ((double[])[0, 30, 60, 75]).Select(Angle.FromDegrees)] };
 
     public static TheoryData<string> Samples => SampleFiles.Rows;
 
@@ -56,7 +56,7 @@ public sealed class SliceCountTests
     public void The_error_estimate_covers_the_error(string name)
     {
         LoadedStructure loaded = SampleFiles.Load(name);
-        Assert.True(Predictor.TryPredict(loaded.Barbule, Conditions, loaded.Catalog, out StructurePrediction? prediction, out _, TestContext.Current.CancellationToken));
+        Assert.True(Predictor.TryPredict(loaded.Barbule, Conditions, loaded.Catalog, out StructurePrediction? prediction, out _, cancellation: TestContext.Current.CancellationToken));
         Model model = Of(name, MixingRules.Default);
         (double[] r, double[] t) = model.Powers(model.Slices);
         (double[] fineR, double[] fineT) = model.Powers([.. model.Slices.Select(count => 4 * count)]);

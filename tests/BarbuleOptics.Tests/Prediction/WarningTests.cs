@@ -81,6 +81,53 @@ public sealed class WarningTests
         Assert.Contains(together, coarse.Message, StringComparison.Ordinal);
     }
 
+    // What a grating does is solved by one solver and lies outside the other.
+    [Fact]
+    public void Warnings_of_orders_and_spacing_are_those_of_the_solver()
+    {
+        PredictionConditions films = Predictions.At(400, 420, 5), grating = Predictions.Rigorously(400, 420, 5) with { Accuracy = 1e-2 };
+        string text = Rods(450);
+        Assert.Equal([WarningCodes.CoarseSpacing, WarningCodes.OrdersInMatrix, WarningCodes.OrdersInSurround], Predictions.Codes(Predictions.Of(text, films))[..3]);
+        StructurePrediction rigorous = Predictions.Of(text, grating);
+        Assert.Equal([WarningCodes.OrdersInMatrix, WarningCodes.OrdersInSurround], Predictions.Codes(rigorous)[..2]);
+        Assert.DoesNotContain(WarningCodes.CoarseSpacing, Predictions.Codes(rigorous));
+        Assert.Contains("disorder smears", rigorous.Warnings[0].Message, StringComparison.Ordinal);
+        Assert.Contains("diffracted_reflectance", rigorous.Warnings[1].Message, StringComparison.Ordinal);
+    }
+
+    // 3 in CIEDE2000, at the worst of the angles, once.
+    [Fact]
+    public void A_layer_model_that_is_far_off_is_told_where_it_is_the_result()
+    {
+        const string Hollow = "[cortex]\nthickness = 120\n[[layer]]\nform = 'rod'\ndiameter = 120\nlumen = 100\nspacing = 170\nrows = 4\npitch = 140\nstacking = 'staggered'\n";
+        PredictionConditions rigorous = Predictions.Rigorously(380, 780, 10, 0, 30) with { ComparesSolvers = true };
+        PredictionConditions layers = rigorous with { Mixing = new BarbuleOptics.Layering.Mixing.FormBirefringence() };
+        StructurePrediction prediction = Predictions.Of(Hollow, layers);
+        double[] differences = [.. prediction.Views.Select(view => view.LayerModelError!.Ciede2000!.Value)];
+        Assert.InRange(differences.Max(), 3.1, 100);
+        PredictionWarning warning = Assert.Single(prediction.Warnings, warning => warning.Code == WarningCodes.LayerModelError);
+        Assert.Equal(prediction.Views[Array.IndexOf(differences, differences.Max())].Incidence, warning.Incidence);
+        Assert.Contains(FormattableString.Invariant($"differs by {differences.Max():0.0} in CIEDE2000"), warning.Message, StringComparison.Ordinal);
+        Assert.DoesNotContain(WarningCodes.LayerModelError, Predictions.Codes(Predictions.Of(Hollow, rigorous)));
+        Assert.DoesNotContain(WarningCodes.LayerModelError, Predictions.Codes(Predictions.Of(Rods(110), layers)));
+    }
+
+    // Onsets for rods at an angle b: 300 (0.5 cos b + sqrt(1.5^2 - (0.5 sin b)^2)) in the matrix, 300 (0.5 cos b + sqrt(1 - (0.5 sin b)^2)) in air; by hand
+    // for b = 45 and 30 degrees at 30 degrees of incidence.
+    [Theory]
+    [InlineData(45, 543, 386)]
+    [InlineData(30, 573, 420)]
+    public void Orders_of_rods_at_an_angle_are_told_up_to_their_last_wavelength(double axis, double matrixNm, double surroundNm)
+    {
+        string text = FormattableString.Invariant($"barbule.axis = {axis}\n") + Rods(300);
+        foreach ((string code, double lastNm) in ((string, double)[])[(WarningCodes.OrdersInMatrix, matrixNm), (WarningCodes.OrdersInSurround, surroundNm)])
+        {
+            PredictionConditions conditions = Predictions.Rigorously(lastNm, lastNm + 1, 1, 30) with { Accuracy = 1e-2 };
+            PredictionWarning warning = Assert.Single(Predictions.Of(text, conditions).Warnings, warning => warning.Code == code);
+            Assert.StartsWith(FormattableString.Invariant($"up to {lastNm} nm "), warning.Message, StringComparison.Ordinal);
+        }
+    }
+
     // A backing of n = 1.5 holds half a wave of 600 nm in 200 nm.
     [Fact]
     public void A_back_too_thin_to_average_is_solved_as_it_is_over_the_whole_spectrum()
