@@ -1,6 +1,7 @@
 using System.Diagnostics.CodeAnalysis;
 using BarbuleOptics.Anatomy;
 using BarbuleOptics.Color;
+using BarbuleOptics.Grating;
 using BarbuleOptics.Layering;
 using BarbuleOptics.Materials;
 using BarbuleOptics.Quantities;
@@ -11,6 +12,9 @@ namespace BarbuleOptics.Prediction;
 /// <summary>The main job: from a measured structure to spectra, color and hue, with what they lean on.</summary>
 public static class Predictor
 {
+    /// <summary>Longest period that is solved as it is, in wavelengths.</summary>
+    private const double MostPeriods = 100;
+
     /// <summary>Predicts what <paramref name="barbule"/> does to light.</summary>
     /// <param name="barbule">The structure; its central measurements are used.</param>
     /// <param name="conditions">How it is looked at, and by which solver.</param>
@@ -33,12 +37,35 @@ public static class Predictor
         if (!SectionBuilder.TryBuild(barbule, out Section? section, out problems))
             return false;
         SolverPlan plan = SolverPlan.Of(section, conditions);
-        problems = [.. AxisProblems(section, plan), .. MaterialCheck.Find(MaterialUse.Of(barbule, section), conditions.Wavelengths, catalog)];
+        problems = [.. AxisProblems(section, plan), .. PeriodProblems(section, plan, conditions), .. MaterialCheck.Find(MaterialUse.Of(barbule, section), conditions.Wavelengths, catalog)];
         if (problems.Count > 0)
             return false;
-        prediction = Predict(barbule, section, plan, conditions, catalog, progress, cancellation);
-        return true;
+        try
+        {
+            prediction = Predict(barbule, section, plan, conditions, catalog, progress, cancellation);
+            return true;
+        }
+        catch (AggregateException faults) when (faults.InnerExceptions.FirstOrDefault(fault => fault is ArithmeticException) is Exception fault)
+        {
+            problems = [new AnatomyProblem(SpacingKey(section), $"{fault.Message.TrimEnd('.')}; ask for the layer model with --solver multilayer")];
+            return false;
+        }
     }
+
+    /// <summary>Orders grow with the period, and their cube is the work.</summary>
+    private static IEnumerable<AnatomyProblem> PeriodProblems(Section section, SolverPlan plan, PredictionConditions conditions)
+    {
+        double periodNm = plan.SolvesSection ? SpacingPlan.Of(section).PeriodNm ?? 0 : 0, mostNm = MostPeriods * conditions.Wavelengths.StartNm;
+        if (periodNm > mostNm)
+        {
+            yield return new AnatomyProblem(SpacingKey(section), FormattableString.Invariant(
+                $"found rows that repeat after {periodNm:0.##} nm; the grating solver allows up to {MostPeriods} wavelengths, {mostNm:0.##} nm: ask for the layer model with --solver multilayer, or for longer --wavelengths"));
+        }
+    }
+
+    /// <summary>The longest spacing.</summary>
+    private static string SpacingKey(Section section)
+        => section.Runs.Count == 0 ? "barbule.matrix" : FormattableString.Invariant($"layer{section.Runs.MaxBy(run => run.SpacingNm)!.LayerNumber}.spacing");
 
     private static IEnumerable<AnatomyProblem> AxisProblems(Section section, SolverPlan plan)
     {
@@ -68,7 +95,10 @@ public static class Predictor
             warnings.AboutThinBack();
         warnings.AboutOrders(surround, Find(catalog, barbule.Matrix));
         if (plan.IsRigorous)
+        {
+            warnings.AboutSpacings(SpacingReport.Of(section, conditions, catalog, cancellation));
             warnings.AboutAccuracy(rigorous!);
+        }
         else
             warnings.AboutSlices(error);
 

@@ -132,6 +132,16 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
             Add(WarningCodes.AccuracyNotReached, FormattableString.Invariant($"the depth slices reach {reached:0.0e+0} in R and T, not the {conditions.Accuracy:0.0e+0} asked for; report the error reached, or ask for less with --accuracy"));
     }
 
+    /// <summary>Says what was done with layers of different spacing, and what it may cost.</summary>
+    public void AboutSpacings(SpacingReport? report)
+    {
+        if (report is null)
+            return;
+        string moves = string.Join(", ", report.Moves.Select(move => FormattableString.Invariant($"layer {move.LayerNumber} from {move.FromNm:0.##} to {move.ToNm:0.##} nm")));
+        Add(WarningCodes.SpacingMoved, FormattableString.Invariant(
+            $"layers of different spacing were solved with a common period of {report.PeriodNm:0.##} nm where more than one order passes between them, up to {report.LongestNm:0.#} nm: {moves}; the next choice of a period changes R by up to {report.Change:0.0e+0} there: rely on no finer detail"));
+    }
+
     /// <summary>Says where the rigorous solution stayed above the error asked for.</summary>
     public void AboutAccuracy(GratingResponses rigorous)
     {

@@ -1,5 +1,7 @@
+using BarbuleOptics.Files;
 using BarbuleOptics.Prediction;
 using BarbuleOptics.Quantities;
+using BarbuleOptics.Tests.Layering;
 using Xunit;
 
 namespace BarbuleOptics.Tests.Prediction;
@@ -93,6 +95,29 @@ public sealed class WarningTests
         Assert.DoesNotContain(WarningCodes.CoarseSpacing, Predictions.Codes(rigorous));
         Assert.Contains("disorder smears", rigorous.Warnings[0].Message, StringComparison.Ordinal);
         Assert.Contains("diffracted_reflectance", rigorous.Warnings[1].Message, StringComparison.Ordinal);
+    }
+
+    // Rows that nearly touch exchange more orders than one; far apart they exchange one, whatever their spacings.
+    [Fact]
+    public void Spacings_are_moved_only_where_rows_feel_each_other()
+    {
+        string Two(double gap) => Rods(160.3) + FormattableString.Invariant($"gap = {gap}\n[[layer]]\nform = 'rod'\ndiameter = 100\nspacing = 171.9\n") + Melanin;
+        PredictionConditions conditions = Predictions.Rigorously(400, 700, 100) with { Accuracy = 1e-2 };
+        PredictionWarning warning = Assert.Single(Predictions.Of(Two(0), conditions).Warnings, warning => warning.Code == WarningCodes.SpacingMoved);
+        Assert.Contains("layer 1 from 160.3 to ", warning.Message, StringComparison.Ordinal);
+        Assert.Contains("layer 2 from 171.9 to ", warning.Message, StringComparison.Ordinal);
+        Assert.Contains("changes R by up to ", warning.Message, StringComparison.Ordinal);
+        Assert.DoesNotContain(WarningCodes.SpacingMoved, Predictions.Codes(Predictions.Of(Two(150), conditions)));
+    }
+
+    [Fact]
+    public void A_period_of_many_wavelengths_is_refused_in_one_line()
+    {
+        LoadedStructure loaded = Structures.Load(Rods(41_000));
+        Assert.False(Predictor.TryPredict(loaded.Barbule, Predictions.Rigorously(400, 410, 5), loaded.Catalog, out _, out var problems, cancellation: TestContext.Current.CancellationToken));
+        Assert.Equal("layer1.spacing", Assert.Single(problems).Key);
+        Assert.Contains("found rows that repeat after 41000 nm; the grating solver allows up to 100 wavelengths, 40000 nm", problems[0].Message, StringComparison.Ordinal);
+        Assert.True(Predictor.TryPredict(loaded.Barbule, Predictions.At(400, 410, 5), loaded.Catalog, out _, out _, cancellation: TestContext.Current.CancellationToken));
     }
 
     // 3 in CIEDE2000, at the worst of the angles, once.
