@@ -5,7 +5,6 @@ namespace BarbuleOptics.Grating.Modal;
 /// <summary>Computes the operators of a depth from its cut.</summary>
 internal sealed class CutOperatorBuilder
 {
-    private readonly int _count;
     private readonly Complex[] _coefficients;
     private readonly Complex[] _inverses;
     private readonly OperatorBlock _all;
@@ -18,8 +17,7 @@ internal sealed class CutOperatorBuilder
     /// <param name="hasAxis">Whether cuts are their own mirror image about x = 0: even and odd combinations are then computed apart.</param>
     public CutOperatorBuilder(int harmonics, bool hasAxis)
     {
-        _count = 2 * harmonics + 1;
-        _coefficients = new Complex[2 * _count - 1];
+        _coefficients = new Complex[4 * harmonics + 1];
         _inverses = new Complex[16];
         FieldBasis rows = hasAxis ? FieldBasis.Even(harmonics) : FieldBasis.All(harmonics), columns = hasAxis ? FieldBasis.Odd(harmonics) : rows;
         _all = new OperatorBlock(rows);
@@ -44,42 +42,26 @@ internal sealed class CutOperatorBuilder
         for (int m = 0; m < inverses.Length; m++)
             inverses[m] = Complex.One / permittivities[m];
         cut.Transform(inverses, _coefficients);
-        operators.Xx.Clear();
-        operators.Zz.Clear();
-        operators.Xz.Clear();
-        OperatorBlock odd = _odd ?? _all;
-        if (!TryBlock(_all, cut, alpha, operators) || (_odd is not null && !TryBlock(_odd, cut, alpha, operators)))
+        if (!_all.TrySet(operators.Permittivity, _coefficients, cut.NormalXX, alpha)
+            || (_odd is not null && !_odd.TrySet(operators.Permittivity, _coefficients, cut.NormalXX, alpha)))
             return false;
 
         // Half of D n_x n_z + n_x n_z D; n_x n_z is odd and leads from odd combinations to even ones.
+        OperatorBlock odd = _odd ?? _all;
         FieldBasis.FillBetween(_all.Basis, odd.Basis, cut.NormalXZ, _normalMixed);
         _mixed.SetProduct(_all.Difference, _normalMixed);
         _mixed.AddProduct(_normalMixed, odd.Difference);
-        FieldBasis.AddToFull(_all.Basis, odd.Basis, _mixed, 0.5, operators.Xz);
         if (_odd is not null)
-            AddTransposed(operators.Xz);
-        return true;
-    }
-
-    private bool TryBlock(OperatorBlock block, CutTransform cut, double alpha, CutOperators operators)
-    {
-        if (!block.TrySet(operators.Permittivity, _coefficients, cut.NormalXX, alpha))
-            return false;
-        FieldBasis.AddToFull(block.Basis, block.Basis, block.Along, 1, operators.Xx);
-        FieldBasis.AddToFull(block.Basis, block.Basis, block.Normal, 1, operators.Zz);
-        return true;
-    }
-
-    // From even combinations to odd ones it is minus the transpose.
-    private void AddTransposed(ComplexMatrix matrix)
-    {
-        for (int row = 0; row < _count; row++)
         {
-            for (int column = 0; column <= row; column++)
-            {
-                Complex difference = matrix[row, column] - matrix[column, row];
-                (matrix[row, column], matrix[column, row]) = (difference, -difference);
-            }
+            FieldBasis.JoinEven(_all.Along, _odd.Along, operators.Xx);
+            FieldBasis.JoinEven(_all.Normal, _odd.Normal, operators.Zz);
+            FieldBasis.JoinOdd(_mixed, 0.5, operators.Xz);
+            return true;
         }
+        operators.Xx.CopyFrom(_all.Along);
+        operators.Zz.CopyFrom(_all.Normal);
+        for (int i = 0; i < _mixed.Elements.Length; i++)
+            operators.Xz.Elements[i] = 0.5 * _mixed.Elements[i];
+        return true;
     }
 }

@@ -75,8 +75,10 @@ internal readonly struct FieldBasis
             Complex scaled = rowScale.IsEmpty ? factor : factor * rowScale[center + m];
             if (!rows.HasPairs)
             {
-                for (int c = 0; c < sums.Length; c++)
-                    sums[c] += (columnScale.IsEmpty ? scaled : scaled * columnScale[c]) * row[c];
+                if (columnScale.IsEmpty)
+                    ComplexMatrix.SubtractScaled(sums, -scaled, row);
+                for (int c = 0; c < columnScale.Length; c++)
+                    sums[c] += scaled * (columnScale[c] * row[c]);
                 continue;
             }
             // Both images of the row's harmonic give the same.
@@ -119,27 +121,41 @@ internal readonly struct FieldBasis
         }
     }
 
-    /// <summary>Adds factor times a matrix between combinations to one over all harmonics.</summary>
-    public static void AddToFull(in FieldBasis rows, in FieldBasis columns, ComplexMatrix block, double factor, ComplexMatrix full)
+    /// <summary>Joins what an even function does to even and to odd combinations to a matrix over all harmonics.</summary>
+    public static void JoinEven(ComplexMatrix even, ComplexMatrix odd, ComplexMatrix full)
     {
-        int center = full.Rows / 2;
-        for (int r = 0; r < rows.Count; r++)
+        int n = odd.Rows;
+        full[n, n] = even[0, 0];
+        for (int a = 1; a <= n; a++)
         {
-            int m = rows.HarmonicOf(r);
-            for (int image = 0; image < (rows.HasPairs && m != 0 ? 2 : 1); image++)
+            full[n, n + a] = full[n, n - a] = Half * even[0, a];
+            full[n + a, n] = full[n - a, n] = Half * even[a, 0];
+            for (int b = 1; b <= n; b++)
             {
-                int harmonic = image == 0 ? m : -m;
-                double share = factor * rows.ShareOf(harmonic);
-                Span<Complex> target = full.Row(center + harmonic);
-                ReadOnlySpan<Complex> source = block.Row(r);
-                for (int c = 0; c < source.Length; c++)
-                {
-                    int n = columns.HarmonicOf(c);
-                    Complex value = share * columns.ShareOf(n) * source[c];
-                    target[center + n] += value;
-                    if (columns.HasPairs && n != 0)
-                        target[center - n] += columns._parity * value;
-                }
+                Complex same = even[a, b], other = odd[a - 1, b - 1];
+                full[n + a, n + b] = full[n - a, n - b] = 0.5 * (same + other);
+                full[n + a, n - b] = full[n - a, n + b] = 0.5 * (same - other);
+            }
+        }
+    }
+
+    /// <summary>Joins factor times what an odd function of x makes of odd combinations, even ones, to a matrix over all harmonics; from
+    /// even to odd combinations it does minus the transpose.</summary>
+    public static void JoinOdd(ComplexMatrix evenFromOdd, double factor, ComplexMatrix full)
+    {
+        int n = evenFromOdd.Columns;
+        full[n, n] = Complex.Zero;
+        for (int a = 1; a <= n; a++)
+        {
+            Complex middle = factor * Half * evenFromOdd[0, a - 1];
+            full[n, n + a] = full[n - a, n] = middle;
+            full[n, n - a] = full[n + a, n] = -middle;
+            for (int b = 1; b <= n; b++)
+            {
+                Complex one = evenFromOdd[a, b - 1], other = evenFromOdd[b, a - 1];
+                Complex same = 0.5 * factor * (one - other), opposite = 0.5 * factor * (one + other);
+                (full[n + a, n + b], full[n - a, n - b]) = (same, -same);
+                (full[n + a, n - b], full[n - a, n + b]) = (-opposite, opposite);
             }
         }
     }

@@ -8,8 +8,11 @@ namespace BarbuleOptics.Grating.Modal;
 /// Galerkin's method: harmonics -N..N along x (<see cref="CutOperators"/>), elements of high order in depth
 /// (<see cref="DepthMesh"/>), joined from one plane to the other (<see cref="SlabChain"/>). At any N and mesh power is kept and source and
 /// receiver may be exchanged, to rounding. Bodies may touch and lie within others; where outlines cross, depth converges slowly.
-/// Error in R of five staggered rows of 120 nm rods at 170 nm, 300-780 nm, 30 degrees, against 28 harmonics: solid 2.6e-5 at N = 2
-/// and 1.6e-6 at N = 7 in either field; with a 70 nm lumen 6.2e-4 and 2.5e-5 (E), 4.3e-3 and 1.2e-5 (H).
+/// Largest error in R of five staggered rows, 300-780 nm, 0 and 30 degrees, against 30 harmonics, at N = 3, 5, 7, 10:
+/// 120 nm rods at 170 nm, solid, E 1.6e-5 3e-6 2e-6 5e-7, H 1.4e-5 3e-6 1e-6 4e-7; with a 70 nm lumen E 4e-4 4e-5 2.5e-5 9e-6,
+/// H 2.4e-4 7e-5 1.6e-5 1.2e-5; with a 100 nm lumen at 150 nm E 1.1e-3 2.6e-4 8e-5 2e-5, H 6e-3 2e-4 1.4e-4 2e-4; platelets
+/// 180 x 60 nm with a 15 nm wall at 220 nm, whose corners slow it down, E 1.1e-3 2e-4 1.2e-4 2.4e-5, H 5e-3 1.8e-3 1.3e-3 6e-4.
+/// Hollow ellipses and platelets agree with spectral elements, an independent method, to that.
 /// </remarks>
 internal sealed class ModalSlab : IGratingElement
 {

@@ -53,12 +53,25 @@ internal sealed class OperatorBlock
         Difference.Subtract(Along);
         FieldBasis.FillBetween(Basis, Basis, normalXX, _factor);
         _product.SetProduct(Difference, _factor);
-        _product.AddProduct(_factor, Difference);
+        if (Basis.HasPairs)
+            AddTransposed(_product);
+        else
+            _product.AddProduct(_factor, Difference);
         foreach (ref Complex element in _product.Elements)
             element *= 0.5;
         Along.Add(_product);
         Normal.Subtract(_product);
         return true;
+    }
+
+    // Of two symmetric matrices the product the other way round is the transpose.
+    private static void AddTransposed(ComplexMatrix matrix)
+    {
+        for (int row = 0; row < matrix.Rows; row++)
+        {
+            for (int column = 0; column <= row; column++)
+                matrix[row, column] = matrix[column, row] = matrix[row, column] + matrix[column, row];
+        }
     }
 
     private bool TryInvertShifted(ComplexMatrix matrix, double alpha, ComplexMatrix inverse)
