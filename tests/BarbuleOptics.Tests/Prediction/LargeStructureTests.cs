@@ -32,6 +32,17 @@ public sealed class LargeStructureTests
         Assert.True(Stopwatch.GetElapsedTime(start).TotalMilliseconds < LimitMs, name);
     }
 
+    // The cell of a hundred bodies is 120 wavelengths wide.
+    [Theory]
+    [MemberData(nameof(Large))]
+    public void A_large_structure_is_solved_or_refused_by_the_grating_solver_in_time(string name, string text)
+    {
+        long start = Stopwatch.GetTimestamp();
+        AnatomyProblem? problem = Problem(text, SolverChoice.Grating);
+        Assert.Equal(name == "a hundred bodies in a cell", problem is not null);
+        Assert.True(Stopwatch.GetElapsedTime(start).TotalMilliseconds < LimitMs, name);
+    }
+
     [Fact]
     public void More_rows_or_bodies_are_refused()
     {
@@ -44,11 +55,11 @@ public sealed class LargeStructureTests
 
     private static string Rods(int rows, string more) => $"[[layer]]\nform = 'rod'\ndiameter = 100\nrows = {rows}\n{more}\n";
 
-    private static AnatomyProblem? Problem(string text)
+    private static AnatomyProblem? Problem(string text, SolverChoice solver = SolverChoice.Multilayer)
     {
         FileResult<LoadedStructure> read = StructureFile.Parse(Encoding.UTF8.GetBytes("format = 1\n" + text), "large.toml", null, EmbeddedMaterials.Catalog);
         Assert.True(read.Succeeded, string.Join('\n', read.Problems));
-        var conditions = new PredictionConditions { Solver = SolverChoice.Multilayer, Wavelengths = WavelengthGrid.FromRange(Length.FromNanometres(500), Length.FromNanometres(500), Length.FromNanometres(1)) };
+        var conditions = new PredictionConditions { Solver = solver, ComparesSolvers = false, Wavelengths = WavelengthGrid.FromRange(Length.FromNanometres(500), Length.FromNanometres(500), Length.FromNanometres(1)) };
         return Predictor.TryPredict(read.Value.Barbule, conditions, read.Value.Catalog, out _, out IReadOnlyList<AnatomyProblem> problems) ? null : Assert.Single(problems);
     }
 }
