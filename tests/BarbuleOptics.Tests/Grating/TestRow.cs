@@ -11,6 +11,9 @@ internal sealed record TestRow(double RadiusNm, double PeriodNm, Complex Matrix,
 
     public Complex Core { get; init; } = Complex.One;
 
+    /// <summary>Half heights of an elliptical body and core, whose radii are then half widths; null for round rods.</summary>
+    public (double Body, double Core)? HalfHeightsNm { get; init; }
+
     public double WavelengthNm { get; init; }
 
     /// <summary>kx0/k0.</summary>
@@ -44,7 +47,13 @@ internal sealed record TestRow(double RadiusNm, double PeriodNm, Complex Matrix,
     }
 
     public RodRow Element(LatticeSums? sums = null)
-        => new(RadiusNm, CoreRadiusNm, 1, 2, XNm, TopNm ?? RadiusNm, BottomNm ?? RadiusNm, sums ?? new LatticeSums());
+    {
+        sums ??= new LatticeSums();
+        if (HalfHeightsNm is not (double bodyNm, double coreNm))
+            return new RodRow(RadiusNm, CoreRadiusNm, 1, 2, XNm, TopNm ?? RadiusNm, BottomNm ?? RadiusNm, sums);
+        var body = new EllipseScatterer(new EllipseOutline(RadiusNm, bodyNm), new EllipseOutline(CoreRadiusNm, coreNm), 1, 2);
+        return new RodRow(body, CoreRadiusNm > 0, 1, 2, XNm, TopNm ?? bodyNm, BottomNm ?? bodyNm, sums);
+    }
 
     public ScatteringBlock Scatter()
     {

@@ -2,10 +2,10 @@ using System.Numerics;
 
 namespace BarbuleOptics.Grating.Multipoles;
 
-/// <summary>The equations of a row for fields of one mirror symmetry about the plane of the rods' centers, which round rods never mix
+/// <summary>The equations of a row for fields of one mirror symmetry about the plane of the rods' centers, which bodies symmetric about it never mix
 /// with the other: Ey even and Hy odd in z, or Ey odd and Hy even.</summary>
 /// <remarks>
-/// Unknowns are the outgoing amplitudes b of one rod, b = Answer (a + coupling b), a from the plane waves. The amplitude w of an order that
+/// Unknowns are the outgoing amplitudes b of one body, b = Answer (a + coupling b), a from the plane waves. The amplitude w of an order that
 /// grazes the row is an unknown of its own, P kz/2 w = sum of cos(m a) b_m, and falls back on the rods as w eps_m cos(m a):
 /// so nothing large is formed, and the outgoing amplitude of that order is w, where 2/(P kz) times a sum would lose all digits.
 /// </remarks>
@@ -37,7 +37,7 @@ internal sealed class MirrorHalf
             RodField.Magnetic => [MakePart(1, electricEven, 0, ref size)],
             _ => [MakePart(0, electricEven, 0, ref size), MakePart(1, !electricEven, orders, ref size)],
         };
-        FlipsCoupling = field == RodField.Both && !electricEven;
+        ElectricEven = electricEven;
         BorderStart = size;
         if (HasEven)
             size += grazing;
@@ -69,28 +69,38 @@ internal sealed class MirrorHalf
     /// <summary>Outgoing amplitudes below the row, channel by channel, from incoming ones, all at the plane of the centers.</summary>
     public ComplexMatrix Response { get; }
 
-    private bool FlipsCoupling { get; }
+    /// <summary>Whether Ey is even and Hy odd in z; with one field, whether that is even.</summary>
+    public bool ElectricEven { get; }
+
+    /// <summary>Largest multipole.</summary>
+    public int Top => _top;
+
+    /// <summary>Incoming amplitudes on a body, by unknown, of the waves last set.</summary>
+    public ReadOnlySpan<Complex> Incoming => _incoming;
+
+    /// <summary>Outgoing amplitudes of a body, by unknown, of the waves last set.</summary>
+    public ReadOnlySpan<Complex> Outgoing => _outgoing;
 
     private int BorderStart { get; }
 
     private bool HasEven => Array.Exists(_parts, part => part.IsEven);
 
     /// <summary>Solves for all incoming waves at once.</summary>
-    /// <param name="rod">The rod's answer, ready.</param>
+    /// <param name="body">The body, ready.</param>
     /// <param name="coupling">The coupling, ready.</param>
     /// <param name="waves">Plane waves as multipoles: the orders, then the grazing ones.</param>
     /// <param name="gains">2/(P kz) by wave.</param>
     /// <param name="grazingOrders">For each grazing wave its place among the orders; negative where it is not kept.</param>
     /// <returns>False where the equations have no solution.</returns>
     public bool TrySolve(
-        RodScatterer rod, RowCoupling coupling, MultipoleWaves waves, ReadOnlySpan<Complex> gains, ReadOnlySpan<int> grazingOrders)
+        IRowBody body, RowCoupling coupling, MultipoleWaves waves, ReadOnlySpan<Complex> gains, ReadOnlySpan<int> grazingOrders)
     {
         _matrix.SetIdentity();
         _solution.Clear();
         foreach (Part to in _parts)
         {
             foreach (Part from in _parts)
-                FillBlock(to, from, rod, coupling, waves);
+                FillBlock(to, from, body, coupling, waves);
         }
         foreach (Part part in _parts)
         {
@@ -109,32 +119,24 @@ internal sealed class MirrorHalf
         return AreFinite(Response);
     }
 
-    // The element of the rod's answer between two fields; turning the sign of one field exchanges the two halves.
-    private Complex Answer(RodScatterer rod, int l, in Part to, in Part from)
-    {
-        FieldPair pair = rod.Answer[l];
-        if (to.Field == from.Field)
-            return to.Field == 0 ? pair.EE : pair.HH;
-        Complex cross = to.Field == 0 ? pair.EH : pair.HE;
-        return FlipsCoupling ? -cross : cross;
-    }
-
-    private void FillBlock(in Part to, in Part from, RodScatterer rod, RowCoupling coupling, MultipoleWaves waves)
+    private void FillBlock(in Part to, in Part from, IRowBody body, RowCoupling coupling, MultipoleWaves waves)
     {
         ComplexMatrix lattice = from.IsEven ? coupling.Even : coupling.Odd;
-        int least = Math.Max(to.Least, from.Least);
-        for (int l = least; l <= _top; l++)
+        for (int outgoing = to.Least; outgoing <= _top; outgoing++)
         {
-            Complex twice = (l == 0 ? 1 : 2) * Answer(rod, l, to, from), once = 0.5 * twice;
-            Span<Complex> row = _matrix.Row(to.Start + l);
-            ReadOnlySpan<Complex> received = lattice.Row(l);
-            for (int m = from.Least; m <= _top; m++)
-                row[from.Start + m] -= once * received[m];
-            Span<Complex> right = _solution.Row(to.Start + l);
-            for (int n = 0; n < _orders; n++)
-                right[from.Channel + n] = twice * Table(waves, from, n)[l];
-            for (int g = 0; from.IsEven && g < _grazing; g++)
-                row[BorderStart + g] = -twice * waves.Even(_orders + g)[l];
+            Span<Complex> row = _matrix.Row(to.Start + outgoing), right = _solution.Row(to.Start + outgoing);
+            int first = body.IsRound ? outgoing : outgoing % 2, last = body.IsRound ? outgoing : _top;
+            for (int l = first; l <= last; l += 2)
+            {
+                if (l < from.Least)
+                    continue;
+                Complex twice = (l == 0 ? 1 : 2) * body.Answer(to.Field, from.Field, ElectricEven, outgoing, l);
+                ComplexMatrix.SubtractScaled(row.Slice(from.Start + from.Least, _top + 1 - from.Least), 0.5 * twice, lattice.Row(l)[from.Least..]);
+                for (int n = 0; n < _orders; n++)
+                    right[from.Channel + n] += twice * Table(waves, from, n)[l];
+                for (int g = 0; from.IsEven && g < _grazing; g++)
+                    row[BorderStart + g] -= twice * waves.Even(_orders + g)[l];
+            }
         }
     }
 
@@ -162,11 +164,11 @@ internal sealed class MirrorHalf
             ComplexMatrix.SubtractScaled(response, -gain * table[m], _solution.Row(part.Start + m));
     }
 
-    /// <summary>Incoming amplitudes on a rod, multipole by multipole of each part, made by plane waves.</summary>
+    /// <summary>Finds <see cref="Incoming"/> and <see cref="Outgoing"/> for given plane waves.</summary>
     /// <param name="coefficients">Amplitudes of the waves of this symmetry, by channel.</param>
     /// <param name="coupling">The coupling of the last solution.</param>
     /// <param name="waves">The waves of the last solution.</param>
-    public ReadOnlySpan<Complex> Incoming(ReadOnlySpan<Complex> coefficients, RowCoupling coupling, MultipoleWaves waves)
+    public void SetWaves(ReadOnlySpan<Complex> coefficients, RowCoupling coupling, MultipoleWaves waves)
     {
         _solution.Apply(coefficients, _outgoing);
         foreach (Part part in _parts)
@@ -185,11 +187,7 @@ internal sealed class MirrorHalf
                 _incoming[part.Start + l] = (l == 0 ? 1 : 2) * sum;
             }
         }
-        return _incoming;
     }
-
-    /// <summary>Whether the sign between the fields is turned against <see cref="RodScatterer"/>.</summary>
-    public int CouplingSign => FlipsCoupling ? -1 : 1;
 
     private Part MakePart(int field, bool even, int channel, ref int size)
     {

@@ -49,4 +49,11 @@ internal sealed class MultipoleWaves
             odd[m + 1] = next * (step * odd[m]) - back * odd[m - 1];
         }
     }
+
+    /// <summary>Makes one wave hold no multipoles.</summary>
+    public void Clear(int wave)
+    {
+        _even.AsSpan(wave * _stride, _stride).Clear();
+        _odd.AsSpan(wave * _stride, _stride).Clear();
+    }
 }

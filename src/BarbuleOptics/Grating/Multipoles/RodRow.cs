@@ -3,24 +3,27 @@ using BarbuleOptics.Layering;
 
 namespace BarbuleOptics.Grating.Multipoles;
 
-/// <summary>One infinite row of equal round rods, solid or with a concentric core, solved by multipole expansion.</summary>
+/// <summary>One infinite row of equal rods, round or flattened, solid or with a concentric core, solved by multipole expansion.</summary>
 /// <remarks>
-/// Each rod answers the multipoles that fall on it (<see cref="RodScatterer"/>), plane waves and the other rods' fields arrive as
+/// Each rod answers the multipoles that fall on it (<see cref="IRowBody"/>), plane waves and the other rods' fields arrive as
 /// multipoles (<see cref="MultipoleWaves"/>, <see cref="LatticeSums"/>), and the equations fall into two halves by mirror symmetry
-/// (<see cref="MirrorHalf"/>). The only approximation is the largest multipole L; the error falls like (radius/P)^(2L) and faster.
-/// The plane-wave expansion of what a row sends out holds anywhere off the line of centers, so planes may cut the rods.
+/// (<see cref="MirrorHalf"/>). The only approximation is the largest multipole L; the error falls like (2 radius/P)^(2L) and faster.
+/// The plane-wave expansion of what a row sends out holds anywhere off the line of centers, so planes may cut the rods
+/// (those of tall bodies only beyond the foci, <see cref="IRowBody.LeastPlaneNm"/>; nearer ones are refused).
 /// </remarks>
 internal sealed class RodRow : IGratingElement
 {
-    private readonly double _radiusNm;
-    private readonly double _coreRadiusNm;
+    /// <summary>Most multipoles taken for the sake of fast orders.</summary>
+    private const int MostMultipoles = 40;
+
+    private readonly bool _hasCore;
     private readonly int _material;
     private readonly int _coreMaterial;
     private readonly double _xNm;
     private readonly double _topNm;
     private readonly double _bottomNm;
     private readonly LatticeSums _sums;
-    private readonly RodScatterer _rod;
+    private readonly IRowBody _body;
     private readonly MultipoleWaves _waves = new();
     private readonly int[] _grazingPlaces = new int[LatticeSums.MostGrazing];
     private RowCoupling? _coupling;
@@ -42,35 +45,55 @@ internal sealed class RodRow : IGratingElement
     /// <param name="sums">Lattice sums, shared by all rows of one thread.</param>
     public RodRow(
         double radiusNm, double coreRadiusNm, int material, int coreMaterial, double xNm, double topNm, double bottomNm, LatticeSums sums)
+        : this(new RodScatterer(radiusNm, coreRadiusNm, material, coreMaterial), coreRadiusNm > 0, material, coreMaterial, xNm, topNm, bottomNm, sums)
     {
-        (_radiusNm, _coreRadiusNm, _material, _coreMaterial) = (radiusNm, coreRadiusNm, material, coreMaterial);
+    }
+
+    /// <summary>A row of any bodies that the multipole expansion holds.</summary>
+    /// <param name="body">One body.</param>
+    /// <param name="hasCore">Whether it has a core.</param>
+    /// <param name="material">Number of its material.</param>
+    /// <param name="coreMaterial">Number of its core's material.</param>
+    /// <param name="xNm">Place of a center along x, in nm.</param>
+    /// <param name="topNm">Distance of the top plane above the centers, in nm.</param>
+    /// <param name="bottomNm">Distance of the bottom plane below the centers, in nm.</param>
+    /// <param name="sums">Lattice sums, shared by all rows of one thread.</param>
+    public RodRow(
+        IRowBody body, bool hasCore, int material, int coreMaterial, double xNm, double topNm, double bottomNm, LatticeSums sums)
+    {
+        (_body, _hasCore, _material, _coreMaterial) = (body, hasCore, material, coreMaterial);
         (_xNm, _topNm, _bottomNm, _sums) = (xNm, topNm, bottomNm, sums);
-        _rod = new RodScatterer(radiusNm, coreRadiusNm, material, coreMaterial);
     }
 
     /// <inheritdoc/>
     public double HeightNm => _topNm + _bottomNm;
 
-    private bool HasCore => _coreRadiusNm > 0;
-
     /// <inheritdoc/>
     public bool TryScatter(GratingWaves waves, in Resolution resolution, ScatteringBlock block)
     {
-        int top = Math.Max(1, resolution.Multipoles);
+        int top = TopFor(waves, resolution);
+        if (Math.Min(_topNm, _bottomNm) < _body.LeastPlaneNm || !_body.TryPrepare(waves, top))
+            return false;
         _sums.Prepare(waves, 2 * top);
-        _rod.Prepare(waves, top);
         Resize(waves, top);
-        double s = Complex.Abs(_sums.K) * _radiusNm / 2;
-        _coupling!.Fill(_sums.Sums, _radiusNm / waves.PeriodNm, s);
+        double s = Complex.Abs(_sums.K) * _body.RadiusNm / 2;
+        _coupling!.Fill(_sums.Sums, _body.RadiusNm / waves.PeriodNm, s);
         FillWaves(waves, s);
         _first = Half(waves.Field, electricEven: true);
         _second = Half(waves.Field, electricEven: false);
         ReadOnlySpan<int> places = _grazingPlaces.AsSpan(0, _sums.GrazingOrders.Length);
-        if (!_first.TrySolve(_rod, _coupling, _waves, _gains, places) || !_second.TrySolve(_rod, _coupling, _waves, _gains, places))
+        if (!_first.TrySolve(_body, _coupling, _waves, _gains, places) || !_second.TrySolve(_body, _coupling, _waves, _gains, places))
             return false;
         FillPhases(waves);
         FillBlock(waves, block);
         return true;
+    }
+
+    // Multipoles asked for, and those that the orders asked for need.
+    private int TopFor(GratingWaves waves, in Resolution resolution)
+    {
+        int needed = _body.MultipolesFor(Math.Max(-waves.Kx[0], waves.Kx[^1]));
+        return Math.Max(Math.Max(1, resolution.Multipoles), Math.Min(needed, MostMultipoles));
     }
 
     private void Resize(GratingWaves waves, int top)
@@ -115,6 +138,9 @@ internal sealed class RodRow : IGratingElement
     {
         _waves.Fill(wave, kx / _sums.K, kz / _sums.K, s);
         _gains[wave] = 2 / (waves.PeriodNm * kz);
+        // An order too fast for the multipoles passes by the bodies, as orders beyond those kept do.
+        if (_body.MultipolesFor(kx) > _shape.Top)
+            _waves.Clear(wave);
     }
 
     // From the planes to the centers and back; sideways only the order's share of kx matters, since kx0 is common to all.
@@ -164,7 +190,7 @@ internal sealed class RodRow : IGratingElement
     {
         bool matrixAbsorbs = waves.Matrix.Imaginary != 0;
         bool rodAbsorbs = waves.Permittivities[_material].Imaginary != 0;
-        bool coreAbsorbs = HasCore && waves.Permittivities[_coreMaterial].Imaginary != 0;
+        bool coreAbsorbs = _hasCore && waves.Permittivities[_coreMaterial].Imaginary != 0;
         if (!matrixAbsorbs && !rodAbsorbs && !coreAbsorbs)
             return;
         // The direct waves, at the planes they leave through.
@@ -207,31 +233,10 @@ internal sealed class RodRow : IGratingElement
                 _above[c] += part.SignAbove * _sent[c];
             }
         }
-        ReadOnlySpan<Complex> incoming = half.Incoming(_coefficients, _coupling!, _waves);
-        for (int m = 0; m <= _shape.Top; m++)
-        {
-            Complex electric = Complex.Zero, magnetic = Complex.Zero;
-            foreach (MirrorHalf.Part part in half.Parts)
-            {
-                if (m < part.Least)
-                    continue;
-                if (part.Field == 0)
-                    electric = incoming[part.Start + m];
-                else
-                    magnetic = half.CouplingSign * incoming[part.Start + m];
-            }
-            double share = (m == 0 ? 2 : 1) * Math.PI / waves.PeriodNm;
-            intoRods -= share * Outward(_rod.Field[m], _rod.Flux[m], electric, magnetic);
-            if (HasCore)
-                intoCores -= share * Outward(_rod.CoreField[m], _rod.CoreFlux[m], electric, magnetic);
-        }
-    }
-
-    private static double Outward(in FieldPair field, in FieldPair flux, Complex electric, Complex magnetic)
-    {
-        Complex e = field.EE * electric + field.EH * magnetic, h = field.HE * electric + field.HH * magnetic;
-        Complex eFlux = flux.EE * electric + flux.EH * magnetic, hFlux = flux.HE * electric + flux.HH * magnetic;
-        return (Complex.Conjugate(e) * eFlux + Complex.Conjugate(h) * hFlux).Imaginary;
+        half.SetWaves(_coefficients, _coupling!, _waves);
+        (double body, double core) = _body.PowerInto(waves, half);
+        intoRods += body / waves.PeriodNm;
+        intoCores += core / waves.PeriodNm;
     }
 
     private double IntoPlanes(GratingWaves waves, ReadOnlySpan<Complex> down, ReadOnlySpan<Complex> up)

@@ -12,7 +12,7 @@ namespace BarbuleOptics.Grating.Multipoles;
 /// H has no zeros for Im z >= 0, and only decaying factors carry amplitudes from the core's circle to the rod's.
 /// Source: Bohren and Huffman, Absorption and Scattering of Light by Small Particles, section 8.4, for the solid rod (from memory).
 /// </remarks>
-internal sealed class RodScatterer(double radiusNm, double coreRadiusNm, int material, int coreMaterial)
+internal sealed class RodScatterer(double radiusNm, double coreRadiusNm, int material, int coreMaterial) : IRowBody
 {
     private static readonly Complex Wronskian = new(0, -2 / Math.PI);
 
@@ -20,6 +20,7 @@ internal sealed class RodScatterer(double radiusNm, double coreRadiusNm, int mat
     private readonly CylinderFunctions _rod = new();
     private readonly CylinderFunctions _rodAtCore = new();
     private readonly CylinderFunctions _core = new();
+    // By multipole, from incoming amplitudes: outgoing ones, then field and flux r f on the rod's circle and on the core's.
     private FieldPair[] _answer = [];
     private FieldPair[] _field = [];
     private FieldPair[] _flux = [];
@@ -31,29 +32,27 @@ internal sealed class RodScatterer(double radiusNm, double coreRadiusNm, int mat
 
     private bool HasCore => coreRadiusNm > 0;
 
-    /// <summary>Outgoing amplitudes from incoming ones, by multipole.</summary>
-    public ReadOnlySpan<FieldPair> Answer => _answer;
+    /// <inheritdoc/>
+    public double RadiusNm => radiusNm;
 
-    /// <summary>Fields on the rod's circle from incoming amplitudes.</summary>
-    public ReadOnlySpan<FieldPair> Field => _field;
+    /// <inheritdoc/>
+    public bool IsRound => true;
 
-    /// <summary>Fluxes r f on the rod's circle from incoming amplitudes.</summary>
-    public ReadOnlySpan<FieldPair> Flux => _flux;
+    /// <inheritdoc/>
+    public double LeastPlaneNm => 0;
 
-    /// <summary>Fields on the core's circle from incoming amplitudes.</summary>
-    public ReadOnlySpan<FieldPair> CoreField => _coreField;
+    /// <inheritdoc/>
+    /// <remarks>The answer of a round rod falls like (radius/P)^(2m), whatever comes in: what is left out is as small.</remarks>
+    public int MultipolesFor(double kx) => 0;
 
-    /// <summary>Fluxes r f on the core's circle from incoming amplitudes.</summary>
-    public ReadOnlySpan<FieldPair> CoreFlux => _coreFlux;
-
-    /// <summary>Makes multipoles 0 to <paramref name="top"/> ready.</summary>
-    public void Prepare(GratingWaves waves, int top)
+    /// <inheritdoc/>
+    public bool TryPrepare(GratingWaves waves, int top)
     {
         Complex rod = waves.Permittivities[material];
         Complex core = HasCore ? waves.Permittivities[coreMaterial] : rod;
         bool same = _k0 == waves.K0 && _ky == waves.Ky && _matrixPermittivity == waves.Matrix && _rodPermittivity == rod && _corePermittivity == core;
         if (same && top <= _top)
-            return;
+            return true;
         (_k0, _ky, _matrixPermittivity, _rodPermittivity, _corePermittivity, _top) = (waves.K0, waves.Ky, waves.Matrix, rod, core, top);
         if (_answer.Length <= top)
         {
@@ -64,6 +63,51 @@ internal sealed class RodScatterer(double radiusNm, double coreRadiusNm, int mat
             _coreFlux = new FieldPair[top + 1];
         }
         Match(waves);
+        return true;
+    }
+
+    /// <inheritdoc/>
+    public Complex Answer(int to, int from, bool electricEven, int outgoing, int incoming)
+    {
+        if (outgoing != incoming)
+            return Complex.Zero;
+        FieldPair pair = _answer[incoming];
+        if (to == from)
+            return to == 0 ? pair.EE : pair.HH;
+        // Turning the sign of one field exchanges the two halves.
+        Complex cross = to == 0 ? pair.EH : pair.HE;
+        return electricEven ? cross : -cross;
+    }
+
+    /// <inheritdoc/>
+    public (double Body, double Core) PowerInto(GratingWaves waves, MirrorHalf half)
+    {
+        double body = 0, core = 0;
+        for (int m = 0; m <= half.Top; m++)
+        {
+            Complex electric = Complex.Zero, magnetic = Complex.Zero;
+            foreach (MirrorHalf.Part part in half.Parts)
+            {
+                if (m < part.Least)
+                    continue;
+                if (part.Field == 0)
+                    electric = half.Incoming[part.Start + m];
+                else
+                    magnetic = half.ElectricEven ? half.Incoming[part.Start + m] : -half.Incoming[part.Start + m];
+            }
+            double share = (m == 0 ? 2 : 1) * Math.PI;
+            body -= share * Outward(_field[m], _flux[m], electric, magnetic);
+            if (HasCore)
+                core -= share * Outward(_coreField[m], _coreFlux[m], electric, magnetic);
+        }
+        return (body, core);
+    }
+
+    private static double Outward(in FieldPair field, in FieldPair flux, Complex electric, Complex magnetic)
+    {
+        Complex e = field.EE * electric + field.EH * magnetic, h = field.HE * electric + field.HH * magnetic;
+        Complex eFlux = flux.EE * electric + flux.EH * magnetic, hFlux = flux.HE * electric + flux.HH * magnetic;
+        return (Complex.Conjugate(e) * eFlux + Complex.Conjugate(h) * hFlux).Imaginary;
     }
 
     private void Match(GratingWaves waves)
