@@ -9,7 +9,19 @@ namespace BarbuleOptics.Grating.Joining;
 internal sealed class RefinedPoint(StackPlan plan)
 {
     /// <summary>Factor on the estimate that covers changes which happen to be small.</summary>
-    private const double Safety = 2.0;
+    private const double Safety = 1.5;
+
+    /// <summary>No larger fall of the change from one step to the next is believed.</summary>
+    private const double LeastFall = 0.05;
+
+    /// <summary>The same for slabs, whose errors fall slowly and unevenly.</summary>
+    private const double LeastSlabFall = 0.3;
+
+    /// <summary>Part of the accuracy that the mesh in depth may take.</summary>
+    private const double DepthShare = 0.2;
+
+    /// <summary>Factor on the change that a finer mesh in depth made.</summary>
+    private const double DepthSafety = 1.5;
 
     /// <summary>Wavelengths between those that are solved a step further than needed.</summary>
     private const int ProbeEvery = 8;
@@ -19,7 +31,8 @@ internal sealed class RefinedPoint(StackPlan plan)
 
     private readonly PointSolver _point = new(plan);
     private readonly ResolutionLadder _ladder = new(plan);
-    private readonly RefinementMemory[] _memories = [.. Enumerable.Range(0, 3).Select(_ => new RefinementMemory(12, new ResolutionLadder(plan).IsSlow ? 0.6 : 0.35))];
+    private readonly RefinementMemory[] _memories = [.. Enumerable.Range(0, 3).Select(_ => new ResolutionLadder(plan).HasSlabs ? new RefinementMemory(12, 0.6, 0.4) : new RefinementMemory(12, 0.35, 0.06))];
+    private readonly (int Depth, double Error)[] _depths = [(-1, 0), (-1, 0), (-1, 0)];
     private double[][] _current = [[], []];
     private double[][] _previous = [[], []];
 
@@ -31,6 +44,7 @@ internal sealed class RefinedPoint(StackPlan plan)
     {
         foreach (RefinementMemory memory in _memories)
             memory.Clear();
+        Array.Fill(_depths, (-1, 0));
     }
 
     /// <summary>Solves for light of one polarization, or of both where the rods couple them.</summary>
@@ -49,13 +63,16 @@ internal sealed class RefinedPoint(StackPlan plan)
     {
         Reserve(layout.Length);
         RefinementMemory memory = _memories[(int)field];
+        if (_ladder.HasSlabs && _depths[(int)field].Depth < 0)
+            _depths[(int)field] = FindDepth(light, media, field, periods, accuracy, layout);
+        (int depth, double depthError) = _depths[(int)field];
         bool stands = false;
         double lastChange = double.NaN, error = double.NaN;
         int step = Math.Max(0, memory.Accepted - 1), accepted = -1;
         for (; step < _ladder.Count; step++)
         {
             (_current, _previous) = (_previous, _current);
-            Resolution resolution = _ladder.At(step, periods.MostOrder, periods.PeriodNm);
+            Resolution resolution = _ladder.At(step, periods.MostOrder, periods.PeriodNm, depth);
             if (!_point.TrySolve(light, media, resolution, field, periods.PeriodNm, periods.OrderPeriodNm, layout, _current[0], _current[1]))
             {
                 (_current, _previous) = (_previous, _current);
@@ -70,11 +87,15 @@ internal sealed class RefinedPoint(StackPlan plan)
                 error = Rounding;
                 break;
             }
-            double change = Change(field == RodField.Both);
+            double plain = Change(field == RodField.Both), change = plain;
             if (!double.IsNaN(lastChange) && lastChange > Rounding)
                 memory.Note(step - 1, change / lastChange);
             double ratio = Math.Min(0.8, memory.Ratio(step));
-            error = Math.Max(Rounding, Safety * change * ratio / (1 - ratio));
+            // A change much smaller than the one before may be so by accident.
+            if (lastChange > 0)
+                change = Math.Max(change, (_ladder.HasSlabs ? LeastSlabFall : LeastFall) * lastChange);
+            change = memory.Smooth(step, change);
+            error = Math.Max(Rounding, Safety * change * ratio / (1 - ratio)) + depthError;
             if (error <= accuracy)
             {
                 if (accepted < 0)
@@ -85,13 +106,43 @@ internal sealed class RefinedPoint(StackPlan plan)
                     break;
                 memory.SinceProbe = -1;
             }
-            lastChange = change;
+            lastChange = plain;
         }
         if (!stands)
             throw new ArithmeticException(FormattableString.Invariant($"The section has no finite solution at {light.WavelengthNm} nm at any resolution."));
         memory.SinceProbe++;
         memory.Accepted = accepted >= 0 ? accepted : _ladder.Count - 1;
         Deliver(double.IsNaN(error) ? 1 : Math.Min(1, error), field, first, second);
+    }
+
+    /// <summary>The coarsest mesh in depth that takes a small part of the accuracy, judged at few harmonics, and its error.</summary>
+    /// <remarks>A finer mesh divides the error by four at least, and hardly knows the harmonics.</remarks>
+    private (int Depth, double Error) FindDepth(
+        in PointLight light, ReadOnlySpan<Complex> media, RodField field, in PointPeriods periods, double accuracy, in OutcomeLayout layout)
+    {
+        double error = accuracy;
+        bool stands = false;
+        for (int depth = 0; depth <= ResolutionLadder.MostDepth; depth++)
+        {
+            Resolution resolution = _ladder.At(ResolutionLadder.DepthStep, periods.MostOrder, periods.PeriodNm, depth);
+            (_current, _previous) = (_previous, _current);
+            if (!_point.TrySolve(light, media, resolution, field, periods.PeriodNm, periods.OrderPeriodNm, layout, _current[0], _current[1]))
+            {
+                (_current, _previous) = (_previous, _current);
+                continue;
+            }
+            if (stands)
+            {
+                double change = Change(field == RodField.Both);
+                if (DepthSafety * change <= DepthShare * accuracy)
+                    return (depth - 1, DepthSafety * change);
+                error = DepthSafety * change / 4;
+                if (error <= DepthShare * accuracy)
+                    return (depth, error);
+            }
+            stands = true;
+        }
+        return (ResolutionLadder.MostDepth, error);
     }
 
     private void Deliver(double error, RodField field, Span<double> first, Span<double> second)

@@ -42,7 +42,7 @@ internal sealed class StackPlanBuilder
             AddFilm(films[next]);
         AddBacking();
         if (_groups.Count == 0)
-            _groups.Add(new PlanGroup(0, false, false, false, double.PositiveInfinity, double.PositiveInfinity));
+            _groups.Add(PlanGroup.Empty(0));
         return new StackPlan(_section, [.. _pieces], _kinds.All, [.. _groups], [.. _joints]);
     }
 
@@ -84,7 +84,7 @@ internal sealed class StackPlanBuilder
             _joints.Add(new PlanJoint(Group, Math.Max(0, toFilmNm), Math.Max(0, clearNm)));
             InsertJoint();
         }
-        _groups.Add(new PlanGroup(element.Kind.PeriodNm, false, false, false, double.PositiveInfinity, double.PositiveInfinity));
+        _groups.Add(PlanGroup.Empty(element.Kind.PeriodNm));
     }
 
     private void InsertJoint()
@@ -96,8 +96,8 @@ internal sealed class StackPlanBuilder
             _pieces[i] = _pieces[i] with { Group = Group + 1 };
     }
 
-    private static PlanGroup With(in PlanGroup group, PlannedElement element, (double NearestNm, double ClearNm) around) => element.Kind is RodKind
-        ? group with { HasRods = true, NearestNm = Math.Min(group.NearestNm, around.NearestNm) }
+    private static PlanGroup With(in PlanGroup group, PlannedElement element, (double NearestNm, double Overlap, double ClearNm) around) => element.Kind is RodKind
+        ? group with { HasRods = true, NearestNm = Math.Min(group.NearestNm, around.NearestNm), Overlap = Math.Max(group.Overlap, around.Overlap) }
         : group with
         {
             HasSlabs = true,
@@ -106,10 +106,10 @@ internal sealed class StackPlanBuilder
         };
 
     /// <summary>How near the next rows and faces are: by centers for a row of rods, by bodies for a slab.</summary>
-    private (double NearestNm, double ClearNm) Surroundings(int number, SectionFilm[] films)
+    private (double NearestNm, double Overlap, double ClearNm) Surroundings(int number, SectionFilm[] films)
     {
         PlannedElement element = _elements[number];
-        double nearestNm = double.PositiveInfinity, clearNm = double.PositiveInfinity;
+        double nearestNm = double.PositiveInfinity, clearNm = double.PositiveInfinity, overlap = 1;
         foreach (int other in (ReadOnlySpan<int>)[number - 1, number + 1])
         {
             if (other < 0 || other >= _elements.Count)
@@ -117,6 +117,8 @@ internal sealed class StackPlanBuilder
             nearestNm = Math.Min(nearestNm, _elements[other].Kind is RodKind
                 ? Math.Abs(_elements[other].CenterNm - element.CenterNm)
                 : 2 * Math.Max(_elements[other].TopNm - element.CenterNm, element.CenterNm - _elements[other].BottomNm));
+            if (_elements[other].Kind is RodKind near && element.Kind is RodKind own)
+                overlap = Math.Max(overlap, (near.RadiusNm + own.RadiusNm) / Math.Abs(_elements[other].CenterNm - element.CenterNm));
             clearNm = Math.Min(clearNm, Math.Max(_elements[other].BodiesTopNm - element.BodiesBottomNm, element.BodiesTopNm - _elements[other].BodiesBottomNm));
         }
         Face(0);
@@ -126,7 +128,7 @@ internal sealed class StackPlanBuilder
             Face(film.TopNm);
             Face(film.BottomNm);
         }
-        return (nearestNm, Math.Max(0, clearNm));
+        return (nearestNm, overlap, Math.Max(0, clearNm));
 
         void Face(double depthNm)
         {
