@@ -9,10 +9,10 @@ namespace BarbuleOptics.Grating.Joining;
 internal sealed class RefinedPoint(StackPlan plan)
 {
     /// <summary>Factor on the estimate that covers changes which happen to be small.</summary>
-    private const double Safety = 1.5;
+    private const double Safety = 1.3;
 
     /// <summary>No larger fall of the change from one step to the next is believed.</summary>
-    private const double LeastFall = 0.05;
+    private const double LeastFall = 0.01;
 
     /// <summary>The same for slabs, whose errors fall slowly and unevenly.</summary>
     private const double LeastSlabFall = 0.3;
@@ -31,7 +31,7 @@ internal sealed class RefinedPoint(StackPlan plan)
 
     private readonly PointSolver _point = new(plan);
     private readonly ResolutionLadder _ladder = new(plan);
-    private readonly RefinementMemory[] _memories = [.. Enumerable.Range(0, 3).Select(_ => new ResolutionLadder(plan).HasSlabs ? new RefinementMemory(12, 0.6, 0.4) : new RefinementMemory(12, 0.35, 0.06))];
+    private readonly RefinementMemory[] _memories = [.. Enumerable.Range(0, 3).Select(_ => new ResolutionLadder(plan).HasSlabs ? new RefinementMemory(12, 0.6, 0.4) : new RefinementMemory(12, 0.2, 0.012))];
     private readonly (int Depth, double Error)[] _depths = [(-1, 0), (-1, 0), (-1, 0)];
     private double[][] _current = [[], []];
     private double[][] _previous = [[], []];

@@ -47,7 +47,7 @@ internal sealed class RefinementMemory(int steps, double cautious, double least)
         double log = Math.Log(Math.Clamp(ratio, LeastRatio, MostRatio));
         if (_counts[step]++ == 0)
         {
-            (_means[step], _deviations[step]) = (log, Math.Log(3));
+            (_means[step], _deviations[step]) = (log, Math.Log(2));
             return;
         }
         _deviations[step] += Newest * (Math.Abs(log - _means[step]) - _deviations[step]);

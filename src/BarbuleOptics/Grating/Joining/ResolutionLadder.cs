@@ -4,11 +4,12 @@ namespace BarbuleOptics.Grating.Joining;
 /// <remarks>
 /// Rows of rods: multipoles of degree L pass between rows whose centers lie D apart in depth mainly by orders n near L P/(pi D), where
 /// k^(2 L) exp(-k D) with k = 2 pi n/P is largest; orders are kept to a little beyond.
+/// Degrees rise by two at least: where rows touch and light falls straight, even and odd ones matter in turn, and a step of one may change nothing.
 /// Slabs: what the orders left out would carry, exp(-2 k g) over a gap g and back, stays below what the harmonics leave, about 1/N^2.
 /// </remarks>
 internal sealed class ResolutionLadder(StackPlan plan)
 {
-    private static readonly int[] Multipoles = [2, 3, 4, 6, 8, 10, 12, 15, 18, 22, 26, 30];
+    private static readonly int[] Multipoles = [1, 3, 5, 7, 9, 11, 13, 16, 19, 22, 26, 30];
     private static readonly int[] Harmonics = [1, 2, 3, 5, 7, 10, 14, 20, 28, 40, 56, 80];
 
     /// <summary>Finest mesh in depth.</summary>

@@ -1,0 +1,111 @@
+using BarbuleOptics.Multilayer;
+using Xunit;
+
+namespace BarbuleOptics.Tests.Grating;
+
+/// <summary>Where solvers fail: orders at their opening, grazing light, touching bodies, thin shells, many rows, other spacings.</summary>
+public class HardSectionTests
+{
+    // The largest gap found over the cases below, lossless ones included, is some 1e-12.
+    private const double Tolerance = 1e-10;
+
+    private const string Rods = """
+        [cortex]
+        thickness = 120
+        [[layer]]
+        form = "rod"
+        diameter = 120
+        spacing = 320
+        rows = 3
+        pitch = 150
+        stacking = "staggered"
+        gap = 20
+        """;
+
+    [Fact]
+    public void Orders_may_open_exactly_at_a_wavelength()
+    {
+        // In air: P (1 + sin a); in the matrix of index 1.5 and in the backing of 1.25 likewise.
+        const string text = "[barbule]\nmatrix = { n = 1.5, k = 0 }\nbacking = { n = 1.25, k = 0 }\n" + Rods;
+        foreach (double axis in (double[])[0, 90, 40])
+        {
+            GratingCase section = GratingCase.Of(text).At(axis);
+            foreach (double wavelengthNm in (double[])[320, 480, 400, 640, 800, 720])
+                CheckBoth(section, wavelengthNm, axis == 0 && wavelengthNm > 480 ? 30 : 0);
+        }
+    }
+
+    [Fact]
+    public void Light_may_graze_at_an_opening()
+    {
+        const string text = "[barbule]\nmatrix = { n = 1.5, k = 0 }\nbacking = { n = 1.25, k = 0 }\n" + Rods;
+        double sine = Math.Sin(double.DegreesToRadians(89.9));
+        CheckBoth(GratingCase.Of(text), 320 * (1 + sine), 89.9);
+        CheckBoth(GratingCase.Of(text), 320 * (1.5 + sine), 89.9);
+        CheckBoth(GratingCase.Of(text).At(90), 320 * Math.Cos(double.DegreesToRadians(89.9)), 89.9);
+        CheckBoth(GratingCase.Of(text).At(90), 470, 89.9);
+    }
+
+    [Theory]
+    [InlineData("diameter = 150\nlumen = 149.5\nseparation = 0\nrows = 4\nrow_separation = 0\nstacking = \"staggered\"")]
+    [InlineData("diameter = 150\nseparation = 0\nrows = 4\nrow_separation = 0\nstacking = \"staggered\"")]
+    [InlineData("diameter = 150\nseparation = 0\nrows = 4\nrow_separation = 0")]
+    [InlineData("diameter = 120\nspacing = 170\nrows = 100\npitch = 130\nstacking = \"staggered\"")]
+    [InlineData("diameter = 120\nlumen = 70\nspacing = 500\nrows = 100\npitch = 130")]
+    public void Rods_may_touch_be_thin_shells_and_lie_in_many_rows(string rods)
+    {
+        foreach (string matrix in (string[])["", "[barbule]\nmatrix = { n = 1.55, k = 0 }\n"])
+        {
+            GratingCase section = GratingCase.Of(matrix + "[cortex]\nthickness = 0\n[[layer]]\nform = \"rod\"\n" + (matrix == "" ? "" : "material = { n = 1.8, k = 0 }\n") + rods);
+            CheckBoth(section, 450, 0);
+            CheckBoth(section.At(90), 610, 40);
+        }
+    }
+
+    // Rods of a period so small that only the quasi-static limit is left: s sees the mean permittivity (Rytov 1956; from memory),
+    // with an error that falls like the square of the period: 4 times from each period to its half.
+    [Fact]
+    public void Small_periods_in_s_are_the_mean_permittivity()
+    {
+        double coarse = Difference(16), fine = Difference(8);
+        Assert.InRange(coarse / fine, 3, 5);
+        Assert.True(fine < 1e-3);
+
+        static double Difference(double periodNm)
+        {
+            string text = FormattableString.Invariant($$"""
+                [cortex]
+                thickness = 50
+                [[layer]]
+                form = "platelet"
+                material = { n = 2, k = 0.1 }
+                thickness = 160
+                width = {{periodNm / 2}}
+                spacing = {{periodNm}}
+                """);
+            string film = """
+                [cortex]
+                thickness = 50
+                [[layer]]
+                form = "film"
+                material = { n = MEAN }
+                thickness = 160
+                """;
+            const double wavelengthNm = 500;
+            System.Numerics.Complex keratin = 1.532 + 5890 / (wavelengthNm * wavelengthNm), platelet = new(2, 0.1);
+            System.Numerics.Complex mean = System.Numerics.Complex.Sqrt((keratin * keratin + platelet * platelet) / 2);
+            film = film.Replace("MEAN", FormattableString.Invariant($"{mean.Real:R}, k = {mean.Imaginary:R}"), StringComparison.Ordinal);
+            return GratingCase.Of(text).Solve(wavelengthNm, 20, Polarizations.S, 1e-7)
+                .Difference(GratingCase.Of(film).Solve(wavelengthNm, 20, Polarizations.S));
+        }
+    }
+
+    private static void CheckBoth(GratingCase section, double wavelengthNm, double degrees)
+    {
+        foreach (Polarizations polarization in (Polarizations[])[Polarizations.S, Polarizations.P])
+        {
+            GratingAnswer answer = section.Solve(wavelengthNm, degrees, polarization, 1e-6);
+            Assert.True(answer.Gap < Tolerance, FormattableString.Invariant($"{answer} at {wavelengthNm} nm, {degrees} deg, {polarization}"));
+        }
+    }
+}
