@@ -95,7 +95,7 @@ public class HardSectionTests
             System.Numerics.Complex keratin = 1.532 + 5890 / (wavelengthNm * wavelengthNm), platelet = new(2, 0.1);
             System.Numerics.Complex mean = System.Numerics.Complex.Sqrt((keratin * keratin + platelet * platelet) / 2);
             film = film.Replace("MEAN", FormattableString.Invariant($"{mean.Real:R}, k = {mean.Imaginary:R}"), StringComparison.Ordinal);
-            return GratingCase.Of(text).Solve(wavelengthNm, 20, Polarizations.S, 1e-7)
+            return GratingCase.Of(text).Solve(wavelengthNm, 20, Polarizations.S, 1e-5)
                 .Difference(GratingCase.Of(film).Solve(wavelengthNm, 20, Polarizations.S));
         }
     }

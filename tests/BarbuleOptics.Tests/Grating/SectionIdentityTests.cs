@@ -133,7 +133,7 @@ public class SectionIdentityTests
         double degrees = random.Incidence(), wavelengthNm = random.WavelengthNm();
         GratingAnswer answer = section.Solve(wavelengthNm, degrees, random.Polarization(), accuracy);
         Assert.True(answer.Gap < PowerTolerance, FormattableString.Invariant($"{answer} at {wavelengthNm} nm, {degrees} deg of {text}"));
-        Assert.True(answer.Reflected >= 0 && answer.Diffracted >= 0 && answer.Transmitted >= 0 && answer.Absorbed >= -1e-14);
+        Assert.True(answer.Reflected >= 0 && answer.Diffracted >= 0 && answer.Transmitted >= 0 && answer.Absorbed >= -PowerTolerance);
     }
 
     private static GratingCase Mirrored(GratingCase section) => new(section.Section with

@@ -26,6 +26,9 @@ internal sealed class RefinedPoint(StackPlan plan)
     /// <summary>Wavelengths between those that are solved a step further than needed.</summary>
     private const int ProbeEvery = 8;
 
+    /// <summary>The same for slabs.</summary>
+    private const double SlabSafety = 2.3;
+
     /// <summary>No estimate is smaller: rounding.</summary>
     private const double Rounding = 1e-12;
 
@@ -95,7 +98,7 @@ internal sealed class RefinedPoint(StackPlan plan)
             if (lastChange > 0)
                 change = Math.Max(change, (_ladder.HasSlabs ? LeastSlabFall : LeastFall) * lastChange);
             change = memory.Smooth(step, change);
-            error = Math.Max(Rounding, Safety * change * ratio / (1 - ratio)) + depthError;
+            error = Math.Max(Rounding, (_ladder.HasSlabs ? SlabSafety : Safety) * change * ratio / (1 - ratio)) + depthError;
             if (error <= accuracy)
             {
                 if (accepted < 0)

@@ -11,8 +11,10 @@ internal static class SpacingJoin
     /// <summary>Above this error spacings are rather moved to a common period.</summary>
     public const double MostError = 0.02;
 
-    /// <summary>What a wave that fades on its way to the other rows and back may change, at no distance.</summary>
-    private const double Strength = 0.5;
+    /// <summary>What a wave that fades on its way to the other rows and back may change, at no distance: it is made by one row, returned by
+    /// another and brought back by the first, each with a small amplitude. Against whole common periods (melanin in keratin, solid and hollow, gaps
+    /// of 20 to 120 nm) at most 2e-4 was needed.</summary>
+    private const double Strength = 0.01;
 
     /// <summary>Estimate of the error of R and T: the first orders fade to the other rows and back, exp(-2 kappa d).</summary>
     public static double Error(StackPlan plan, in PointLight light, Complex matrix)
