@@ -42,7 +42,7 @@ public class HardSectionTests
         double sine = Math.Sin(double.DegreesToRadians(89.9));
         CheckBoth(GratingCase.Of(text), 320 * (1 + sine), 89.9);
         CheckBoth(GratingCase.Of(text), 320 * (1.5 + sine), 89.9);
-        CheckBoth(GratingCase.Of(text).At(90), 320 * Math.Cos(double.DegreesToRadians(89.9)), 89.9);
+        CheckBoth(GratingCase.Of(text).At(90), 320 * Math.Sqrt(1.5 * 1.5 - sine * sine), 89.9);
         CheckBoth(GratingCase.Of(text).At(90), 470, 89.9);
     }
 

@@ -9,7 +9,7 @@ internal static class SpacingJoin
     public const double ShareOfAccuracy = 0.3;
 
     /// <summary>Above this error spacings are rather moved to a common period.</summary>
-    public const double MostError = 0.02;
+    public const double MostError = 0.01;
 
     /// <summary>What a wave that fades on its way to the other rows and back may change, at no distance: it is made by one row, returned by
     /// another and brought back by the first, each with a small amplitude. Against whole common periods (melanin in keratin, solid and hollow, gaps
@@ -22,13 +22,15 @@ internal static class SpacingJoin
         double error = 0;
         foreach (PlanJoint joint in plan.Joints)
         {
-            error += Strength * Math.Exp(-2 * LeastDecay(plan.Groups[joint.Upper].PeriodNm, light, matrix) * joint.ClearAboveNm);
-            error += Strength * Math.Exp(-2 * LeastDecay(plan.Groups[joint.Upper + 1].PeriodNm, light, matrix) * joint.ClearBelowNm);
+            error += Strength * Fading(LeastDecay(plan.Groups[joint.Upper].PeriodNm, light, matrix), joint.ClearAboveNm);
+            error += Strength * Fading(LeastDecay(plan.Groups[joint.Upper + 1].PeriodNm, light, matrix), joint.ClearBelowNm);
         }
         return error;
     }
 
-    // Im kz of the order besides the zeroth that fades most slowly; an order that travels hardly fades.
+    private static double Fading(double decay, double distanceNm) => decay < 0 ? double.PositiveInfinity : Math.Exp(-2 * decay * distanceNm);
+
+    // Im kz of the order besides the zeroth that fades most slowly; with one that travels there is no joining, and the error is infinite.
     private static double LeastDecay(double periodNm, in PointLight light, Complex matrix)
     {
         double least = double.PositiveInfinity, k0 = light.K0;
@@ -37,6 +39,8 @@ internal static class SpacingJoin
         {
             double kx = light.Kx0 + 2 * Math.PI * order / periodNm;
             Complex squared = across - kx * kx;
+            if (squared.Real > 0)
+                return double.NegativeInfinity;
             least = Math.Min(least, Multilayer.StableFunctions.UpperSqrt(squared.Real, Math.Max(0, squared.Imaginary)).Imaginary);
         }
         return least;

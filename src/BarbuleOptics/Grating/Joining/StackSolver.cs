@@ -196,7 +196,7 @@ internal sealed class StackSolver
                 break;
             default:
                 if (_isJoined)
-                    DescendJoint(TableOf(_fromBelow ? piece.Group + 1 : piece.Group), byMaterial);
+                    DescendJoint(piece, far, byMaterial);
                 break;
         }
     }
@@ -235,11 +235,12 @@ internal sealed class StackSolver
             _kinds[piece.Kind].AddLoss(table, _resolution, entered, back, ofSection);
     }
 
-    // What the other orders carry is lost in the matrix, if it absorbs; else they carry nothing.
-    private void DescendJoint(ChannelTable table, Span<double> byMaterial)
+    // What the other orders carry to the joint, from either side, is lost in the matrix, if it absorbs; else they carry nothing.
+    private void DescendJoint(in PlanPiece piece, Reflection far, Span<double> byMaterial)
     {
+        ChannelTable table = TableOf(_fromBelow ? piece.Group + 1 : piece.Group), beyond = TableOf(_fromBelow ? piece.Group : piece.Group + 1);
         ReadOnlySpan<Complex> eta = table.Eta(Section.Matrix);
-        Span<Complex> near = _scratch.Near;
+        Span<Complex> near = _scratch.Near, back = _scratch.Back;
         for (int channel = 0; channel < near.Length; channel++)
         {
             if (table.OrderOf(channel) == 0)
@@ -247,6 +248,12 @@ internal sealed class StackSolver
             if (!byMaterial.IsEmpty)
                 byMaterial[Section.Matrix] += eta[channel].Real * Multilayer.StableFunctions.Norm(near[channel]);
             near[channel] = Complex.Zero;
+        }
+        far.Apply(near, back);
+        for (int channel = 0; channel < near.Length && !byMaterial.IsEmpty; channel++)
+        {
+            if (beyond.OrderOf(channel) != 0)
+                byMaterial[Section.Matrix] += beyond.Eta(Section.Matrix)[channel].Real * Multilayer.StableFunctions.Norm(back[channel]);
         }
     }
 
