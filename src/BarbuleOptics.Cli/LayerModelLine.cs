@@ -23,18 +23,19 @@ internal static class LayerModelLine
 
     private static string Listed((View View, LayerModelError Error)[] compared)
     {
-        string shifts = List(compared.Select(one => Shift(one.Error.PeakShiftNm)));
+        string shifts = compared.All(one => one.Error.PeakShiftNm is null) ? "" : $"{List(compared.Select(one => Shift(one.Error.PeakShiftNm)))} nm in the main peak, ";
         string changes = List(compared.Select(one => one.Error.LargestChange.ToString("0.000", CultureInfo.InvariantCulture)));
         string angles = List(compared.Select(one => one.View.Incidence.Degrees.ToString("0.##", CultureInfo.InvariantCulture)));
         string colors = compared.Any(one => one.Error.Ciede2000 is null) ? "" : $", CIEDE2000 {List(compared.Select(one => Color(one.Error.Ciede2000)))}";
-        return $"{shifts} nm in the main peak, {changes} in R at most{colors}, at {angles} degrees";
+        return $"{shifts}{changes} in R at most{colors}, at {angles} degrees";
     }
 
     private static string Largest(LayerModelError[] errors)
     {
-        double? shift = errors.Max(error => error.PeakShiftNm is double found ? Math.Abs(found) : (double?)null);
+        double? largestShift = errors.Max(error => error.PeakShiftNm is double found ? Math.Abs(found) : (double?)null);
+        string shift = largestShift is double shiftNm ? string.Create(CultureInfo.InvariantCulture, $"{shiftNm:0.0} nm in the main peak, ") : "";
         string color = errors.Max(error => error.Ciede2000) is double difference ? $", CIEDE2000 {Color(difference)}" : "";
-        return string.Create(CultureInfo.InvariantCulture, $"{shift ?? 0:0.0} nm in the main peak, {errors.Max(error => error.LargestChange):0.000} in R{color}");
+        return string.Create(CultureInfo.InvariantCulture, $"{shift}{errors.Max(error => error.LargestChange):0.000} in R{color}");
     }
 
     private static string Shift(double? shiftNm) => shiftNm?.ToString("+0.0;-0.0;0.0", CultureInfo.InvariantCulture) ?? "(no peak matches)";

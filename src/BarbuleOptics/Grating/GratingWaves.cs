@@ -16,7 +16,8 @@ namespace BarbuleOptics.Grating;
 /// </remarks>
 internal sealed class GratingWaves
 {
-    /// <summary>Smallest |kz|/k0 a wave is given: a grazing order is moved by this much, which shifts no result by more than its square.</summary>
+    /// <summary>Smallest |kz|/k0 a wave is given: a grazing order is given this much, as if the wavelength were changed by about its
+    /// square, one part in 1e14.</summary>
     internal const double LeastKz = 1e-7;
 
     private double[] _kx = [];

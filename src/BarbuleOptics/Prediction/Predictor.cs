@@ -1,7 +1,6 @@
 using System.Diagnostics.CodeAnalysis;
 using BarbuleOptics.Anatomy;
 using BarbuleOptics.Color;
-using BarbuleOptics.Grating;
 using BarbuleOptics.Layering;
 using BarbuleOptics.Materials;
 using BarbuleOptics.Quantities;
@@ -12,9 +11,6 @@ namespace BarbuleOptics.Prediction;
 /// <summary>The main job: from a measured structure to spectra, color and hue, with what they lean on.</summary>
 public static class Predictor
 {
-    /// <summary>Longest period that is solved as it is, in wavelengths.</summary>
-    private const double MostPeriods = 100;
-
     /// <summary>Predicts what <paramref name="barbule"/> does to light.</summary>
     /// <param name="barbule">The structure; its central measurements are used.</param>
     /// <param name="conditions">How it is looked at, and by which solver.</param>
@@ -45,21 +41,27 @@ public static class Predictor
             prediction = Predict(barbule, section, plan, conditions, catalog, progress, cancellation);
             return true;
         }
-        catch (AggregateException faults) when (faults.InnerExceptions.FirstOrDefault(fault => fault is ArithmeticException) is Exception fault)
+        catch (Exception fault) when (UnsolvedIn(fault) is Exception unsolved)
         {
-            problems = [new AnatomyProblem(SpacingKey(section), $"{fault.Message.TrimEnd('.')}; ask for the layer model with --solver multilayer")];
+            problems = [new AnatomyProblem(SpacingKey(section), $"{unsolved.Message.TrimEnd('.')}; ask for the layer model with --solver multilayer")];
             return false;
         }
     }
 
-    /// <summary>Orders grow with the period, and their cube is the work.</summary>
+    /// <summary>What the grating solver throws where it finds no solution, alone or from several threads; null for any other fault.</summary>
+    private static Exception? UnsolvedIn(Exception fault)
+    {
+        IEnumerable<Exception> faults = fault is AggregateException several ? several.InnerExceptions : [fault];
+        return faults.FirstOrDefault(one => one.GetType() == typeof(ArithmeticException));
+    }
+
     private static IEnumerable<AnatomyProblem> PeriodProblems(Section section, SolverPlan plan, PredictionConditions conditions)
     {
-        double periodNm = plan.SolvesSection ? SpacingPlan.Of(section).PeriodNm ?? 0 : 0, mostNm = MostPeriods * conditions.Wavelengths.StartNm;
-        if (periodNm > mostNm)
+        if (plan.IsRigorous && SolverPlan.PeriodBeyondNm(section, conditions) is double periodNm)
         {
+            double mostNm = SolverPlan.MostPeriods * conditions.Wavelengths.StartNm;
             yield return new AnatomyProblem(SpacingKey(section), FormattableString.Invariant(
-                $"found rows that repeat after {periodNm:0.##} nm; the grating solver allows up to {MostPeriods} wavelengths, {mostNm:0.##} nm: ask for the layer model with --solver multilayer, or for longer --wavelengths"));
+                $"found rows that repeat after {periodNm:0.##} nm; the grating solver allows up to {SolverPlan.MostPeriods} wavelengths, {mostNm:0.##} nm: ask for the layer model with --solver multilayer, or for longer --wavelengths"));
         }
     }
 
@@ -100,7 +102,10 @@ public static class Predictor
             warnings.AboutAccuracy(rigorous!);
         }
         else
+        {
             warnings.AboutSlices(error);
+            warnings.AboutReference(rigorous);
+        }
 
         var colorimeter = new Colorimeter(conditions.Wavelengths, conditions.Illuminant, conditions.Observer);
         warnings.AboutCoverage(colorimeter.CanMeasure, colorimeter.CoversObserver);

@@ -142,6 +142,16 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
             $"layers of different spacing were solved with a common period of {report.PeriodNm:0.##} nm where more than one order passes between them, up to {report.LongestNm:0.#} nm: {moves}; the next choice of a period changes R by up to {report.Change:0.0e+0} there: rely on no finer detail"));
     }
 
+    /// <summary>Says where the comparison of a layer model with the rigorous solution cannot be better than that is; null where there is none.</summary>
+    public void AboutReference(GratingResponses? rigorous)
+    {
+        if (rigorous?.ErrorEstimate > conditions.Accuracy)
+        {
+            Add(WarningCodes.AccuracyNotReached, FormattableString.Invariant(
+                $"the rigorous solution beside this layer model may be off by {rigorous.ErrorEstimate:0.0e+0}, above the {conditions.Accuracy:0.0e+0} asked for; rely on no smaller difference between the two"));
+        }
+    }
+
     /// <summary>Says where the rigorous solution stayed above the error asked for.</summary>
     public void AboutAccuracy(GratingResponses rigorous)
     {

@@ -110,6 +110,20 @@ public sealed class PredictOutputTests
             Assert.Matches(System.Text.RegularExpressions.Regex.Escape(compared) + @"[+-]?\d+\.\d and [+-]?\d+\.\d nm in the main peak, 0\.\d{3} and 0\.\d{3} in R at most, CIEDE2000 \d+\.\d and \d+\.\d, at 0 and 30 degrees\.", text);
     }
 
+    // Two wavelengths have no peak inside.
+    [Theory]
+    [InlineData("0", "be off from this by 0.")]
+    [InlineData("0:70:10", "be off from this by up to 0.")]
+    public async Task Without_a_peak_the_table_speaks_of_none(string angles, string compared)
+    {
+        using var folder = new TemporaryFolder();
+        string file = SampleFiles.Write("solid-rods-one-row", folder.Path);
+        string text = string.Join(' ', (await Barbule.Call("predict", file, "--wavelengths", "500:510:10", "--angles", angles)).Good().Output
+            .Split(['\n', ' '], StringSplitOptions.RemoveEmptyEntries));
+        Assert.Contains(compared, text, StringComparison.Ordinal);
+        Assert.DoesNotContain("nm in the main peak", text, StringComparison.Ordinal);
+    }
+
     [Fact]
     public async Task A_rule_that_is_named_is_compared_with_the_rigorous_solution()
     {

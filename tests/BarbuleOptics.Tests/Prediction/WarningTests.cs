@@ -1,4 +1,5 @@
 using BarbuleOptics.Files;
+using BarbuleOptics.Layering.Mixing;
 using BarbuleOptics.Prediction;
 using BarbuleOptics.Quantities;
 using BarbuleOptics.Tests.Layering;
@@ -118,6 +119,20 @@ public sealed class WarningTests
         Assert.Equal("layer1.spacing", Assert.Single(problems).Key);
         Assert.Contains("found rows that repeat after 41000 nm; the grating solver allows up to 100 wavelengths, 40000 nm", problems[0].Message, StringComparison.Ordinal);
         Assert.True(Predictor.TryPredict(loaded.Barbule, Predictions.At(400, 410, 5), loaded.Catalog, out _, out _, cancellation: TestContext.Current.CancellationToken));
+        // A rule that is named asks for the layer model, which needs no grating solver but for the comparison.
+        PredictionConditions named = Predictions.Rigorously(400, 410, 5) with { Mixing = MixingRules.Default, ComparesSolvers = true };
+        Assert.True(Predictor.TryPredict(loaded.Barbule, named, loaded.Catalog, out StructurePrediction? layers, out _, cancellation: TestContext.Current.CancellationToken));
+        Assert.Null(layers.Views[0].LayerModelError);
+    }
+
+    [Fact]
+    public void A_layer_model_says_how_well_the_rigorous_solution_beside_it_is_known()
+    {
+        const string hollow = "[[layer]]\nform = 'flattened-rod'\nheight = 60\nwidth = 120\nlumen_height = 30\nlumen_width = 60\nspacing = 170\n";
+        PredictionConditions named = Predictions.Rigorously(500, 500, 1) with { Mixing = MixingRules.Default, ComparesSolvers = true };
+        Assert.DoesNotContain(WarningCodes.AccuracyNotReached, Predictions.Codes(Predictions.Of(hollow, named with { Accuracy = 1e-3 })));
+        Assert.Contains(Predictions.Of(hollow, named with { Accuracy = 1e-9 }).Warnings, warning
+            => warning.Code == WarningCodes.AccuracyNotReached && warning.Message.StartsWith("the rigorous solution beside this layer model may be off by ", StringComparison.Ordinal));
     }
 
     // 3 in CIEDE2000, at the worst of the angles, once.

@@ -58,13 +58,16 @@ internal sealed class ModalSlab : IGratingElement
     /// <inheritdoc/>
     public void AddLoss(GratingWaves waves, in Resolution resolution, ReadOnlySpan<Complex> down, ReadOnlySpan<Complex> up, Span<double> byMaterial)
     {
-        double total = SpaceFor(waves, resolution).PowerIn(waves, down, up);
         int absorbing = 0, only = Section.Matrix;
         for (int m = 0; m < _meets.Length; m++)
         {
             if (_meets[m] && waves.Permittivities[m].Imaginary != 0)
                 (absorbing, only) = (absorbing + 1, m);
         }
+        // Nothing, and not the rounding of a balance.
+        if (absorbing == 0)
+            return;
+        double total = SpaceFor(waves, resolution).PowerIn(waves, down, up);
         if (absorbing > 1 && TrySplit(waves, resolution, down, up))
         {
             double sum = 0;

@@ -66,6 +66,18 @@ public class ModalLossTests
         Assert.Equal(0, loss[2]);
     }
 
+    // Rounding of a power balance would make every transparent material a weak absorber, or a source.
+    [Fact]
+    public void Transparent_bodies_take_nothing()
+    {
+        GratingWaves waves = ModalCase.Waves(RodField.Magnetic, 0.4, 0, ModalCase.Lossless);
+        var slab = new ModalSlab([ModalCase.HollowEllipse(140, 100, 80, 50).At(13, 50)], 100, 170);
+        _ = ModalCase.Solve(slab, waves, 5);
+        var loss = new double[3];
+        slab.AddLoss(waves, new Resolution(2, 0, 5, 1), Amplitudes(waves, 1), Amplitudes(waves, 2), loss);
+        Assert.Equal([0, 0, 0], loss);
+    }
+
     private static Complex[] Amplitudes(GratingWaves waves, int seed)
     {
         var random = new Random(seed);
