@@ -3,6 +3,9 @@
 # Usage, anywhere in a checkout: bash tests/mixing-rules.sh [NUMBER OF RANDOM STRUCTURES]
 set -euo pipefail
 cd "$(dirname "$0")/.."
+for mark in '<!-- evidence -->' '<!-- end of evidence -->'; do
+    grep -qxF -e "$mark" README.md || { echo "README.md has no line $mark: nowhere to write to" >&2; exit 1; }
+done
 dotnet build -c Release tests/BarbuleOptics.Benchmarks --nologo -v quiet
 tables=$(mktemp)
 trap 'rm -f "$tables" "$tables.md"' EXIT

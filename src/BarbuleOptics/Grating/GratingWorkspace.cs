@@ -15,6 +15,9 @@ public sealed class GratingWorkspace
     private double[] _p = [];
     private double[] _mean = [];
 
+    /// <summary>Memory for one section.</summary>
+    /// <param name="section">The section.</param>
+    /// <param name="slabsOnly">Whether round rods are left to the method for any section, to hold one method to the other.</param>
     internal GratingWorkspace(Section section, bool slabsOnly = false)
     {
         Section = section;

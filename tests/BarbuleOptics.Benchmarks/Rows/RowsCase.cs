@@ -33,21 +33,16 @@ internal sealed record RowsCase(int LumenNm, int CortexNm, int IncidenceDeg, Pol
 
     /// <summary>The section at some wavelengths.</summary>
     /// <param name="wavelengthsNm">Vacuum wavelengths, in nm.</param>
-    /// <param name="isAlmostRound">Whether the rods are wider than high by a ten-billionth, which no figure here shows, but which leaves them
-    /// to the method for any section.</param>
-    public SectionPermittivities Section(double[] wavelengthsNm, bool isAlmostRound)
+    public SectionPermittivities Section(double[] wavelengthsNm)
     {
-        double stretch = isAlmostRound ? 1 + 1e-10 : 1;
-        string lumen = LumenNm == 0 ? "" : string.Create(CultureInfo.InvariantCulture, $"lumen_height = {LumenNm}\nlumen_width = {LumenNm * stretch:R}");
         string text = string.Create(CultureInfo.InvariantCulture, $"""
             format = 1
             [cortex]
             thickness = {CortexNm}
             [[layer]]
-            form = "flattened-rod"
-            height = 120
-            width = {120 * stretch:R}
-            {lumen}
+            form = "rod"
+            diameter = 120
+            lumen = {LumenNm}
             spacing = 170
             rows = 5
             pitch = 150

@@ -35,7 +35,7 @@ internal static class RowsProgram
         return 0;
     }
 
-    private static void Print(string method, bool isAlmostRound, Func<RowsCase, double> accuracy, Dictionary<RowsCase, double[]> finest)
+    private static void Print(string method, bool slabsOnly, Func<RowsCase, double> accuracy, Dictionary<RowsCase, double[]> finest)
     {
         foreach (IGrouping<(int, string), RowsCase> group in RowsCase.All.GroupBy(rows => (rows.LumenNm, rows.PolarizationName)))
         {
@@ -44,7 +44,7 @@ internal static class RowsProgram
             var again = new List<double>();
             foreach (RowsCase rows in group)
             {
-                (double[] found, double time, double second, double told) = Solve(rows, isAlmostRound, accuracy(rows));
+                (double[] found, double time, double second, double told) = Solve(rows, slabsOnly, accuracy(rows));
                 microseconds.Add(time);
                 again.Add(second);
                 estimate = Math.Max(estimate, told);
@@ -58,11 +58,11 @@ internal static class RowsProgram
         }
     }
 
-    private static (double[] Reflectance, double Microseconds, double Again, double Estimate) Solve(RowsCase rows, bool isAlmostRound, double accuracy)
+    private static (double[] Reflectance, double Microseconds, double Again, double Estimate) Solve(RowsCase rows, bool slabsOnly, double accuracy)
     {
-        SectionPermittivities section = rows.Section(WavelengthsNm, isAlmostRound);
+        SectionPermittivities section = rows.Section(WavelengthsNm);
         var solver = new GratingSolver(accuracy);
-        GratingWorkspace workspace = solver.CreateWorkspace(section);
+        var workspace = new GratingWorkspace(section.Section, slabsOnly);
         double[] reflectance = new double[WavelengthsNm.Length], spare = new double[WavelengthsNm.Length];
         Polarizations other = rows.Polarization ^ Polarizations.Unpolarized;
         double estimate = Once(rows.Incidence, rows.Polarization, reflectance);
