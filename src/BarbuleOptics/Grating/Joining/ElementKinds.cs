@@ -24,7 +24,7 @@ internal sealed class ElementKinds(Section section)
         var elements = new List<PlannedElement>();
         foreach (List<PlannedRow> cluster in clusters)
         {
-            if (cluster is [{ Rod: not null } rod])
+            if (cluster is [{ Rods: not null } rod])
                 elements.Add(PlaceRods(rod, reaches));
             else
                 PlaceSlabs(cluster, elements);
@@ -35,11 +35,11 @@ internal sealed class ElementKinds(Section section)
     // One reach for all rows of one kind of rod, so that they share one element: planes reach up to the rods, or half way to the next centers.
     private static Dictionary<RodKind, double> Reaches(List<List<PlannedRow>> clusters)
     {
-        PlannedRow[] rods = [.. clusters.Where(cluster => cluster is [{ Rod: not null }]).Select(cluster => cluster[0]).OrderBy(rod => rod.CenterNm)];
+        PlannedRow[] rods = [.. clusters.Where(cluster => cluster is [{ Rods: not null }]).Select(cluster => cluster[0]).OrderBy(rod => rod.CenterNm)];
         var reaches = new Dictionary<RodKind, double>();
         for (int i = 0; i < rods.Length; i++)
         {
-            double reachNm = rods[i].Rod!.Outer.HalfHeightNm;
+            double reachNm = rods[i].RadiusNm;
             if (i > 0)
                 reachNm = Math.Min(reachNm, (rods[i].CenterNm - rods[i - 1].CenterNm) / 2);
             if (i + 1 < rods.Length)
@@ -52,16 +52,19 @@ internal sealed class ElementKinds(Section section)
 
     private static RodKind KindOf(PlannedRow row, double reachNm)
     {
-        CellBody rod = row.Rod!;
-        double coreNm = rod.Core?.HalfHeightNm ?? 0;
-        return new RodKind(row.Run.SpacingNm, rod.Outer.HalfHeightNm, coreNm, rod.Material, coreNm > 0 ? rod.CoreMaterial : rod.Material, reachNm);
+        CellBody[] rods = row.Rods!;
+        int parts = RodCells.PartsOf(rods, row.Run.SpacingNm);
+        CellRod[] places = [.. rods.Select(rod => new CellRod(
+            RodCells.PlaceOf(rods[0], rod, row.Run.SpacingNm, parts), rod.Outer.HalfHeightNm, rod.Core?.HalfHeightNm ?? 0,
+            rod.Material, rod.Core is null ? rod.Material : rod.CoreMaterial))];
+        return new RodKind(row.Run.SpacingNm, ValueList.Create<CellRod>(places), parts, reachNm);
     }
 
     private PlannedElement PlaceRods(PlannedRow row, Dictionary<RodKind, double> reaches)
     {
         double reachNm = reaches[KindOf(row, 0)];
         RodKind kind = KindOf(row, Math.Round(reachNm, 9));
-        return new PlannedElement(kind, NumberOf(kind), row.CenterNm - reachNm, row.CenterNm, row.Row.ShiftNm + row.Rod!.XNm, row.TopNm, row.BottomNm);
+        return new PlannedElement(kind, NumberOf(kind), row.CenterNm - reachNm, row.CenterNm, row.Row.ShiftNm + row.Rods![0].XNm, row.TopNm, row.BottomNm);
     }
 
     private void PlaceSlabs(List<PlannedRow> cluster, List<PlannedElement> elements)

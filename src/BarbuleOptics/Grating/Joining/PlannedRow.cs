@@ -2,25 +2,28 @@ using BarbuleOptics.Layering;
 
 namespace BarbuleOptics.Grating.Joining;
 
-/// <summary>What the plan places as a whole: one row of round rods, or the whole cells of one row.</summary>
+/// <summary>What the plan places as a whole: one row of round rods, one or several a cell, or the whole cells of one row.</summary>
 /// <param name="Run">The run it belongs to.</param>
 /// <param name="Row">The row.</param>
-/// <param name="Rod">The body that makes a row of round rods by itself; null for whole cells.</param>
-internal sealed record PlannedRow(SectionRun Run, SectionRow Row, CellBody? Rod)
+/// <param name="Rods">The bodies that make a row of round rods by themselves; null for whole cells.</param>
+internal sealed record PlannedRow(SectionRun Run, SectionRow Row, CellBody[]? Rods)
 {
     /// <summary>Depth of its top, in nm.</summary>
-    public double TopNm { get; } = Row.CenterNm + (Rod?.TopNm ?? Run.CellTopNm);
+    public double TopNm { get; } = Row.CenterNm + (Rods?.Min(rod => rod.TopNm) ?? Run.CellTopNm);
 
     /// <summary>Depth of its bottom, in nm.</summary>
-    public double BottomNm { get; } = Row.CenterNm + (Rod?.BottomNm ?? Run.CellBottomNm);
+    public double BottomNm { get; } = Row.CenterNm + (Rods?.Max(rod => rod.BottomNm) ?? Run.CellBottomNm);
 
     /// <summary>Depth of its middle, in nm: of the centers of rods, or of the row.</summary>
-    public double CenterNm { get; } = Row.CenterNm + (Rod?.ZNm ?? 0);
+    public double CenterNm { get; } = Row.CenterNm + (Rods?[0].ZNm ?? 0);
+
+    /// <summary>Half the height of the tallest rod, in nm; 0 for whole cells.</summary>
+    public double RadiusNm { get; } = Rods?.Max(rod => rod.Outer.HalfHeightNm) ?? 0;
 
     /// <summary>All its bodies.</summary>
-    public IEnumerable<CellBody> Bodies => Rod is null ? Run.Cell : [Rod];
+    public IEnumerable<CellBody> Bodies => Rods is null ? Run.Cell : Rods;
 
-    /// <summary>The rows of a run: one for each round rod where all bodies are round, else one for each cell.</summary>
+    /// <summary>The rows of a run: one for each round rod, or for those side by side, where all bodies are round, else one for each cell.</summary>
     public static IEnumerable<PlannedRow> Of(SectionRun run)
     {
         bool round = run.Cell.All(IsRound);
@@ -31,8 +34,8 @@ internal sealed record PlannedRow(SectionRun Run, SectionRow Row, CellBody? Rod)
                 yield return new PlannedRow(run, row, null);
                 continue;
             }
-            foreach (CellBody body in run.Cell)
-                yield return new PlannedRow(run, row, body);
+            foreach (CellBody[] rods in RodCells.Of(run))
+                yield return new PlannedRow(run, row, rods);
         }
     }
 

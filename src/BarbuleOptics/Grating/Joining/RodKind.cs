@@ -1,19 +1,25 @@
 using BarbuleOptics.Grating.Multipoles;
+using BarbuleOptics.Quantities;
 
 namespace BarbuleOptics.Grating.Joining;
 
-/// <summary>A row of round rods, its planes equally far from the centers.</summary>
-/// <param name="PeriodNm">Center-to-center distance, in nm.</param>
-/// <param name="RadiusNm">Radius, in nm.</param>
-/// <param name="CoreRadiusNm">Radius of the concentric core, in nm; 0 when solid.</param>
-/// <param name="Material">Number of the material.</param>
-/// <param name="CoreMaterial">Number of the core's material.</param>
+/// <summary>A row of round rods, one or several side by side in each cell, its planes equally far from the centers.</summary>
+/// <param name="PeriodNm">Length of a cell, in nm.</param>
+/// <param name="Rods">The rods of one cell, the first at place 0.</param>
+/// <param name="Parts">Parts of the period that places are counted in; 1 with one rod.</param>
 /// <param name="ReachNm">Distance of each plane from the centers, in nm. A plane may cut the rods: the waves that leave a row hold up to its line
 /// of centers.</param>
-internal sealed record RodKind(double PeriodNm, double RadiusNm, double CoreRadiusNm, int Material, int CoreMaterial, double ReachNm)
+internal sealed record RodKind(double PeriodNm, ValueList<CellRod> Rods, int Parts, double ReachNm)
     : ElementKind(PeriodNm, 2 * ReachNm, IsCut: false)
 {
+    /// <summary>The largest radius, in nm.</summary>
+    public double RadiusNm { get; } = Rods.Max(rod => rod.RadiusNm);
+
     /// <inheritdoc/>
     public override IGratingElement Create(LatticeSums sums)
-        => new RodRow(RadiusNm, CoreRadiusNm, Material, CoreMaterial, 0, ReachNm, ReachNm, sums);
+    {
+        RowMember[] members = [.. Rods.Select(rod => new RowMember(
+            new RodScatterer(rod.RadiusNm, rod.CoreRadiusNm, rod.Material, rod.CoreMaterial), rod.Place, rod.CoreRadiusNm > 0, rod.Material, rod.CoreMaterial))];
+        return new RodRow(members, Parts, 0, ReachNm, ReachNm, sums);
+    }
 }

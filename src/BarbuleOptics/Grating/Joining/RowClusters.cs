@@ -41,9 +41,8 @@ internal static class RowClusters
 
     private static bool MustJoin(List<PlannedRow> first, List<PlannedRow> second)
     {
-        if (first is not [{ Rod: not null } one] || second is not [{ Rod: not null } other])
+        if (first is not [{ Rods: not null } one] || second is not [{ Rods: not null } other])
             return true;
-        double reachNm = one.Rod.Outer.HalfHeightNm + other.Rod.Outer.HalfHeightNm;
-        return Math.Abs(other.CenterNm - one.CenterNm) < LeastShare * reachNm;
+        return Math.Abs(other.CenterNm - one.CenterNm) < LeastShare * (one.RadiusNm + other.RadiusNm);
     }
 }

@@ -147,16 +147,17 @@ internal sealed class EllipseScatterer : IRowBody
     private static int Place(int to, int from, bool electricEven) => (electricEven ? 0 : 4) + 2 * to + from;
 
     /// <inheritdoc/>
-    public (double Body, double Core) PowerInto(GratingWaves waves, MirrorHalf half)
+    public (double Body, double Core) PowerInto(GratingWaves waves, MirrorHalf half, int number)
     {
         bool matrixAbsorbs = waves.Matrix.Imaginary != 0 || waves.MatrixAcross.Real <= 0;
-        double body = matrixAbsorbs ? FromOutline(waves, half, 0) : FromAmplitudes(waves, half);
-        double core = HasCore && waves.Permittivities[_coreMaterial].Imaginary != 0 ? FromOutline(waves, half, 1) : 0;
+        double body = matrixAbsorbs ? FromOutline(waves, half, number, 0) : FromAmplitudes(waves, half, number);
+        double core = HasCore && waves.Permittivities[_coreMaterial].Imaginary != 0 ? FromOutline(waves, half, number, 1) : 0;
         return (body, core);
     }
 
-    private double FromOutline(GratingWaves waves, MirrorHalf half, int outline)
+    private double FromOutline(GratingWaves waves, MirrorHalf half, int number, int outline)
     {
+        ReadOnlySpan<Complex> incoming = half.Incoming(number);
         double sum = 0;
         for (int parity = 0; parity < 2; parity++)
         {
@@ -168,7 +169,7 @@ internal sealed class EllipseScatterer : IRowBody
                 foreach (MirrorHalf.Part part in half.Parts)
                 {
                     if (part.Field == field && m <= half.Top)
-                        amplitudes[c] = half.Incoming[part.Start + m];
+                        amplitudes[c] = incoming[part.Start + m];
                 }
             }
             sum += _system!.PowerInto(solution, outline, amplitudes, half.ElectricEven, parity);
@@ -177,8 +178,9 @@ internal sealed class EllipseScatterer : IRowBody
     }
 
     // For real k the flux through the circle round the body follows from the Wronskian: -(2/pi) weight (|b|^2 + Re(conj(a) b)) for each multipole.
-    private double FromAmplitudes(GratingWaves waves, MirrorHalf half)
+    private double FromAmplitudes(GratingWaves waves, MirrorHalf half, int number)
     {
+        ReadOnlySpan<Complex> incoming = half.Incoming(number), outgoing = half.Outgoing(number);
         Complex k = LatticeSums.WaveNumber(waves, waves.Matrix);
         RodMedium matrix = RodMedium.Of(waves, waves.Matrix, k);
         double s = k.Real * RadiusNm / 2, sum = 0;
@@ -189,7 +191,7 @@ internal sealed class EllipseScatterer : IRowBody
             {
                 if (m > 0)
                     scale *= s * s / ((double)m * m);
-                Complex a = half.Incoming[part.Start + m], b = half.Outgoing[part.Start + m];
+                Complex a = incoming[part.Start + m], b = outgoing[part.Start + m];
                 double power = scale * (b.Real * b.Real + b.Imaginary * b.Imaginary) + a.Real * b.Real + a.Imaginary * b.Imaginary;
                 sum -= (m == 0 ? 2 : 1) * weight * 2 * power;
             }

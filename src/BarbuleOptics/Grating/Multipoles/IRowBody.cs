@@ -32,6 +32,7 @@ internal interface IRowBody
     /// <param name="incoming">Incoming multipole.</param>
     Complex Answer(int to, int from, bool electricEven, int outgoing, int incoming);
 
-    /// <summary>Power that goes into the body and into its core, times the period, from the amplitudes of one half.</summary>
-    (double Body, double Core) PowerInto(GratingWaves waves, MirrorHalf half);
+    /// <summary>Power that goes into the body and into its core, times the period, from the amplitudes of one half on body number
+    /// <paramref name="number"/> of the cell.</summary>
+    (double Body, double Core) PowerInto(GratingWaves waves, MirrorHalf half, int number);
 }

@@ -56,10 +56,15 @@ internal sealed class LatticeSums
     }
 
     /// <summary>Makes the sums 0 to <paramref name="top"/> ready.</summary>
-    public void Prepare(GratingWaves waves, int top)
+    public void Prepare(GratingWaves waves, int top) => Prepare(waves, top, findsGrazing: true, []);
+
+    /// <summary>Makes the sums 0 to <paramref name="top"/> ready, with the orders to be left out given: they must hold all that graze.</summary>
+    public void Prepare(GratingWaves waves, int top, ReadOnlySpan<int> grazingOrders) => Prepare(waves, top, findsGrazing: false, grazingOrders);
+
+    private void Prepare(GratingWaves waves, int top, bool findsGrazing, ReadOnlySpan<int> grazingOrders)
     {
         bool same = _k0 == waves.K0 && _kx0 == waves.Kx0 && _periodNm == waves.PeriodNm && _across == waves.MatrixAcross;
-        if (same && top <= _top)
+        if (same && top <= _top && (findsGrazing || grazingOrders.SequenceEqual(GrazingOrders)))
             return;
         (_k0, _kx0, _periodNm, _across, _top) = (waves.K0, waves.Kx0, waves.PeriodNm, waves.MatrixAcross, top);
         if (_sums.Length <= top)
@@ -68,10 +73,15 @@ internal sealed class LatticeSums
             _bernoulli = new double[top + 1];
         }
         K = WaveNumber(waves, waves.Matrix);
-        Sum(waves);
+        if (!findsGrazing)
+        {
+            grazingOrders.CopyTo(_grazingOrders);
+            _grazingCount = grazingOrders.Length;
+        }
+        Sum(waves, findsGrazing);
     }
 
-    private void Sum(GratingWaves waves)
+    private void Sum(GratingWaves waves, bool findsGrazing)
     {
         Array.Clear(_sums);
         double turns = waves.Kx0 * waves.PeriodNm / (2 * Math.PI);
@@ -81,7 +91,8 @@ internal sealed class LatticeSums
         double fraction = Math.Abs(turns - shift);
         double size = Complex.Abs(K);
         int terms = Math.Max(LeastTerms, 2 + (int)(6 * size * waves.PeriodNm / (2 * Math.PI)));
-        FindGrazing(waves, shift, terms);
+        if (findsGrazing)
+            FindGrazing(waves, shift, terms);
         for (int n = -terms + 1; n < terms; n++)
             AddOrder(waves, side * n - shift, n >= 0, side);
         AddTail(_tailAbove, waves.PeriodNm, terms + fraction, 1);

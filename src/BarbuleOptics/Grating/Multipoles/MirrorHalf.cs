@@ -2,11 +2,11 @@ using System.Numerics;
 
 namespace BarbuleOptics.Grating.Multipoles;
 
-/// <summary>The equations of a row for fields of one mirror symmetry about the plane of the rods' centers, which bodies symmetric about it never mix
+/// <summary>The equations of a row, of one body or several a cell, for fields of one mirror symmetry about the plane of the rods' centers, which bodies symmetric about it never mix
 /// with the other: Ey even and Hy odd in z, or Ey odd and Hy even.</summary>
 /// <remarks>
-/// Unknowns are the outgoing amplitudes b of one body, b = Answer (a + coupling b), a from the plane waves. The amplitude w of an order that
-/// grazes the row is an unknown of its own, P kz/2 w = sum of cos(m a) b_m, and falls back on the rods as w eps_m cos(m a):
+/// Unknowns are the outgoing amplitudes b of the bodies of one cell, b = Answer (a + coupling b), a from the plane waves. The amplitude w of an
+/// order that grazes the row is an unknown of its own, P kz/2 w = sum of cos(m a) b_m over the bodies, and falls back on them as w eps_m cos(m a):
 /// so nothing large is formed, and the outgoing amplitude of that order is w, where 2/(P kz) times a sum would lose all digits.
 /// </remarks>
 internal sealed class MirrorHalf
@@ -14,6 +14,8 @@ internal sealed class MirrorHalf
     private readonly int _top;
     private readonly int _orders;
     private readonly int _grazing;
+    private readonly int _bodies;
+    private readonly int _stride;
     private readonly Part[] _parts;
     private readonly ComplexMatrix _matrix;
     private readonly ComplexMatrix _solution;
@@ -27,9 +29,10 @@ internal sealed class MirrorHalf
     /// <param name="top">Largest multipole.</param>
     /// <param name="orders">Number of plane-wave orders.</param>
     /// <param name="grazing">Number of grazing orders.</param>
-    public MirrorHalf(RodField field, bool electricEven, int top, int orders, int grazing)
+    /// <param name="bodies">Number of bodies a cell.</param>
+    public MirrorHalf(RodField field, bool electricEven, int top, int orders, int grazing, int bodies)
     {
-        (_top, _orders, _grazing) = (top, orders, grazing);
+        (_top, _orders, _grazing, _bodies) = (top, orders, grazing, bodies);
         int size = 0;
         _parts = field switch
         {
@@ -38,6 +41,8 @@ internal sealed class MirrorHalf
             _ => [MakePart(0, electricEven, 0, ref size), MakePart(1, !electricEven, orders, ref size)],
         };
         ElectricEven = electricEven;
+        _stride = size;
+        size *= bodies;
         BorderStart = size;
         if (HasEven)
             size += grazing;
@@ -52,7 +57,7 @@ internal sealed class MirrorHalf
     /// <summary>One field of the half.</summary>
     /// <param name="Field">0 for Ey, 1 for Hy.</param>
     /// <param name="IsEven">Whether it is even in z.</param>
-    /// <param name="Start">Number of the unknown that multipole 0 has, or would have.</param>
+    /// <param name="Start">Number of the unknown that multipole 0 of a body has, or would have, counted from the body's first.</param>
     /// <param name="Channel">Its first channel.</param>
     public readonly record struct Part(int Field, bool IsEven, int Start, int Channel)
     {
@@ -76,37 +81,38 @@ internal sealed class MirrorHalf
     public int Top => _top;
 
     /// <summary>Incoming amplitudes on a body, by unknown, of the waves last set.</summary>
-    public ReadOnlySpan<Complex> Incoming => _incoming;
+    public ReadOnlySpan<Complex> Incoming(int body) => _incoming.AsSpan(body * _stride, _stride);
 
     /// <summary>Outgoing amplitudes of a body, by unknown, of the waves last set.</summary>
-    public ReadOnlySpan<Complex> Outgoing => _outgoing;
+    public ReadOnlySpan<Complex> Outgoing(int body) => _outgoing.AsSpan(body * _stride, _stride);
 
     private int BorderStart { get; }
 
     private bool HasEven => Array.Exists(_parts, part => part.IsEven);
 
     /// <summary>Solves for all incoming waves at once.</summary>
-    /// <param name="body">The body, ready.</param>
-    /// <param name="coupling">The coupling, ready.</param>
-    /// <param name="waves">Plane waves as multipoles: the orders, then the grazing ones.</param>
+    /// <param name="bodies">The bodies, ready; plane waves as multipoles: the orders, then the grazing ones.</param>
+    /// <param name="couplings">The couplings, ready: to the first body from each, then to the second.</param>
     /// <param name="gains">2/(P kz) by wave.</param>
     /// <param name="grazingOrders">For each grazing wave its place among the orders; negative where it is not kept.</param>
     /// <returns>False where the equations have no solution.</returns>
     public bool TrySolve(
-        IRowBody body, RowCoupling coupling, MultipoleWaves waves, ReadOnlySpan<Complex> gains, ReadOnlySpan<int> grazingOrders)
+        ReadOnlySpan<RowMember> bodies, ReadOnlySpan<RowCoupling> couplings, ReadOnlySpan<Complex> gains, ReadOnlySpan<int> grazingOrders)
     {
         _matrix.SetIdentity();
         _solution.Clear();
-        foreach (Part to in _parts)
+        for (int body = 0; body < _bodies; body++)
         {
-            foreach (Part from in _parts)
-                FillBlock(to, from, body, coupling, waves);
+            foreach (Part to in _parts)
+            {
+                foreach (Part from in _parts)
+                    FillBlock(to, from, body, bodies[body], couplings.Slice(body * _bodies, _bodies));
+                if (to.IsEven)
+                    FillBorder(to, body, bodies[body].Leaving);
+            }
         }
-        foreach (Part part in _parts)
-        {
-            if (part.IsEven)
-                FillBorder(part, waves, gains);
-        }
+        for (int g = 0; BorderStart + g < _matrix.Rows; g++)
+            _matrix[BorderStart + g, BorderStart + g] = 1 / gains[_orders + g];
         if (!_solver.TryFactor(_matrix))
             return false;
         _solver.Solve(_solution);
@@ -114,24 +120,30 @@ internal sealed class MirrorHalf
         foreach (Part part in _parts)
         {
             for (int n = 0; n < _orders; n++)
-                FillResponse(part, n, part.IsEven ? grazingOrders.IndexOf(n) : -1, waves, gains[n]);
+                FillResponse(part, n, part.IsEven ? grazingOrders.IndexOf(n) : -1, bodies, gains[n]);
         }
         return AreFinite(Response);
     }
 
-    private void FillBlock(in Part to, in Part from, IRowBody body, RowCoupling coupling, MultipoleWaves waves)
+    private void FillBlock(in Part to, in Part from, int body, RowMember member, ReadOnlySpan<RowCoupling> couplings)
     {
-        ComplexMatrix lattice = from.IsEven ? coupling.Even : coupling.Odd;
+        int start = body * _stride;
+        MultipoleWaves waves = member.Arriving;
         for (int outgoing = to.Least; outgoing <= _top; outgoing++)
         {
-            Span<Complex> row = _matrix.Row(to.Start + outgoing), right = _solution.Row(to.Start + outgoing);
-            int first = body.IsRound ? outgoing : outgoing % 2, last = body.IsRound ? outgoing : _top;
+            Span<Complex> row = _matrix.Row(start + to.Start + outgoing), right = _solution.Row(start + to.Start + outgoing);
+            int first = member.Body.IsRound ? outgoing : outgoing % 2, last = member.Body.IsRound ? outgoing : _top;
             for (int l = first; l <= last; l += 2)
             {
                 if (l < from.Least)
                     continue;
-                Complex twice = (l == 0 ? 1 : 2) * body.Answer(to.Field, from.Field, ElectricEven, outgoing, l);
-                ComplexMatrix.SubtractScaled(row.Slice(from.Start + from.Least, _top + 1 - from.Least), 0.5 * twice, lattice.Row(l)[from.Least..]);
+                Complex twice = (l == 0 ? 1 : 2) * member.Body.Answer(to.Field, from.Field, ElectricEven, outgoing, l);
+                for (int other = 0; other < couplings.Length; other++)
+                {
+                    ComplexMatrix lattice = from.IsEven ? couplings[other].Even : couplings[other].Odd;
+                    ComplexMatrix.SubtractScaled(
+                        row.Slice(other * _stride + from.Start + from.Least, _top + 1 - from.Least), 0.5 * twice, lattice.Row(l)[from.Least..]);
+                }
                 for (int n = 0; n < _orders; n++)
                     right[from.Channel + n] += twice * Table(waves, from, n)[l];
                 for (int g = 0; from.IsEven && g < _grazing; g++)
@@ -140,18 +152,17 @@ internal sealed class MirrorHalf
         }
     }
 
-    private void FillBorder(in Part part, MultipoleWaves waves, ReadOnlySpan<Complex> gains)
+    private void FillBorder(in Part part, int body, MultipoleWaves leaving)
     {
         for (int g = 0; g < _grazing; g++)
         {
-            Span<Complex> row = _matrix.Row(BorderStart + g);
+            Span<Complex> row = _matrix.Row(BorderStart + g).Slice(body * _stride, _stride);
             for (int m = 0; m <= _top; m++)
-                row[part.Start + m] = -waves.Even(_orders + g)[m];
-            row[BorderStart + g] = 1 / gains[_orders + g];
+                row[part.Start + m] = -leaving.Even(_orders + g)[m];
         }
     }
 
-    private void FillResponse(in Part part, int order, int grazing, MultipoleWaves waves, Complex gain)
+    private void FillResponse(in Part part, int order, int grazing, ReadOnlySpan<RowMember> bodies, Complex gain)
     {
         Span<Complex> response = Response.Row(part.Channel + order);
         if (grazing >= 0)
@@ -159,34 +170,48 @@ internal sealed class MirrorHalf
             _solution.Row(BorderStart + grazing).CopyTo(response);
             return;
         }
-        ReadOnlySpan<Complex> table = Table(waves, part, order);
-        for (int m = part.Least; m <= _top; m++)
-            ComplexMatrix.SubtractScaled(response, -gain * table[m], _solution.Row(part.Start + m));
+        for (int body = 0; body < _bodies; body++)
+        {
+            ReadOnlySpan<Complex> table = Table(bodies[body].Leaving, part, order);
+            for (int m = part.Least; m <= _top; m++)
+                ComplexMatrix.SubtractScaled(response, -gain * table[m], _solution.Row(body * _stride + part.Start + m));
+        }
     }
 
     /// <summary>Finds <see cref="Incoming"/> and <see cref="Outgoing"/> for given plane waves.</summary>
     /// <param name="coefficients">Amplitudes of the waves of this symmetry, by channel.</param>
-    /// <param name="coupling">The coupling of the last solution.</param>
-    /// <param name="waves">The waves of the last solution.</param>
-    public void SetWaves(ReadOnlySpan<Complex> coefficients, RowCoupling coupling, MultipoleWaves waves)
+    /// <param name="bodies">The bodies of the last solution.</param>
+    /// <param name="couplings">The couplings of the last solution.</param>
+    public void SetWaves(ReadOnlySpan<Complex> coefficients, ReadOnlySpan<RowMember> bodies, ReadOnlySpan<RowCoupling> couplings)
     {
         _solution.Apply(coefficients, _outgoing);
-        foreach (Part part in _parts)
+        for (int body = 0; body < _bodies; body++)
         {
-            ComplexMatrix lattice = part.IsEven ? coupling.Even : coupling.Odd;
-            for (int l = part.Least; l <= _top; l++)
+            foreach (Part part in _parts)
             {
-                Complex sum = Complex.Zero;
-                for (int m = part.Least; m <= _top; m++)
-                    sum += lattice[l, m] * _outgoing[part.Start + m];
-                sum *= 0.5;
-                for (int n = 0; n < _orders; n++)
-                    sum += Table(waves, part, n)[l] * coefficients[part.Channel + n];
-                for (int g = 0; part.IsEven && g < _grazing; g++)
-                    sum += waves.Even(_orders + g)[l] * _outgoing[BorderStart + g];
-                _incoming[part.Start + l] = (l == 0 ? 1 : 2) * sum;
+                for (int l = part.Least; l <= _top; l++)
+                {
+                    Complex sum = 0.5 * FromBodies(part, l, couplings.Slice(body * _bodies, _bodies));
+                    for (int n = 0; n < _orders; n++)
+                        sum += Table(bodies[body].Arriving, part, n)[l] * coefficients[part.Channel + n];
+                    for (int g = 0; part.IsEven && g < _grazing; g++)
+                        sum += bodies[body].Arriving.Even(_orders + g)[l] * _outgoing[BorderStart + g];
+                    _incoming[body * _stride + part.Start + l] = (l == 0 ? 1 : 2) * sum;
+                }
             }
         }
+    }
+
+    private Complex FromBodies(in Part part, int l, ReadOnlySpan<RowCoupling> couplings)
+    {
+        Complex sum = Complex.Zero;
+        for (int other = 0; other < couplings.Length; other++)
+        {
+            ReadOnlySpan<Complex> lattice = (part.IsEven ? couplings[other].Even : couplings[other].Odd).Row(l);
+            for (int m = part.Least; m <= _top; m++)
+                sum += lattice[m] * _outgoing[other * _stride + part.Start + m];
+        }
+        return sum;
     }
 
     private Part MakePart(int field, bool even, int channel, ref int size)

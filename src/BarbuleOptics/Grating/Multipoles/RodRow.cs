@@ -3,11 +3,13 @@ using BarbuleOptics.Layering;
 
 namespace BarbuleOptics.Grating.Multipoles;
 
-/// <summary>One infinite row of equal rods, round or flattened, solid or with a concentric core, solved by multipole expansion.</summary>
+/// <summary>One infinite row of rods, round or flattened, solid or with a concentric core, equal ones or several side by side in each cell, solved
+/// by multipole expansion.</summary>
 /// <remarks>
 /// Each rod answers the multipoles that fall on it (<see cref="IRowBody"/>), plane waves and the other rods' fields arrive as
 /// multipoles (<see cref="MultipoleWaves"/>, <see cref="LatticeSums"/>), and the equations fall into two halves by mirror symmetry
 /// (<see cref="MirrorHalf"/>). The only approximation is the largest multipole L; the error falls like (2 radius/P)^(2L) and faster.
+/// Several bodies in a cell lie at multiples of P/b, so that sums between them follow from those of the period P/b (<see cref="CellSums"/>).
 /// The plane-wave expansion of what a row sends out holds anywhere off the line of centers, so planes may cut the rods
 /// (those of tall bodies only beyond the foci, <see cref="IRowBody.LeastPlaneNm"/>; nearer ones are refused).
 /// </remarks>
@@ -16,17 +18,15 @@ internal sealed class RodRow : IGratingElement
     /// <summary>Most multipoles taken for the sake of fast orders.</summary>
     private const int MostMultipoles = 40;
 
-    private readonly bool _hasCore;
-    private readonly int _material;
-    private readonly int _coreMaterial;
     private readonly double _xNm;
     private readonly double _topNm;
     private readonly double _bottomNm;
     private readonly LatticeSums _sums;
-    private readonly IRowBody _body;
-    private readonly MultipoleWaves _waves = new();
+    private readonly RowMember[] _bodies;
+    private readonly int _parts;
+    private readonly CellSums? _cellSums;
+    private readonly RowCoupling[] _couplings;
     private readonly int[] _grazingPlaces = new int[LatticeSums.MostGrazing];
-    private RowCoupling? _coupling;
     private MirrorHalf?[] _halves = [];
     private (RodField Field, int Top, int Orders) _shape = (RodField.Electric, -1, -1);
     private MirrorHalf? _first, _second;
@@ -60,9 +60,24 @@ internal sealed class RodRow : IGratingElement
     /// <param name="sums">Lattice sums, shared by all rows of one thread.</param>
     public RodRow(
         IRowBody body, bool hasCore, int material, int coreMaterial, double xNm, double topNm, double bottomNm, LatticeSums sums)
+        : this([new RowMember(body, 0, hasCore, material, coreMaterial)], 1, xNm, topNm, bottomNm, sums)
     {
-        (_body, _hasCore, _material, _coreMaterial) = (body, hasCore, material, coreMaterial);
-        (_xNm, _topNm, _bottomNm, _sums) = (xNm, topNm, bottomNm, sums);
+    }
+
+    /// <summary>A row with several bodies side by side in each cell.</summary>
+    /// <param name="bodies">The bodies, at places of their own; their circles do not overlap.</param>
+    /// <param name="parts">Parts of the period that places are counted in.</param>
+    /// <param name="xNm">Place 0 along x, in nm.</param>
+    /// <param name="topNm">Distance of the top plane above the centers, in nm.</param>
+    /// <param name="bottomNm">Distance of the bottom plane below the centers, in nm.</param>
+    /// <param name="sums">Lattice sums of the whole period, shared by all rows of one thread.</param>
+    public RodRow(IReadOnlyList<RowMember> bodies, int parts, double xNm, double topNm, double bottomNm, LatticeSums sums)
+    {
+        _bodies = [.. bodies];
+        (_parts, _xNm, _topNm, _bottomNm, _sums) = (parts, xNm, topNm, bottomNm, sums);
+        if (_bodies.Length > 1)
+            _cellSums = new CellSums(sums, parts, [.. bodies.Select(body => body.Place)]);
+        _couplings = new RowCoupling[_bodies.Length * _bodies.Length];
     }
 
     /// <inheritdoc/>
@@ -72,17 +87,20 @@ internal sealed class RodRow : IGratingElement
     public bool TryScatter(GratingWaves waves, in Resolution resolution, ScatteringBlock block)
     {
         int top = TopFor(waves, resolution);
-        if (Math.Min(_topNm, _bottomNm) < _body.LeastPlaneNm || !_body.TryPrepare(waves, top))
-            return false;
+        foreach (RowMember member in _bodies)
+        {
+            if (Math.Min(_topNm, _bottomNm) < member.Body.LeastPlaneNm || !member.Body.TryPrepare(waves, top))
+                return false;
+        }
         _sums.Prepare(waves, 2 * top);
+        _cellSums?.Prepare(waves, 2 * top);
         Resize(waves, top);
-        double s = Complex.Abs(_sums.K) * _body.RadiusNm / 2;
-        _coupling!.Fill(_sums.Sums, _body.RadiusNm / waves.PeriodNm, s);
-        FillWaves(waves, s);
+        FillCouplings(waves);
+        FillWaves(waves);
         _first = Half(waves.Field, electricEven: true);
         _second = Half(waves.Field, electricEven: false);
         ReadOnlySpan<int> places = _grazingPlaces.AsSpan(0, _sums.GrazingOrders.Length);
-        if (!_first.TrySolve(_body, _coupling, _waves, _gains, places) || !_second.TrySolve(_body, _coupling, _waves, _gains, places))
+        if (!_first.TrySolve(_bodies, _couplings, _gains, places) || !_second.TrySolve(_bodies, _couplings, _gains, places))
             return false;
         FillPhases(waves);
         FillBlock(waves, block);
@@ -92,7 +110,9 @@ internal sealed class RodRow : IGratingElement
     // Multipoles asked for, and those that the orders asked for need.
     private int TopFor(GratingWaves waves, in Resolution resolution)
     {
-        int needed = _body.MultipolesFor(Math.Max(-waves.Kx[0], waves.Kx[^1]));
+        int needed = 0;
+        foreach (RowMember member in _bodies)
+            needed = Math.Max(needed, member.Body.MultipolesFor(Math.Max(-waves.Kx[0], waves.Kx[^1])));
         return Math.Max(Math.Max(1, resolution.Multipoles), Math.Min(needed, MostMultipoles));
     }
 
@@ -100,12 +120,13 @@ internal sealed class RodRow : IGratingElement
     {
         if (_shape == (waves.Field, top, waves.OrderCount))
             return;
-        if (_shape.Top != top)
-            _coupling = new RowCoupling(top);
+        for (int i = 0; _shape.Top != top && i < _couplings.Length; i++)
+            _couplings[i] = new RowCoupling(top);
         _shape = (waves.Field, top, waves.OrderCount);
         _halves = new MirrorHalf?[2 * (LatticeSums.MostGrazing + 1)];
         int orders = waves.OrderCount, channels = waves.ChannelCount, all = orders + LatticeSums.MostGrazing;
-        _waves.Resize(all, top);
+        foreach (RowMember member in _bodies)
+            member.Resize(all, top);
         _gains = new Complex[all];
         (_fromTop, _toTop, _fromBottom, _toBottom) = (new Complex[orders], new Complex[orders], new Complex[orders], new Complex[orders]);
         (_coefficients, _sent, _below, _above) = (new Complex[channels], new Complex[channels], new Complex[channels], new Complex[channels]);
@@ -114,33 +135,58 @@ internal sealed class RodRow : IGratingElement
     private MirrorHalf Half(RodField field, bool electricEven)
     {
         int grazing = _sums.GrazingOrders.Length;
-        return _halves[2 * grazing + (electricEven ? 0 : 1)] ??= new MirrorHalf(field, electricEven, _shape.Top, _shape.Orders, grazing);
+        return _halves[2 * grazing + (electricEven ? 0 : 1)] ??= new MirrorHalf(field, electricEven, _shape.Top, _shape.Orders, grazing, _bodies.Length);
+    }
+
+    private double HalfPhase(RowMember member) => Complex.Abs(_sums.K) * member.Body.RadiusNm / 2;
+
+    private void FillCouplings(GratingWaves waves)
+    {
+        for (int to = 0; to < _bodies.Length; to++)
+        {
+            for (int from = 0; from < _bodies.Length; from++)
+            {
+                double radiusTo = _bodies[to].Body.RadiusNm, radiusFrom = _bodies[from].Body.RadiusNm;
+                int difference = _bodies[to].Place - _bodies[from].Place;
+                double periodNm = waves.PeriodNm / (_cellSums?.PartsOf(difference) ?? 1);
+                ReadOnlySpan<Complex> sums = _cellSums is null ? _sums.Sums : _cellSums.Of(difference);
+                _couplings[to * _bodies.Length + from].Fill(
+                    sums, radiusTo / periodNm, radiusFrom / periodNm, Math.Sqrt(HalfPhase(_bodies[to]) * HalfPhase(_bodies[from])));
+            }
+        }
     }
 
     // Tables of the orders kept, then of the grazing orders, kept or not; adds to the odd coupling what the lattice sums left out.
-    private void FillWaves(GratingWaves waves, double s)
+    private void FillWaves(GratingWaves waves)
     {
         for (int i = 0; i < waves.OrderCount; i++)
-            FillWave(waves, i, waves.Kx[i], waves.Kz[i], s);
+            FillWave(waves, i, i - waves.MostOrder, waves.Kx[i], waves.Kz[i]);
         ReadOnlySpan<int> grazing = _sums.GrazingOrders;
         for (int g = 0; g < grazing.Length; g++)
         {
             int wave = waves.OrderCount + g;
-            FillWave(waves, wave, waves.KxOf(grazing[g]), waves.KzIn(waves.Matrix, grazing[g]), s);
+            FillWave(waves, wave, grazing[g], waves.KxOf(grazing[g]), waves.KzIn(waves.Matrix, grazing[g]));
             _grazingPlaces[g] = Math.Abs(grazing[g]) <= waves.MostOrder ? grazing[g] + waves.MostOrder : -1;
-            ReadOnlySpan<Complex> odd = _waves.Odd(wave);
-            for (int l = 1; l < odd.Length; l++)
-                ComplexMatrix.SubtractScaled(_coupling!.Odd.Row(l), -2 * _gains[wave] * odd[l], odd);
+            for (int i = 0; i < _couplings.Length; i++)
+            {
+                ReadOnlySpan<Complex> arriving = _bodies[i / _bodies.Length].Arriving.Odd(wave), leaving = _bodies[i % _bodies.Length].Leaving.Odd(wave);
+                for (int l = 1; l < arriving.Length; l++)
+                    ComplexMatrix.SubtractScaled(_couplings[i].Odd.Row(l), -2 * _gains[wave] * arriving[l], leaving);
+            }
         }
     }
 
-    private void FillWave(GratingWaves waves, int wave, double kx, Complex kz, double s)
+    private void FillWave(GratingWaves waves, int wave, int order, double kx, Complex kz)
     {
-        _waves.Fill(wave, kx / _sums.K, kz / _sums.K, s);
         _gains[wave] = 2 / (waves.PeriodNm * kz);
-        // An order too fast for the multipoles passes by the bodies, as orders beyond those kept do.
-        if (_body.MultipolesFor(kx) > _shape.Top)
-            _waves.Clear(wave);
+        foreach (RowMember member in _bodies)
+        {
+            // An order too fast for the multipoles passes by the bodies, as orders beyond those kept do.
+            if (member.Body.MultipolesFor(kx) > _shape.Top)
+                member.Clear(wave);
+            else
+                member.Fill(wave, order, _parts, kx / _sums.K, kz / _sums.K, HalfPhase(member));
+        }
     }
 
     // From the planes to the centers and back; sideways only the order's share of kx matters, since kx0 is common to all.
@@ -188,10 +234,10 @@ internal sealed class RodRow : IGratingElement
     public void AddLoss(
         GratingWaves waves, in Resolution resolution, ReadOnlySpan<Complex> down, ReadOnlySpan<Complex> up, Span<double> byMaterial)
     {
-        bool matrixAbsorbs = waves.Matrix.Imaginary != 0;
-        bool rodAbsorbs = waves.Permittivities[_material].Imaginary != 0;
-        bool coreAbsorbs = _hasCore && waves.Permittivities[_coreMaterial].Imaginary != 0;
-        if (!matrixAbsorbs && !rodAbsorbs && !coreAbsorbs)
+        bool matrixAbsorbs = waves.Matrix.Imaginary != 0, absorbs = matrixAbsorbs;
+        foreach (RowMember member in _bodies)
+            absorbs |= waves.Permittivities[member.Material].Imaginary != 0 || CoreAbsorbs(waves, member);
+        if (!absorbs)
             return;
         // The direct waves, at the planes they leave through.
         for (int c = 0; c < waves.ChannelCount; c++)
@@ -200,20 +246,18 @@ internal sealed class RodRow : IGratingElement
             _below[c] = _fromTop[n] * down[c];
             _above[c] = _fromBottom[n] * up[c];
         }
-        double intoRods = 0, intoCores = 0;
-        AddHalf(waves, _first!, down, up, ref intoRods, ref intoCores);
-        AddHalf(waves, _second!, down, up, ref intoRods, ref intoCores);
-        if (rodAbsorbs)
-            byMaterial[_material] += coreAbsorbs ? intoRods - intoCores : intoRods;
-        if (coreAbsorbs)
-            byMaterial[_coreMaterial] += intoCores;
+        double intoRods = AddHalf(waves, _first!, down, up, byMaterial) + AddHalf(waves, _second!, down, up, byMaterial);
         // Green's identity: what enters through the planes and not into the rods is lost between them.
         if (matrixAbsorbs)
             byMaterial[Section.Matrix] += IntoPlanes(waves, down, up) - intoRods;
     }
 
-    private void AddHalf(
-        GratingWaves waves, MirrorHalf half, ReadOnlySpan<Complex> down, ReadOnlySpan<Complex> up, ref double intoRods, ref double intoCores)
+    private static bool CoreAbsorbs(GratingWaves waves, RowMember member)
+        => member.HasCore && waves.Permittivities[member.CoreMaterial].Imaginary != 0;
+
+    // Returns the power into all bodies.
+    private double AddHalf(
+        GratingWaves waves, MirrorHalf half, ReadOnlySpan<Complex> down, ReadOnlySpan<Complex> up, Span<double> byMaterial)
     {
         foreach (MirrorHalf.Part part in half.Parts)
         {
@@ -233,10 +277,20 @@ internal sealed class RodRow : IGratingElement
                 _above[c] += part.SignAbove * _sent[c];
             }
         }
-        half.SetWaves(_coefficients, _coupling!, _waves);
-        (double body, double core) = _body.PowerInto(waves, half);
-        intoRods += body / waves.PeriodNm;
-        intoCores += core / waves.PeriodNm;
+        half.SetWaves(_coefficients, _bodies, _couplings);
+        double intoRods = 0;
+        for (int i = 0; i < _bodies.Length; i++)
+        {
+            RowMember member = _bodies[i];
+            (double body, double core) = member.Body.PowerInto(waves, half, i);
+            bool coreAbsorbs = CoreAbsorbs(waves, member);
+            if (waves.Permittivities[member.Material].Imaginary != 0)
+                byMaterial[member.Material] += (coreAbsorbs ? body - core : body) / waves.PeriodNm;
+            if (coreAbsorbs)
+                byMaterial[member.CoreMaterial] += core / waves.PeriodNm;
+            intoRods += body / waves.PeriodNm;
+        }
+        return intoRods;
     }
 
     private double IntoPlanes(GratingWaves waves, ReadOnlySpan<Complex> down, ReadOnlySpan<Complex> up)

@@ -80,8 +80,9 @@ internal sealed class RodScatterer(double radiusNm, double coreRadiusNm, int mat
     }
 
     /// <inheritdoc/>
-    public (double Body, double Core) PowerInto(GratingWaves waves, MirrorHalf half)
+    public (double Body, double Core) PowerInto(GratingWaves waves, MirrorHalf half, int number)
     {
+        ReadOnlySpan<Complex> incoming = half.Incoming(number);
         double body = 0, core = 0;
         for (int m = 0; m <= half.Top; m++)
         {
@@ -91,9 +92,9 @@ internal sealed class RodScatterer(double radiusNm, double coreRadiusNm, int mat
                 if (m < part.Least)
                     continue;
                 if (part.Field == 0)
-                    electric = half.Incoming[part.Start + m];
+                    electric = incoming[part.Start + m];
                 else
-                    magnetic = half.ElectricEven ? half.Incoming[part.Start + m] : -half.Incoming[part.Start + m];
+                    magnetic = half.ElectricEven ? incoming[part.Start + m] : -incoming[part.Start + m];
             }
             double share = (m == 0 ? 2 : 1) * Math.PI;
             body -= share * Outward(_field[m], _flux[m], electric, magnetic);
