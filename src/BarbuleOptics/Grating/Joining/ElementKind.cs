@@ -9,6 +9,7 @@ namespace BarbuleOptics.Grating.Joining;
 internal abstract record ElementKind(double PeriodNm, double HeightNm, bool IsCut)
 {
     /// <summary>Makes the element that solves it.</summary>
+    /// <param name="shared">What elements share.</param>
     /// <param name="sums">Lattice sums, shared by elements of one period that see the same waves.</param>
-    public abstract IGratingElement Create(LatticeSums sums);
+    public abstract IGratingElement Create(SharedAnswers shared, LatticeSums sums);
 }

@@ -16,9 +16,9 @@ internal sealed class ElementKinds(Section section)
     public ElementKind[] All => [.. _kinds];
 
     /// <summary>The elements from the top down.</summary>
-    public List<PlannedElement> Place(bool slabsOnly)
+    public List<PlannedElement> Place(RowMethods methods)
     {
-        IEnumerable<PlannedRow> rows = section.Runs.SelectMany(run => slabsOnly ? run.Rows.Select(row => new PlannedRow(run, row, null)) : PlannedRow.Of(run));
+        IEnumerable<PlannedRow> rows = section.Runs.SelectMany(run => PlannedRow.Of(run, methods));
         List<List<PlannedRow>> clusters = RowClusters.Of(rows);
         Dictionary<RodKind, double> reaches = Reaches(clusters);
         var elements = new List<PlannedElement>();
@@ -55,7 +55,7 @@ internal sealed class ElementKinds(Section section)
         CellBody[] rods = row.Rods!;
         int parts = RodCells.PartsOf(rods, row.Run.SpacingNm);
         CellRod[] places = [.. rods.Select(rod => new CellRod(
-            RodCells.PlaceOf(rods[0], rod, row.Run.SpacingNm, parts), rod.Outer.HalfHeightNm, rod.Core?.HalfHeightNm ?? 0,
+            RodCells.PlaceOf(rods[0], rod, row.Run.SpacingNm, parts), rod.Outer, rod.Core,
             rod.Material, rod.Core is null ? rod.Material : rod.CoreMaterial))];
         return new RodKind(row.Run.SpacingNm, ValueList.Create<CellRod>(places), parts, reachNm);
     }

@@ -6,7 +6,7 @@ namespace BarbuleOptics.Grating.Joining;
 /// <summary>Solves one kind of element within waves whose period holds one or several of its cells.</summary>
 /// <remarks>In a period of m cells order n couples only to orders that differ by a multiple of m: one problem of the element's own
 /// period for each remainder r, with the incident wave moved by 2 pi r over the long period.</remarks>
-internal sealed class KindSolver(ElementKind kind, SharedSums sums)
+internal sealed class KindSolver(ElementKind kind, SharedAnswers shared)
 {
     private readonly List<Part> _parts = [];
     private Complex[] _down = [];
@@ -21,7 +21,7 @@ internal sealed class KindSolver(ElementKind kind, SharedSums sums)
         GratingWaves waves = table.Waves;
         _cells = Math.Max(1, (int)Math.Round(waves.PeriodNm / kind.PeriodNm));
         while (_parts.Count < _cells)
-            _parts.Add(new Part(kind.Create(sums.Of(kind.PeriodNm, _parts.Count))));
+            _parts.Add(new Part(kind.Create(shared, shared.Of(kind.PeriodNm, _parts.Count))));
         if (_cells == 1)
         {
             if (!_parts[0].Element.TryScatter(waves, resolution, block))

@@ -23,10 +23,11 @@ internal sealed record PlannedRow(SectionRun Run, SectionRow Row, CellBody[]? Ro
     /// <summary>All its bodies.</summary>
     public IEnumerable<CellBody> Bodies => Rods is null ? Run.Cell : Rods;
 
-    /// <summary>The rows of a run: one for each round rod, or for those side by side, where all bodies are round, else one for each cell.</summary>
-    public static IEnumerable<PlannedRow> Of(SectionRun run)
+    /// <summary>The rows of a run: one for each rod, or for those side by side, where all bodies are rods for multipoles, else one for each cell.</summary>
+    public static IEnumerable<PlannedRow> Of(SectionRun run, RowMethods methods)
     {
-        bool round = run.Cell.All(IsRound);
+        bool round = methods != RowMethods.SlabsOnly && run.Cell.All(IsRound)
+            || methods == RowMethods.AllRods && run.Cell.Count == 1 && FlatRod.Is(run.Cell[0], run.SpacingNm);
         foreach (SectionRow row in run.Rows)
         {
             if (!round)

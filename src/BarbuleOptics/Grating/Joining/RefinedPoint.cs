@@ -59,8 +59,8 @@ internal sealed class RefinedPoint(StackPlan plan)
     /// <param name="layout">Where the answers stand.</param>
     /// <param name="first">Receives the answer: for s with both fields.</param>
     /// <param name="second">Receives that for p with both fields.</param>
-    /// <exception cref="ArithmeticException">No resolution gave a finite solution.</exception>
-    public void Solve(
+    /// <returns>False where no resolution gave a finite solution.</returns>
+    public bool TrySolve(
         in PointLight light, ReadOnlySpan<Complex> media, RodField field, in PointPeriods periods, double accuracy, in OutcomeLayout layout,
         Span<double> first, Span<double> second)
     {
@@ -112,10 +112,11 @@ internal sealed class RefinedPoint(StackPlan plan)
             lastChange = plain;
         }
         if (!stands)
-            throw new ArithmeticException(FormattableString.Invariant($"The section has no finite solution at {light.WavelengthNm} nm at any resolution."));
+            return false;
         memory.SinceProbe++;
         memory.Accepted = accepted >= 0 ? accepted : _ladder.Count - 1;
         Deliver(double.IsNaN(error) ? 1 : Math.Min(1, error), field, first, second);
+        return true;
     }
 
     /// <summary>The coarsest mesh in depth that takes a small part of the accuracy, judged at few harmonics, and its error.</summary>

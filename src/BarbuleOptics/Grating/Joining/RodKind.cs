@@ -3,7 +3,7 @@ using BarbuleOptics.Quantities;
 
 namespace BarbuleOptics.Grating.Joining;
 
-/// <summary>A row of round rods, one or several side by side in each cell, its planes equally far from the centers.</summary>
+/// <summary>A row of rods solved by multipoles, one or several side by side in each cell, its planes equally far from the centers.</summary>
 /// <param name="PeriodNm">Length of a cell, in nm.</param>
 /// <param name="Rods">The rods of one cell, the first at place 0.</param>
 /// <param name="Parts">Parts of the period that places are counted in; 1 with one rod.</param>
@@ -12,14 +12,10 @@ namespace BarbuleOptics.Grating.Joining;
 internal sealed record RodKind(double PeriodNm, ValueList<CellRod> Rods, int Parts, double ReachNm)
     : ElementKind(PeriodNm, 2 * ReachNm, IsCut: false)
 {
-    /// <summary>The largest radius, in nm.</summary>
-    public double RadiusNm { get; } = Rods.Max(rod => rod.RadiusNm);
+    /// <summary>Half the height of the tallest rod, in nm.</summary>
+    public double RadiusNm { get; } = Rods.Max(rod => rod.Outer.HalfHeightNm);
 
     /// <inheritdoc/>
-    public override IGratingElement Create(LatticeSums sums)
-    {
-        RowMember[] members = [.. Rods.Select(rod => new RowMember(
-            new RodScatterer(rod.RadiusNm, rod.CoreRadiusNm, rod.Material, rod.CoreMaterial), rod.Place, rod.CoreRadiusNm > 0, rod.Material, rod.CoreMaterial))];
-        return new RodRow(members, Parts, 0, ReachNm, ReachNm, sums);
-    }
+    public override IGratingElement Create(SharedAnswers shared, LatticeSums sums)
+        => new RodRow([.. Rods.Select(rod => rod.Create(shared))], Parts, 0, ReachNm, ReachNm, sums);
 }

@@ -1,3 +1,5 @@
+using BarbuleOptics.Layering;
+
 namespace BarbuleOptics.Grating.Joining;
 
 /// <summary>Finds rows that must be solved together because they share depths.</summary>
@@ -43,6 +45,10 @@ internal static class RowClusters
     {
         if (first is not [{ Rods: not null } one] || second is not [{ Rods: not null } other])
             return true;
-        return Math.Abs(other.CenterNm - one.CenterNm) < LeastShare * (one.RadiusNm + other.RadiusNm);
+        // Rows of flattened rods are solved one by one where they do not overlap.
+        double leastShare = one.Rods.All(IsRound) && other.Rods.All(IsRound) ? LeastShare : 1;
+        return Math.Abs(other.CenterNm - one.CenterNm) < leastShare * (one.RadiusNm + other.RadiusNm) - TouchingNm;
     }
+
+    private static bool IsRound(CellBody rod) => rod.Outer.HalfWidthNm == rod.Outer.HalfHeightNm;
 }

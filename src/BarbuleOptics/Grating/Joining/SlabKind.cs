@@ -14,5 +14,5 @@ internal sealed record SlabKind(double PeriodNm, double HeightNm, bool IsCut, Va
     : ElementKind(PeriodNm, HeightNm, IsCut)
 {
     /// <inheritdoc/>
-    public override IGratingElement Create(LatticeSums sums) => new ModalSlab(Bodies, HeightNm, PeriodNm);
+    public override IGratingElement Create(SharedAnswers shared, LatticeSums sums) => new ModalSlab(Bodies, HeightNm, PeriodNm);
 }

@@ -47,6 +47,6 @@ internal sealed class StackPlan
 
     /// <summary>Plans a section.</summary>
     /// <param name="section">The section.</param>
-    /// <param name="slabsOnly">Whether round rods are handed to modal slabs as well, as a second method.</param>
-    public static StackPlan Of(Section section, bool slabsOnly = false) => new StackPlanBuilder(section, slabsOnly).Build();
+    /// <param name="methods">Which rods are solved by multipoles.</param>
+    public static StackPlan Of(Section section, RowMethods methods = RowMethods.RoundRods) => new StackPlanBuilder(section, methods).Build();
 }

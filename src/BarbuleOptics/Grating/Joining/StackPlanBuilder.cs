@@ -18,11 +18,11 @@ internal sealed class StackPlanBuilder
     private int _medium;
     private double _shiftNm;
 
-    public StackPlanBuilder(Section section, bool slabsOnly)
+    public StackPlanBuilder(Section section, RowMethods methods)
     {
         _section = section;
         _kinds = new ElementKinds(section);
-        _elements = _kinds.Place(slabsOnly);
+        _elements = _kinds.Place(methods);
         _medium = section.Materials.Count; // the surround
     }
 

@@ -27,8 +27,8 @@ internal sealed class StackSolver
     public StackSolver(StackPlan plan)
     {
         _plan = plan;
-        var sums = new SharedSums();
-        _kinds = [.. plan.Kinds.Select(kind => new KindSolver(kind, sums))];
+        var shared = new SharedAnswers();
+        _kinds = [.. plan.Kinds.Select(kind => new KindSolver(kind, shared))];
         _groupOfKind = new int[_kinds.Length];
         foreach (PlanPiece piece in plan.Pieces)
         {

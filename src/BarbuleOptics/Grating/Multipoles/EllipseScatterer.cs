@@ -27,6 +27,7 @@ internal sealed class EllipseScatterer : IRowBody
     private readonly EllipseOutline _core;
     private readonly int _material;
     private readonly int _coreMaterial;
+    private readonly int _leastSources;
     private readonly ComplexMatrix[] _answers = new ComplexMatrix[8];
     private readonly bool[] _known = new bool[3];
     private readonly EllipseSolution?[] _solutions = new EllipseSolution?[12];
@@ -41,8 +42,9 @@ internal sealed class EllipseScatterer : IRowBody
     /// <param name="core">The core's outline; of no width without a core.</param>
     /// <param name="material">Number of its material.</param>
     /// <param name="coreMaterial">Number of its core's material.</param>
-    public EllipseScatterer(EllipseOutline outline, EllipseOutline core, int material, int coreMaterial)
-        => (_outline, _core, _material, _coreMaterial) = (outline, core, material, coreMaterial);
+    /// <param name="leastSources">Sources on a quarter of each outline to begin with: as many as were enough at a neighboring wavelength.</param>
+    public EllipseScatterer(EllipseOutline outline, EllipseOutline core, int material, int coreMaterial, int leastSources = 0)
+        => (_outline, _core, _material, _coreMaterial, _leastSources) = (outline, core, material, coreMaterial, leastSources);
 
     /// <inheritdoc/>
     public double RadiusNm => Math.Max(_outline.HalfWidthNm, _outline.HalfHeightNm);
@@ -90,7 +92,7 @@ internal sealed class EllipseScatterer : IRowBody
     {
         int field = (int)waves.Field;
         Misfit = double.PositiveInfinity;
-        int count = Math.Max(_system?.SourceCount ?? 0, EllipseSystem.SourcesFor(_outline, _core, _top));
+        int count = Math.Max(_system?.SourceCount ?? _leastSources, EllipseSystem.SourcesFor(_outline, _core, _top));
         for (; count <= MostSources; count += 1 + count / 4)
         {
             if (_system is null || _system.SourceCount != count || _system.Top < _top)
