@@ -91,11 +91,11 @@ public sealed class PredictOutputTests
 
     // The table says which solver ran and how far the other is from it.
     [Theory]
-    [InlineData("", "grating solver, rigorous for this section, unpolarized", "The layer model (bruggeman) would be off from this by ")]
-    [InlineData("--solver grating", "grating solver, rigorous for this section", "The layer model (bruggeman) would be off from this by ")]
+    [InlineData("", "grating solver, rigorous for this section, unpolarized", "The layer model (bruggeman-2) would be off from this by ")]
+    [InlineData("--solver grating", "grating solver, rigorous for this section", "The layer model (bruggeman-2) would be off from this by ")]
     [InlineData("--mixing mean-index", "multilayer solver, mean-index mixing, ", "This layer model is off from the rigorous solution of the section by ")]
     [InlineData("--solver multilayer --mixing mean-index", "multilayer solver, mean-index mixing, ", "This layer model is off from the rigorous solution of the section by ")]
-    [InlineData("--solver multilayer", "multilayer solver, bruggeman mixing, ", null)]
+    [InlineData("--solver multilayer", "multilayer solver, bruggeman-2 mixing, ", null)]
     [InlineData("--set barbule.axis=35", "grating solver, rigorous for this section", null)]
     public async Task The_table_names_the_solver_and_the_distance_to_the_other(string options, string solver, string? compared)
     {
@@ -243,7 +243,7 @@ public sealed class PredictOutputTests
         AssertKeys(view, "incidence_deg", "polarization", "spectrum", "cie", "hue", "bird", "layer_model_error", "powers");
         JsonElement compared = view.GetProperty("layer_model_error"), powers = view.GetProperty("powers");
         AssertKeys(compared, "mixing", "peak_shift_nm", "largest_change", "largest_change_at_nm", "ciede2000");
-        Assert.Equal("bruggeman", Text(compared, "mixing"));
+        Assert.Equal("bruggeman-2", Text(compared, "mixing"));
         Assert.InRange(Number(compared, "largest_change"), 1e-4, 1);
         Assert.InRange(Number(compared, "largest_change_at_nm"), 300, 780);
         Assert.InRange(Number(compared, "ciede2000"), 0.01, 100);

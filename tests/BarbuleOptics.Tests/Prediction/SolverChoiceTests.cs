@@ -48,7 +48,7 @@ public sealed class SolverChoiceTests
     {
         StructurePrediction prediction = Predictions.Of(Rods, Predictions.Rigorously(500, 510, 5) with { Mixing = new MeanIndex() });
         Assert.Equal(("multilayer", "mean-index"), (prediction.Solver, prediction.Mixing));
-        Assert.Equal("bruggeman", Predictions.Of(Rods, Predictions.At(500, 510, 5)).Mixing);
+        Assert.Equal("bruggeman-2", Predictions.Of(Rods, Predictions.At(500, 510, 5)).Mixing);
         // Films have nothing to average.
         Assert.Null(Predictions.Of(Sheets, Predictions.Rigorously(500, 510, 5) with { Mixing = new MeanIndex() }).Mixing);
     }
