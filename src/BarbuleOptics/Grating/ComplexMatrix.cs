@@ -76,7 +76,14 @@ internal sealed class ComplexMatrix
         {
             Span<Complex> sum = Row(row);
             ReadOnlySpan<Complex> factors = left.Row(row);
-            for (int inner = 0; inner < factors.Length; inner++)
+            int inner = 0;
+            for (; inner + 4 <= factors.Length; inner += 4)
+            {
+                SubtractScaled(
+                    sum, -factors[inner], right.Row(inner), -factors[inner + 1], right.Row(inner + 1),
+                    -factors[inner + 2], right.Row(inner + 2), -factors[inner + 3], right.Row(inner + 3));
+            }
+            for (; inner < factors.Length; inner++)
                 AddScaled(sum, factors[inner], right.Row(inner));
         }
     }
