@@ -102,7 +102,8 @@ public class ModalSlabTests
         {
             Complex below = Substrate * Substrate;
             GratingWaves waves = ModalCase.Waves(Field, Math.Sin(Degrees * Math.PI / 180), 0, [1, Ridge * Ridge], harmonics, 1, Period);
-            ScatteringBlock ridges = ModalCase.Solve([ModalCase.Rectangle(Period / 2, Height).At(0, Height / 2)], waves, harmonics, 1, Height);
+            ScatteringBlock ridges = ModalCase.Solve(
+                new ModalSlab([ModalCase.Rectangle(Period / 2, Height).At(0, Height / 2)], Height, Period, crowd: false), waves, harmonics);
             return new LamellarAnswer(waves, below, ModalCase.Join(ridges, ModalCase.Interface(waves, 1, below)));
         }
     }

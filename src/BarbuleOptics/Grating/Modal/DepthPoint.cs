@@ -8,6 +8,8 @@ internal sealed class DepthPoint
 {
     private readonly ModalSector _sector;
     private readonly ComplexMatrix _electric;
+    private ComplexMatrix? _full;
+    private ComplexMatrix? _half;
 
     /// <summary>Memory for a sector.</summary>
     public DepthPoint(in ModalSector sector)
@@ -72,6 +74,60 @@ internal sealed class DepthPoint
             }
         }
     }
+
+    /// <summary>Fills the four matrices over crowded harmonics.</summary>
+    /// <param name="waves">The light.</param>
+    /// <param name="slope">[f].</param>
+    /// <param name="kx">-i f d/dx.</param>
+    /// <param name="operators">The operators.</param>
+    public void Set(ModalWaves waves, ComplexMatrix slope, ComplexMatrix kx, CrowdedOperators operators)
+    {
+        double alpha = waves.Alpha, k2 = waves.K0 * waves.K0, sign = _sector.MagneticSign;
+        FieldBasis e = _sector.Electric, h = _sector.Magnetic;
+        int first = e.Count;
+        Complex i = Complex.ImaginaryOne;
+        IsPlain = false;
+        Xx.Clear();
+        Zz.Clear();
+        Zx.Clear();
+        Xz.Clear();
+        _full ??= new ComplexMatrix(kx.Rows, kx.Rows);
+        _half ??= new ComplexMatrix(kx.Rows, kx.Rows);
+        if (e.Count > 0)
+        {
+            AddFull(e, e, Multiplied(kx, operators.A, kx), 1, Xx, 0, 0);
+            AddFull(e, e, operators.Permittivity, -k2, Xx, 0, 0);
+            AddFull(e, e, slope, 1, Zz, 0, 0);
+            if (alpha != 0)
+                AddFull(e, e, operators.SlopeQSlope, alpha * alpha, Zz, 0, 0);
+        }
+        if (h.Count == 0)
+            return;
+        AddFull(h, h, Multiplied(kx, operators.Q, kx), sign, Xx, first, first);
+        AddFull(h, h, slope, -sign * k2, Xx, first, first);
+        AddFull(h, h, operators.XWhole, sign, Zz, first, first);
+        if (e.Count == 0 || alpha == 0)
+            return;
+        AddFull(e, h, Multiplied(operators.SlopeQ, kx), i * alpha, Zx, 0, first);
+        AddFull(e, h, Multiplied(kx, operators.AX), i * alpha, Xz, 0, first);
+        AddFull(h, e, Multiplied(operators.XA, kx), -i * alpha * sign, Zx, first, 0);
+        AddFull(h, e, Multiplied(kx, operators.QSlope), -i * alpha * sign, Xz, first, 0);
+    }
+
+    private ComplexMatrix Multiplied(ComplexMatrix left, ComplexMatrix right)
+    {
+        _full!.SetProduct(left, right);
+        return _full;
+    }
+
+    private ComplexMatrix Multiplied(ComplexMatrix left, ComplexMatrix middle, ComplexMatrix right)
+    {
+        _half!.SetProduct(left, middle);
+        return Multiplied(_half, right);
+    }
+
+    private static void AddFull(in FieldBasis rows, in FieldBasis columns, ComplexMatrix full, Complex factor, ComplexMatrix target, int firstRow, int firstColumn)
+        => FieldBasis.AddBetween(rows, columns, full, factor, [], [], target, firstRow, firstColumn);
 
     // dE/dx and dE/dz by themselves, and -k0^2 e.
     private void AddElectric(ModalWaves waves, CutOperators operators)

@@ -85,7 +85,8 @@ internal sealed class ElementRule
         return (value, slope);
     }
 
-    private static (double[] Nodes, double[] Weights) GaussLegendre(int count)
+    /// <summary>Nodes and weights on [-1, 1].</summary>
+    internal static (double[] Nodes, double[] Weights) GaussLegendre(int count)
     {
         var nodes = new double[count];
         var weights = new double[count];

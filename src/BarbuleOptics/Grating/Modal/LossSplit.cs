@@ -49,8 +49,13 @@ internal sealed class LossSplit
     {
         _waves.Set(light);
         _store.Use(light.Permittivities, _waves.Alpha, (_depth, 0));
+        return (_shape.HasAxis && TryPrepare(light, true)) || TryPrepare(light, false);
+    }
+
+    private bool TryPrepare(GratingWaves light, bool symmetric)
+    {
         _record.Clear();
-        _workspace.Chain.IsSymmetric = false;
+        _workspace.Chain.IsSymmetric = symmetric;
         if (!_workspace.TryJoin(_waves, light, _shape.Intervals, _store, _depth) || !_workspace.Chain.TryEnd(_waves, light.Matrix, _between))
             return false;
         _record.End(_workspace.Chain);

@@ -11,12 +11,17 @@ namespace BarbuleOptics.Grating.Modal;
 /// Largest error in R of five staggered rows, 300-780 nm, 0 and 30 degrees, against 30 harmonics, at N = 3, 5, 7, 10:
 /// 120 nm rods at 170 nm, solid, E 1.6e-5 3e-6 2e-6 5e-7, H 1.4e-5 3e-6 1e-6 4e-7; with a 70 nm lumen E 4e-4 4e-5 2.5e-5 9e-6,
 /// H 2.4e-4 7e-5 1.6e-5 1.2e-5; with a 100 nm lumen at 150 nm E 1.1e-3 2.6e-4 8e-5 2e-5, H 6e-3 2e-4 1.4e-4 2e-4; platelets
-/// 180 x 60 nm with a 15 nm wall at 220 nm, whose corners slow it down, E 1.1e-3 2e-4 1.2e-4 2.4e-5, H 5e-3 1.8e-3 1.3e-3 6e-4.
+/// 180 x 60 nm with a 15 nm wall at 220 nm, whose corners slow it down, E 1.1e-3 2e-4 1.2e-4 2.4e-5, H 5e-3 1.8e-3 1.3e-3 6e-4 by
+/// harmonics that are plane waves. Where all walls are upright and no plane cuts a body, harmonics crowd at the walls
+/// (<see cref="WallCrowding"/>): one such row, 320-740 nm, kx0 0 and 0.5 k0, R and T against 20 crowded ones,
+/// E 3.4e-4 4e-5 4e-6 7e-7, H 9.4e-4 4e-5 1.1e-5 4e-6, where plain ones give E 5e-4 9e-5 6e-5 1.1e-5, H 1.3e-3 5e-4 3.3e-4 1.3e-4.
 /// Hollow ellipses and platelets agree with spectral elements, an independent method, to that.
 /// </remarks>
 internal sealed class ModalSlab : IGratingElement
 {
     private readonly SlabShape _shape;
+    private readonly double[]? _crowdedWallsNm;
+    private readonly Dictionary<int, CrowdedStore> _crowded = [];
     private readonly Dictionary<(int, int, RodField, bool), ModalSpace> _spaces = [];
     private readonly Dictionary<int, OperatorStore> _stores = [];
     private readonly Dictionary<(int, int, RodField, int), LossSplit> _losses = [];
@@ -28,9 +33,11 @@ internal sealed class ModalSlab : IGratingElement
     /// <param name="bodies">Bodies of one period; where two cover each other the later one counts.</param>
     /// <param name="heightNm">Distance between the planes, above zero, in nm.</param>
     /// <param name="periodNm">The period, above zero, in nm.</param>
-    public ModalSlab(IReadOnlyList<PlacedOutline> bodies, double heightNm, double periodNm)
+    /// <param name="crowd">Whether harmonics crowd at walls where all are upright; off, they are plane waves always.</param>
+    public ModalSlab(IReadOnlyList<PlacedOutline> bodies, double heightNm, double periodNm, bool crowd = true)
     {
         _shape = new SlabShape(bodies, heightNm, periodNm);
+        _crowdedWallsNm = crowd ? WallCrowding.WallsOf(_shape) : null;
         _meets = new bool[1 + bodies.Select(placed => Math.Max(placed.Body.Material, placed.Body.CoreMaterial)).DefaultIfEmpty(0).Max()];
         _meets[Section.Matrix] = true;
         foreach (PlacedOutline placed in bodies)
@@ -105,9 +112,12 @@ internal sealed class ModalSlab : IGratingElement
         bool split = UseMirrors && _shape.HasAxis && waves.Kx0 == 0;
         if (!_stores.TryGetValue(harmonics, out OperatorStore? store))
             store = _stores[harmonics] = new OperatorStore(_shape, harmonics);
+        CrowdedStore? crowded = null;
+        if (_crowdedWallsNm is not null && !_crowded.TryGetValue(harmonics, out crowded))
+            crowded = _crowded[harmonics] = new CrowdedStore(_shape, WallCrowding.Of(_crowdedWallsNm, _shape, harmonics), harmonics);
         (int, int, RodField, bool) key = (harmonics, waves.MostOrder, waves.Field, split);
         if (!_spaces.TryGetValue(key, out ModalSpace? space))
-            space = _spaces[key] = new ModalSpace(_shape, store, harmonics, waves.MostOrder, waves.Field, split, UseMirrors && _shape.HasMiddle);
+            space = _spaces[key] = new ModalSpace(_shape, store, harmonics, waves.MostOrder, waves.Field, split, UseMirrors && _shape.HasMiddle, crowded);
         return space;
     }
 }

@@ -7,6 +7,7 @@ internal sealed class ModalSpace
 {
     private readonly SlabShape _shape;
     private readonly OperatorStore _store;
+    private readonly CrowdedStore? _crowded;
     private readonly ModalWaves _waves;
     private readonly ModalWorkspace[] _workspaces;
     private readonly bool _halved;
@@ -21,14 +22,15 @@ internal sealed class ModalSpace
     private readonly Complex[] _outBottom;
 
     /// <summary>Memory for one slab, field and resolution.</summary>
-    public ModalSpace(SlabShape shape, OperatorStore store, int harmonics, int mostOrder, RodField field, bool split, bool halved)
+    public ModalSpace(SlabShape shape, OperatorStore store, int harmonics, int mostOrder, RodField field, bool split, bool halved, CrowdedStore? crowded = null)
     {
         _shape = shape;
         _store = store;
+        _crowded = crowded;
         _halved = halved;
         _mostOrder = mostOrder;
         _waves = new ModalWaves(harmonics);
-        _workspaces = [.. ModalSector.Of(harmonics, field, split).Select(sector => new ModalWorkspace(sector, mostOrder))];
+        _workspaces = [.. ModalSector.Of(harmonics, field, split).Select(sector => new ModalWorkspace(sector, mostOrder, null, crowded))];
         int channels = (2 * mostOrder + 1) * (field == RodField.Both ? 2 : 1);
         _between = new ComplexMatrix(2 * channels, 2 * channels);
         _top = new ComplexMatrix(channels, channels);
@@ -45,6 +47,8 @@ internal sealed class ModalSpace
     {
         _waves.Set(light);
         _store.Use(light.Permittivities, _waves.Alpha, (depth, _halved ? 1 : 0));
+        _crowded?.Use(light.Permittivities, _waves.Alpha);
+        _crowded?.Planes.Set(_waves, light.Matrix);
         _top.Clear();
         _topBottom.Clear();
         _bottomTop.Clear();

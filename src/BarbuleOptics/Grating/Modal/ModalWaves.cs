@@ -5,6 +5,9 @@ namespace BarbuleOptics.Grating.Modal;
 /// <summary>The harmonics -N..N of one wavelength and direction, the plane waves among them included.</summary>
 internal sealed class ModalWaves
 {
+    private double _kx0;
+    private double _periodNm = 1;
+
     /// <summary>Memory for harmonics up to N.</summary>
     public ModalWaves(int harmonics)
     {
@@ -30,12 +33,16 @@ internal sealed class ModalWaves
     /// <summary>Takes wavelength and direction over.</summary>
     public void Set(GratingWaves waves)
     {
+        (_kx0, _periodNm) = (waves.Kx0, waves.PeriodNm);
         K0 = waves.K0;
         Field = waves.Field;
         Alpha = waves.Field == RodField.Both ? waves.Ky / waves.K0 : 0;
         for (int n = -Harmonics; n <= Harmonics; n++)
-            Kx[n + Harmonics] = waves.Kx0 + 2 * Math.PI * n / waves.PeriodNm;
+            Kx[n + Harmonics] = KxOf(n);
     }
+
+    /// <summary>Wave vector across the rods of a harmonic, also beyond N, in 1/nm.</summary>
+    public double KxOf(int harmonic) => _kx0 + 2 * Math.PI * harmonic / _periodNm;
 
     /// <summary>1/(e - alpha^2) = k0^2/q of a medium.</summary>
     public Complex InverseAcross(Complex permittivity) => Complex.One / (permittivity - Alpha * Alpha);
@@ -43,7 +50,7 @@ internal sealed class ModalWaves
     /// <summary>Wave vector in depth of a harmonic in a medium, Im >= 0, never zero, in 1/nm.</summary>
     public Complex KzIn(Complex permittivity, int harmonic)
     {
-        double kx = Kx[harmonic + Harmonics];
+        double kx = KxOf(harmonic);
         Complex root = Complex.Sqrt(K0 * K0 * (permittivity - Alpha * Alpha) - kx * kx);
         if (root.Imaginary < 0 || (root.Imaginary == 0 && root.Real < 0))
             root = -root;

@@ -8,34 +8,41 @@ internal sealed class ModalWorkspace
     /// <summary>Order of the thin elements that upright walls are doubled from.</summary>
     private const int UprightOrder = 5;
 
-    /// <summary>Largest wave number times height of such an element.</summary>
-    private const double UprightReach = 0.5;
+    /// <summary>Largest wave number times height of such an element; half of it changes R by less than 1e-8.</summary>
+    private const double UprightReach = 1.5;
 
     /// <summary>Largest wave number in a material times height of a piece: below pi, no piece is a closed resonator.</summary>
     private const double PieceReach = 1.5;
 
     private readonly ModalSector _sector;
     private readonly FieldRecord? _record;
+    private readonly CrowdedStore? _crowded;
     private readonly DepthPoint[] _points;
     private readonly DepthPoint[] _same = new DepthPoint[UprightOrder + 1];
     private readonly DepthElement?[] _elements = new DepthElement?[DepthMesh.MostOrder + 1];
     private readonly ComplexMatrix _piece;
     private readonly ComplexMatrix _double;
+    private readonly ComplexMatrix _electric;
+    private readonly ComplexMatrix _magnetic;
 
     /// <summary>Scratch for one sector.</summary>
     /// <param name="sector">The sector.</param>
     /// <param name="mostOrder">Largest incoming order.</param>
+    /// <param name="crowded">Operators over crowded harmonics; null for plain ones.</param>
     /// <param name="record">Receives what the fields inside are found from; null where they are not asked for.</param>
-    public ModalWorkspace(in ModalSector sector, int mostOrder, FieldRecord? record = null)
+    public ModalWorkspace(in ModalSector sector, int mostOrder, FieldRecord? record = null, CrowdedStore? crowded = null)
     {
         _record = record;
+        _crowded = crowded;
         _sector = sector;
-        Chain = new SlabChain(sector, mostOrder);
+        Chain = new SlabChain(sector, mostOrder, crowded?.Planes);
         _points = new DepthPoint[DepthMesh.MostOrder + 2];
         for (int i = 0; i < _points.Length; i++)
             _points[i] = new DepthPoint(sector);
         _piece = new ComplexMatrix(2 * sector.Size, 2 * sector.Size);
         _double = new ComplexMatrix(3 * sector.Size, 3 * sector.Size);
+        _electric = new ComplexMatrix(sector.Size, sector.Size);
+        _magnetic = new ComplexMatrix(sector.Size, sector.Size);
     }
 
     /// <summary>The sector.</summary>
@@ -51,7 +58,9 @@ internal sealed class ModalWorkspace
         Chain.Begin(waves, light.Matrix);
         foreach (SlabInterval interval in intervals)
         {
-            bool joined = _record is not null
+            bool joined = _crowded is not null
+                ? TryJoinUpright(waves, light, interval, store, ref number)
+                : _record is not null
                 ? TryJoinElements(waves, light, interval, store, depth, ref number)
                 : store.OnlyPermittivity(interval) is Complex only
                 ? TryJoinLayer(waves, only, interval.ThicknessNm)
@@ -78,18 +87,33 @@ internal sealed class ModalWorkspace
         int pieces = Math.Max(1, (int)Math.Ceiling(interval.ThicknessNm * most / PieceReach));
         double pieceNm = interval.ThicknessNm / pieces;
         int doublings = Math.Max(0, (int)Math.Ceiling(Math.Log2(pieceNm * steepest / UprightReach)));
-        if (store.At(number++, interval, (interval.TopNm + interval.BottomNm) / 2, waves.Field == RodField.Electric) is not CutOperators operators)
+        if (!TrySetUpright(waves, interval, store, ref number))
             return false;
-        _points[0].Set(waves, operators);
         Array.Fill(_same, _points[0]);
         if (!ElementOf(UprightOrder).TryCondense(ElementRule.Of(UprightOrder).Inside, _same, Math.ScaleB(pieceNm, -doublings), Chain.IsSymmetric, _piece))
             return false;
         for (int i = 0; i < doublings; i++)
         {
-            if (!TryDouble())
+            if (!(Chain.IsSymmetric ? TryDoubleMirrored() : TryDouble()))
                 return false;
         }
         return TryAppend(pieces);
+    }
+
+    private bool TrySetUpright(ModalWaves waves, SlabInterval interval, OperatorStore store, ref int number)
+    {
+        bool isElectric = waves.Field == RodField.Electric;
+        if (_crowded is not null)
+        {
+            if (_crowded.At(interval, isElectric) is not CrowdedOperators crowded)
+                return false;
+            _points[0].Set(waves, _crowded.Slope, _crowded.Planes.Kx, crowded);
+            return true;
+        }
+        if (store.At(number++, interval, (interval.TopNm + interval.BottomNm) / 2, isElectric) is not CutOperators operators)
+            return false;
+        _points[0].Set(waves, operators);
+        return true;
     }
 
     private bool TryJoinElements(ModalWaves waves, GratingWaves light, SlabInterval interval, OperatorStore store, int depth, ref int number)
@@ -142,6 +166,58 @@ internal sealed class ModalWorkspace
         return true;
     }
 
+    /// <summary>Doubles a piece of upright walls whose equations are symmetric.</summary>
+    /// <remarks>
+    /// The piece is its own mirror image about its middle, E even and H odd there: with S = 1 for E and -1 for H, (a, b; S b S, S a S) with
+    /// S b S the transpose of b. The plane between two of them has M = a + S a S, in which E and H do not mix; removing the unknowns of
+    /// E and of H leaves R = -b M^-1 b^T in two parts, and a becomes a + R_E + R_H, b becomes (R_E - R_H) S.
+    /// </remarks>
+    private bool TryDoubleMirrored()
+    {
+        int size = _sector.Size, split = _sector.Electric.Count;
+        _electric.Clear();
+        _magnetic.Clear();
+        if (!TryReduceMiddle(0, split, _electric) || !TryReduceMiddle(split, size, _magnetic))
+            return false;
+        for (int row = 0; row < size; row++)
+        {
+            for (int column = 0; column < size; column++)
+            {
+                Complex electric = _electric[row, column], magnetic = _magnetic[row, column];
+                Complex other = column < split ? electric - magnetic : magnetic - electric;
+                double mirror = row < split == column < split ? 1 : -1;
+                Complex same = _piece[row, column] += electric + magnetic;
+                _piece[size + row, size + column] = mirror * same;
+                _piece[row, size + column] = other;
+                _piece[size + row, column] = mirror * other;
+            }
+        }
+        return true;
+    }
+
+    // -b M^-1 b^T for the unknowns from first to end alone.
+    private bool TryReduceMiddle(int first, int end, ComplexMatrix result)
+    {
+        int size = _sector.Size, count = end - first;
+        if (count == 0)
+            return true;
+        for (int row = 0; row < count; row++)
+        {
+            for (int column = row; column < count; column++)
+                _double[row, column] = 2 * _piece[first + row, first + column];
+            for (int column = 0; column < size; column++)
+                _double[row, count + column] = _piece[column, size + first + row];
+        }
+        for (int row = 0; row < size; row++)
+            _double.Row(count + row).Slice(count, size).Clear();
+        if (!Elimination.TryReduceSymmetric(_double, count, count + size))
+            return false;
+        Elimination.MirrorUpper(_double, count, count + size);
+        for (int row = 0; row < size; row++)
+            _double.Row(count + row).Slice(count, size).CopyTo(result.Row(row));
+        return true;
+    }
+
     // Two equal pieces one below the other; the plane between them comes first and is removed.
     private bool TryDouble()
     {
@@ -161,11 +237,8 @@ internal sealed class ModalWorkspace
             bottom.Slice(size, size).Clear();
             lower[size..].CopyTo(bottom[(2 * size)..]);
         }
-        bool done = Chain.IsSymmetric ? Elimination.TryReduceSymmetric(_double, size, 3 * size) : Elimination.TryReduce(_double, size, 3 * size);
-        if (!done)
+        if (!Elimination.TryReduce(_double, size, 3 * size))
             return false;
-        if (Chain.IsSymmetric)
-            Elimination.MirrorUpper(_double, size, 3 * size);
         for (int row = 0; row < 2 * size; row++)
             _double.Row(size + row)[size..].CopyTo(_piece.Row(row));
         return true;

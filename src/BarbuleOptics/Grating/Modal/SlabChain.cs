@@ -14,16 +14,29 @@ internal sealed class SlabChain
     private readonly ModalSector _sector;
     private readonly int _size;
     private readonly int[] _ports;
+    private readonly CrowdedPlanes? _planes;
+    private readonly ComplexMatrix? _orders;
     private readonly ComplexMatrix _system;
     private readonly ComplexMatrix _last;
 
     /// <summary>Scratch for a sector whose incoming orders run from -M to M.</summary>
-    public SlabChain(in ModalSector sector, int mostOrder)
+    /// <param name="sector">The sector.</param>
+    /// <param name="mostOrder">Largest incoming order, M.</param>
+    /// <param name="planes">What plane waves are in crowded harmonics; null where harmonics are plane waves.</param>
+    public SlabChain(in ModalSector sector, int mostOrder, CrowdedPlanes? planes)
     {
         _sector = sector;
+        _planes = planes;
         _size = sector.Size;
         ModalSector copy = sector;
         _ports = [.. Enumerable.Range(0, _size).Where(unknown => Math.Abs(PlaneTerms.Unknown(copy, unknown).Harmonic) <= mostOrder)];
+        if (planes is not null)
+        {
+            _orders = new ComplexMatrix(_size, _size);
+            FieldBasis e = sector.Electric, h = sector.Magnetic;
+            FieldBasis.AddBetween(e, e, planes.Orders, 1, [], [], _orders, 0, 0);
+            FieldBasis.AddBetween(h, h, planes.Orders, 1, [], [], _orders, e.Count, e.Count);
+        }
         int all = _size + Math.Max(_size + _ports.Length, 2 * _ports.Length);
         _system = new ComplexMatrix(all, all);
         _last = new ComplexMatrix(_size + _ports.Length, _size + _ports.Length);
@@ -42,9 +55,8 @@ internal sealed class SlabChain
     public void Begin(ModalWaves waves, Complex matrix)
     {
         _last.Clear();
-        PlaneTerms.AddOutgoing(waves, _sector, matrix, true, _last);
-        for (int port = 0; port < _ports.Length; port++)
-            _last[_ports[port], _size + port] = _last[_size + port, _ports[port]] = Complex.One;
+        AddOutgoing(waves, matrix, true);
+        AddPorts(_last, _size);
     }
 
     /// <summary>Joins a piece by its Dirichlet-to-Neumann matrix.</summary>
@@ -82,12 +94,11 @@ internal sealed class SlabChain
     public bool TryEnd(ModalWaves waves, Complex matrix, ComplexMatrix between)
     {
         int ports = _ports.Length, all = _size + 2 * ports;
-        PlaneTerms.AddOutgoing(waves, _sector, matrix, false, _last);
+        AddOutgoing(waves, matrix, false);
         _system.Clear();
         for (int row = 0; row < _last.Rows; row++)
             _last.Row(row).CopyTo(_system.Row(row));
-        for (int port = 0; port < ports; port++)
-            _system[_ports[port], _size + ports + port] = _system[_size + ports + port, _ports[port]] = Complex.One;
+        AddPorts(_system, _size + ports);
         return TryReduce(_system, _size, all) && Extract(_size, 2 * ports, between);
     }
 
@@ -107,6 +118,33 @@ internal sealed class SlabChain
             from.Slice(_size, ports).CopyTo(to[count..]);
         }
         return TryReduce(_system, count, count + ports) && Extract(count, ports, between);
+    }
+
+    private void AddOutgoing(ModalWaves waves, Complex matrix, bool isTop)
+    {
+        if (_planes is null)
+            PlaneTerms.AddOutgoing(waves, _sector, matrix, isTop, _last);
+        else
+            _planes.AddOutgoing(waves, _sector, matrix, isTop, _last);
+    }
+
+    // What an incoming order does to the unknowns, and what of the order they make.
+    private void AddPorts(ComplexMatrix system, int first)
+    {
+        for (int port = 0; port < _ports.Length; port++)
+        {
+            if (_orders is null)
+            {
+                system[_ports[port], first + port] = system[first + port, _ports[port]] = Complex.One;
+                continue;
+            }
+            ReadOnlySpan<Complex> order = _orders.Row(_ports[port]);
+            for (int unknown = 0; unknown < _size; unknown++)
+            {
+                system[first + port, unknown] = order[unknown];
+                system[unknown, first + port] = Complex.Conjugate(order[unknown]);
+            }
+        }
     }
 
     private bool TryReduce(ComplexMatrix system, int count, int all)

@@ -21,6 +21,9 @@ internal static class ModalCase
     public static CellBody Rectangle(double width, double height, int material = 1)
         => new(new Outline(OutlineShape.Rectangle, width / 2, height / 2), null, material, material, 0, 0);
 
+    public static CellBody Walled(double width, double height, double wall)
+        => new(new Outline(OutlineShape.Rectangle, width / 2, height / 2), new Outline(OutlineShape.Rectangle, width / 2 - wall, height / 2 - wall), 1, 2, 0, 0);
+
     public static PlacedOutline At(this CellBody body, double xNm, double zNm) => new(body, xNm, zNm);
 
     public static GratingWaves Waves(

@@ -14,6 +14,12 @@ public class ModalIdentityTests
     private static readonly PlacedOutline[] Crooked =
         [ModalCase.Ellipse(90, 70).At(0, 55), ModalCase.Rectangle(30, 20, 2).At(72, 30), ModalCase.Ellipse(30, 120, 2).At(-65, 60)];
 
+    // All walls upright, where harmonics crowd at them: without any mirror, and with both.
+    private static readonly PlacedOutline[] Upright =
+        [ModalCase.Rectangle(90, 50).At(0, 30), ModalCase.Rectangle(30, 20, 2).At(72, 30), ModalCase.Rectangle(60, 25, 2).At(-35, 80)];
+
+    private static readonly PlacedOutline[] Walled = [ModalCase.Walled(120, 80, 15).At(20, 50)];
+
     public static TheoryData<string, double, double> Directions => new()
     {
         { "Electric", 0, 0 }, { "Electric", 0.4, 0 }, { "Magnetic", 0, 0 }, { "Magnetic", 0.4, 0 }, { "Both", 0, 0.5 }, { "Both", 0.4, 0.5 },
@@ -37,7 +43,7 @@ public class ModalIdentityTests
     [MemberData(nameof(Directions))]
     public void Lossless_slabs_keep_power(string field, double kx, double ky)
     {
-        foreach (PlacedOutline[] bodies in (PlacedOutline[][])[Hollow, Crooked])
+        foreach (PlacedOutline[] bodies in (PlacedOutline[][])[Hollow, Crooked, Upright, Walled])
         {
             GratingWaves waves = ModalCase.Waves(Enum.Parse<RodField>(field), kx, ky, ModalCase.Lossless, mostOrder: 2, wavelengthNm: 230);
             ScatteringBlock block = ModalCase.Solve(bodies, waves, 3);
@@ -61,14 +67,17 @@ public class ModalIdentityTests
     {
         GratingWaves there = ModalCase.Waves(Enum.Parse<RodField>(field), 0.4, 0, ModalCase.Absorbing);
         GratingWaves back = ModalCase.Waves(Enum.Parse<RodField>(field), -0.4, 0, ModalCase.Absorbing);
-        ScatteringBlock one = ModalCase.Solve(Crooked, there, 4), other = ModalCase.Solve(Crooked, back, 4);
-        for (int p = -2; p <= 2; p++)
+        foreach (PlacedOutline[] bodies in (PlacedOutline[][])[Crooked, Upright])
         {
-            for (int q = -2; q <= 2; q++)
+            ScatteringBlock one = ModalCase.Solve(bodies, there, 4), other = ModalCase.Solve(bodies, back, 4);
+            for (int p = -2; p <= 2; p++)
             {
-                Complex ratio = there.Kz[q + 2] / there.Kz[p + 2];
-                Assert.True((one.ReflectTop[p + 2, q + 2] - ratio * other.ReflectTop[-q + 2, -p + 2]).Magnitude < 1e-11);
-                Assert.True((one.TransmitDown[p + 2, q + 2] - ratio * other.TransmitUp[-q + 2, -p + 2]).Magnitude < 1e-11);
+                for (int q = -2; q <= 2; q++)
+                {
+                    Complex ratio = there.Kz[q + 2] / there.Kz[p + 2];
+                    Assert.True((one.ReflectTop[p + 2, q + 2] - ratio * other.ReflectTop[-q + 2, -p + 2]).Magnitude < 1e-11);
+                    Assert.True((one.TransmitDown[p + 2, q + 2] - ratio * other.TransmitUp[-q + 2, -p + 2]).Magnitude < 1e-11);
+                }
             }
         }
     }
