@@ -143,7 +143,7 @@ public sealed class PredictRunTests
     public async Task Help_of_predict_names_every_option_and_default()
     {
         string text = (await Barbule.Call("predict", "--help")).Good().Output;
-        string[] options = ["--wavelengths", "--angles", "--polarization", "--solver", "--accuracy", "--mixing", "--illuminant", "--observer", "--out", "--force", "--json", "--materials", "--set", "--threads", "--overlay", "--width", "[300:780:1]", "[1e-4]", "[D65]", "[1931-2deg]", "[auto]", "bruggeman with --solver multilayer"];
+        string[] options = ["--wavelengths", "--angles", "--polarization", "--solver", "--accuracy", "--mixing", "--illuminant", "--observer", "--out", "--force", "--json", "--materials", "--set", "--threads", "--overlay", "--width", "[300:780:1]", "[1e-4]", "[D65]", "[1931-2deg]", "[auto]", "bruggeman-2 with --solver multilayer"];
         Assert.All(options, option => Assert.Contains(option, text, StringComparison.Ordinal));
     }
 

@@ -128,7 +128,7 @@ public sealed class WarningTests
     [Fact]
     public void A_layer_model_says_how_well_the_rigorous_solution_beside_it_is_known()
     {
-        const string hollow = "[[layer]]\nform = 'flattened-rod'\nheight = 60\nwidth = 120\nlumen_height = 30\nlumen_width = 60\nspacing = 170\n";
+        const string hollow = "[[layer]]\nform = 'platelet'\nthickness = 60\nwidth = 120\nwall = 15\nspacing = 170\n";
         PredictionConditions named = Predictions.Rigorously(500, 500, 1) with { Mixing = MixingRules.Default, ComparesSolvers = true };
         Assert.DoesNotContain(WarningCodes.AccuracyNotReached, Predictions.Codes(Predictions.Of(hollow, named with { Accuracy = 1e-3 })));
         Assert.Contains(Predictions.Of(hollow, named with { Accuracy = 1e-9 }).Warnings, warning

@@ -36,7 +36,8 @@ internal sealed class PointSolver
         in PointLight light, ReadOnlySpan<Complex> media, in Resolution resolution, RodField field, double? periodNm, double orderPeriodNm,
         in OutcomeLayout layout, Span<double> first, Span<double> second)
     {
-        if (!_stack.TryPrepare(light, media, resolution, field, periodNm))
+        // A descent through an averaged back leaves no fields to come back to.
+        if (!_stack.TryPrepare(light, media, resolution with { SplitsLosses = _back is not null }, field, periodNm))
             return false;
         if (_back is not null && !_back.TryPrepare())
             return false;
@@ -52,6 +53,25 @@ internal sealed class PointSolver
             return false;
         return _back is null
             || (_back.TryAdd(layout, first, 0, orderPeriodNm) && (!both || _back.TryAdd(layout, second, 1, orderPeriodNm)));
+    }
+
+    /// <summary>Tells the losses of the point just solved apart by material, of which only the sum is known before.</summary>
+    /// <returns>False where there is no finite solution.</returns>
+    public bool TrySplitLosses(in OutcomeLayout layout, Span<double> first, Span<double> second, bool both)
+        => _back is not null || (TrySplitLosses(layout, first, isP: false) && (!both || TrySplitLosses(layout, second, isP: true)));
+
+    private bool TrySplitLosses(in OutcomeLayout layout, Span<double> outcome, bool isP)
+    {
+        _stack.SplitLosses();
+        ChannelTable table = _stack.Top;
+        Array.Clear(_lost);
+        if (!_stack.TryDescend(Enter(table, isP), _leaving.AsSpan(0, table.Channels), _lost))
+            return false;
+        outcome.Slice(OutcomeLayout.FirstMaterial, layout.Materials).Clear();
+        double lost = outcome[OutcomeLayout.Lost];
+        layout.AddLost(outcome, _lost, table.Eta(Plan.Surround)[table.Incident(isP)].Real);
+        outcome[OutcomeLayout.Lost] = lost;
+        return true;
     }
 
     private void Reserve(int channels)

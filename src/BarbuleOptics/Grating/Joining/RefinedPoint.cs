@@ -27,7 +27,7 @@ internal sealed class RefinedPoint(StackPlan plan)
     private const int ProbeEvery = 8;
 
     /// <summary>The same for slabs.</summary>
-    private const double SlabSafety = 2.3;
+    private const double SlabSafety = 2.0;
 
     /// <summary>No estimate is smaller: rounding.</summary>
     private const double Rounding = 1e-12;
@@ -69,7 +69,8 @@ internal sealed class RefinedPoint(StackPlan plan)
         if (_ladder.HasSlabs && _depths[(int)field].Depth < 0)
             _depths[(int)field] = FindDepth(light, media, field, periods, accuracy, layout);
         (int depth, double depthError) = _depths[(int)field];
-        bool stands = false;
+        bool stands = false, failed = false;
+        Resolution solved = default;
         double lastChange = double.NaN, error = double.NaN;
         int step = Math.Max(0, memory.Accepted - 1), accepted = -1;
         for (; step < _ladder.Count; step++)
@@ -80,8 +81,10 @@ internal sealed class RefinedPoint(StackPlan plan)
             {
                 (_current, _previous) = (_previous, _current);
                 lastChange = double.NaN;
+                failed = true;
                 continue;
             }
+            (solved, failed) = (resolution, false);
             if (!stands)
             {
                 stands = true;
@@ -112,6 +115,10 @@ internal sealed class RefinedPoint(StackPlan plan)
             lastChange = plain;
         }
         if (!stands)
+            return false;
+        if (failed && !_point.TrySolve(light, media, solved, field, periods.PeriodNm, periods.OrderPeriodNm, layout, _current[0], _current[1]))
+            return false;
+        if (_ladder.HasSlabs && !_point.TrySplitLosses(layout, _current[0], _current[1], field == RodField.Both))
             return false;
         memory.SinceProbe++;
         memory.Accepted = accepted >= 0 ? accepted : _ladder.Count - 1;

@@ -126,6 +126,9 @@ internal sealed class StackSolver
         return true;
     }
 
+    /// <summary>From now on losses are told apart by material.</summary>
+    public void SplitLosses() => _resolution = _resolution with { SplitsLosses = true };
+
     private int Segments => Math.Max(1, (_plan.Pieces.Length + _segment - 1) / _segment);
 
     private ChannelTable TableOf(int group) => _tables[_isJoined ? group : 0];

@@ -75,7 +75,7 @@ internal sealed class ModalSlab : IGratingElement
         if (absorbing == 0)
             return;
         double total = SpaceFor(waves, resolution).PowerIn(waves, down, up);
-        if (absorbing > 1 && TrySplit(waves, resolution, down, up))
+        if (absorbing > 1 && resolution.SplitsLosses && TrySplit(waves, resolution, down, up))
         {
             double sum = 0;
             foreach (double loss in _split)
