@@ -22,6 +22,21 @@ public class HardSectionTests
         gap = 20
         """;
 
+    // The plane of incidence turns nothing that normal incidence does not see: the square of such a wave vector is 0.
+    [Theory]
+    [InlineData(90, 1e-200)]
+    [InlineData(90, 1e-320)]
+    [InlineData(30, 1e-200)]
+    public void A_tiny_angle_is_normal_incidence(double axis, double degrees)
+    {
+        GratingCase section = GratingCase.Of("[cortex]\nthickness = 100\n[[layer]]\nform = 'rod'\ndiameter = 100\nspacing = 150\n").At(axis);
+        foreach (Polarizations polarization in (Polarizations[])[Polarizations.S, Polarizations.P])
+        {
+            GratingAnswer tiny = section.Solve(450, degrees, polarization), normal = section.Solve(450, 0, polarization);
+            Assert.True(tiny.Difference(normal) <= tiny.Error + normal.Error, $"{tiny} not {normal}");
+        }
+    }
+
     [Fact]
     public void Orders_may_open_exactly_at_a_wavelength()
     {

@@ -80,7 +80,7 @@ internal sealed class ChannelTable
                 _eta[medium * Channels + channel] = IsP(channel) ? depth / media[medium] : depth;
             }
         }
-        SetDirections();
+        SetDirections(light);
     }
 
     /// <summary>Turns a block of (Ey, Hy) amplitudes into one of (s, p) amplitudes.</summary>
@@ -125,15 +125,17 @@ internal sealed class ChannelTable
             (_cosines, _sines) = (new double[Orders], new double[Orders]);
     }
 
-    private void SetDirections()
+    private void SetDirections(in PointLight light)
     {
         if (Waves.Field != RodField.Both)
             return;
         for (int order = 0; order < Orders; order++)
         {
-            double lateral = Math.Sqrt(Waves.Kx[order] * Waves.Kx[order] + Waves.Ky * Waves.Ky);
-            _cosines[order] = Waves.Kx[order] / lateral;
-            _sines[order] = Waves.Ky / lateral;
+            // The zeroth's own direction stands at any angle, however small its wave vector.
+            (double x, double y) = order == Waves.MostOrder ? (light.Across, light.Along) : (Waves.Kx[order], Waves.Ky);
+            double lateral = double.Hypot(x, y);
+            _cosines[order] = x / lateral;
+            _sines[order] = y / lateral;
         }
     }
 

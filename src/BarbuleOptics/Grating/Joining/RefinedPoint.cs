@@ -11,10 +11,13 @@ internal sealed class RefinedPoint(StackPlan plan)
     /// <summary>Factor on the estimate that covers changes which happen to be small.</summary>
     private const double Safety = 1.3;
 
+    /// <summary>The same for slabs, whose errors fall slowly and unevenly.</summary>
+    private const double SlabSafety = 2.0;
+
     /// <summary>No larger fall of the change from one step to the next is believed.</summary>
     private const double LeastFall = 0.01;
 
-    /// <summary>The same for slabs, whose errors fall slowly and unevenly.</summary>
+    /// <summary>The same for slabs.</summary>
     private const double LeastSlabFall = 0.3;
 
     /// <summary>Part of the accuracy that the mesh in depth may take.</summary>
@@ -26,16 +29,16 @@ internal sealed class RefinedPoint(StackPlan plan)
     /// <summary>Wavelengths between those that are solved a step further than needed.</summary>
     private const int ProbeEvery = 8;
 
-    /// <summary>The same for slabs.</summary>
-    private const double SlabSafety = 2.0;
-
     /// <summary>No estimate is smaller: rounding.</summary>
     private const double Rounding = 1e-12;
 
+    /// <summary>No mesh in depth was chosen yet; any wavelength is shorter than the one it was chosen at.</summary>
+    private static readonly (int Depth, double Error, double WavelengthNm) NoDepth = (-1, 0, double.PositiveInfinity);
+
     private readonly PointSolver _point = new(plan);
     private readonly ResolutionLadder _ladder = new(plan);
-    private readonly RefinementMemory[] _memories = [.. Enumerable.Range(0, 3).Select(_ => new ResolutionLadder(plan).HasSlabs ? new RefinementMemory(12, 0.6, 0.4) : new RefinementMemory(12, 0.2, 0.012))];
-    private readonly (int Depth, double Error)[] _depths = [(-1, 0), (-1, 0), (-1, 0)];
+    private readonly RefinementMemory[] _memories = [MemoryFor(plan), MemoryFor(plan), MemoryFor(plan)];
+    private readonly (int Depth, double Error, double WavelengthNm)[] _depths = [NoDepth, NoDepth, NoDepth];
     private double[][] _current = [[], []];
     private double[][] _previous = [[], []];
 
@@ -47,7 +50,7 @@ internal sealed class RefinedPoint(StackPlan plan)
     {
         foreach (RefinementMemory memory in _memories)
             memory.Clear();
-        Array.Fill(_depths, (-1, 0));
+        Array.Fill(_depths, NoDepth);
     }
 
     /// <summary>Solves for light of one polarization, or of both where the rods couple them.</summary>
@@ -66,9 +69,10 @@ internal sealed class RefinedPoint(StackPlan plan)
     {
         Reserve(layout.Length);
         RefinementMemory memory = _memories[(int)field];
-        if (_ladder.HasSlabs && _depths[(int)field].Depth < 0)
+        // A mesh that was fine enough is so for longer waves; a shorter one needs it found anew.
+        if (_ladder.HasSlabs && light.WavelengthNm < _depths[(int)field].WavelengthNm)
             _depths[(int)field] = FindDepth(light, media, field, periods, accuracy, layout);
-        (int depth, double depthError) = _depths[(int)field];
+        (int depth, double depthError, _) = _depths[(int)field];
         bool stands = false, failed = false;
         Resolution solved = default;
         double lastChange = double.NaN, error = double.NaN;
@@ -128,7 +132,7 @@ internal sealed class RefinedPoint(StackPlan plan)
 
     /// <summary>The coarsest mesh in depth that takes a small part of the accuracy, judged at few harmonics, and its error.</summary>
     /// <remarks>A finer mesh divides the error by four at least, and hardly knows the harmonics.</remarks>
-    private (int Depth, double Error) FindDepth(
+    private (int Depth, double Error, double WavelengthNm) FindDepth(
         in PointLight light, ReadOnlySpan<Complex> media, RodField field, in PointPeriods periods, double accuracy, in OutcomeLayout layout)
     {
         double error = accuracy;
@@ -146,15 +150,18 @@ internal sealed class RefinedPoint(StackPlan plan)
             {
                 double change = Change(field == RodField.Both);
                 if (DepthSafety * change <= DepthShare * accuracy)
-                    return (depth - 1, DepthSafety * change);
+                    return (depth - 1, DepthSafety * change, light.WavelengthNm);
                 error = DepthSafety * change / 4;
                 if (error <= DepthShare * accuracy)
-                    return (depth, error);
+                    return (depth, error, light.WavelengthNm);
             }
             stands = true;
         }
-        return (ResolutionLadder.MostDepth, error);
+        return (ResolutionLadder.MostDepth, error, light.WavelengthNm);
     }
+
+    private static RefinementMemory MemoryFor(StackPlan plan)
+        => new ResolutionLadder(plan).HasSlabs ? new RefinementMemory(12, 0.6, 0.4) : new RefinementMemory(12, 0.2, 0.012);
 
     private void Deliver(double error, RodField field, Span<double> first, Span<double> second)
     {

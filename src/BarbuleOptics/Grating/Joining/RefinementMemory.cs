@@ -11,7 +11,6 @@ internal sealed class RefinementMemory(int steps, double cautious, double least)
     private const double LeastRatio = 1e-3;
     private const double MostRatio = 2;
 
-
     /// <summary>Part of a change that the next wavelength is held to.</summary>
     private const double Memory = 0.15;
 
