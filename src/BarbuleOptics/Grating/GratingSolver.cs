@@ -9,7 +9,9 @@ namespace BarbuleOptics.Grating;
 /// <remarks>
 /// Rows of round rods by multipoles, other bodies by Fourier modal slabs, joined with flat interfaces and films by a recursion in which nothing
 /// grows. Resolution rises until answers agree; the estimate returned says to what. R counts both outgoing polarizations. The powers
-/// R, diffracted R, T and A are found one by one from the fields, and that they add up to 1 is tested.
+/// R, diffracted R, T and A are found one by one, none as what is left of the others, and that they add up to 1 is tested. A of a row of rods
+/// is integrated over the rods; that of a modal slab is the net power through its two planes, which Galerkin's method makes equal to its loss, and the
+/// integral over the bodies only splits it among several materials.
 /// </remarks>
 public sealed class GratingSolver : ISpectralSolver<SectionPermittivities, GratingWorkspace>
 {

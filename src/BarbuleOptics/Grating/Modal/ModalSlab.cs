@@ -44,6 +44,9 @@ internal sealed class ModalSlab : IGratingElement
             _meets[placed.Body.Material] = _meets[placed.Body.CoreMaterial] = true;
     }
 
+    /// <summary>What the integral over the bodies gave for each material, before it was scaled to the net power; zeros where it was not needed.</summary>
+    internal ReadOnlySpan<double> Integrated => _split;
+
     /// <inheritdoc/>
     public double HeightNm => _shape.HeightNm;
 
