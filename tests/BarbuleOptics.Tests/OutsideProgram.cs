@@ -43,4 +43,23 @@ internal static class OutsideProgram
         Assert.True(process.ExitCode == 0, $"{program} ended with {process.ExitCode}: {errors.Result} {output.Result}");
         return output.Result;
     }
+
+    /// <summary>Runs the program until it has written so many characters to its standard output, returns them and ends it.</summary>
+    public static string Begin(string program, string workingDirectory, int length, params string[] arguments)
+    {
+        var start = new ProcessStartInfo(program, arguments) { WorkingDirectory = workingDirectory, RedirectStandardOutput = true };
+        using Process process = Process.Start(start)!;
+        try
+        {
+            var characters = new char[length];
+            Task<int> reading = process.StandardOutput.ReadBlockAsync(characters, 0, length);
+            Assert.True(reading.Wait(LimitMs, TestContext.Current.CancellationToken), $"{program} wrote less than {length} characters within {LimitMs} ms.");
+            return new string(characters, 0, reading.Result);
+        }
+        finally
+        {
+            process.Kill(entireProcessTree: true);
+            process.WaitForExit();
+        }
+    }
 }

@@ -91,18 +91,32 @@ public sealed partial class TerminalTests
         Assert.DoesNotMatch(Swatch(), silenced);
     }
 
-    // An accuracy that nobody needs takes seconds; a pipe sees nothing of it.
+    // Minutes of work, which end with the reader: once the terminal has shown the first line nobody listens any more.
     [Fact]
-    public async Task A_long_calculation_shows_how_far_it_is_on_a_terminal_only()
+    public void A_long_calculation_shows_how_far_it_is_on_a_terminal()
     {
         using var folder = new TemporaryFolder();
         SampleFiles.Write("hollow-rods", folder.Path);
-        string[] run = ["predict", "hollow-rods.toml", "--wavelengths", "300:700:0.5", "--angles", "60", "--accuracy", "1e-9", "--threads", "1"];
-        (await Barbule.Run(run, folder.Path)).Good();
+        string run = $"{Barbule.CommandLine} predict hollow-rods.toml --wavelengths 300:700:0.01 --angles 0,10,20,30,40,50,60,70 --accuracy 1e-9 --threads 1";
         string script = OutsideProgram.Find("script", "bsdutils");
-        string shown = OutsideProgram.Run(script, folder.Path, "-qec", $"{Barbule.CommandLine} {string.Join(' ', run)}", "/dev/null");
+        string shown = OutsideProgram.Begin(script, folder.Path, 60, "-qefc", run, "/dev/null");
         Assert.Matches(@"\rhollow-rods\.toml: \d+ %", shown);
-        Assert.Matches(@"\r +\r", shown);
+    }
+
+    // A clock on which a second passes at each glance makes any calculation long.
+    [Fact]
+    public async Task A_long_calculation_takes_its_line_away()
+    {
+        using var folder = new TemporaryFolder();
+        string file = SampleFiles.Write("hollow-rods", folder.Path);
+        StringWriter terminal = new(), output = new();
+        int exitCode = await BarbuleProgram.RunAsync(
+            ["predict", file, "--wavelengths", "500:700:5", "--json"], output, TextWriter.Null, progress: new ProgressLine(terminal, new HastyClock()),
+            cancellation: TestContext.Current.CancellationToken);
+        Assert.Equal(0, exitCode);
+        Assert.Matches(@"^\r[^\r]*hollow-rods\.toml: \d+ %[^\r]*\r", terminal.ToString());
+        Assert.Matches(@"\r +\r$", terminal.ToString());
+        Assert.DoesNotContain(" %", output.ToString(), StringComparison.Ordinal);
     }
 
     [Fact]
@@ -133,6 +147,15 @@ public sealed partial class TerminalTests
     }
 
     private static string Words(string line) => string.Join(' ', line.Split(' ', StringSplitOptions.RemoveEmptyEntries));
+
+    private sealed class HastyClock : TimeProvider
+    {
+        private long _seconds;
+
+        public override long TimestampFrequency => 1;
+
+        public override long GetTimestamp() => Interlocked.Increment(ref _seconds);
+    }
 
     [GeneratedRegex(@"\x1b\[48;2;(\d+);(\d+);(\d+)m +\x1b\[0m #([0-9a-f]{6})")]
     private static partial Regex Swatch();
