@@ -2,6 +2,7 @@ using System.Text.Encodings.Web;
 using System.Text.Json;
 using BarbuleOptics.Anatomy;
 using BarbuleOptics.Color;
+using BarbuleOptics.Grating;
 using BarbuleOptics.Layering;
 using BarbuleOptics.Materials;
 using BarbuleOptics.Multilayer;
@@ -111,6 +112,11 @@ public static class PredictionJson
             json.WriteNumber("rows", run.Rows.Count);
             json.WriteNumber("spacing_nm", run.SpacingNm);
             json.WriteNumber("pitch_nm", run.PitchNm);
+            foreach (SpacingMove move in prediction.MovedSpacings.Where(move => move.LayerNumber == run.LayerNumber))
+            {
+                json.WriteNumber("moved_spacing_nm", move.ToNm);
+                json.WriteNumber("moved_up_to_nm", prediction.MovedUpToNm!.Value);
+            }
             json.WriteEndObject();
         }
         json.WriteEndArray();

@@ -16,6 +16,9 @@ internal sealed class GratingResponses
     /// <summary>From this number of blocks on, a piece has all angles of its wavelengths, otherwise one.</summary>
     private const int LeastPieces = 12;
 
+    /// <summary>Largest error estimate that an answer may have anywhere.</summary>
+    public const double MostError = 0.05;
+
     private readonly Section _section;
     private readonly PredictionConditions _conditions;
     private readonly IMaterialCatalog _catalog;
@@ -35,6 +38,12 @@ internal sealed class GratingResponses
 
     /// <summary>Where the power goes.</summary>
     public PowerTable Powers { get; }
+
+    /// <summary>Whether the result is too uncertain to be an answer.</summary>
+    public bool IsUnreliable => ErrorEstimate > MostError;
+
+    /// <summary>The largest error estimate, where it is found.</summary>
+    public (Angle Incidence, double WavelengthNm, double Error) Worst => Errors.MaxBy(sample => sample.Error);
 
     /// <summary>The largest error estimate of all.</summary>
     public double ErrorEstimate => _beams.Max(beam => beam.Errors.Max());

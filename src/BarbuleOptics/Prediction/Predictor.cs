@@ -55,6 +55,14 @@ public static class Predictor
         return faults.FirstOrDefault(one => one.GetType() == typeof(ArithmeticException));
     }
 
+    private static string Unreliable(GratingResponses rigorous, PredictionConditions conditions)
+    {
+        (Angle incidence, double wavelengthNm, double error) = rigorous.Worst;
+        string closer = conditions.Accuracy > GratingResponses.MostError ? ", ask for a smaller --accuracy" : "";
+        return FormattableString.Invariant(
+            $"the rigorous solution may be off by {error:0.00} at {wavelengthNm:0.###} nm and {incidence.Degrees:0.##} degrees, more than the {GratingResponses.MostError} an answer may{closer}; try longer --wavelengths");
+    }
+
     private static IEnumerable<AnatomyProblem> PeriodProblems(Section section, SolverPlan plan, PredictionConditions conditions)
     {
         if (plan.IsRigorous && SolverPlan.PeriodBeyondNm(section, conditions) is double periodNm)
@@ -86,6 +94,8 @@ public static class Predictor
         if (thinBack)
             section = section with { Back = section.Back! with { Coherent = true } };
         GratingResponses? rigorous = plan.SolvesSection ? GratingResponses.Solve(section, conditions, catalog, progress, cancellation) : null;
+        if (plan.IsRigorous && rigorous!.IsUnreliable)
+            throw new ArithmeticException(Unreliable(rigorous, conditions));
         LayerModelResponses? films = plan.SolvesFilms ? LayerModelResponses.Solve(section, plan, conditions, catalog, plan.SolvesSection ? null : progress, cancellation) : null;
         double error = plan.IsRigorous ? rigorous!.ErrorEstimate : films!.ErrorEstimate;
 
@@ -96,15 +106,18 @@ public static class Predictor
         if (thinBack)
             warnings.AboutThinBack();
         warnings.AboutOrders(surround, Find(catalog, barbule.Matrix));
+        SpacingReport? spacings = rigorous is { } && (plan.IsRigorous || !rigorous.IsUnreliable) ? SpacingReport.Of(section, conditions, catalog, cancellation) : null;
         if (plan.IsRigorous)
         {
-            warnings.AboutSpacings(SpacingReport.Of(section, conditions, catalog, cancellation));
+            warnings.AboutSpacings(spacings);
             warnings.AboutAccuracy(rigorous!);
         }
         else
         {
             warnings.AboutSlices(error);
-            warnings.AboutReference(rigorous);
+            warnings.AboutReference(rigorous, spacings);
+            if (rigorous is { IsUnreliable: true })
+                rigorous = null;
         }
 
         var colorimeter = new Colorimeter(conditions.Wavelengths, conditions.Illuminant, conditions.Observer);
@@ -130,6 +143,8 @@ public static class Predictor
             Responses = [.. (plan.IsRigorous ? rigorous!.Powers : films!.Powers).All],
             Orders = plan.IsRigorous ? [.. rigorous!.Orders] : [],
             Losses = plan.IsRigorous ? [.. rigorous!.Losses] : [],
+            MovedSpacings = plan.IsRigorous && spacings is not null ? spacings.Moves : [],
+            MovedUpToNm = plan.IsRigorous ? spacings?.LongestNm : null,
             Views = [.. views],
             Track = TrackOf(views, surround),
             Warnings = warnings.All,

@@ -44,7 +44,7 @@ internal sealed record SpacingReport(ValueList<SpacingMove> Moves, double Period
         var moved = new List<double>();
         for (int w = 0; w < conditions.Wavelengths.Count; w++)
         {
-            if (conditions.Incidences.Any(incidence => SpacingJoin.Error(plan, LightOf(section, permittivities, w, incidence), permittivities.Inside(w)[Section.Matrix]) > most))
+            if (conditions.Incidences.Any(incidence => SpacingJoin.Error(plan, LightOf(section, permittivities, w, incidence), permittivities.Inside(w)) > most))
                 moved.Add(conditions.Wavelengths.Nanometres[w]);
         }
         return [.. moved];

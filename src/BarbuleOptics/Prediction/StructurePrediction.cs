@@ -1,4 +1,5 @@
 using BarbuleOptics.Anatomy;
+using BarbuleOptics.Grating;
 using BarbuleOptics.Layering;
 using BarbuleOptics.Materials;
 using BarbuleOptics.Quantities;
@@ -28,7 +29,17 @@ public sealed record StructurePrediction
     public bool IsRigorous => Solver == SolverNames.Grating;
 
     /// <summary>What the section was taken as, in a few words; it stands in every output.</summary>
-    public string Picture => IsRigorous ? "rows as they are, infinite, flat and perfectly periodic" : Mixing is null ? "films" : "films averaged from rows";
+    public string Picture => IsRigorous ? PictureOfRows : Mixing is null ? "films" : "films averaged from rows";
+
+    private string PictureOfRows => MovedUpToNm is double upToNm
+        ? FormattableString.Invariant($"rows at a common period up to {upToNm:0.#} nm and as they are above, infinite, flat and perfectly periodic")
+        : "rows as they are, infinite, flat and perfectly periodic";
+
+    /// <summary>Spacings that were moved to a common period at some wavelengths; empty where each was solved as it is.</summary>
+    public ValueList<SpacingMove> MovedSpacings { get; init; } = [];
+
+    /// <summary>The longest wavelength at which they were, in nm; null where none was.</summary>
+    public double? MovedUpToNm { get; init; }
 
     /// <summary>Name of the mixing rule; null where nothing was averaged into films.</summary>
     public required string? Mixing { get; init; }

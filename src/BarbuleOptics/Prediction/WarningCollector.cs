@@ -133,18 +133,26 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
     }
 
     /// <summary>Says what was done with layers of different spacing, and what it may cost.</summary>
-    public void AboutSpacings(SpacingReport? report)
+    public void AboutSpacings(SpacingReport? report, string where = "")
     {
         if (report is null)
             return;
         string moves = string.Join(", ", report.Moves.Select(move => FormattableString.Invariant($"layer {move.LayerNumber} from {move.FromNm:0.##} to {move.ToNm:0.##} nm")));
         Add(WarningCodes.SpacingMoved, FormattableString.Invariant(
-            $"layers of different spacing were solved with a common period of {report.PeriodNm:0.##} nm where more than one order passes between them, up to {report.LongestNm:0.#} nm: {moves}; the next choice of a period changes R by up to {report.Change:0.0e+0} there: rely on no finer detail"));
+            $"{where}layers of different spacing were solved with a common period of {report.PeriodNm:0.##} nm where more than one order passes between them, up to {report.LongestNm:0.#} nm: {moves}; the next choice of a period changes R by up to {report.Change:0.0e+0} there: rely on no finer detail"));
     }
 
     /// <summary>Says where the comparison of a layer model with the rigorous solution cannot be better than that is; null where there is none.</summary>
-    public void AboutReference(GratingResponses? rigorous)
+    public void AboutReference(GratingResponses? rigorous, SpacingReport? spacings)
     {
+        if (rigorous is { IsUnreliable: true })
+        {
+            (Angle incidence, double wavelengthNm, double error) = rigorous.Worst;
+            Add(WarningCodes.AccuracyNotReached, FormattableString.Invariant(
+                $"at {wavelengthNm:0.###} nm the rigorous solution beside this layer model may be off by {error:0.00}, above {GratingResponses.MostError}; the two were not compared"), incidence);
+            return;
+        }
+        AboutSpacings(spacings, "in the rigorous solution beside this layer model ");
         if (rigorous?.ErrorEstimate > conditions.Accuracy)
         {
             Add(WarningCodes.AccuracyNotReached, FormattableString.Invariant(

@@ -187,6 +187,23 @@ public sealed class PredictOutputTests
         Assert.All(views, AssertView);
     }
 
+    // 251.9 nm opens orders in the matrix at 380 nm and none at 800 nm.
+    [Fact]
+    public async Task Spacings_that_were_moved_stand_beside_those_measured()
+    {
+        using var folder = new TemporaryFolder();
+        const string layer = "[[layer]]\nform = 'rod'\ndiameter = 100\nspacing = ";
+        string file = folder["two.toml"];
+        await File.WriteAllTextAsync(file, $"format = 1\nbarbule.backing = 'keratin'\n{layer}240.3\ngap = 10\n{layer}251.9\n", TestContext.Current.CancellationToken);
+        JsonElement near = (await Barbule.Call("predict", file, "--wavelengths", "380:390:10", "--json", "--accuracy", "1e-2")).Json();
+        JsonElement[] rows = [.. near.GetProperty("structure").GetProperty("solved_rows").EnumerateArray()];
+        Assert.Equal([240.3, 251.9], rows.Select(row => Number(row, "spacing_nm")));
+        Assert.All(rows, row => Assert.Equal(Math.Sqrt(240.3 * 251.9), Number(row, "moved_spacing_nm"), 1e-9));
+        Assert.All(rows, row => Assert.Equal(390, Number(row, "moved_up_to_nm")));
+        JsonElement far = (await Barbule.Call("predict", file, "--wavelengths", "800:810:10", "--json", "--accuracy", "1e-2")).Json();
+        Assert.All(far.GetProperty("structure").GetProperty("solved_rows").EnumerateArray(), row => AssertKeys(row, "layer", "rows", "spacing_nm", "pitch_nm"));
+    }
+
     [Fact]
     public async Task What_does_not_exist_is_null()
     {

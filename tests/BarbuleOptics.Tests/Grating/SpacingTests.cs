@@ -1,5 +1,9 @@
+using BarbuleOptics.Files;
 using BarbuleOptics.Grating;
+using BarbuleOptics.Grating.Joining;
+using BarbuleOptics.Layering;
 using BarbuleOptics.Multilayer;
+using BarbuleOptics.Quantities;
 using Xunit;
 
 namespace BarbuleOptics.Tests.Grating;
@@ -28,16 +32,21 @@ public class SpacingTests
 
     // Where the zeroth order alone passes between the layers, the whole common period says the same within the estimates.
     [Theory]
-    [InlineData(0.0)]
-    [InlineData(30.0)]
-    public void Joining_by_the_zeroth_order_is_as_good_as_it_says(double degrees)
+    [InlineData(0.0, 120)]
+    [InlineData(30.0, 120)]
+    [InlineData(0.0, 20)]
+    public void Joining_by_the_zeroth_order_is_as_good_as_it_says(double degrees, double gapNm)
     {
-        GratingCase section = GratingCase.Of(Two(150, 225, 120));
+        GratingCase section = GratingCase.Of(Two(150, 225, gapNm));
         foreach (double wavelengthNm in (double[])[560, 640, 740])
         {
             foreach (Polarizations polarization in (Polarizations[])[Polarizations.S, Polarizations.P])
             {
-                GratingAnswer joined = section.Solve(wavelengthNm, degrees, polarization, 3e-3), common = section.Solve(wavelengthNm, degrees, polarization, 1e-9);
+                GratingAnswer joined = section.Solve(wavelengthNm, degrees, polarization, 5e-3), common = section.Solve(wavelengthNm, degrees, polarization, 1e-9);
+                double join = JoinError(section.Section, wavelengthNm, degrees);
+                // The first run joins, the second does not, and each says so.
+                Assert.InRange(join, SpacingJoin.ShareOfAccuracy * 1e-9, SpacingJoin.ShareOfAccuracy * 5e-3);
+                Assert.True(joined.Error >= join && common.Error < join);
                 Assert.True(joined.Difference(common) <= joined.Error, FormattableString.Invariant($"{joined} not {common}"));
                 Assert.True(joined.Gap < 1e-10 && common.Gap < 1e-10);
             }
@@ -59,8 +68,17 @@ public class SpacingTests
             GratingAnswer answer = section.Solve(wavelengthNm, 20, Polarizations.P, 1e-4);
             Assert.True(answer.Gap < 1e-10);
         }
-        // Far above the orders of the matrix the zeroth order joins the layers, whatever common period is tried.
-        Assert.True(section.Solve(700, 0, Polarizations.S, 1e-4).Error < 1e-2);
+        // Far above the orders of the matrix the zeroth order joins the layers, and the estimate has what that costs.
+        double join = JoinError(section.Section, 700, 0);
+        Assert.InRange(section.Solve(700, 0, Polarizations.S, 1e-4).Error, join, join + 1e-4);
+    }
+
+    private static double JoinError(Section section, double wavelengthNm, double degrees)
+    {
+        var structure = new SectionPermittivities(section, EmbeddedMaterials.Catalog, [wavelengthNm]);
+        (double across, double along) = DiffractionOrders.Incident(section, Angle.FromDegrees(degrees));
+        var light = new PointLight(wavelengthNm, structure.SurroundIndex[0], across, along, Math.Cos(double.DegreesToRadians(degrees)));
+        return SpacingJoin.Error(StackPlan.Of(section), light, structure.Inside(0));
     }
 
     [Fact]

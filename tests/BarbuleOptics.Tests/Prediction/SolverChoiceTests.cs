@@ -72,6 +72,22 @@ public sealed class SolverChoiceTests
         Assert.All(across.Responses.Zip(turned.Responses), pair => Assert.Equal(pair.First.Reflectance.Values.ToArray(), pair.Second.Reflectance.Values.ToArray()));
     }
 
+    // Hollow rods that touch across rows, of a metal no feather has: the modal slab does not converge, and R of 1 would be no answer.
+    [Fact]
+    public void What_may_be_far_off_is_refused_or_left_out_of_the_comparison()
+    {
+        const string text = Clear + "[cortex]\nthickness = 100\n[[layer]]\nform = 'rod'\ndiameter = 100\nlumen = 60\nspacing = 100\nrows = 3\npitch = 86.61\nstacking = 'staggered'\nmaterial = { n = 0.05, k = 4 }\n";
+        LoadedStructure metal = Structures.Load(text);
+        PredictionConditions conditions = Predictions.Rigorously(400, 405, 5);
+        Assert.False(Predictor.TryPredict(metal.Barbule, conditions, metal.Catalog, out _, out var problems, cancellation: TestContext.Current.CancellationToken));
+        Assert.Equal("layer1.spacing", Assert.Single(problems).Key);
+        Assert.Matches(@"^the rigorous solution may be off by [01]\.\d+ at 40[05] nm and 0 degrees, more than the 0\.05 an answer may; try longer --wavelengths; ask for the layer model with --solver multilayer$", problems[0].Message);
+
+        StructurePrediction films = Predictions.Of(text, conditions with { Mixing = new MeanIndex(), ComparesSolvers = true });
+        Assert.Null(films.Views[0].LayerModelError);
+        Assert.Contains(films.Warnings, warning => warning.Code == WarningCodes.AccuracyNotReached && warning.Message.EndsWith("the two were not compared", StringComparison.Ordinal));
+    }
+
     // With every order's share and every material's, nothing is counted twice or left out.
     [Theory]
     [InlineData("across")]

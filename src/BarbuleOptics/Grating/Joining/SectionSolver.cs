@@ -69,7 +69,7 @@ internal sealed class SectionSolver
         double joinError = 0;
         if (point.Plan.Joints.Length > 0)
         {
-            joinError = SpacingJoin.Error(point.Plan, light, _media[Section.Matrix]);
+            joinError = SpacingJoin.Error(point.Plan, light, _media.AsSpan(0, _section.Materials.Count));
             double most = periodNm is null ? Math.Max(SpacingJoin.MostError, accuracy) : SpacingJoin.ShareOfAccuracy * accuracy;
             if (joinError <= most)
                 periodNm = null;
