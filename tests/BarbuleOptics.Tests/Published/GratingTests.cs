@@ -122,10 +122,11 @@ public class GratingTests
             gap = 0
             """), WavelengthNm);
 
-    // The error the product itself allows for, but no more than was measured (2.4e-5 in s, 6e-5 in p), and half of the last digit tabulated.
+    // The error the product itself allows for, three times at most as it promises, but hardly more than was ever measured (6e-5), and half of
+    // the last digit tabulated.
     private static void AssertWithin(SolvedSection found, double expected, double value)
     {
         Assert.InRange(found.Estimate, 0, 5e-4);
-        Assert.Equal(expected, value, Math.Min(found.Estimate, 7e-5) + 6e-6);
+        Assert.Equal(expected, value, Math.Min(3 * found.Estimate, 7e-5) + 6e-6);
     }
 }
