@@ -1,5 +1,4 @@
 using System.Globalization;
-using System.Text;
 using BarbuleOptics.Multilayer;
 using BarbuleOptics.Prediction;
 
@@ -18,10 +17,7 @@ public static class AbsorptionCsv
     public static void Write(StructurePrediction prediction, Stream stream)
     {
         ArgumentNullException.ThrowIfNull(prediction);
-        ArgumentNullException.ThrowIfNull(stream);
-        using var text = new StreamWriter(stream, new UTF8Encoding(encoderShouldEmitUTF8Identifier: false), bufferSize: 1 << 16, leaveOpen: true);
-        text.Write(Header);
-        text.Write('\n');
+        using StreamWriter text = LongTable.Begin(stream, Header);
         foreach (MaterialLoss loss in prediction.Losses)
         {
             string beam = string.Create(CultureInfo.InvariantCulture, $",{loss.Incidence.Degrees},{PolarizationNames.Of(loss.Polarization)},{Quoted(loss.Material)},");

@@ -1,5 +1,4 @@
 using System.Globalization;
-using System.Text;
 using BarbuleOptics.Multilayer;
 using BarbuleOptics.Prediction;
 
@@ -18,10 +17,7 @@ public static class OrdersCsv
     public static void Write(StructurePrediction prediction, Stream stream)
     {
         ArgumentNullException.ThrowIfNull(prediction);
-        ArgumentNullException.ThrowIfNull(stream);
-        using var text = new StreamWriter(stream, new UTF8Encoding(encoderShouldEmitUTF8Identifier: false), bufferSize: 1 << 16, leaveOpen: true);
-        text.Write(Header);
-        text.Write('\n');
+        using StreamWriter text = LongTable.Begin(stream, Header);
         foreach (DiffractionOrder order in prediction.Orders)
             Write(order, text);
     }

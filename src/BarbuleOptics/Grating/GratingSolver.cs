@@ -51,7 +51,7 @@ public sealed class GratingSolver : ISpectralSolver<SectionPermittivities, Grati
     private void SolveBlock(SectionPermittivities structure, in SolverRequest request, GratingWorkspace workspace, in OutcomeLayout layout)
     {
         Polarizations wanted = request.Polarization & ~workspace.Known;
-        (double across, double along) = DiffractionOrders.Incident(structure.Section, request.Incidence);
+        (double across, double along) = IncidentDirection.Of(structure.Section, request.Incidence);
         workspace.Solver.StartBlock();
         for (int at = 0; at < request.Count; at++)
         {

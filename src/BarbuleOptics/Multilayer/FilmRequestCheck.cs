@@ -16,34 +16,16 @@ internal static class FilmRequestCheck
     {
         ArgumentNullException.ThrowIfNull(stack);
         ArgumentNullException.ThrowIfNull(workspace);
-        CheckRequest(stack, request);
+        SolverRequestCheck.Check(request, stack.WavelengthsNm.Length, "stack");
         if (!workspace.Holds(stack))
             throw new ArgumentException("The workspace was made for a smaller stack.", nameof(workspace));
         CheckResponse(stack, request, response);
         CheckMedia(stack, request);
     }
 
-    private static void CheckRequest(FilmStack stack, in SolverRequest request)
-    {
-        int wavelengths = stack.WavelengthsNm.Length;
-        if (request.First < 0 || request.Count < 0 || request.First > wavelengths - request.Count)
-            throw new ArgumentOutOfRangeException(nameof(request), FormattableString.Invariant(
-                $"Wavelengths {request.First} to {(long)request.First + request.Count - 1} are not all among the {wavelengths} of the stack."));
-        if (!(request.Incidence.Degrees is >= 0 and < 90))
-            throw new ArgumentOutOfRangeException(
-                nameof(request), request.Incidence.Degrees, "The angle of incidence must be 0 to below 90 degrees.");
-        if (request.Polarization is not (Polarizations.S or Polarizations.P or Polarizations.Unpolarized))
-            throw new ArgumentException(
-                FormattableString.Invariant($"The polarization must be S, P or both, not {request.Polarization}."), nameof(request));
-    }
-
     private static void CheckResponse(FilmStack stack, in SolverRequest request, in SolverResponse response)
     {
-        Guard.SameLength(request.Count, response.Reflectance.Length, nameof(response));
-        if ((request.Outputs & SolverOutputs.Transmittance) != 0)
-            Guard.SameLength(request.Count, response.Transmittance.Length, nameof(response));
-        if ((request.Outputs & SolverOutputs.Absorptance) != 0)
-            Guard.SameLength(request.Count, response.Absorptance.Length, nameof(response));
+        SolverRequestCheck.CheckPowers(request, response);
         if (!response.FilmAbsorptance.IsEmpty)
             Guard.SameLength(checked(stack.FilmCount * request.Count), response.FilmAbsorptance.Length, nameof(response));
     }

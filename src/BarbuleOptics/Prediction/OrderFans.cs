@@ -22,7 +22,7 @@ internal sealed class OrderFans
         (_reflected, _transmitted) = (new OrderFan[conditions.Incidences.Count], new OrderFan[conditions.Incidences.Count]);
         for (int angle = 0; angle < conditions.Incidences.Count; angle++)
         {
-            (double across, double along) = DiffractionOrders.Incident(section, conditions.Incidences[angle]);
+            (double across, double along) = IncidentDirection.Of(section, conditions.Incidences[angle]);
             (double, double)[] transverse = [.. surroundIndices.Select(index => (index * across, index * along))];
             _reflected[angle] = new OrderFan(OrderSide.Reflected, periodNm, conditions.Wavelengths, transverse, surround);
             _transmitted[angle] = new OrderFan(OrderSide.Transmitted, periodNm, conditions.Wavelengths, transverse, last);

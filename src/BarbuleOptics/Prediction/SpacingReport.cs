@@ -52,7 +52,7 @@ internal sealed record SpacingReport(ValueList<SpacingMove> Moves, double Period
 
     private static PointLight LightOf(Section section, SectionPermittivities permittivities, int wavelength, Angle incidence)
     {
-        (double across, double along) = DiffractionOrders.Incident(section, incidence);
+        (double across, double along) = IncidentDirection.Of(section, incidence);
         return new PointLight(
             permittivities.WavelengthsNm[wavelength], permittivities.SurroundIndex[wavelength], across, along, Math.Cos(incidence.Radians));
     }

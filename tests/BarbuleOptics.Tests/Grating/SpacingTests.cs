@@ -76,7 +76,7 @@ public class SpacingTests
     private static double JoinError(Section section, double wavelengthNm, double degrees)
     {
         var structure = new SectionPermittivities(section, EmbeddedMaterials.Catalog, [wavelengthNm]);
-        (double across, double along) = DiffractionOrders.Incident(section, Angle.FromDegrees(degrees));
+        (double across, double along) = IncidentDirection.Of(section, Angle.FromDegrees(degrees));
         var light = new PointLight(wavelengthNm, structure.SurroundIndex[0], across, along, Math.Cos(double.DegreesToRadians(degrees)));
         return SpacingJoin.Error(StackPlan.Of(section), light, structure.Inside(0));
     }

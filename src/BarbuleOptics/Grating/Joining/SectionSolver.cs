@@ -101,7 +101,7 @@ internal sealed class SectionSolver
 
     private PointLight LightOf(SectionPermittivities structure, int wavelength, Angle incidence)
     {
-        (double across, double along) = DiffractionOrders.Incident(_section, incidence);
+        (double across, double along) = IncidentDirection.Of(_section, incidence);
         // The sine of the complement, which keeps its digits at grazing incidence.
         double cosine = Math.Sin(double.DegreesToRadians(90 - incidence.Degrees));
         return new PointLight(structure.WavelengthsNm[wavelength], structure.SurroundIndex[wavelength], across, along, cosine);
