@@ -9,7 +9,7 @@ public sealed partial class ImportOrderTests
     /// <summary>The folders of the library, from the first that light data meets to the last.</summary>
     private static readonly string[] Folders =
     [
-        "Quantities", "Materials", "Anatomy", "Layering", "Multilayer", "Grating", "Spectra", "Color", "Vision", "Prediction",
+        "Lanes", "Quantities", "Materials", "Anatomy", "Layering", "Multilayer", "Grating", "Spectra", "Color", "Vision", "Prediction",
         "Ensembles", "Comparison", "Inversion", "Morphometry",
     ];
 
