@@ -34,19 +34,15 @@ public sealed class LanesTests
     }
 
     [Theory]
-    [InlineData(-4.0, 0.0, 0.0, 2.0)]
-    [InlineData(-4.0, -0.0, 0.0, 2.0)]
-    [InlineData(4.0, -0.0, 2.0, 0.0)]
-    [InlineData(0.0, 0.0, 0.0, 0.0)]
-    [InlineData(0.0, -2.0, -1.0, 1.0)]
-    public void Root_on_the_axes_is_the_passive_one(double real, double imaginary, double rootReal, double rootImaginary)
+    [MemberData(nameof(Widths))]
+    public void Root_on_the_axes_is_the_passive_one(int bits)
     {
-        foreach (LaneWidth width in LaneWidth.All)
-        {
-            Complex root = width.Invoke<ComplexTrial, Complex[][]>(new ComplexTrial([.. Enumerable.Repeat(new Complex(real, imaginary), 8)]))[3][0];
-            Assert.Equal(rootReal, root.Real, 1e-15);
-            Assert.Equal(rootImaginary, root.Imaginary, 1e-15);
-        }
+        (Complex Value, Complex Root)[] roots =
+        [
+            (new(-4, 0), new(0, 2)), (new(-4, -0.0), new(0, 2)), (new(4, -0.0), new(2, 0)), (new(0, 0), new(0, 0)), (new(0, -2), new(-1, 1)),
+        ];
+        foreach ((Complex value, Complex root) in roots)
+            AssertNear(root, LaneWidth.Parse($"{bits}")!.Value.Invoke<ComplexTrial, Complex[][]>(new ComplexTrial([.. Enumerable.Repeat(value, 8)]))[3][0]);
     }
 
     [Theory]
