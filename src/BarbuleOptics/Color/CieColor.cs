@@ -16,7 +16,10 @@ public sealed record CieColor
         Illuminant = illuminant;
         Tristimulus = color;
         Chromaticity = color.ChromaticityOr(white);
+        UniformChromaticity = UniformChromaticity.Of(color, white);
+        White = white;
         Lab = CieLab.FromTristimulus(color, white);
+        Luv = CieLuv.FromTristimulus(color, white);
         (double? wavelengthNm, ExcitationPurity) = SpectralLocus.Of(observer).Locate(Chromaticity, white.ChromaticityOr(white));
         DominantWavelengthNm = HueTerms.IsAchromatic(Lab) ? null : wavelengthNm;
         HueTerm = HueTerms.Of(Lab);
@@ -36,6 +39,15 @@ public sealed record CieColor
 
     /// <summary>x, y; those of the white for black, which has none.</summary>
     public Chromaticity Chromaticity { get; }
+
+    /// <summary>u', v'; those of the white for black.</summary>
+    public UniformChromaticity UniformChromaticity { get; }
+
+    /// <summary>Tristimulus values of the perfect mirror that it is relative to.</summary>
+    public Tristimulus White { get; }
+
+    /// <summary>L*u*v* relative to the same white; holds the saturation.</summary>
+    public CieLuv Luv { get; }
 
     /// <summary>L*a*b* relative to the perfect mirror under the same illuminant for the same observer; holds C* and h, too.</summary>
     public CieLab Lab { get; }

@@ -3,7 +3,7 @@ using BarbuleOptics.Quantities;
 
 namespace BarbuleOptics.Color;
 
-/// <summary>A CIE illuminant: the relative spectral power of the light that falls on the sample, 100 at 560 nm.</summary>
+/// <summary>A CIE illuminant or a light of one's own: the relative spectral power of the light that falls on the sample, 100 at 560 nm.</summary>
 /// <remarks>
 /// A: the formula of CIE 015. D50, D55, D65, D75: the daylight formula of CIE 015 from the correlated color temperature with
 /// M1 and M2 rounded to three decimals and straight lines between the 10 nm rows of S0, S1, S2, which yields the printed 5 nm table
@@ -16,11 +16,20 @@ public sealed class Illuminant
     private const double RadiationConstantRatio = 1.4388 / 1.4380;
 
     private readonly Func<double, double> _relativePower;
+    private readonly double _leastNm = LeastNm;
+    private readonly double _mostNm = MostNm;
 
     private Illuminant(string name, Func<double, double> relativePower)
     {
         Name = name;
         _relativePower = relativePower;
+    }
+
+    private Illuminant(string name, double[] wavelengthsNm, double[] powers)
+        : this(name, wavelengthNm => Between(wavelengthsNm, powers, wavelengthNm))
+    {
+        (_leastNm, _mostNm) = (wavelengthsNm[0], wavelengthsNm[^1]);
+        IsOwn = true;
     }
 
     /// <summary>Incandescent light, 2856 K.</summary>
@@ -50,8 +59,37 @@ public sealed class Illuminant
     /// <summary>Longest wavelength at which an illuminant is known, in nanometres.</summary>
     public const double MostNm = DaylightComponents.LastNm;
 
-    /// <summary>The name of the CIE, for instance "D65".</summary>
+    /// <summary>Longest wavelength, in nanometres, that a light of one's own must reach to, from <see cref="LeastNm"/> on.</summary>
+    public const double LeastStopNm = 780;
+
+    /// <summary>The name of the CIE, for instance "D65", or that of a light of one's own.</summary>
     public string Name { get; }
+
+    /// <summary>Whether it was measured by a user and is none of the CIE's.</summary>
+    public bool IsOwn { get; }
+
+    /// <summary>A light of one's own, measured at wavelengths that reach from 300 to 780 nm; straight lines between, scaled to 100 at 560 nm.</summary>
+    /// <param name="name">Its name.</param>
+    /// <param name="wavelengthsNm">Ascending.</param>
+    /// <param name="powers">Power per wavelength, not photons, in any unit; none below 0, above 0 at 560 nm.</param>
+    /// <exception cref="ArgumentException">Numbers differ in count, do not ascend, do not cover 300 to 780 nm or are not as stated.</exception>
+    public static Illuminant FromSamples(string name, ReadOnlySpan<double> wavelengthsNm, ReadOnlySpan<double> powers)
+    {
+        ArgumentException.ThrowIfNullOrWhiteSpace(name);
+        Guard.SameLength(wavelengthsNm.Length, powers.Length, nameof(powers));
+        if (wavelengthsNm.Length < 2 || !(wavelengthsNm[0] <= LeastNm && wavelengthsNm[^1] >= LeastStopNm))
+            throw new ArgumentException(FormattableString.Invariant($"Must reach from {LeastNm} to {LeastStopNm} nm."), nameof(wavelengthsNm));
+        for (int i = 1; i < wavelengthsNm.Length; i++)
+        {
+            if (!(wavelengthsNm[i] > wavelengthsNm[i - 1]))
+                throw new ArgumentException("Must ascend.", nameof(wavelengthsNm));
+        }
+        foreach (double power in powers)
+            Guard.NotNegative(power, nameof(powers));
+        double[] wavelengths = wavelengthsNm.ToArray(), relative = powers.ToArray();
+        double scale = 100 / Guard.Positive(Between(wavelengths, relative, 560), nameof(powers));
+        return new Illuminant(name, wavelengths, [.. relative.Select(power => scale * power)]);
+    }
 
     /// <summary>The illuminant called <paramref name="name"/>, in any case; false when there is none.</summary>
     public static bool TryFind(string? name, [NotNullWhen(true)] out Illuminant? illuminant)
@@ -61,10 +99,10 @@ public sealed class Illuminant
     }
 
     /// <summary>The power per wavelength, relative to 100 at 560 nm.</summary>
-    /// <param name="wavelength">300 to 830 nm, the span of the daylight table.</param>
-    /// <exception cref="ArgumentOutOfRangeException"><paramref name="wavelength"/> lies outside 300 to 830 nm.</exception>
+    /// <param name="wavelength">300 to 830 nm, the span of the daylight table; for a light of one's own the span it was measured over.</param>
+    /// <exception cref="ArgumentOutOfRangeException"><paramref name="wavelength"/> lies outside that span.</exception>
     public double RelativePower(Length wavelength)
-        => _relativePower(Guard.Within(wavelength.Nanometres, LeastNm, MostNm, nameof(wavelength)));
+        => _relativePower(Guard.Within(wavelength.Nanometres, _leastNm, _mostNm, nameof(wavelength)));
 
     /// <summary>The name.</summary>
     public override string ToString() => Name;
@@ -99,6 +137,15 @@ public sealed class Illuminant
         int row = Math.Min((int)position, (DaylightComponents.LastNm - DaylightComponents.FirstNm) / DaylightComponents.StepNm - 1);
         double right = position - row;
         return (1 - right) * AtRow(row, m1, m2) + right * AtRow(row + 1, m1, m2);
+    }
+
+    private static double Between(double[] wavelengthsNm, double[] values, double wavelengthNm)
+    {
+        int found = Array.BinarySearch(wavelengthsNm, wavelengthNm);
+        if (found >= 0)
+            return values[found];
+        int upper = ~found;
+        return double.Lerp(values[upper - 1], values[upper], (wavelengthNm - wavelengthsNm[upper - 1]) / (wavelengthsNm[upper] - wavelengthsNm[upper - 1]));
     }
 
     private static double AtRow(int row, double m1, double m2)
