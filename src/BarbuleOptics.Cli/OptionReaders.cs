@@ -1,3 +1,4 @@
+using System.CommandLine.Parsing;
 using System.Globalization;
 using BarbuleOptics.Color;
 using BarbuleOptics.Figures;
@@ -6,6 +7,7 @@ using BarbuleOptics.Layering.Mixing;
 using BarbuleOptics.Multilayer;
 using BarbuleOptics.Prediction;
 using BarbuleOptics.Quantities;
+using BarbuleOptics.Vision;
 
 namespace BarbuleOptics.Cli;
 
@@ -68,12 +70,24 @@ internal static class OptionReaders
         return found;
     }
 
-    public static bool IlluminantName(string text, out Illuminant illuminant, out string allowed)
+    public static bool Light(string text, out string light, out string allowed)
     {
-        bool found = Illuminant.TryFind(text, out Illuminant? value);
-        illuminant = value!;
-        allowed = OneOf(Illuminant.All.Select(candidate => candidate.Name), text);
-        return found;
+        light = text;
+        allowed = $"the path of a file or {OneOf(Illuminant.All.Select(candidate => candidate.Name), text)}";
+        return Illuminant.TryFind(text, out _) || EyeFile.IsPath(text);
+    }
+
+    public static void RefuseUnknownEyes(OptionResult result)
+    {
+        foreach (string text in result.Tokens.Select(token => token.Value).Where(text => !VisualSystems.TryFind(text, out _) && !EyeFile.IsPath(text)))
+            result.AddError($"--vision: found '{text}'; allowed the path of a file or {OneOf(VisualSystems.All.Select(eye => eye.Name), text)}");
+    }
+
+    public static bool Summation(string text, out SummationStep step, out string allowed)
+    {
+        allowed = "1 or 5";
+        step = text == "5" ? SummationStep.FiveNanometres : SummationStep.OneNanometre;
+        return text is "1" or "5";
     }
 
     public static bool Observer(string text, out StandardObserver observer, out string allowed)

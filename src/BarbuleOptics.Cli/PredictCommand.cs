@@ -6,6 +6,7 @@ using BarbuleOptics.Layering.Mixing;
 using BarbuleOptics.Multilayer;
 using BarbuleOptics.Prediction;
 using BarbuleOptics.Quantities;
+using BarbuleOptics.Vision;
 
 namespace BarbuleOptics.Cli;
 
@@ -21,8 +22,11 @@ internal sealed class PredictCommand
     private readonly CheckedOption<SolverChoice> _solver = new("--solver", "auto|multilayer|grating", "How the section is solved: multilayer averages rows into films, grating solves rows as they are, auto takes films by the one and rows by the other [auto]; multilayer without --mixing leaves out the comparison of the two", Standard.Solver, OptionReaders.Solver, SolverNames.All);
     private readonly CheckedOption<double> _accuracy = new("--accuracy", "number", "Largest absolute error allowed in reflectance, transmittance, absorptance and diffracted reflectance [1e-4]; the reflectance of films keeps 2e-5 in any case", Standard.Accuracy, OptionReaders.Accuracy);
     private readonly CheckedOption<IMixingRule?> _mixing = new("--mixing", "rule", $"Ask for the layer model, with rows averaged into films by a rule: {string.Join(", ", MixingRules.All.Select(rule => rule.Name))} [none; {MixingRules.Default.Name} with --solver multilayer and where layer model and grating solver are compared]", Standard.Mixing, OptionReaders.Mixing, MixingRules.All.Select(rule => rule.Name));
-    private readonly CheckedOption<Illuminant> _illuminant = new("--illuminant", "name", $"Light that color is computed for: {string.Join(", ", Illuminant.All.Select(light => light.Name))} [D65]", Standard.Illuminant, OptionReaders.IlluminantName, Illuminant.All.Select(light => light.Name));
+    private readonly CheckedOption<string> _illuminant = new("--illuminant", "NAME|FILE", $"Light that color is computed for, to people and to birds: {string.Join(", ", Illuminant.All.Select(light => light.Name))}, or the path of a table of your own (with a / or ending in .toml) [D65]", Standard.Illuminant.Name, OptionReaders.Light, Illuminant.All.Select(light => light.Name));
     private readonly CheckedOption<StandardObserver> _observer = new("--observer", "name", $"Eye that color is computed for: {string.Join(" or ", StandardObservers.Names)} [1931-2deg]", Standard.Observer, OptionReaders.Observer, StandardObservers.Names);
+    private readonly CheckedOption<SummationStep> _summation = new("--summation", "1|5", "Step in nm of the sums that give X, Y and Z [1]", Standard.Summation, OptionReaders.Summation, ["1", "5"]);
+    private readonly Option<string[]> _vision = new("--vision") { Description = $"Eye of a bird to compute color for, beside {string.Join(" and ", VisualSystems.Averages.Select(eye => eye.Name))}: {string.Join(", ", VisualSystems.All.Except(VisualSystems.Averages).Select(eye => eye.Name))}, or the path of a file of your own (with a / or ending in .toml); may be repeated", HelpName = "NAME|FILE", Arity = ArgumentArity.OneOrMore };
+    private readonly Option<string?> _background = new("--background") { Description = "File with the reflectance of what the eyes of birds are adapted to [flat, a perfect mirror]", HelpName = "FILE" };
     private readonly CheckedOption<int> _threads = new("--threads", "N", "Most processors used [all]; results do not depend on it", Standard.Threads, OptionReaders.Threads);
     private readonly CheckedOption<FigureSize> _width = new("--width", "mm", "Printed width of the figures, such as 85 or 170 mm for one or two columns [85]", FigureSize.OneColumn, OptionReaders.FigureWidth);
     private readonly Option<bool> _overlay = new("--overlay") { Description = "Draw into the reflectance figure, dashed, what the layer model says beside the grating solver, or the grating solver beside --mixing", Arity = ArgumentArity.Zero };
@@ -39,12 +43,16 @@ internal sealed class PredictCommand
         {
             options._files, options._wavelengths.Option, options._angles.Option, options._polarization.Option, options._solver.Option,
             options._accuracy.Option, options._mixing.Option, options._illuminant.Option, options._observer.Option, options._output,
+            options._vision, options._background, options._summation.Option,
             options._force, options._json, options._materials, options._sets, options._threads.Option, options._width.Option, options._overlay,
         };
         options._files.Validators.Add(result => CommandLineErrors.RefuseOptions(result, command));
         options._files.Validators.Add(result => CommandLineErrors.RefuseEmpty(result, "FILE", result.Tokens, "the name of a structure file"));
         options._output.Validators.Add(result => CommandLineErrors.RefuseEmpty(result, "--out", result.Tokens, "the name of a folder"));
         options._materials.Validators.Add(result => CommandLineErrors.RefuseEmpty(result, "--materials", result.Tokens, "the name of a folder"));
+        options._background.Validators.Add(result => CommandLineErrors.RefuseEmpty(result, "--background", result.Tokens, "the name of a file"));
+        options._vision.Validators.Add(OptionReaders.RefuseUnknownEyes);
+        options._vision.CompletionSources.Add([.. VisualSystems.All.Select(eye => eye.Name)]);
         command.Validators.Add(options.RefuseRuleOfNothing);
         // The parser counts values, so that `--out here --out` would pass.
         command.Validators.Add(result =>
@@ -83,12 +91,12 @@ internal sealed class PredictCommand
             Accuracy = _accuracy.Of(parse),
             Solver = _solver.Of(parse),
             Mixing = _mixing.Of(parse),
-            Illuminant = _illuminant.Of(parse),
             Observer = _observer.Of(parse),
+            Summation = _summation.Of(parse),
             Threads = _threads.Of(parse),
         };
         return new PredictRequest(
-            parse.GetRequiredValue(_files), conditions, parse.GetValue(_output), parse.GetValue(_force), parse.GetValue(_json),
+            parse.GetRequiredValue(_files), conditions, new SeenBy(_illuminant.Of(parse), parse.GetValue(_background), parse.GetValue(_vision) ?? []), parse.GetValue(_output), parse.GetValue(_force), parse.GetValue(_json),
             parse.GetValue(_materials), parse.GetValue(_sets) ?? [], _width.Of(parse), parse.GetValue(_overlay));
     }
 }

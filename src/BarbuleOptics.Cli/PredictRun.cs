@@ -18,6 +18,7 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
 
     private static readonly string[] ResultNames = [SpectraCsv.FileName, PredictionJson.FileName, .. PredictionFigures.FileNames];
 
+    private PredictionConditions _conditions = request.Conditions;
     private bool _inputWrong;
     private bool _ourFault;
     private int _written;
@@ -42,6 +43,9 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
         FileResult<MaterialCatalog> catalog = EmbeddedMaterials.WithFolder(request.MaterialFolder);
         if (!catalog.Succeeded)
             return Refuse(catalog.Problems);
+        if (!request.SeenBy.TryApply(request.Conditions, out PredictionConditions? conditions, out IReadOnlyList<FileProblem> problems))
+            return Refuse(problems);
+        _conditions = conditions;
         if (folders is not null && !TryReserve(folders))
             return ExitCode.OutputFailed;
 
@@ -97,7 +101,7 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
         progress.Begin(file);
         try
         {
-            Predictor.TryPredict(loaded.Barbule, request.Conditions, loaded.Catalog, out prediction, out problems, progress, cancellation);
+            Predictor.TryPredict(loaded.Barbule, _conditions, loaded.Catalog, out prediction, out problems, progress, cancellation);
         }
         finally
         {

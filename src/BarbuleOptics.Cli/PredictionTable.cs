@@ -30,6 +30,7 @@ internal static class PredictionTable
         foreach (View view in prediction.Views)
             output.WriteLine(Row(view, colors));
         output.WriteLine();
+        BirdTable.Write(prediction, output);
         foreach (string line in Remarks(prediction).Concat(notes.Select(note => $"Warning {note.Code}: {note}.")).Concat(WarningLines.Of(prediction.Warnings)))
             Wrap(line, output);
     }
@@ -88,6 +89,8 @@ internal static class PredictionTable
             yield return string.Create(CultureInfo.InvariantCulture, $"'mean R' is over the part of 300-700 nm that {grid.StartNm}-{grid.StopNm} nm covers.");
         yield return $"Materials: {string.Join(", ", prediction.Materials.Select(Describe))}.";
         yield return "Reflectance 1 is a perfect mirror. 'width' is at half prominence; 'bright' is the color at a lightness a screen shows well.";
+        foreach (string remark in BirdTable.Remarks(prediction))
+            yield return remark;
         yield return StructurePrediction.Scope;
     }
 

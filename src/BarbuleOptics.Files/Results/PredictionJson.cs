@@ -69,11 +69,13 @@ public static class PredictionJson
         json.WriteString("reference", "mirror");
         json.WriteString("scope", StructurePrediction.Scope);
         WriteMaterials(json, prediction.Materials);
+        BirdJson.WriteEyes(json, prediction);
         json.WriteStartObject("wavelengths_nm");
         json.WriteNumber("start", prediction.Conditions.Wavelengths.StartNm);
         json.WriteNumber("stop", prediction.Conditions.Wavelengths.StopNm);
         json.WriteNumber("step", prediction.Conditions.Wavelengths.StepNm);
         json.WriteEndObject();
+        json.WriteNumber("summation_nm", SummationSteps.NanometresOf(prediction.Conditions.Summation));
         json.WriteStartArray("views");
         foreach (View view in prediction.Views)
             WriteView(json, view, prediction);
@@ -146,18 +148,11 @@ public static class PredictionJson
         json.WriteString("polarization", PolarizationNames.Of(view.Polarization));
         WriteFeatures(json, view.Features);
         if (view.Color is CieColor color)
-        {
             WriteColor(json, color);
-            json.WriteStartObject("hue");
-            json.WriteString("term", color.HueTerm);
-            json.WriteEndObject();
-        }
         else
-        {
             json.WriteNull("cie");
-            json.WriteNull("hue");
-        }
-        json.WriteNull("bird");
+        BirdJson.WriteHue(json, view);
+        BirdJson.WriteView(json, view);
         WriteLayerModelError(json, view.LayerModelError);
         PowerJson.Write(json, view, prediction);
         json.WriteEndObject();
@@ -208,10 +203,14 @@ public static class PredictionJson
         json.WriteString("illuminant", color.Illuminant.Name);
         WriteNumbers(json, "XYZ", color.Tristimulus.X, color.Tristimulus.Y, color.Tristimulus.Z);
         WriteNumbers(json, "xy", color.Chromaticity.X, color.Chromaticity.Y);
+        WriteNumbers(json, "u_v_prime", color.UniformChromaticity.U, color.UniformChromaticity.V);
         WriteNumbers(json, "Lab", color.Lab.L, color.Lab.A, color.Lab.B);
         WriteNumbers(json, "LCh", color.Lab.L, color.Lab.Chroma, color.Lab.HueDegrees);
+        WriteNumbers(json, "Luv", color.Luv.L, color.Luv.U, color.Luv.V);
+        json.WriteNumber("saturation_uv", color.Luv.Saturation);
         WriteOptional(json, "dominant_wavelength_nm", color.DominantWavelengthNm);
         json.WriteNumber("excitation_purity", color.ExcitationPurity);
+        json.WriteString("sRGB_adaptation", ChromaticAdaptation.BradfordName);
         json.WriteString("sRGB", color.Srgb.Hex);
         json.WriteString("sRGB_brightened", color.SrgbBrightened.Hex);
         json.WriteBoolean("in_sRGB_gamut", color.InSrgbGamut);
@@ -254,7 +253,8 @@ public static class PredictionJson
         json.WriteEndArray();
     }
 
-    private static void WriteNumbers(Utf8JsonWriter json, string name, params ReadOnlySpan<double> values)
+    /// <summary>A list of numbers.</summary>
+    internal static void WriteNumbers(Utf8JsonWriter json, string name, params ReadOnlySpan<double> values)
     {
         json.WriteStartArray(name);
         foreach (double value in values)

@@ -7,6 +7,9 @@ namespace BarbuleOptics.Color;
 /// </remarks>
 public static class ChromaticAdaptation
 {
+    /// <summary>The name of the transform in output.</summary>
+    public const string BradfordName = "Bradford";
+
     private static readonly Matrix3 ToCones = new(new[,]
     {
         { 0.8951, 0.2664, -0.1614 },

@@ -2,6 +2,7 @@ using BarbuleOptics.Color;
 using BarbuleOptics.Layering.Mixing;
 using BarbuleOptics.Multilayer;
 using BarbuleOptics.Quantities;
+using BarbuleOptics.Vision;
 
 namespace BarbuleOptics.Prediction;
 
@@ -41,11 +42,26 @@ public sealed record PredictionConditions
     /// so that views say how far apart they are; true unless set.</summary>
     public bool ComparesSolvers { get; init; } = true;
 
-    /// <summary>The light under which colors are computed; D65 unless set.</summary>
+    /// <summary>The light under which colors are computed, to people and to birds; D65 unless set.</summary>
     public Illuminant Illuminant { get; init; } = Illuminant.D65;
 
     /// <summary>The observer; CIE 1931 unless set.</summary>
     public StandardObserver Observer { get; init; } = StandardObserver.Cie1931TwoDegree;
+
+    /// <summary>Over which wavelengths tristimulus values are summed; every nanometre unless set.</summary>
+    public SummationStep Summation { get; init; } = SummationStep.OneNanometre;
+
+    /// <summary>The eyes of birds that colors are computed for, each name once; the two averages unless set.</summary>
+    /// <exception cref="ArgumentException">Two have one name.</exception>
+    public ValueList<VisualSystem> Eyes
+    {
+        get;
+        init => field = value.Select(eye => eye.Name).Distinct(StringComparer.OrdinalIgnoreCase).Count() == value.Count
+            ? value : throw new ArgumentException("Every eye must have a name of its own.", nameof(value));
+    } = VisualSystems.Averages;
+
+    /// <summary>What those eyes are adapted to; flat, a perfect mirror, where null, as it is unless set.</summary>
+    public AdaptingBackground? Background { get; init; }
 
     /// <summary>Most threads used, 1 or above; all processors unless set. Results do not depend on it.</summary>
     /// <exception cref="ArgumentOutOfRangeException">Below 1.</exception>

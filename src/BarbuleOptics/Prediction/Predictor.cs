@@ -5,6 +5,7 @@ using BarbuleOptics.Layering;
 using BarbuleOptics.Materials;
 using BarbuleOptics.Quantities;
 using BarbuleOptics.Spectra;
+using BarbuleOptics.Vision;
 
 namespace BarbuleOptics.Prediction;
 
@@ -120,11 +121,14 @@ public static class Predictor
                 rigorous = null;
         }
 
-        var colorimeter = new Colorimeter(conditions.Wavelengths, conditions.Illuminant, conditions.Observer);
+        var colorimeter = new Colorimeter(conditions.Wavelengths, conditions.Illuminant, conditions.Observer, conditions.Summation);
+        BirdEye[] eyes = CatchMatrix.CanCatch(conditions.Wavelengths)
+            ? [.. conditions.Eyes.Select(system => new BirdEye(conditions.Wavelengths, system, conditions.Illuminant, conditions.Background?.Reflectance))] : [];
         warnings.AboutCoverage(colorimeter.CanMeasure, colorimeter.CoversObserver);
-        View[] views = [.. ViewsOf(plan.IsRigorous ? rigorous!.Powers : films!.Powers, colorimeter)];
+        warnings.AboutEyes(CatchMatrix.CanCatch(conditions.Wavelengths));
+        View[] views = [.. ViewsOf(plan.IsRigorous ? rigorous!.Powers : films!.Powers, colorimeter, eyes)];
         if (rigorous is not null && films is not null)
-            views = Compared(views, [.. ViewsOf(plan.IsRigorous ? films.Powers : rigorous.Powers, colorimeter)], plan);
+            views = Compared(views, [.. ViewsOf(plan.IsRigorous ? films.Powers : rigorous.Powers, colorimeter, [])], plan);
         foreach (View view in views)
             warnings.AboutView(view);
         warnings.AboutLayerModel(views);
@@ -151,12 +155,13 @@ public static class Predictor
         };
     }
 
-    private static IEnumerable<View> ViewsOf(PowerTable powers, Colorimeter colorimeter)
+    private static IEnumerable<View> ViewsOf(PowerTable powers, Colorimeter colorimeter, BirdEye[] eyes)
         => powers.Seen.Select(response => new View(
             response.Incidence, response.Polarization, response.Reflectance, SpectrumFeatures.Of(response.Reflectance),
             colorimeter.CanMeasure ? colorimeter.Measure(response.Reflectance) : null)
         {
             Powers = PowerSummary.Of(response),
+            Birds = [.. eyes.Select(eye => eye.Look(response.Reflectance))],
         });
 
     private static View[] Compared(View[] views, View[] others, SolverPlan plan)

@@ -2,6 +2,7 @@ using BarbuleOptics.Color;
 using BarbuleOptics.Multilayer;
 using BarbuleOptics.Quantities;
 using BarbuleOptics.Spectra;
+using BarbuleOptics.Vision;
 
 namespace BarbuleOptics.Prediction;
 
@@ -15,6 +16,12 @@ public sealed record View(Angle Incidence, Polarizations Polarization, Spectrum 
 {
     /// <summary>Where the power goes on average.</summary>
     public required PowerSummary Powers { get; init; }
+
+    /// <summary>Its color to each of the eyes asked for; empty where the grid leaves out what birds see.</summary>
+    public ValueList<BirdColor> Birds { get; init; } = [];
+
+    /// <summary>The most prominent peak below 400 nm, which people do not see; null where there is none.</summary>
+    public SpectralPeak? UltravioletPeak => Features.Peaks.Where(peak => peak.WavelengthNm < SpectrumFeatures.VisibleStartNm).MaxBy(peak => peak.Prominence);
 
     /// <summary>How far the layer model is from the rigorous solution; null where they were not compared.</summary>
     public LayerModelError? LayerModelError { get; init; }

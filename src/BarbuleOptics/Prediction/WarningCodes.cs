@@ -42,6 +42,12 @@ public static class WarningCodes
     /// <summary>The grid leaves out visible light, so there is no color.</summary>
     public const string NoColor = "no-color";
 
+    /// <summary>The grid leaves out light that birds see, so there is no color to a bird.</summary>
+    public const string NoBirdColor = "no-bird-color";
+
+    /// <summary>So little is caught by an eye that contrasts, which rest on logarithms, mean little.</summary>
+    public const string DarkToBirds = "dark-to-birds";
+
     /// <summary>The solver could not be refined to the accuracy asked for.</summary>
     public const string AccuracyNotReached = "accuracy-not-reached";
 

@@ -2,6 +2,7 @@ using BarbuleOptics.Anatomy;
 using BarbuleOptics.Layering;
 using BarbuleOptics.Materials;
 using BarbuleOptics.Quantities;
+using BarbuleOptics.Vision;
 
 namespace BarbuleOptics.Prediction;
 
@@ -87,10 +88,19 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
             Add(WarningCodes.ObserverNotCovered, "the wavelengths do not cover 380-780 nm; beyond them the color holds the end values; --wavelengths 380:780:1 covers them");
     }
 
+    /// <summary>Says where eyes cannot be asked.</summary>
+    public void AboutEyes(bool canCatch)
+    {
+        if (!canCatch && conditions.Eyes.Count > 0)
+            Add(WarningCodes.NoBirdColor, "the wavelengths do not cover 300-700 nm in steps of at most 20 nm, so no color to a bird was computed; what lies beyond was not guessed; --wavelengths 300:780:1 covers both");
+    }
+
     public void AboutView(View view)
     {
         if (view.Features.AtEdge)
             Add(WarningCodes.PeakAtEdge, FormattableString.Invariant($"the reflectance still rises at {EndsOf(view)}; a peak may lie beyond: widen --wavelengths to see it"), view.Incidence);
+        if (view.Birds.Any(bird => bird.IsDark))
+            Add(WarningCodes.DarkToBirds, FormattableString.Invariant($"some cones catch less than {BirdColor.LeastCatch} of what the background gives them; contrasts rest on logarithms of catches, which mean little so near to black: report relative catches and no contrast"), view.Incidence);
         // No screen shows which black a black is.
         if (view.Color is { InSrgbGamut: false, Lab.L: >= DarkestShown })
             Add(WarningCodes.OutsideSrgb, "the color lies outside sRGB; its swatch is the nearest that a screen shows; report x and y, or L*, C* and h", view.Incidence);

@@ -28,6 +28,8 @@ public sealed class CompletionTests
         { "predict --polarization ", "unpolarized s p", "Unpolarized S P" },
         { "predict --solver ", "auto multilayer grating", "Auto D65" },
         { "predict --solver gra", "grating", "auto" },
+        { "predict --vision ", "average-ultraviolet average-violet peafowl", "D65" },
+        { "predict --summ", "--summation", "--set" },
         { "predict --over", "--overlay", "--mixing" },
         { "predict --force ", "", "True False" },
         { "predict --json ", "", "True False" },

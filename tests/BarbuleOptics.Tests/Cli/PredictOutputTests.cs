@@ -158,7 +158,7 @@ public sealed class PredictOutputTests
         string file = SampleFiles.Write("porous-platelets", folder.Path);
         JsonElement root = (await Barbule.Call("predict", file, "--angles", "0,30", "--wavelengths", "300:780:20", "--json", "--observer", "1964-10deg", "--illuminant", "A", "--accuracy", "1e-3")).Json();
 
-        AssertKeys(root, "program", "structure", "solver", "picture", "mixing", "core_mixing", "films", "accuracy_asked", "error_estimate", "reference", "scope", "materials", "wavelengths_nm", "views", "main_peak_over_angle", "warnings");
+        AssertKeys(root, "program", "structure", "solver", "picture", "mixing", "core_mixing", "films", "accuracy_asked", "error_estimate", "reference", "scope", "materials", "bird_vision", "wavelengths_nm", "summation_nm", "views", "main_peak_over_angle", "warnings");
         Assert.Equal(("Barbule Optics", ProgramIdentity.Version), (Text(root, "program", "name"), Text(root, "program", "version")));
         Assert.Equal(file, Text(root, "structure", "file"));
         Assert.Equal(Convert.ToHexStringLower(System.Security.Cryptography.SHA256.HashData(File.ReadAllBytes(file))), Text(root, "structure", "sha256"));
@@ -175,6 +175,14 @@ public sealed class PredictOutputTests
         {
             AssertKeys(material, "name", "source", "obtained", "note", "range_nm");
             Assert.Equal(2, material.GetProperty("range_nm").GetArrayLength());
+        });
+        JsonElement vision = root.GetProperty("bird_vision");
+        AssertKeys(vision, "illuminant", "illuminant_note", "background", "adaptation", "space", "contrast", "eyes");
+        Assert.All(vision.GetProperty("eyes").EnumerateArray(), eye =>
+        {
+            AssertKeys(eye, "name", "source", "obtained", "cones", "media_half_nm", "media_width_nm");
+            Assert.Equal(["shortest", "short", "medium", "long", "double"], eye.GetProperty("cones").EnumerateArray().Select(cone => Text(cone, "cone")));
+            Assert.All(eye.GetProperty("cones").EnumerateArray(), cone => AssertKeys(cone, "cone", "pigment_nm", "droplet_cut_nm", "droplet_mid_nm", "peak_nm", "number", "weber_fraction"));
         });
         Assert.Equal(["air", "keratin", "eumelanin"], root.GetProperty("materials").EnumerateArray().Select(material => Text(material, "name")));
         Assert.All(root.GetProperty("warnings").EnumerateArray(), warning =>
@@ -216,6 +224,8 @@ public sealed class PredictOutputTests
         JsonElement view = root.GetProperty("views")[0];
         Assert.Equal(JsonValueKind.Null, view.GetProperty("cie").ValueKind);
         Assert.Equal(JsonValueKind.Null, view.GetProperty("bird").ValueKind);
+        Assert.Equal(JsonValueKind.Null, view.GetProperty("hue").GetProperty("term").ValueKind);
+        Assert.Equal(JsonValueKind.Null, view.GetProperty("hue").GetProperty("bird").ValueKind);
         Assert.Equal(JsonValueKind.Null, view.GetProperty("layer_model_error").ValueKind);
         Assert.Equal(JsonValueKind.Null, view.GetProperty("powers").GetProperty("absorbed_by").ValueKind);
         Assert.Equal(JsonValueKind.Null, view.GetProperty("powers").GetProperty("orders").ValueKind);
@@ -286,7 +296,7 @@ public sealed class PredictOutputTests
             Assert.InRange(Number(peak, "wavelength_nm"), 300, 780);
             Assert.InRange(Number(peak, "prominence"), 0, Number(peak, "reflectance"));
         });
-        AssertKeys(cie, "observer", "illuminant", "XYZ", "xy", "Lab", "LCh", "dominant_wavelength_nm", "excitation_purity", "sRGB", "sRGB_brightened", "in_sRGB_gamut");
+        AssertKeys(cie, "observer", "illuminant", "XYZ", "xy", "u_v_prime", "Lab", "LCh", "Luv", "saturation_uv", "dominant_wavelength_nm", "excitation_purity", "sRGB_adaptation", "sRGB", "sRGB_brightened", "in_sRGB_gamut");
         Assert.Equal(("1964-10deg", "A"), (Text(cie, "observer"), Text(cie, "illuminant")));
         double[] xyz = Numbers(cie, "XYZ"), xy = Numbers(cie, "xy"), lab = Numbers(cie, "Lab"), lch = Numbers(cie, "LCh");
         // Definitions of x, y, C* and h (CIE 015:2018, sections 7.3 and 8.2.1; numbers of the sections from memory).
@@ -294,7 +304,28 @@ public sealed class PredictOutputTests
         Assert.Equal([lab[0], Math.Sqrt(lab[1] * lab[1] + lab[2] * lab[2]), (Math.Atan2(lab[2], lab[1]) * 180 / Math.PI + 360) % 360], lch, (a, b) => Math.Abs(a - b) < 1e-9);
         Assert.Matches("^#[0-9a-f]{6}$", Text(cie, "sRGB"));
         Assert.Matches("^#[0-9a-f]{6}$", Text(cie, "sRGB_brightened"));
-        Assert.NotEqual("", Text(view, "hue", "term"));
+        AssertBird(view);
+    }
+
+    private static void AssertBird(JsonElement view)
+    {
+        JsonElement hue = view.GetProperty("hue"), bird = view.GetProperty("bird");
+        AssertKeys(hue, "term", "peak_wavelength_nm", "ultraviolet_peak", "ultraviolet_peak_nm", "ultraviolet_peak_prominence", "bird");
+        Assert.NotEqual("", Text(hue, "term"));
+        Assert.Equal(hue.GetProperty("ultraviolet_peak").GetBoolean(), hue.GetProperty("ultraviolet_peak_nm").ValueKind == JsonValueKind.Number);
+        AssertKeys(bird, "average-ultraviolet", "average-violet");
+        AssertKeys(hue.GetProperty("bird"), "average-ultraviolet", "average-violet");
+        foreach (JsonProperty eye in bird.EnumerateObject())
+        {
+            AssertKeys(eye.Value, "catches", "double_catch", "relative_catches", "xyz", "azimuth_deg", "elevation_deg", "chroma", "chroma_share", "chromatic_contrast", "achromatic_contrast", "dark");
+            AssertKeys(eye.Value.GetProperty("catches"), "shortest", "short", "medium", "long");
+            Assert.Equal(1, eye.Value.GetProperty("relative_catches").EnumerateObject().Sum(cone => cone.Value.GetDouble()), 1e-12);
+            double[] xyz = Numbers(eye.Value, "xyz");
+            Assert.Equal(Number(eye.Value, "chroma"), Math.Sqrt(xyz.Sum(value => value * value)), 1e-12);
+            JsonElement said = hue.GetProperty("bird").GetProperty(eye.Name);
+            AssertKeys(said, "term", "shortest_relative_catch", "nonspectral");
+            Assert.Equal(Number(eye.Value, "relative_catches", "shortest"), Number(said, "shortest_relative_catch"));
+        }
     }
 
     /// <summary>Lines by their first cells, with the numbers of the others.</summary>
