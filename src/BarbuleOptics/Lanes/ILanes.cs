@@ -67,6 +67,16 @@ internal interface ILanes<TSelf>
     /// <summary>Sine and cosine of an angle in radians, within 2 units in the last place for angles up to 1e5.</summary>
     static abstract (TSelf Sine, TSelf Cosine) SinCos(TSelf angle);
 
+    /// <summary>exp(2 pi i <paramref name="rate"/> <paramref name="length"/>) within 2 units in the last place of 1 and what the
+    /// rounding of the rate makes of it; for products up to 1e12.</summary>
+    /// <remarks>The product's nearest sixteenth (512 bits) or quarter of a turn is taken off by adding and subtracting a number whose last digit is that
+    /// step, the rest, exact by fused multiplication, goes through <see cref="TurnSeries"/>.</remarks>
+    static abstract ComplexLanes<TSelf> Turn(TSelf rate, TSelf length);
+
+    /// <summary>2^(<paramref name="rate"/> <paramref name="length"/>) within 2 units in the last place and what the rounding of the rate makes of it; for
+    /// products from -1e12 to 1000; below -1000 at most 2^-1000.</summary>
+    static abstract TSelf PowerOfTwo(TSelf rate, TSelf length);
+
     /// <summary>Mask of the lanes where <paramref name="left"/> is below <paramref name="right"/>.</summary>
     static abstract TSelf LessThan(TSelf left, TSelf right);
 

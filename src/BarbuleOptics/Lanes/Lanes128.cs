@@ -1,5 +1,6 @@
 using System.Runtime.CompilerServices;
 using System.Runtime.Intrinsics;
+using System.Runtime.Intrinsics.X86;
 
 namespace BarbuleOptics.Lanes;
 
@@ -49,7 +50,8 @@ internal readonly struct Lanes128(Vector128<double> vector) : ILanes<Lanes128>
 
     /// <inheritdoc/>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    public static Lanes128 SubtractProduct(Lanes128 left, Lanes128 right, Lanes128 addend) => new(Vector128.MultiplyAddEstimate(-left._vector, right._vector, addend._vector));
+    public static Lanes128 SubtractProduct(Lanes128 left, Lanes128 right, Lanes128 addend) => new(
+        Fma.IsSupported ? Fma.MultiplyAddNegated(left._vector, right._vector, addend._vector) : Vector128.MultiplyAddEstimate(-left._vector, right._vector, addend._vector));
 
     /// <inheritdoc/>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
@@ -85,6 +87,39 @@ internal readonly struct Lanes128(Vector128<double> vector) : ILanes<Lanes128>
     {
         (Vector128<double> sine, Vector128<double> cosine) = Vector128.SinCos(angle._vector);
         return (new(sine), new(cosine));
+    }
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static ComplexLanes<Lanes128> Turn(Lanes128 rate, Lanes128 length)
+    {
+        Vector128<double> magic = Vector128.Create(1.5 * (1L << 50));
+        Vector128<double> shifted = Vector128.MultiplyAddEstimate(rate._vector, length._vector, magic);
+        Lanes128 rest = new(Vector128.MultiplyAddEstimate(rate._vector, length._vector, magic - shifted));
+        Lanes128 square = rest * rest;
+        Vector128<double> sine = TurnSeries.Sine(rest, square)._vector, cosine = TurnSeries.Cosine(square)._vector;
+        // Odd quarters exchange the two; the cosine is below zero in quarters 1 and 2, the sine in 2 and 3.
+        Vector128<long> quarter = shifted.AsInt64(), sign = Vector128.Create(long.MinValue);
+        Vector128<double> even = Vector128.Equals(quarter & Vector128<long>.One, Vector128<long>.Zero).AsDouble();
+        Vector128<long> cosineSign = Vector128.ShiftLeft(quarter + Vector128<long>.One, 62) & sign, sineSign = Vector128.ShiftLeft(quarter, 62) & sign;
+        return new(
+            new((Vector128.ConditionalSelect(even, cosine, sine).AsInt64() ^ cosineSign).AsDouble()),
+            new((Vector128.ConditionalSelect(even, sine, cosine).AsInt64() ^ sineSign).AsDouble()));
+    }
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lanes128 PowerOfTwo(Lanes128 rate, Lanes128 length)
+    {
+        Vector128<double> magic = Vector128.Create(1.5 * (1L << 52));
+        Vector128<double> product = rate._vector * length._vector;
+        // What the product lost in rounding comes back with the rest.
+        Vector128<double> lost = Vector128.MultiplyAddEstimate(rate._vector, length._vector, -product);
+        product = Vector128.MaxNative(product, Vector128.Create(-1000.0));
+        Vector128<double> shifted = product + magic;
+        Vector128<double> power = TurnSeries.Power(new Lanes128(product - (shifted - magic) + lost))._vector;
+        // The whole power stands in the low bits of the shifted number and goes into the exponent.
+        return new((power.AsInt64() + Vector128.ShiftLeft(shifted.AsInt64(), 52)).AsDouble());
     }
 
     /// <inheritdoc/>

@@ -1,5 +1,6 @@
 using System.Runtime.CompilerServices;
 using System.Runtime.Intrinsics;
+using System.Runtime.Intrinsics.X86;
 
 namespace BarbuleOptics.Lanes;
 
@@ -7,6 +8,13 @@ namespace BarbuleOptics.Lanes;
 internal readonly struct Lanes256(Vector256<double> vector) : ILanes<Lanes256>
 {
     private readonly Vector256<double> _vector = vector;
+
+    /// <summary>The numbers.</summary>
+    public Vector256<double> Vector
+    {
+        [MethodImpl(MethodImplOptions.AggressiveInlining)]
+        get => _vector;
+    }
 
     /// <inheritdoc/>
     public static int Count => Vector256<double>.Count;
@@ -49,7 +57,8 @@ internal readonly struct Lanes256(Vector256<double> vector) : ILanes<Lanes256>
 
     /// <inheritdoc/>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    public static Lanes256 SubtractProduct(Lanes256 left, Lanes256 right, Lanes256 addend) => new(Vector256.MultiplyAddEstimate(-left._vector, right._vector, addend._vector));
+    public static Lanes256 SubtractProduct(Lanes256 left, Lanes256 right, Lanes256 addend) => new(
+        Fma.IsSupported ? Fma.MultiplyAddNegated(left._vector, right._vector, addend._vector) : Vector256.MultiplyAddEstimate(-left._vector, right._vector, addend._vector));
 
     /// <inheritdoc/>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
@@ -85,6 +94,39 @@ internal readonly struct Lanes256(Vector256<double> vector) : ILanes<Lanes256>
     {
         (Vector256<double> sine, Vector256<double> cosine) = Vector256.SinCos(angle._vector);
         return (new(sine), new(cosine));
+    }
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static ComplexLanes<Lanes256> Turn(Lanes256 rate, Lanes256 length)
+    {
+        Vector256<double> magic = Vector256.Create(1.5 * (1L << 50));
+        Vector256<double> shifted = Vector256.MultiplyAddEstimate(rate._vector, length._vector, magic);
+        Lanes256 rest = new(Vector256.MultiplyAddEstimate(rate._vector, length._vector, magic - shifted));
+        Lanes256 square = rest * rest;
+        Vector256<double> sine = TurnSeries.Sine(rest, square)._vector, cosine = TurnSeries.Cosine(square)._vector;
+        // Odd quarters exchange the two; the cosine is below zero in quarters 1 and 2, the sine in 2 and 3.
+        Vector256<long> quarter = shifted.AsInt64(), sign = Vector256.Create(long.MinValue);
+        Vector256<double> even = Vector256.Equals(quarter & Vector256<long>.One, Vector256<long>.Zero).AsDouble();
+        Vector256<long> cosineSign = Vector256.ShiftLeft(quarter + Vector256<long>.One, 62) & sign, sineSign = Vector256.ShiftLeft(quarter, 62) & sign;
+        return new(
+            new((Vector256.ConditionalSelect(even, cosine, sine).AsInt64() ^ cosineSign).AsDouble()),
+            new((Vector256.ConditionalSelect(even, sine, cosine).AsInt64() ^ sineSign).AsDouble()));
+    }
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lanes256 PowerOfTwo(Lanes256 rate, Lanes256 length)
+    {
+        Vector256<double> magic = Vector256.Create(1.5 * (1L << 52));
+        Vector256<double> product = rate._vector * length._vector;
+        // What the product lost in rounding comes back with the rest.
+        Vector256<double> lost = Vector256.MultiplyAddEstimate(rate._vector, length._vector, -product);
+        product = Vector256.MaxNative(product, Vector256.Create(-1000.0));
+        Vector256<double> shifted = product + magic;
+        Vector256<double> power = TurnSeries.Power(new Lanes256(product - (shifted - magic) + lost))._vector;
+        // The whole power stands in the low bits of the shifted number and goes into the exponent.
+        return new((power.AsInt64() + Vector256.ShiftLeft(shifted.AsInt64(), 52)).AsDouble());
     }
 
     /// <inheritdoc/>

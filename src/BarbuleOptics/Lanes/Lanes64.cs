@@ -84,6 +84,19 @@ internal readonly struct Lanes64(double value) : ILanes<Lanes64>
 
     /// <inheritdoc/>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static ComplexLanes<Lanes64> Turn(Lanes64 rate, Lanes64 length)
+    {
+        double rest = double.MultiplyAddEstimate(rate._value, length._value, -Math.Round(rate._value * length._value));
+        (double sine, double cosine) = double.SinCosPi(2 * rest);
+        return new(new(cosine), new(sine));
+    }
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lanes64 PowerOfTwo(Lanes64 rate, Lanes64 length) => new(double.Exp2(Math.Max(rate._value * length._value, -1000)));
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static Lanes64 LessThan(Lanes64 left, Lanes64 right) => new(BitConverter.Int64BitsToDouble(left._value < right._value ? -1 : 0));
 
     /// <inheritdoc/>

@@ -53,6 +53,12 @@ public sealed class FilmStack
         _backing = backing.ToArray();
     }
 
+    private FilmStack(FilmStack other, double[] thicknessesNm)
+    {
+        (Media, Back, _wavelengthsNm, _mediumOfFilm) = (other.Media, other.Back, other._wavelengthsNm, other._mediumOfFilm);
+        (_surroundIndex, _backing, _thicknessesNm) = (other._surroundIndex, other._backing, thicknessesNm);
+    }
+
     /// <summary>Number of films.</summary>
     public int FilmCount => _thicknessesNm.Length;
 
@@ -76,4 +82,24 @@ public sealed class FilmStack
 
     /// <summary>Permittivity under the last film, at each wavelength.</summary>
     public ReadOnlySpan<Complex> Backing => _backing;
+
+    /// <summary>The same films with other thicknesses; everything else is shared.</summary>
+    /// <param name="thicknessesNm">Thickness of each film, 0 or above.</param>
+    /// <exception cref="ArgumentException">Their number is not that of the films, or one lies outside its range.</exception>
+    public FilmStack WithThicknesses(ReadOnlySpan<double> thicknessesNm)
+    {
+        Guard.SameLength(FilmCount, thicknessesNm.Length, nameof(thicknessesNm));
+        foreach (double thickness in thicknessesNm)
+            Guard.NotNegative(thickness, nameof(thicknessesNm));
+        return new FilmStack(this, thicknessesNm.ToArray());
+    }
+
+    /// <summary>Whether two stacks have the same constants of media, surround and backing at the same wavelengths, whatever their films.</summary>
+    internal bool SharesConstantsWith(FilmStack other)
+        => ReferenceEquals(Media, other.Media) && ReferenceEquals(Back, other.Back) && Same(WavelengthsNm, other.WavelengthsNm)
+           && Same(SurroundIndex, other.SurroundIndex) && Same(Backing, other.Backing);
+
+    private static bool Same<T>(ReadOnlySpan<T> one, ReadOnlySpan<T> other)
+        where T : IEquatable<T>
+        => one == other || one.SequenceEqual(other);
 }

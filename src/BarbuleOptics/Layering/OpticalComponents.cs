@@ -29,6 +29,9 @@ public sealed class OpticalComponents
     /// <summary>Number of wavelengths.</summary>
     public int WavelengthCount { get; }
 
+    /// <summary>Changes whenever a value is set, so that what was computed from these constants can be told from what was not.</summary>
+    internal int Version { get; private set; }
+
     internal double[] XReal { get; }
 
     internal double[] XImaginary { get; }
@@ -45,6 +48,7 @@ public sealed class OpticalComponents
     /// <exception cref="ArgumentOutOfRangeException">A part is not finite, or an imaginary part is below zero.</exception>
     public void Set(int medium, int wavelength, DiagonalPermittivity value)
     {
+        Version++;
         int at = medium * WavelengthCount + wavelength;
         (XReal[at], XImaginary[at]) = (Guard.Finite(value.X.Real), Guard.NotNegative(value.X.Imaginary));
         (YReal[at], YImaginary[at]) = (Guard.Finite(value.Y.Real), Guard.NotNegative(value.Y.Imaginary));

@@ -1,3 +1,5 @@
+using BarbuleOptics.Quantities;
+
 namespace BarbuleOptics.Multilayer;
 
 /// <summary>What every medium of a stack sees of the light: one wavelength, one direction, s or p.</summary>
@@ -7,6 +9,11 @@ namespace BarbuleOptics.Multilayer;
 /// <param name="IsP">Whether the magnetic field lies along y; otherwise the electric field does.</param>
 internal readonly record struct PlaneWave(double SurroundIndex, double Sine, double Cosine, bool IsP)
 {
+    /// <summary>Sine and cosine of an angle of incidence.</summary>
+    /// <remarks>The cosine is the sine of the complement, which keeps its digits at grazing incidence.</remarks>
+    public static (double Sine, double Cosine) Direction(Angle incidence)
+        => (Math.Sin(incidence.Radians), Math.Sin(double.DegreesToRadians(90 - incidence.Degrees)));
+
     /// <summary>(kx/k0)^2, the same in all media.</summary>
     public double LateralSquared => SurroundIndex * SurroundIndex * (Sine * Sine);
 

@@ -34,11 +34,9 @@ public sealed class ReferenceFilmSolver : ISpectralSolver<FilmStack, FilmWorkspa
     public double Solve(FilmStack structure, in SolverRequest request, FilmWorkspace workspace, in SolverResponse response)
     {
         FilmRequestCheck.Check(structure, request, workspace, response);
-        Clear(request, response);
+        FilmRequestCheck.Clear(request, response);
         bool both = request.Polarization == Polarizations.Unpolarized;
-        double sine = Math.Sin(request.Incidence.Radians);
-        // The sine of the complement, which keeps its digits at grazing incidence.
-        double cosine = Math.Sin(double.DegreesToRadians(90 - request.Incidence.Degrees));
+        (double sine, double cosine) = PlaneWave.Direction(request.Incidence);
         for (int i = 0; i < request.Count; i++)
         {
             int wavelength = request.First + i;
@@ -49,17 +47,6 @@ public sealed class ReferenceFilmSolver : ISpectralSolver<FilmStack, FilmWorkspa
                 Add(structure, wavelength, new PlaneWave(index, sine, cosine, IsP: true), workspace, both ? 0.5 : 1, i, request, response);
         }
         return RoundingError;
-    }
-
-    private static void Clear(in SolverRequest request, in SolverResponse response)
-    {
-        response.Reflectance.Clear();
-        response.DiffractedReflectance.Clear();
-        response.FilmAbsorptance.Clear();
-        if ((request.Outputs & SolverOutputs.Transmittance) != 0)
-            response.Transmittance.Clear();
-        if ((request.Outputs & SolverOutputs.Absorptance) != 0)
-            response.Absorptance.Clear();
     }
 
     private static void Add(

@@ -63,6 +63,21 @@ public sealed class LanesTests
     private static void AssertNear(Complex expected, Complex found) => Assert.True(
         (expected - found).Magnitude <= 2e-15 * Math.Max(1, expected.Magnitude), $"{expected} {found}");
 
+    private readonly struct TurnTrial(double[] rates, double length) : ILaneAction<(Complex[] Turns, double[] Powers)>
+    {
+        public (Complex[] Turns, double[] Powers) Invoke<TLanes>()
+            where TLanes : struct, ILanes<TLanes>
+        {
+            TLanes rate = TLanes.Load(in rates[0]), lengths = TLanes.Broadcast(length);
+            var memory = new double[3 * TLanes.Count];
+            ComplexLanes<TLanes>.Store(TLanes.Turn(rate, lengths), ref memory[0]);
+            TLanes.Store(TLanes.PowerOfTwo(-TLanes.Abs(rate), lengths), ref memory[2 * TLanes.Count]);
+            return (
+                [.. Enumerable.Range(0, TLanes.Count).Select(i => new Complex(memory[i], memory[TLanes.Count + i]))],
+                memory[(2 * TLanes.Count)..]);
+        }
+    }
+
     private readonly struct ComplexTrial(Complex[] values) : ILaneAction<Complex[][]>
     {
         public Complex[][] Invoke<TLanes>()
