@@ -1,4 +1,6 @@
+using BarbuleOptics.Benchmarks.Kernels;
 using BarbuleOptics.Benchmarks.MixingRules;
+using BarbuleOptics.Benchmarks.Parts;
 using BarbuleOptics.Benchmarks.Rows;
 
 namespace BarbuleOptics.Benchmarks;
@@ -10,6 +12,8 @@ internal static class Program
     {
         ["rules"] = ("how far each mixing rule is from the rigorous solution; prints the README's tables", RuleProgram.Run),
         ["rows"] = ("what a solve of five staggered rows of rods costs and how far it is from a far finer run", RowsProgram.Run),
+        ["kernels"] = ("points and solves a second of the kernels as a whole, and their share of the processor's peak", KernelProgram.Run),
+        ["parts"] = ("the kernels' parts by BenchmarkDotNet, with its options", PartProgram.Run),
     };
 
     private static int Main(string[] words)

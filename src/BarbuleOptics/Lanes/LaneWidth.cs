@@ -24,7 +24,8 @@ internal readonly record struct LaneWidth
     /// <summary>Numbers side by side.</summary>
     public int Count => Bits / 64;
 
-    private static LaneWidth Widest
+    /// <summary>The widest that the processor has.</summary>
+    public static LaneWidth Widest
         => Vector512.IsHardwareAccelerated ? new(512) : Vector256.IsHardwareAccelerated ? new(256) : Vector128.IsHardwareAccelerated ? new(128) : new(64);
 
     /// <summary>The width that a text names; null when it names none, so that a mistyped variable changes nothing.</summary>
