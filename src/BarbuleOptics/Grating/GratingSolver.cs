@@ -1,3 +1,4 @@
+using BarbuleOptics.Grating.Batches;
 using BarbuleOptics.Grating.Joining;
 using BarbuleOptics.Layering;
 using BarbuleOptics.Multilayer;
@@ -40,42 +41,60 @@ public sealed class GratingSolver : ISpectralSolver<SectionPermittivities, Grati
         GratingRequestCheck.Check(structure, request, workspace, response);
         var layout = new OutcomeLayout(
             structure.MaterialCount, workspace.Solver.BackingMaterial, Most(response.ReflectedOrders, request.Count), Most(response.TransmittedOrders, request.Count));
-        workspace.Prepare(structure, request, layout);
+        bool hasTransmitted = (request.Outputs & SolverOutputs.Transmittance) != 0 || !response.TransmittedOrders.IsEmpty;
+        bool hasLost = (request.Outputs & SolverOutputs.Absorptance) != 0 || !response.MaterialAbsorptance.IsEmpty;
+        workspace.Prepare(structure, request, layout, hasTransmitted, hasLost);
         if ((request.Polarization & ~workspace.Known) != 0)
-            SolveBlock(structure, request, workspace, layout);
+            SolveBlock(structure, request, workspace, layout, hasTransmitted, hasLost);
         return Fill(request, workspace, layout, response);
     }
 
     private static int Most(ReadOnlySpan<double> orders, int count) => orders.IsEmpty || count == 0 ? 0 : (orders.Length / count - 1) / 2;
 
-    private void SolveBlock(SectionPermittivities structure, in SolverRequest request, GratingWorkspace workspace, in OutcomeLayout layout)
+    private void SolveBlock(
+        SectionPermittivities structure, in SolverRequest request, GratingWorkspace workspace, in OutcomeLayout layout, bool hasTransmitted, bool hasLost)
     {
-        Polarizations wanted = request.Polarization & ~workspace.Known;
         (double across, double along) = IncidentDirection.Of(structure.Section, request.Incidence);
         workspace.Solver.StartBlock();
+        if (along != 0)
+        {
+            for (int at = 0; at < request.Count; at++)
+            {
+                workspace.Solver.Solve(
+                    structure, request.First + at, request.Incidence, RodField.Both, Accuracy, layout, workspace.Outcome(at, Polarizations.S), workspace.Outcome(at, Polarizations.P));
+            }
+            workspace.Mark(Polarizations.Unpolarized);
+            return;
+        }
+        // With the light straight from above rods at an angle need both fields.
+        bool turns = across == 0 && !structure.Section.IsAcross;
+        Polarizations wanted = turns ? Polarizations.Unpolarized : request.Polarization & ~workspace.Known;
+        if (workspace.Batch is IBatchSolver batch)
+        {
+            // The sine of the complement keeps its digits at grazing incidence.
+            var asked = new BatchRequest(
+                structure, request.First, request.Count, across, Math.Sin(double.DegreesToRadians(90 - request.Incidence.Degrees)), Accuracy, hasTransmitted, hasLost, layout);
+            batch.Solve(
+                asked, (wanted & Polarizations.S) != 0 ? workspace.Outcomes(Polarizations.S) : [], (wanted & Polarizations.P) != 0 ? workspace.Outcomes(Polarizations.P) : []);
+        }
+        SolveOneByOne(structure, request, workspace, layout, wanted);
+        for (int at = 0; at < request.Count && turns; at++)
+            Turn(structure.Section, workspace.Outcome(at, Polarizations.S), workspace.Outcome(at, Polarizations.P));
+        workspace.Mark(wanted);
+    }
+
+    // The wavelengths that the batch left, whose error is not a number; all of them without one.
+    private void SolveOneByOne(
+        SectionPermittivities structure, in SolverRequest request, GratingWorkspace workspace, in OutcomeLayout layout, Polarizations wanted)
+    {
         for (int at = 0; at < request.Count; at++)
         {
-            int wavelength = request.First + at;
             Span<double> s = workspace.Outcome(at, Polarizations.S), p = workspace.Outcome(at, Polarizations.P);
-            if (along != 0)
-            {
-                workspace.Solver.Solve(structure, wavelength, request.Incidence, RodField.Both, Accuracy, layout, s, p);
-            }
-            else if (across != 0 || structure.Section.IsAcross)
-            {
-                if ((wanted & Polarizations.S) != 0)
-                    workspace.Solver.Solve(structure, wavelength, request.Incidence, RodField.Electric, Accuracy, layout, s, []);
-                if ((wanted & Polarizations.P) != 0)
-                    workspace.Solver.Solve(structure, wavelength, request.Incidence, RodField.Magnetic, Accuracy, layout, p, []);
-            }
-            else
-            {
-                workspace.Solver.Solve(structure, wavelength, request.Incidence, RodField.Electric, Accuracy, layout, s, []);
-                workspace.Solver.Solve(structure, wavelength, request.Incidence, RodField.Magnetic, Accuracy, layout, p, []);
-                Turn(structure.Section, s, p);
-            }
+            if ((wanted & Polarizations.S) != 0 && (workspace.Batch is null || double.IsNaN(s[OutcomeLayout.Error])))
+                workspace.Solver.Solve(structure, request.First + at, request.Incidence, RodField.Electric, Accuracy, layout, s, []);
+            if ((wanted & Polarizations.P) != 0 && (workspace.Batch is null || double.IsNaN(p[OutcomeLayout.Error])))
+                workspace.Solver.Solve(structure, request.First + at, request.Incidence, RodField.Magnetic, Accuracy, layout, p, []);
         }
-        workspace.Mark(along == 0 && (across != 0 || structure.Section.IsAcross) ? wanted : Polarizations.Unpolarized);
     }
 
     // At normal incidence s has its electric field at the axis angle from the rods, and the powers of both parts add.

@@ -11,7 +11,8 @@ namespace BarbuleOptics.Grating.Joining;
 /// <param name="CoreMaterial">Number of its core's material.</param>
 internal sealed record CellRod(int Place, Outline Outer, Outline? Core, int Material, int CoreMaterial)
 {
-    private bool IsRound => Outer.HalfWidthNm == Outer.HalfHeightNm && (Core is not Outline core || core.HalfWidthNm == core.HalfHeightNm);
+    /// <summary>Whether all its outlines are circles.</summary>
+    public bool IsRound => Outer.HalfWidthNm == Outer.HalfHeightNm && (Core is not Outline core || core.HalfWidthNm == core.HalfHeightNm);
 
     /// <summary>The rod as a row takes it.</summary>
     public RowMember Create(SharedAnswers shared) => new(

@@ -224,7 +224,7 @@ internal sealed class LatticeSums
     }
 
     // (2 pi)^k B_k/k! = -2 (-1)^(k/2) zeta(k).
-    private static double EvenBernoulli(int k) => (k % 4 == 0 ? -2 : 2) * (k / 2 < Zeta.Length ? Zeta[k / 2] : 1 + Math.Pow(2, -k));
+    internal static double EvenBernoulli(int k) => (k % 4 == 0 ? -2 : 2) * (k / 2 < Zeta.Length ? Zeta[k / 2] : 1 + Math.Pow(2, -k));
 
     // zeta(0), zeta(2), zeta(4), ...
     private static readonly double[] Zeta = MakeZeta();

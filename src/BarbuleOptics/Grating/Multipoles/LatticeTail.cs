@@ -11,7 +11,7 @@ internal sealed class LatticeTail
     public const int MostPower = 50;
 
     // B_2k / (2k)!
-    private static readonly double[] Bernoulli =
+    internal static readonly double[] Bernoulli =
     [
         1.0 / 12, -1.0 / 720, 1.0 / 30240, -1.0 / 1209600, 1.0 / 47900160, -691.0 / 1307674368000, 1.0 / 74724249600,
         -3617.0 / 10670622842880000,

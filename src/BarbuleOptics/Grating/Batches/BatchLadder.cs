@@ -1,0 +1,60 @@
+using BarbuleOptics.Grating.Joining;
+using BarbuleOptics.Layering;
+
+namespace BarbuleOptics.Grating.Batches;
+
+/// <summary>The resolutions that a block climbs through: multipoles rise by two, and orders with them as in <see cref="ResolutionLadder"/>.</summary>
+internal sealed class BatchLadder
+{
+    /// <summary>Most steps.</summary>
+    public const int MostSteps = 12;
+
+    private const int MostMultipoles = 22;
+
+    /// <summary>Beyond, one wavelength at a time costs no more.</summary>
+    private const int MostOrders = 16;
+
+    private const double MostGrowth = 1e6;
+
+    private readonly PlanGroup _group;
+    private readonly int _most;
+
+    public BatchLadder(StackPlan plan)
+    {
+        _group = plan.Groups[0];
+        _most = MostMultipoles;
+        while (_most > 7 && 2 * _most * Math.Log(_group.Overlap) > Math.Log(MostGrowth))
+            _most--;
+    }
+
+    /// <summary>Whether there is a step after one.</summary>
+    public bool HasNext(int start, int step, int leastOrders)
+    {
+        int next = start + 2 * (step + 1);
+        return step + 1 < MostSteps && next <= _most && At(next, leastOrders).Orders <= MostOrders;
+    }
+
+    /// <summary>Multipoles to begin with: the step after them is mostly enough.</summary>
+    public static int StartFor(double accuracy) => Math.Clamp(2 * (int)Math.Round(-Math.Log10(accuracy) / 2) - 3, 1, 9);
+
+    /// <summary>One step.</summary>
+    /// <param name="multipoles">Largest multipole.</param>
+    /// <param name="leastOrders">Largest order that travels in any medium.</param>
+    public Resolution At(int multipoles, int leastOrders)
+    {
+        int orders = Math.Max(1 + (multipoles + 1) / 4, Math.Max(1, leastOrders));
+        orders = Math.Max(orders, (int)Math.Ceiling(1.3 * multipoles * _group.PeriodNm / (Math.PI * _group.NearestNm)));
+        return new Resolution(orders, multipoles, 0, 0);
+    }
+
+    /// <summary>Largest order that travels in any medium at a wavelength.</summary>
+    public static int LeastOrders(SectionPermittivities structure, int wavelength, double sine, double periodNm)
+    {
+        double index = structure.SurroundIndex[wavelength], largest = Math.Max(index * index, structure.Backing[wavelength].Real);
+        foreach (System.Numerics.Complex permittivity in structure.Inside(wavelength))
+            largest = Math.Max(largest, permittivity.Real);
+        if (!structure.Behind.IsEmpty)
+            largest = Math.Max(largest, structure.Behind[wavelength].Real);
+        return largest <= 0 ? 0 : (int)Math.Floor((Math.Sqrt(largest) + index * sine) * periodNm / structure.WavelengthsNm[wavelength]);
+    }
+}

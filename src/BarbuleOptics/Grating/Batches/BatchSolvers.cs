@@ -1,0 +1,24 @@
+using BarbuleOptics.Grating.Joining;
+using BarbuleOptics.Lanes;
+using BarbuleOptics.Layering;
+
+namespace BarbuleOptics.Grating.Batches;
+
+/// <summary>Makes solvers for blocks of wavelengths.</summary>
+internal static class BatchSolvers
+{
+    /// <summary>A solver, or null where the scalar code has to solve the section.</summary>
+    /// <param name="section">The section.</param>
+    /// <param name="width">Width of the vectors.</param>
+    public static IBatchSolver? TryCreate(Section section, LaneWidth width)
+        => BatchPlan.TryOf(StackPlan.Of(section)) is BatchPlan plan ? width.Invoke<Maker, IBatchSolver>(new Maker(plan)) : null;
+
+    /// <summary>Makes a solver with vectors of one width.</summary>
+    private readonly struct Maker(BatchPlan plan) : ILaneAction<IBatchSolver>
+    {
+        /// <inheritdoc/>
+        public IBatchSolver Invoke<TLanes>()
+            where TLanes : struct, ILanes<TLanes>
+            => new BatchSolver<TLanes>(plan);
+    }
+}

@@ -1,0 +1,127 @@
+using BarbuleOptics.Grating.Joining;
+
+namespace BarbuleOptics.Grating.Batches;
+
+/// <summary>Errors of each step of the ladder at the probes of a group, and what they say of the wavelengths between.</summary>
+internal sealed class ProbeErrors
+{
+    /// <summary>Number of probes.</summary>
+    public const int Count = 8;
+
+    /// <summary>Factor on the change that the next step made, for what all later ones would change.</summary>
+    private const double Safety = 1.4;
+
+    /// <summary>No larger fall of the change from one step to the next is believed: it may be so by accident.</summary>
+    private const double LeastFall = 0.01;
+
+    /// <summary>Factor on the change of the first step, which nothing is known to have fallen to.</summary>
+    private const double Unproven = 2;
+
+    /// <summary>Factor for wavelengths that are no probes.</summary>
+    private const double Carrying = 1.6;
+
+    /// <summary>Share of the error at the probes beyond the nearest on either side that counts.</summary>
+    private const double Beyond = 0.25;
+
+    /// <summary>Share of a neighboring probe's error that counts at a probe itself.</summary>
+    private const double Beside = 0.2;
+
+    /// <summary>No estimate is smaller: rounding.</summary>
+    private const double Rounding = 1e-12;
+
+    private readonly double[] _errors = new double[BatchLadder.MostSteps * Count];
+    private readonly double[] _changes = new double[Count];
+    private readonly int[] _wavelengths = new int[Count];
+    private int _count;
+
+    /// <summary>Number of steps whose errors are known.</summary>
+    public int Steps { get; private set; }
+
+    /// <summary>Forgets all, for probes at other wavelengths, in rising positions.</summary>
+    public void Start(ReadOnlySpan<int> wavelengths)
+    {
+        wavelengths.CopyTo(_wavelengths);
+        (_count, Steps) = (wavelengths.Length, 0);
+        Array.Clear(_changes);
+    }
+
+    /// <summary>Takes the answers of one step and the next over.</summary>
+    public void Add(ReadOnlySpan<double> coarse, ReadOnlySpan<double> fine, int length)
+    {
+        for (int probe = 0; probe < _count; probe++)
+        {
+            double change = coarse[probe * length + OutcomeLayout.Error] + fine[probe * length + OutcomeLayout.Error];
+            for (int i = 0; i < OutcomeLayout.Judged; i++)
+                change = Math.Max(change, Math.Abs(fine[probe * length + i] - coarse[probe * length + i]));
+            double believed = Steps == 0 ? Unproven * change : Math.Max(change, LeastFall * _changes[probe]);
+            _errors[Steps * Count + probe] = Math.Max(Rounding, Safety * believed);
+            _changes[probe] = change;
+        }
+        Steps++;
+    }
+
+    /// <summary>Error of a step at a probe, not much below that at its neighbors; NaN where it could not be solved.</summary>
+    public double At(int step, int probe)
+    {
+        double own = Of(step, probe), near = Math.Max(probe > 0 ? Of(step, probe - 1) : 0, probe + 1 < _count ? Of(step, probe + 1) : 0);
+        return near > own ? Math.Max(own, Beside * near) : own;
+    }
+
+    private double Of(int step, int probe) => _errors[step * Count + probe];
+
+    /// <summary>The largest of a step, but for probes that could not be solved.</summary>
+    public double Largest(int step)
+    {
+        double largest = 0;
+        for (int probe = 0; probe < _count; probe++)
+        {
+            if (Of(step, probe) > largest)
+                largest = Of(step, probe);
+        }
+        return largest;
+    }
+
+    /// <summary>The largest of a step at any wavelength of the group.</summary>
+    public double LargestCarried(int step) => Carrying * Largest(step);
+
+    /// <summary>Error of a step at any wavelength of the group; NaN where no probe tells.</summary>
+    public double Carried(int step, int wavelength)
+    {
+        if (Steps == 0)
+            return double.NaN;
+        int right = 0;
+        while (right < _count && _wavelengths[right] < wavelength)
+            right++;
+        double error = Math.Max(Side(step, right - 1, -1), Side(step, right, 1));
+        return error > 0 ? Carrying * error : double.NaN;
+    }
+
+    /// <summary>The first step with errors up to <paramref name="accuracy"/> at some wavelengths; the last one where none has.</summary>
+    public int StepFor(int first, int count, double accuracy)
+    {
+        int step = 0;
+        for (; step + 1 < Steps; step++)
+        {
+            bool all = true;
+            for (int wavelength = first; wavelength < first + count && all; wavelength++)
+                all = Carried(step, wavelength) <= accuracy;
+            if (all)
+                return step;
+        }
+        return step;
+    }
+
+    // The nearest probe on one side, and the next one beyond it.
+    private double Side(int step, int probe, int direction)
+    {
+        double error = 0, share = 1;
+        for (; probe >= 0 && probe < _count && share >= Beyond; probe += direction)
+        {
+            if (double.IsNaN(Of(step, probe)))
+                continue;
+            error = Math.Max(error, share * Of(step, probe));
+            share *= Beyond;
+        }
+        return error;
+    }
+}
