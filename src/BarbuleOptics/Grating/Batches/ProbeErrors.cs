@@ -14,6 +14,12 @@ internal sealed class ProbeErrors
     /// <summary>No larger fall of the change from one step to the next is believed: it may be so by accident.</summary>
     private const double LeastFall = 0.01;
 
+    /// <summary>The same once falls were seen: this share of the slowest, and no less than that.</summary>
+    private const double ShareOfFall = 0.3, LeastFallKnown = 0.003;
+
+    /// <summary>Largest ratio of two changes that is carried on.</summary>
+    private const double MostRatio = 0.8;
+
     /// <summary>Factor on the change of the first step, which nothing is known to have fallen to.</summary>
     private const double Unproven = 2;
 
@@ -31,6 +37,7 @@ internal sealed class ProbeErrors
 
     private readonly double[] _errors = new double[BatchLadder.MostSteps * Count];
     private readonly double[] _changes = new double[Count];
+    private readonly double[] _ratios = new double[Count];
     private readonly int[] _wavelengths = new int[Count];
     private int _count;
 
@@ -43,6 +50,7 @@ internal sealed class ProbeErrors
         wavelengths.CopyTo(_wavelengths);
         (_count, Steps) = (wavelengths.Length, 0);
         Array.Clear(_changes);
+        Array.Clear(_ratios);
     }
 
     /// <summary>Takes the answers of one step and the next over.</summary>
@@ -53,11 +61,21 @@ internal sealed class ProbeErrors
             double change = coarse[probe * length + OutcomeLayout.Error] + fine[probe * length + OutcomeLayout.Error];
             for (int i = 0; i < OutcomeLayout.Judged; i++)
                 change = Math.Max(change, Math.Abs(fine[probe * length + i] - coarse[probe * length + i]));
-            double believed = Steps == 0 ? Unproven * change : Math.Max(change, LeastFall * _changes[probe]);
-            _errors[Steps * Count + probe] = Math.Max(Rounding, Safety * believed);
+            _errors[Steps * Count + probe] = Math.Max(Rounding, Safety * Believed(probe, change));
             _changes[probe] = change;
         }
         Steps++;
+    }
+
+    private double Believed(int probe, double change)
+    {
+        if (Steps == 0)
+            return Unproven * change;
+        double ratio = change / Math.Max(_changes[probe], Rounding), slowest = _ratios[probe];
+        double least = Steps == 1 ? LeastFall : Math.Clamp(ShareOfFall * slowest, LeastFallKnown, 1);
+        _ratios[probe] = Math.Max(slowest, ratio);
+        // All later changes together, should they go on falling as slowly.
+        return Math.Max(change, least * _changes[probe]) / (1 - Math.Clamp(ratio, 0, MostRatio));
     }
 
     /// <summary>Error of a step at a probe, not much below that at its neighbors; NaN where it could not be solved.</summary>
