@@ -16,13 +16,8 @@ internal sealed class CrowdedPlanes
     private static readonly (double[] Nodes, double[] Weights) Rule = ElementRule.GaussLegendre(16);
 
     private readonly int _harmonics;
-    private readonly int _most;
     private readonly double _step;
-    private readonly ComplexMatrix _orders;
     private readonly ComplexMatrix _slope;
-    private readonly ComplexMatrix _size;
-    private readonly ComplexMatrix _sign;
-    private readonly ComplexMatrix _inverse;
     private readonly ComplexMatrix _kz;
     private readonly Complex[] _scaled;
 
@@ -30,27 +25,42 @@ internal sealed class CrowdedPlanes
     public CrowdedPlanes(WallCrowding crowding, ComplexMatrix slope, int harmonics, double periodNm)
     {
         int count = 2 * harmonics + 1, far = 4 * harmonics + 24;
-        (_harmonics, _slope, _step, _most) = (harmonics, slope, 2 * Math.PI / periodNm, harmonics + 4);
+        (_harmonics, _slope, _step, MostOrder) = (harmonics, slope, 2 * Math.PI / periodNm, harmonics + 4);
         ComplexMatrix all = Transform(crowding, harmonics, far, _step);
-        _orders = new ComplexMatrix(2 * _most + 1, count);
+        AllOrders = new ComplexMatrix(2 * MostOrder + 1, count);
         Orders = new ComplexMatrix(count, count);
         Kx = new ComplexMatrix(count, count);
-        (_size, _sign, _inverse, _kz) = (new ComplexMatrix(count, count), new ComplexMatrix(count, count), new ComplexMatrix(count, count), new ComplexMatrix(count, count));
+        (Size, Sign, Inverse, _kz) = (new ComplexMatrix(count, count), new ComplexMatrix(count, count), new ComplexMatrix(count, count), new ComplexMatrix(count, count));
         _scaled = new Complex[count];
         for (int n = -far; n <= far; n++)
         {
             ReadOnlySpan<Complex> row = all.Row(n + far);
-            if (Math.Abs(n) <= _most)
-                row.CopyTo(_orders.Row(n + _most));
+            if (Math.Abs(n) <= MostOrder)
+                row.CopyTo(AllOrders.Row(n + MostOrder));
             if (Math.Abs(n) <= harmonics)
                 row.CopyTo(Orders.Row(n + harmonics));
             if (n == 0)
                 continue;
-            AddSquare(row, _step * Math.Abs(n), _size);
-            AddSquare(row, Math.Sign(n), _sign);
-            AddSquare(row, 1 / (_step * Math.Abs(n)), _inverse);
+            AddSquare(row, _step * Math.Abs(n), Size);
+            AddSquare(row, Math.Sign(n), Sign);
+            AddSquare(row, 1 / (_step * Math.Abs(n)), Inverse);
         }
     }
+
+    /// <summary>Largest order whose kz is taken by itself.</summary>
+    public int MostOrder { get; }
+
+    /// <summary>C for the orders up to that.</summary>
+    public ComplexMatrix AllOrders { get; }
+
+    /// <summary>Sum of K |n| C_n^H C_n, C_n the row of order n.</summary>
+    public ComplexMatrix Size { get; }
+
+    /// <summary>Sum of sgn(n) C_n^H C_n.</summary>
+    public ComplexMatrix Sign { get; }
+
+    /// <summary>Sum of C_n^H C_n/(K |n|) without order 0.</summary>
+    public ComplexMatrix Inverse { get; }
 
     /// <summary>C for the orders -N..N.</summary>
     public ComplexMatrix Orders { get; }
@@ -66,16 +76,16 @@ internal sealed class CrowdedPlanes
         for (int e = 0; e < Kx.Elements.Length; e++)
         {
             Kx.Elements[e] = kx0 * _slope.Elements[e];
-            _kz.Elements[e] = i * (_size.Elements[e] + kx0 * _sign.Elements[e] - q / 2 * _inverse.Elements[e]);
+            _kz.Elements[e] = i * (Size.Elements[e] + kx0 * Sign.Elements[e] - q / 2 * Inverse.Elements[e]);
         }
         for (int m = -_harmonics; m <= _harmonics; m++)
             Kx[m + _harmonics, m + _harmonics] += m * _step;
-        for (int n = -_most; n <= _most; n++)
+        for (int n = -MostOrder; n <= MostOrder; n++)
         {
             Complex rest = waves.KzIn(permittivity, n);
             if (n != 0)
                 rest -= i * (_step * Math.Abs(n) + Math.Sign(n) * kx0 - q / (2 * _step * Math.Abs(n)));
-            AddSquare(_orders.Row(n + _most), rest, _kz);
+            AddSquare(AllOrders.Row(n + MostOrder), rest, _kz);
         }
     }
 

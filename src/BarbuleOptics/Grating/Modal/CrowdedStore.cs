@@ -66,7 +66,8 @@ internal sealed class CrowdedStore
         return entry.Operators;
     }
 
-    private int[] MaterialsOf(SlabInterval interval)
+    /// <summary>Material of each stretch.</summary>
+    public int[] MaterialsOf(SlabInterval interval)
     {
         var cut = new SlabCut(_shape);
         cut.Set(interval, (interval.TopNm + interval.BottomNm) / 2);

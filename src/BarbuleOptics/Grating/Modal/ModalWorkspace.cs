@@ -6,10 +6,10 @@ namespace BarbuleOptics.Grating.Modal;
 internal sealed class ModalWorkspace
 {
     /// <summary>Order of the thin elements that upright walls are doubled from.</summary>
-    private const int UprightOrder = 5;
+    private const int UprightOrder = 6;
 
     /// <summary>Largest wave number times height of such an element; half of it changes R by less than 1e-8.</summary>
-    private const double UprightReach = 1.5;
+    private const double UprightReach = 1;
 
     /// <summary>Largest wave number in a material times height of a piece: below pi, no piece is a closed resonator.</summary>
     private const double PieceReach = 1.5;
