@@ -12,6 +12,8 @@ barbule predict src/BarbuleOptics.Cli/Samples/hollow-rods.toml --angles 0,30,60 
 mkdir -p tests/BarbuleOptics.Tests/Documentation
 cp "$results/reflectance.png" tests/BarbuleOptics.Tests/Documentation/reflectance.png
 cp "$results/section.png" tests/BarbuleOptics.Tests/Documentation/section.png
+barbule predict src/BarbuleOptics.Cli/Samples/hollow-rods.toml --angles 0:60:10 --out "$results" --force >/dev/null
+for figure in chromaticity bird-space swatches; do cp "$results/$figure.png" "tests/BarbuleOptics.Tests/Documentation/$figure.png"; done
 barbule predict src/BarbuleOptics.Cli/Samples/spaced-hollow-rods.toml --angles 0,45 --overlay --out "$results" --force >/dev/null
 cp "$results/reflectance.png" tests/BarbuleOptics.Tests/Documentation/rods-are-not-films.png
 

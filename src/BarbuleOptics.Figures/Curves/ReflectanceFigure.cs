@@ -1,5 +1,6 @@
 using System.Globalization;
 using BarbuleOptics.Color;
+using BarbuleOptics.Figures.Colors;
 using BarbuleOptics.Figures.Drawing;
 using BarbuleOptics.Figures.Layout;
 using BarbuleOptics.Figures.Plots;
@@ -162,7 +163,7 @@ public sealed class ReflectanceFigure
         foreach (string sentence in SolverNotes())
             yield return sentence;
         if (_views.Any(view => view.Color is not null))
-            yield return $"Colors: illuminant {conditions.Illuminant.Name}, CIE 1931 2° observer; a perfect mirror is white.";
+            yield return $"Colors: illuminant {conditions.Illuminant.Name}, CIE 1931 2° observer{SwatchFigure.Adaptation(conditions)}; a perfect mirror is white.";
         string[] outside = [.. _views.Where(view => view.Color is { InSrgbGamut: false }).Select(view => Degrees.Text(view.Incidence))];
         if (outside.Length == _views.Count)
             yield return "They lie outside sRGB and are shown paler.";

@@ -12,7 +12,8 @@ public sealed class PredictRunTests
     private const string Wrong = "format = 1\n[cortex]\nthickness = -5\n";
 
     private static readonly string[] ResultNames =
-        ["absorption.csv", "orders.csv", "prediction.json", "reflectance.pdf", "reflectance.png", "reflectance.svg", "section.pdf", "section.png", "section.svg", "spectra.csv"];
+        ["absorption.csv", "bird-space.pdf", "bird-space.png", "bird-space.svg", "chromaticity.pdf", "chromaticity.png", "chromaticity.svg", "orders.csv", "prediction.json",
+            "reflectance.pdf", "reflectance.png", "reflectance.svg", "section.pdf", "section.png", "section.svg", "spectra.csv", "swatches.pdf", "swatches.png", "swatches.svg"];
 
     private static readonly string[] Coarse = ["--wavelengths", "400:700:10"];
 

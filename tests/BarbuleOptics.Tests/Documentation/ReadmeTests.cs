@@ -5,6 +5,7 @@ using BarbuleOptics.Files;
 using BarbuleOptics.Layering.Mixing;
 using BarbuleOptics.Prediction;
 using BarbuleOptics.Tests.Cli;
+using BarbuleOptics.Vision;
 using Xunit;
 
 namespace BarbuleOptics.Tests.Documentation;
@@ -33,6 +34,17 @@ public sealed partial class ReadmeTests
         rows.AddRange(HueTerms.Sectors.Select(sector => FormattableString.Invariant($"| {sector.Term} | {sector.FromDegrees} | {sector.ToDegrees} |")));
         rows.AddRange(HueTerms.Achromatic.Select(band => FormattableString.Invariant($"| {band.Term} | C* below {HueTerms.AchromaticChroma}, {Lightness(band)} | |")));
         Assert.Equal(string.Join('\n', rows), Between("hue terms"));
+    }
+
+    [Fact]
+    public void The_table_of_eyes_is_that_of_the_program()
+    {
+        List<string> rows = ["| eye | pigments, nm | most sensitive at, nm | media half, width, nm | cones | noise, long and double | from | obtained |", "|---|---|---|---|---|---|---|---|"];
+        rows.AddRange(VisualSystems.All.Select(eye => FormattableString.Invariant(
+            $"| `{eye.Name}` | {Joined(eye, cone => cone.PigmentNm)} | {Joined(eye, cone => Math.Round(cone.PeakNm(eye.Media)))} | {eye.Media.HalfNm}, {eye.Media.WidthNm} | {Joined(eye, cone => cone.Abundance)} | {eye.WeberFraction}, {eye.DoubleWeberFraction} | {eye.Source} | {eye.Obtained} |")));
+        Assert.Equal(string.Join('\n', rows), Between("eyes"));
+
+        static string Joined(VisualSystem eye, Func<Cone, double> value) => string.Join(' ', eye.SingleCones.Select(cone => FormattableString.Invariant($"{value(cone)}")));
     }
 
     [Fact]

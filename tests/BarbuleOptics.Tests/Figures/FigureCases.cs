@@ -1,7 +1,9 @@
 using System.Collections.Concurrent;
 using BarbuleOptics.Anatomy;
+using BarbuleOptics.Color;
 using BarbuleOptics.Files;
 using BarbuleOptics.Figures;
+using BarbuleOptics.Figures.Colors;
 using BarbuleOptics.Figures.Curves;
 using BarbuleOptics.Figures.Sections;
 using BarbuleOptics.Layering.Mixing;
@@ -10,6 +12,7 @@ using BarbuleOptics.Prediction;
 using BarbuleOptics.Quantities;
 using BarbuleOptics.Tests.Layering;
 using BarbuleOptics.Tests.Samples;
+using BarbuleOptics.Vision;
 using Xunit;
 
 namespace BarbuleOptics.Tests.Figures;
@@ -80,6 +83,9 @@ internal static class FigureCases
         ["ninety-angles"] = Seen([.. Enumerable.Range(0, 90).Select(i => (double)i)]),
         ["one-wavelength"] = Seen([0, 20, 40, 60]) with { Wavelengths = Grid(500, 500, 1) },
         ["far-infrared"] = Seen([0, 45]) with { Wavelengths = Grid(250, 20000, 10) },
+        ["four-eyes"] = Seen([0, 30, 60]) with { Eyes = [.. VisualSystems.All, VisualSystems.Violet with { Name = "marsh-singer with a name that is too long for its column" }], Illuminant = Illuminant.A },
+        ["no-eyes"] = Seen([0, 30]) with { Eyes = [] },
+        ["people-only"] = Seen([0, 30]) with { Wavelengths = Grid(400, 700, 5), Observer = StandardObserver.Cie1964TenDegree },
         ["p-polarized"] = Seen([0, 45]) with { Polarization = Polarizations.P },
     };
 
@@ -110,11 +116,18 @@ internal static class FigureCases
             Mixing = MixingRules.TryFind(rule, out IMixingRule? found) ? found : null,
         }));
 
-    /// <summary>Both figures, with the other solver's curves where there are any.</summary>
+    /// <summary>All figures, with the other solver's curves where there are any.</summary>
     public static IEnumerable<Figure> Figures(string name, FigureSize size)
     {
         StructurePrediction prediction = Predict(name);
-        return [ReflectanceFigure.Draw(prediction, size, overlays: true), SectionFigure.Draw(prediction, size)];
+        return [ReflectanceFigure.Draw(prediction, size, overlays: true), SectionFigure.Draw(prediction, size), .. ColorFigures(name, size)];
+    }
+
+    /// <summary>Those of color: chromaticity, space of birds, swatches.</summary>
+    public static IEnumerable<Figure> ColorFigures(string name, FigureSize size)
+    {
+        StructurePrediction prediction = Predict(name);
+        return [ChromaticityFigure.Draw(prediction, size), BirdSpaceFigure.Draw(prediction, size), SwatchFigure.Draw(prediction, size)];
     }
 
     // Coarse: figures are looked at here, not spectra.

@@ -52,7 +52,7 @@ public sealed class BirdVisionTests
     public void Cones_of_the_mallard_peak_where_they_were_found_to(double pigmentNm, double cutNm, double midNm, double peakNm)
         => Assert.Equal(peakNm, new Cone(pigmentNm, new OilDroplet(cutNm, midNm)).PeakNm(new OcularMedia(300, 1)), 3.0);
 
-    // Source: Hart 2002, J. Exp. Biol. 205:3925, 10.1242/jeb.205.24.3925 (abstract): 432, 477, 537, 605 nm. Ours: 429.2, 477.3, 537.0, 604.7. The slopes of the peafowl's droplets and the edge of its
+    // Source: Hart 2002, J. Exp. Biol. 205:3925, 10.1242/jeb.205.24.3925 (abstract): 432, 477, 537, 605 nm. Ours: 429.2, 478.6, 537.1, 604.7. The slopes of the peafowl's droplets and the edge of its
     // media were chosen with these peaks in view, so that this holds the end-to-end sum, not each number; the mallard above holds the formulas.
     [Fact]
     public void Cones_of_the_peafowl_peak_where_they_were_found_to()
