@@ -1,4 +1,6 @@
 using BarbuleOptics.Grating.Joining;
+using BarbuleOptics.Grating.Modal;
+using BarbuleOptics.Grating.Modal.Lanes;
 using BarbuleOptics.Lanes;
 
 namespace BarbuleOptics.Grating.Batches;
@@ -7,12 +9,18 @@ namespace BarbuleOptics.Grating.Batches;
 internal static class BatchElements
 {
     /// <summary>Whether there is an element for a kind.</summary>
-    public static bool Covers(ElementKind kind) => kind is RodKind { Rods.Count: 1 } rods && rods.Rods[0].IsRound;
+    public static bool Covers(ElementKind kind)
+        => kind is RodKind { Rods.Count: 1 } rods ? rods.Rods[0].IsRound : kind is SlabKind slab && UprightSlab.Covers(ShapeOf(slab));
 
     /// <summary>Makes the element of a kind that is covered.</summary>
     public static IBatchElement<TLanes> Create<TLanes>(ElementKind kind)
         where TLanes : struct, ILanes<TLanes>
-        => kind is RodKind rods
-            ? new RowElement<TLanes>(rods)
-            : throw new ArgumentException($"No batch element for {kind.GetType().Name}.", nameof(kind));
+        => kind switch
+        {
+            RodKind rods => new RowElement<TLanes>(rods),
+            SlabKind slab => new SlabElement<TLanes>(ShapeOf(slab)),
+            _ => throw new ArgumentException($"No batch element for {kind.GetType().Name}.", nameof(kind)),
+        };
+
+    private static SlabShape ShapeOf(SlabKind slab) => new(slab.Bodies, slab.HeightNm, slab.PeriodNm);
 }

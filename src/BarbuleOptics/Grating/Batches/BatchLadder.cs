@@ -3,13 +3,17 @@ using BarbuleOptics.Layering;
 
 namespace BarbuleOptics.Grating.Batches;
 
-/// <summary>The resolutions that a block climbs through: multipoles rise by two, and orders with them as in <see cref="ResolutionLadder"/>.</summary>
+/// <summary>The resolutions that a block climbs through: multipoles rise by two, harmonics of slabs and orders with them as in
+/// <see cref="ResolutionLadder"/>.</summary>
 internal sealed class BatchLadder
 {
     /// <summary>Most steps.</summary>
     public const int MostSteps = 12;
 
     private const int MostMultipoles = 22;
+
+    /// <summary>Harmonics of a slab by the step.</summary>
+    private static readonly int[] Harmonics = [2, 3, 5, 7, 10, 14, 20, 28, 40, 56, 80];
 
     /// <summary>Beyond, one wavelength at a time costs no more.</summary>
     private const int MostOrders = 16;
@@ -27,6 +31,9 @@ internal sealed class BatchLadder
             _most--;
     }
 
+    /// <summary>Whether there are slabs, whose errors fall unevenly.</summary>
+    public bool HasSlabs => _group.HasSlabs;
+
     /// <summary>Whether there is a step after one.</summary>
     public bool HasNext(int start, int step, int leastOrders)
     {
@@ -35,7 +42,9 @@ internal sealed class BatchLadder
     }
 
     /// <summary>Multipoles to begin with: the step after them is mostly enough.</summary>
-    public static int StartFor(double accuracy) => Math.Clamp(2 * (int)Math.Round(-Math.Log10(accuracy) / 2) - 3, 1, 9);
+    public int StartFor(double accuracy) => _group.HasSlabs
+        ? Math.Clamp(2 * (int)Math.Floor(-Math.Log10(accuracy) + 0.1) - 3, 1, 9)
+        : Math.Clamp(2 * (int)Math.Round(-Math.Log10(accuracy) / 2) - 3, 1, 9);
 
     /// <summary>One step.</summary>
     /// <param name="multipoles">Largest multipole.</param>
@@ -43,8 +52,15 @@ internal sealed class BatchLadder
     public Resolution At(int multipoles, int leastOrders)
     {
         int orders = Math.Max(1 + (multipoles + 1) / 4, Math.Max(1, leastOrders));
-        orders = Math.Max(orders, (int)Math.Ceiling(1.3 * multipoles * _group.PeriodNm / (Math.PI * _group.NearestNm)));
-        return new Resolution(orders, multipoles, 0, 0);
+        if (_group.HasRods)
+            orders = Math.Max(orders, (int)Math.Ceiling(1.3 * multipoles * _group.PeriodNm / (Math.PI * _group.NearestNm)));
+        if (!_group.HasSlabs)
+            return new Resolution(orders, multipoles, 0, 0);
+        int harmonics = Harmonics[(multipoles - 1) / 2] + leastOrders;
+        // Steps whose orders stood still would not show what the orders left out carry, exp(-2 k g) over a gap g and back.
+        double needed = _group.PeriodNm * Math.Log(30.0 * harmonics * harmonics) / (4 * Math.PI * Math.Max(_group.ClearNm, 1e-3 * _group.PeriodNm));
+        orders = Math.Max(orders, _group.HasCuts ? harmonics : (int)Math.Min(harmonics, Math.Ceiling(needed)));
+        return new Resolution(Math.Max(orders, 1 + (multipoles + 3) / 4), multipoles, harmonics, 0);
     }
 
     /// <summary>Largest order that travels in any medium at a wavelength.</summary>

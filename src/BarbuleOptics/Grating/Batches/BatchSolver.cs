@@ -21,7 +21,7 @@ internal sealed class BatchSolver<TLanes> : IBatchSolver
     private readonly PackSolver<TLanes> _solver;
     private readonly PackLanes<TLanes>[] _probePacks = MakePacks(Probes);
     private readonly List<PackLanes<TLanes>> _packs = [];
-    private readonly ProbeErrors[] _errors = [new(), new()];
+    private readonly ProbeErrors[] _errors;
     private readonly int[] _probes = new int[Probes];
     private readonly int[] _wavelengths = new int[TLanes.Count];
     private readonly double[][][] _climbed = [new double[BatchLadder.MostSteps][], new double[BatchLadder.MostSteps][]];
@@ -32,12 +32,13 @@ internal sealed class BatchSolver<TLanes> : IBatchSolver
     public BatchSolver(BatchPlan plan)
     {
         (_plan, _ladder, _solver) = (plan, new BatchLadder(plan.Stack), new PackSolver<TLanes>(plan));
+        _errors = [new(_ladder.HasSlabs), new(_ladder.HasSlabs)];
     }
 
     /// <inheritdoc/>
     public void Solve(in BatchRequest request, Span<double> electric, Span<double> magnetic)
     {
-        _start = BatchLadder.StartFor(request.Accuracy);
+        _start = _ladder.StartFor(request.Accuracy);
         bool same = ReferenceEquals(_known, request.Structure) && _knownBlock == (request.First, request.Count);
         (_known, _knownBlock) = (request.Structure, (request.First, request.Count));
         int length = request.Layout.Length;

@@ -3,7 +3,8 @@ using BarbuleOptics.Grating.Joining;
 namespace BarbuleOptics.Grating.Batches;
 
 /// <summary>Errors of each step of the ladder at the probes of a group, and what they say of the wavelengths between.</summary>
-internal sealed class ProbeErrors
+/// <param name="hasSlabs">Whether there are slabs, whose errors fall slowly and unevenly.</param>
+internal sealed class ProbeErrors(bool hasSlabs)
 {
     /// <summary>Number of probes.</summary>
     public const int Count = 8;
@@ -12,7 +13,7 @@ internal sealed class ProbeErrors
     private const double Safety = 1.4;
 
     /// <summary>No larger fall of the change from one step to the next is believed: it may be so by accident.</summary>
-    private const double LeastFall = 0.01;
+    private const double LeastFall = 0.01, LeastSlabFall = 0.1;
 
     /// <summary>The same once falls were seen: this share of the slowest, and no less than that.</summary>
     private const double ShareOfFall = 0.3, LeastFallKnown = 0.003;
@@ -72,7 +73,7 @@ internal sealed class ProbeErrors
         if (Steps == 0)
             return Unproven * change;
         double ratio = change / Math.Max(_changes[probe], Rounding), slowest = _ratios[probe];
-        double least = Steps == 1 ? LeastFall : Math.Clamp(ShareOfFall * slowest, LeastFallKnown, 1);
+        double first = hasSlabs ? LeastSlabFall : LeastFall, least = Steps == 1 || hasSlabs ? first : Math.Clamp(ShareOfFall * slowest, LeastFallKnown, 1);
         _ratios[probe] = Math.Max(slowest, ratio);
         // All later changes together, should they go on falling as slowly.
         return Math.Max(change, least * _changes[probe]) / (1 - Math.Clamp(ratio, 0, MostRatio));

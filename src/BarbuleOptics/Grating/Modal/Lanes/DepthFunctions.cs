@@ -24,6 +24,7 @@ internal static class DepthFunctions
     private static readonly (double Pole, double Part)[] OfT = [PartOfT((28 - RootOfT) / 2), PartOfT((28 + RootOfT) / 2)];
 
     /// <summary>Doubles of scratch for n functions: a system of 2 n columns, a result, and what elimination needs.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static int ScratchOf<TLanes>(int n)
         where TLanes : struct, ILanes<TLanes>
         => 3 * n * n * ComplexLanes<TLanes>.Stride + SymmetricLanes.ScratchOf<TLanes>(n);
@@ -39,6 +40,7 @@ internal static class DepthFunctions
     /// <param name="d">Receives D.</param>
     /// <param name="scratch">Of <see cref="ScratchOf"/>.</param>
     /// <returns>Square of the largest multiplier.</returns>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public static TLanes Find<TLanes>(
         ref double k, ref double z, bool isUnit, int n, double thinNm, int doublings, ref double c, ref double d, ref double scratch)
         where TLanes : struct, ILanes<TLanes>
@@ -74,6 +76,7 @@ internal static class DepthFunctions
     }
 
     // Z (K h^2 + q Z)^-1 Z.
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private static TLanes Fraction<TLanes>(ref double k, ref double z, bool isUnit, int n, double pole, ref double system, ref double result, ref double rest)
         where TLanes : struct, ILanes<TLanes>
     {

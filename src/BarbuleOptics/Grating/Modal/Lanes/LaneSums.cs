@@ -53,6 +53,7 @@ internal static class LaneSums
 
     /// <summary>Writes n rows of n elements, one <paramref name="factor"/> times the first matrix plus another times the second, into the left part of a
     /// system of <paramref name="width"/> columns.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public static void SetLeft<TLanes>(ref double system, int n, int width, ref double first, double factor, ref double second, double otherFactor)
         where TLanes : struct, ILanes<TLanes>
     {
@@ -66,6 +67,7 @@ internal static class LaneSums
     }
 
     /// <summary>Copies n rows of c elements, times a factor, into the right part of a system of n + c columns.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public static void SetRight<TLanes>(ref double system, int n, int c, ref double right, double factor)
         where TLanes : struct, ILanes<TLanes>
     {
@@ -78,6 +80,7 @@ internal static class LaneSums
     }
 
     /// <summary>Writes the unit matrix into the right part of a system of 2 n columns.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public static void SetRightIdentity<TLanes>(ref double system, int n)
         where TLanes : struct, ILanes<TLanes>
     {
@@ -90,6 +93,7 @@ internal static class LaneSums
     }
 
     /// <summary>Sets elements to zero.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public static void Clear<TLanes>(ref double target, int count)
         where TLanes : struct, ILanes<TLanes>
     {

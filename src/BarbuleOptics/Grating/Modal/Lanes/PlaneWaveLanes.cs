@@ -9,6 +9,7 @@ namespace BarbuleOptics.Grating.Modal.Lanes;
 internal static class PlaneWaveLanes
 {
     /// <summary>Wave vector in depth of an order, Im >= 0, never zero (<see cref="GratingWaves.LeastKz"/>), in 1/nm.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static ComplexLanes<TLanes> DepthWave<TLanes>(SlabLight light, ComplexLanes<TLanes> permittivity, int order)
         where TLanes : struct, ILanes<TLanes>
     {
@@ -26,6 +27,7 @@ internal static class PlaneWaveLanes
     /// <param name="isElectric">Whether E is followed, otherwise H.</param>
     /// <param name="target">Receives n rows of n elements.</param>
     /// <param name="scratch">Room for an element for each order.</param>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public static void SetOutgoing<TLanes>(UprightSector sector, bool hasSums, SlabLight light, bool isElectric, ref double target, ref double scratch)
         where TLanes : struct, ILanes<TLanes>
     {

@@ -16,6 +16,7 @@ internal readonly ref struct PortLanes(Span<double> reflection, Span<double> tra
     public int MostOrder { get; } = mostOrder;
 
     /// <summary>Sets all to zero.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public void Clear<TLanes>()
         where TLanes : struct, ILanes<TLanes>
     {
@@ -30,6 +31,7 @@ internal readonly ref struct PortLanes(Span<double> reflection, Span<double> tra
     /// <param name="count">Number of ports.</param>
     /// <param name="parity">0 where a port is an order, 1 or -1 where it is the even or odd combination of two; the first port of even ones is order 0,
     /// of odd ones order 1.</param>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public void Add<TLanes>(ref double even, ref double odd, int count, int parity)
         where TLanes : struct, ILanes<TLanes>
     {
@@ -50,6 +52,7 @@ internal readonly ref struct PortLanes(Span<double> reflection, Span<double> tra
         }
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void AddImages<TLanes>(int m, int n, int parity, ComplexLanes<TLanes> reflected, ComplexLanes<TLanes> passed)
         where TLanes : struct, ILanes<TLanes>
     {
@@ -63,6 +66,7 @@ internal readonly ref struct PortLanes(Span<double> reflection, Span<double> tra
             AddTo(MostOrder - m, MostOrder - n, share, reflected, passed);
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void AddTo<TLanes>(int row, int column, double share, ComplexLanes<TLanes> reflected, ComplexLanes<TLanes> passed)
         where TLanes : struct, ILanes<TLanes>
     {
@@ -77,14 +81,13 @@ internal readonly ref struct PortLanes(Span<double> reflection, Span<double> tra
     /// <param name="light">The light.</param>
     /// <param name="isElectric">Whether E is followed, otherwise H.</param>
     /// <param name="axis">Place of the axis in periods.</param>
-    /// <returns>Whether all are finite.</returns>
-    public bool TryTurnToAmplitudes<TLanes>(SlabLight light, bool isElectric, double axis)
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+    public void TurnToAmplitudes<TLanes>(SlabLight light, bool isElectric, double axis)
         where TLanes : struct, ILanes<TLanes>
     {
         int size = ComplexLanes<TLanes>.Stride, channels = 2 * MostOrder + 1;
         ComplexLanes<TLanes> matrix = light.PermittivityOf<TLanes>(Section.Matrix);
         ComplexLanes<TLanes> flux = isElectric ? ComplexLanes<TLanes>.Broadcast(0, -2) : ComplexLanes<TLanes>.Broadcast(0, -2) * matrix.Reciprocal();
-        TLanes sum = TLanes.Broadcast(0);
         for (int column = 0; column < channels; column++)
         {
             ComplexLanes<TLanes> right = flux * PlaneWaveLanes.DepthWave(light, matrix, column - MostOrder);
@@ -96,13 +99,9 @@ internal readonly ref struct PortLanes(Span<double> reflection, Span<double> tra
                 ComplexLanes<TLanes> reflected = factor * ComplexLanes<TLanes>.Load(ref reflection), passed = factor * ComplexLanes<TLanes>.Load(ref transmission);
                 if (row == column)
                     reflected -= ComplexLanes<TLanes>.Broadcast(1);
-                sum += reflected.Norm + passed.Norm;
                 ComplexLanes<TLanes>.Store(reflected, ref reflection);
                 ComplexLanes<TLanes>.Store(passed, ref transmission);
             }
         }
-        // NaN is below nothing.
-        TLanes isFinite = TLanes.LessThan(sum, TLanes.Broadcast(1e100));
-        return !TLanes.Any(TLanes.LessThan(TLanes.Select(isFinite, TLanes.Broadcast(1), TLanes.Broadcast(0)), TLanes.Broadcast(0.5)));
     }
 }

@@ -1,3 +1,4 @@
+using System.Runtime.CompilerServices;
 using BarbuleOptics.Lanes;
 
 namespace BarbuleOptics.Grating.Modal.Lanes;
@@ -22,6 +23,7 @@ internal sealed class SlabLight
     public Span<double> Permittivities => _permittivities;
 
     /// <summary>Permittivity of a material.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public ComplexLanes<TLanes> PermittivityOf<TLanes>(int material)
         where TLanes : struct, ILanes<TLanes>
         => ComplexLanes<TLanes>.Load(ref _permittivities[material * ComplexLanes<TLanes>.Stride]);

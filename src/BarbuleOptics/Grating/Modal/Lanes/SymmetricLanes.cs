@@ -13,6 +13,7 @@ namespace BarbuleOptics.Grating.Modal.Lanes;
 internal static class SymmetricLanes
 {
     /// <summary>Doubles of scratch that <see cref="Eliminate"/> needs for n rows.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static int ScratchOf<TLanes>(int n)
         where TLanes : struct, ILanes<TLanes>
         => 3 * n * ComplexLanes<TLanes>.Stride;

@@ -10,6 +10,7 @@ internal static class UprightKernel
     private static readonly double[] Steepest = [0.4, 0.82, 1.89, 74, 290, 1190, 4700];
 
     /// <summary>Doubles of memory that <see cref="Solve"/> needs for n functions.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static int MemoryOf<TLanes>(int n)
         where TLanes : struct, ILanes<TLanes>
         => 6 * n * n * ComplexLanes<TLanes>.Stride + DepthFunctions.ScratchOf<TLanes>(n + 9);
@@ -23,6 +24,7 @@ internal static class UprightKernel
     /// <param name="ports">Receives the answers, by adding.</param>
     /// <param name="memory">Of <see cref="MemoryOf"/>.</param>
     /// <returns>Square of the largest multiplier met.</returns>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public static TLanes Solve<TLanes>(SlabShape shape, UprightGeometry geometry, int parity, SlabLight light, bool isElectric, in PortLanes ports, ref double memory)
         where TLanes : struct, ILanes<TLanes>
     {
@@ -68,6 +70,7 @@ internal static class UprightKernel
     }
 
     // K times the square of a depth, and Z.
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private static TLanes SetEquations<TLanes>(
         UprightGeometry geometry, int parity, int interval, SlabLight light, bool isElectric, double thinNm, ref double k, ref double z, ref double scratch)
         where TLanes : struct, ILanes<TLanes>
@@ -118,6 +121,7 @@ internal static class UprightKernel
     }
 
     // A number times the sum over the materials of e, or 1/e, times the material's share.
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private static void SetSum<TLanes>((int Material, double[] Matrix)[] shares, SlabLight light, bool isInverse, TLanes factor, int count, ref double target)
         where TLanes : struct, ILanes<TLanes>
     {
@@ -129,6 +133,7 @@ internal static class UprightKernel
         }
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
     private static void AddToDiagonal<TLanes>(ref double matrix, int n, int i, TLanes value)
         where TLanes : struct, ILanes<TLanes>
     {
@@ -137,6 +142,7 @@ internal static class UprightKernel
     }
 
     // The flux at the top of a piece, of what lies below it: Y becomes a - b (a + Y)^-1 b, b = d/2.
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private static TLanes Carry<TLanes>(ref double a, ref double d, int n, ref double y, ref double scratch)
         where TLanes : struct, ILanes<TLanes>
     {
@@ -148,6 +154,7 @@ internal static class UprightKernel
     }
 
     // What the plane waves of some ports make of each other.
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private static TLanes Close<TLanes>(UprightSector sector, int first, int count, ref double outgoing, ref double y, ref double result, ref double scratch)
         where TLanes : struct, ILanes<TLanes>
     {

@@ -1,3 +1,4 @@
+using System.Runtime.CompilerServices;
 using BarbuleOptics.Lanes;
 
 namespace BarbuleOptics.Grating.Modal.Lanes;
@@ -37,8 +38,9 @@ internal sealed class UprightSlab
     /// <param name="harmonics">N; at least M is used.</param>
     /// <param name="reflection">Receives (2 M + 1)^2 complex elements, row by row.</param>
     /// <param name="transmission">Likewise.</param>
-    /// <returns>False where the equations have no solution of enough digits in some lane.</returns>
-    public bool TryScatter<TLanes>(SlabLight light, bool isElectric, int mostOrder, int harmonics, Span<double> reflection, Span<double> transmission)
+    /// <returns>Mask of the lanes in which elimination lost too many digits; where all are lost answers are not finite.</returns>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+    public TLanes Scatter<TLanes>(SlabLight light, bool isElectric, int mostOrder, int harmonics, Span<double> reflection, Span<double> transmission)
         where TLanes : struct, ILanes<TLanes>
     {
         harmonics = Math.Max(harmonics, mostOrder);
@@ -61,7 +63,7 @@ internal sealed class UprightSlab
         {
             growth = UprightKernel.Solve<TLanes>(_shape, geometry, 0, light, isElectric, ports, ref memory);
         }
-        return !TLanes.Any(TLanes.LessThan(TLanes.Broadcast(MostGrowth), growth))
-            && ports.TryTurnToAmplitudes<TLanes>(light, isElectric, _shape.AxisNm / _shape.PeriodNm);
+        ports.TurnToAmplitudes<TLanes>(light, isElectric, _shape.AxisNm / _shape.PeriodNm);
+        return TLanes.LessThan(TLanes.Broadcast(MostGrowth), growth);
     }
 }

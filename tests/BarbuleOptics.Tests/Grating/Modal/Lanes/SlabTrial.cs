@@ -32,7 +32,7 @@ internal readonly struct SlabTrial(
         light.Set(k0, kx0, periodNm);
         double[] reflection = new double[channels * channels * 2 * lanes], transmission = new double[channels * channels * 2 * lanes];
         var shape = new SlabShape(bodies, heightNm, periodNm);
-        if (!UprightSlab.Covers(shape) || !new UprightSlab(shape).TryScatter<TLanes>(light, field == RodField.Electric, mostOrder, harmonics, reflection, transmission))
+        if (!UprightSlab.Covers(shape) || TLanes.Any(new UprightSlab(shape).Scatter<TLanes>(light, field == RodField.Electric, mostOrder, harmonics, reflection, transmission)))
             return double.NaN;
         double most = 0;
         for (int lane = 0; lane < lanes; lane++)
