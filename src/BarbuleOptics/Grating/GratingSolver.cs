@@ -16,12 +16,21 @@ namespace BarbuleOptics.Grating;
 /// </remarks>
 public sealed class GratingSolver : ISpectralSolver<SectionPermittivities, GratingWorkspace>
 {
+    /// <summary>One group of a batch.</summary>
+    private const int VectorBlock = 64;
+
+    /// <summary>Enough for what one wavelength teaches the next.</summary>
+    private const int ScalarBlock = 16;
+
     /// <summary>A solver that refines until its estimate of the largest error of R, T, A and diffracted R is <paramref name="accuracy"/> or less.</summary>
     /// <param name="accuracy">Largest absolute error asked for; above 0.</param>
     public GratingSolver(double accuracy) => Accuracy = Guard.Positive(accuracy);
 
     /// <summary>Largest absolute error asked for.</summary>
     public double Accuracy { get; }
+
+    /// <summary>Wavelengths that are best solved together.</summary>
+    internal static int BlockOf(Section section) => BatchSolvers.Covers(section) ? VectorBlock : ScalarBlock;
 
     /// <inheritdoc/>
     public GratingWorkspace CreateWorkspace(SectionPermittivities structure)

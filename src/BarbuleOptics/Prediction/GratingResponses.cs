@@ -10,9 +10,6 @@ namespace BarbuleOptics.Prediction;
 /// <summary>A section as it is, solved for all angles and polarizations on several threads.</summary>
 internal sealed class GratingResponses
 {
-    /// <summary>Wavelengths a piece of work has; the pieces do not depend on the number of threads.</summary>
-    private const int Block = 16;
-
     /// <summary>From this number of blocks on, a piece has all angles of its wavelengths, otherwise one.</summary>
     private const int LeastPieces = 12;
 
@@ -78,47 +75,56 @@ internal sealed class GratingResponses
 
     private void Solve(IProgress<double>? progress, CancellationToken cancellation)
     {
-        int blocks = (_conditions.Wavelengths.Count + Block - 1) / Block, angles = _conditions.Incidences.Count, done = 0;
+        // Pieces of work do not depend on the number of threads.
+        int block = GratingSolver.BlockOf(_section);
+        int blocks = (_conditions.Wavelengths.Count + block - 1) / block, angles = _conditions.Incidences.Count, done = 0;
+        var permittivities = new SectionPermittivities(_section, _catalog, _conditions.Wavelengths.Nanometres);
         // What depends on the wavelength alone is kept for the next angle, where there are enough blocks to go round.
         int together = blocks >= LeastPieces ? angles : 1, pieces = blocks * (angles / together);
         var options = new ParallelOptions { MaxDegreeOfParallelism = _conditions.Threads, CancellationToken = cancellation };
         // Short wavelengths, which take longest, come first, and pieces are handed out one by one.
-        Parallel.ForEach(Partitioner.Create(Enumerable.Range(0, pieces), EnumerablePartitionerOptions.NoBuffering), options, piece =>
-        {
-            int firstAngle = piece % (angles / together) * together;
-            SolveBlock(firstAngle, firstAngle + together, piece / (angles / together) * Block, cancellation);
-            progress?.Report((double)Interlocked.Increment(ref done) / pieces);
-        });
+        Parallel.ForEach(
+            Partitioner.Create(Enumerable.Range(0, pieces), EnumerablePartitionerOptions.NoBuffering), options,
+            () => _solver.CreateWorkspace(permittivities),
+            (piece, _, workspace) =>
+            {
+                int firstAngle = piece % (angles / together) * together, first = piece / (angles / together) * block;
+                int length = Math.Min(block, _conditions.Wavelengths.Count - first);
+                for (int angle = firstAngle; angle < firstAngle + together; angle++)
+                    SolveBlock(permittivities, workspace, angle, first, length, cancellation);
+                progress?.Report((double)Interlocked.Increment(ref done) / pieces);
+                return workspace;
+            },
+            _ => { });
     }
 
-    private void SolveBlock(int firstAngle, int endAngle, int first, CancellationToken cancellation)
+    private void SolveBlock(
+        SectionPermittivities permittivities, GratingWorkspace workspace, int angle, int first, int length, CancellationToken cancellation)
     {
-        int length = Math.Min(Block, _conditions.Wavelengths.Count - first);
-        var permittivities = new SectionPermittivities(_section, _catalog, _conditions.Wavelengths.Nanometres.Slice(first, length));
-        GratingWorkspace workspace = _solver.CreateWorkspace(permittivities);
-        var unused = new double[length];
-        for (int angle = firstAngle; angle < endAngle; angle++)
+        BeamAccount[] beams = [.. _beams.Where(beam => beam.Angle == angle)];
+        // Both polarizations at once share what depends on the direction; the workspace then knows each.
+        if (beams.Length > 1)
         {
-            BeamAccount[] beams = [.. _beams.Where(beam => beam.Angle == angle)];
-            // Both polarizations at once share what depends on the direction; the workspace then knows each.
-            if (beams.Length > 1)
-                _solver.Solve(permittivities, RequestFor(angle, Polarizations.Unpolarized, length), workspace, new BeamScratch(beams[0], length).Within(OnlyReflectance(unused)));
-            foreach (BeamAccount beam in beams)
-            {
-                cancellation.ThrowIfCancellationRequested();
-                var scratch = new BeamScratch(beam, length);
-                _solver.Solve(
-                    permittivities, RequestFor(angle, beam.Polarization, length), workspace, scratch.Within(Powers.Block(angle, beam.Polarization, first, length)));
-                scratch.CopyTo(beam, first);
-            }
+            _solver.Solve(
+                permittivities, RequestFor(angle, Polarizations.Unpolarized, first, length), workspace,
+                new BeamScratch(beams[0], length).Within(OnlyReflectance(new double[length])));
+        }
+        foreach (BeamAccount beam in beams)
+        {
+            cancellation.ThrowIfCancellationRequested();
+            var scratch = new BeamScratch(beam, length);
+            _solver.Solve(
+                permittivities, RequestFor(angle, beam.Polarization, first, length), workspace,
+                scratch.Within(Powers.Block(angle, beam.Polarization, first, length)));
+            scratch.CopyTo(beam, first);
         }
     }
 
     private static SolverResponse OnlyReflectance(Span<double> reflectance)
         => new() { Reflectance = reflectance, Transmittance = reflectance, Absorptance = reflectance, DiffractedReflectance = reflectance };
 
-    private SolverRequest RequestFor(int angle, Polarizations polarization, int length)
-        => new(0, length, _conditions.Incidences[angle], polarization, SolverOutputs.Transmittance | SolverOutputs.Absorptance);
+    private SolverRequest RequestFor(int angle, Polarizations polarization, int first, int length)
+        => new(first, length, _conditions.Incidences[angle], polarization, SolverOutputs.Transmittance | SolverOutputs.Absorptance);
 
     private IEnumerable<T> ByResponse<T>(Func<int, Polarizations, BeamAccount, BeamAccount, IEnumerable<T>> make)
     {

@@ -6,7 +6,10 @@ namespace BarbuleOptics.Benchmarks.Kernels;
 internal abstract class Workload
 {
     /// <summary>All of them, in the order they are printed.</summary>
-    public static IReadOnlyList<Workload> All { get; } = [new FilmsAngles(), new FilmsEnsemble(), new FilmsGraded()];
+    public static IReadOnlyList<Workload> All { get; } = 
+    [
+        new FilmsAngles(), new FilmsEnsemble(), new FilmsGraded(), new Rods("rods-solid", 0, 1e-6), new Rods("rods-hollow", 70, 1e-6), new Rods("rods-1e-4", 70, 1e-4),
+    ];
 
     /// <summary>Name in the output.</summary>
     public abstract string Name { get; }

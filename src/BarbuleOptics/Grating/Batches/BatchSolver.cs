@@ -26,8 +26,8 @@ internal sealed class BatchSolver<TLanes> : IBatchSolver
     private readonly int[] _wavelengths = new int[TLanes.Count];
     private readonly double[][][] _climbed = [new double[BatchLadder.MostSteps][], new double[BatchLadder.MostSteps][]];
     private int _start;
-    private object? _known;
-    private (int First, int Count) _knownBlock;
+    private object? _known, _probed;
+    private (int First, int Count) _knownBlock, _probedBlock;
 
     public BatchSolver(BatchPlan plan)
     {
@@ -56,8 +56,9 @@ internal sealed class BatchSolver<TLanes> : IBatchSolver
         int probes = Math.Min(Probes, request.Count);
         for (int i = 0; i < probes; i++)
             _probes[i] = request.First + (probes == 1 ? 0 : i * (request.Count - 1) / (probes - 1));
-        bool several = request.Count > Group || firstPack > 0 || _packs.Count > Group / TLanes.Count;
-        int leastOrders = SetProbePacks(request, probes, packsAreKnown && !several);
+        bool areKnown = ReferenceEquals(_probed, request.Structure) && _probedBlock == (request.First, request.Count);
+        (_probed, _probedBlock) = (request.Structure, (request.First, request.Count));
+        int leastOrders = SetProbePacks(request, probes, areKnown);
         if (_ladder.At(_start + 2, leastOrders).Orders > BatchPlan.MostOrder)
         {
             Leave(electric, request.Layout.Length);
@@ -167,7 +168,7 @@ internal sealed class BatchSolver<TLanes> : IBatchSolver
     private PackLanes<TLanes> PackFor(int number, in BatchRequest request, int first, int count, bool isKnown)
     {
         while (_packs.Count <= number)
-            _packs.Add(new PackLanes<TLanes>());
+            _packs.Add(new PackLanes<TLanes>(_probePacks.Length + _packs.Count));
         PackLanes<TLanes> pack = _packs[number];
         if (isKnown)
             return pack;
@@ -178,5 +179,5 @@ internal sealed class BatchSolver<TLanes> : IBatchSolver
     }
 
     private static PackLanes<TLanes>[] MakePacks(int wavelengths)
-        => [.. Enumerable.Range(0, (wavelengths + TLanes.Count - 1) / TLanes.Count).Select(_ => new PackLanes<TLanes>())];
+        => [.. Enumerable.Range(0, (wavelengths + TLanes.Count - 1) / TLanes.Count).Select(number => new PackLanes<TLanes>(number))];
 }

@@ -13,6 +13,9 @@ internal static class BatchSolvers
     public static IBatchSolver? TryCreate(Section section, LaneWidth width)
         => BatchPlan.TryOf(StackPlan.Of(section)) is BatchPlan plan ? width.Invoke<Maker, IBatchSolver>(new Maker(plan)) : null;
 
+    /// <summary>Whether blocks of the section's wavelengths are solved together, straight across its rods at least.</summary>
+    public static bool Covers(Section section) => section.IsAcross && BatchPlan.TryOf(StackPlan.Of(section)) is not null;
+
     /// <summary>Makes a solver with vectors of one width.</summary>
     private readonly struct Maker(BatchPlan plan) : ILaneAction<IBatchSolver>
     {

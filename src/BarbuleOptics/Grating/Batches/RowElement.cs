@@ -14,15 +14,14 @@ internal sealed class RowElement<TLanes> : IBatchElement<TLanes>
     private const double LeastPivot = 1e-10;
 
     private readonly CellRod _kind;
-    private readonly RodLanes<TLanes> _rod;
+    private readonly List<RodLanes<TLanes>> _rods = [];
     private readonly RowLanes<TLanes> _row;
     private DirectionLanes<TLanes> _direction = null!;
 
     public RowElement(RodKind kind)
     {
         _kind = kind.Rods[0];
-        _rod = new RodLanes<TLanes>(_kind.Outer.HalfHeightNm, _kind.Core?.HalfHeightNm ?? 0, _kind.Material, _kind.CoreMaterial);
-        _row = new RowLanes<TLanes>(_rod, kind.PeriodNm);
+        _row = new RowLanes<TLanes>(_kind.Outer.HalfHeightNm, kind.PeriodNm);
     }
 
     /// <inheritdoc/>
@@ -46,8 +45,12 @@ internal sealed class RowElement<TLanes> : IBatchElement<TLanes>
     public void SetDirection(DirectionLanes<TLanes> direction, in Resolution resolution)
     {
         _direction = direction;
-        _rod.Prepare(direction.Channels.Pack, resolution.Multipoles, direction.Tables);
-        _row.SetDirection(direction.Channels, direction.Sums(2 * resolution.Multipoles), resolution.Multipoles);
+        // Answers of rods know no direction: each pack's are kept for the next one.
+        PackLanes<TLanes> pack = direction.Channels.Pack;
+        while (_rods.Count <= pack.Number)
+            _rods.Add(new RodLanes<TLanes>(_kind.Outer.HalfHeightNm, _kind.Core?.HalfHeightNm ?? 0, _kind.Material, _kind.CoreMaterial));
+        _rods[pack.Number].Prepare(pack, resolution.Multipoles, direction.Tables);
+        _row.SetDirection(_rods[pack.Number], direction.Channels, direction.Sums(2 * resolution.Multipoles), resolution.Multipoles);
     }
 
     /// <inheritdoc/>

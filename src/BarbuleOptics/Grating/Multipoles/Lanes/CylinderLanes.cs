@@ -24,6 +24,9 @@ internal sealed class CylinderLanes<TLanes>
 
     public CylinderLanes() => _parts.Reserve(3);
 
+    /// <summary>Orders that the recurrence is begun for: tables of equal room agree to the last digit.</summary>
+    public static int RoomFor(int most) => (most | 15) + 1;
+
     /// <summary>J_m(z) m!/s^m exp(-Im z).</summary>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public ComplexLanes<TLanes> J(int m) => _j[m];
@@ -64,7 +67,7 @@ internal sealed class CylinderLanes<TLanes>
         TLanes s = TLanes.Broadcast(0.5) * size, square = s * s;
         ComplexLanes<TLanes> turn = TLanes.Broadcast(1) / size * z.Conjugate;
         double largest = Largest(size);
-        int start = Math.Max(most + 9, (int)(largest + 4 + 12 * Math.Cbrt(largest)));
+        int start = Math.Max(RoomFor(most) + 9, (int)(largest + 4 + 12 * Math.Cbrt(largest)));
         ComplexLanes<TLanes> above = ComplexLanes<TLanes>.Broadcast(0), value = ComplexLanes<TLanes>.Broadcast(1e-30);
         ComplexLanes<TLanes> total = above, even = above, odd = above;
         for (int m = start; m >= 0; m--)

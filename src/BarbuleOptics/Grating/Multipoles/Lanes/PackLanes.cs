@@ -17,7 +17,16 @@ internal sealed class PackLanes<TLanes>
     private double[] _largest = [];
     private bool[] _absorbs = [];
 
-    public PackLanes() => _reals.Reserve(1);
+    /// <summary>A pack.</summary>
+    /// <param name="number">Its number among those of one solver, by which others keep what belongs to it.</param>
+    public PackLanes(int number = 0)
+    {
+        Number = number;
+        _reals.Reserve(1);
+    }
+
+    /// <summary>Its number among those of one solver.</summary>
+    public int Number { get; }
 
     /// <summary>Number of lanes in use.</summary>
     public int Count { get; private set; }

@@ -30,9 +30,6 @@ internal sealed class RodLanes<TLanes>
     public RodLanes(double radiusNm, double coreRadiusNm, int material, int coreMaterial)
         => (_radiusNm, _coreRadiusNm, _material, _coreMaterial) = (radiusNm, coreRadiusNm, material, coreMaterial);
 
-    /// <summary>Radius, in nm.</summary>
-    public double RadiusNm => _radiusNm;
-
     /// <summary>1/(e_m b/a) of multipole m.</summary>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public ComplexLanes<TLanes> Inverse(RodField field, int m) => _inverse[(int)field * (_top + 1) + m];
@@ -51,7 +48,7 @@ internal sealed class RodLanes<TLanes>
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public void Prepare(PackLanes<TLanes> pack, int top, RodTables<TLanes> tables)
     {
-        if (ReferenceEquals(pack, _pack) && pack.Version == _version && top <= _top)
+        if (ReferenceEquals(pack, _pack) && pack.Version == _version && top <= _top && CylinderLanes<TLanes>.RoomFor(top) == CylinderLanes<TLanes>.RoomFor(_top))
             return;
         (_pack, _version, _top) = (pack, pack.Version, top);
         _inverse.Reserve(2 * (top + 1));

@@ -13,23 +13,24 @@ namespace BarbuleOptics.Grating.Multipoles.Lanes;
 internal sealed class RowLanes<TLanes>
     where TLanes : struct, ILanes<TLanes>
 {
-    private readonly RodLanes<TLanes> _rod;
+    private readonly double _radiusNm;
     private readonly CouplingShares _shares;
     private readonly Half _even = new();
     private readonly Half _odd = new();
     private readonly LaneBuffer<TLanes> _gains = new();
     private readonly LaneBuffer<TLanes> _amplitudes = new();
+    private RodLanes<TLanes> _rod = null!;
     private RodField _field;
     private int _top;
     private int _orders;
 
     /// <summary>A row.</summary>
-    /// <param name="rod">Its rods.</param>
+    /// <param name="radiusNm">Radius of its rods, in nm.</param>
     /// <param name="periodNm">Their distance, in nm.</param>
-    public RowLanes(RodLanes<TLanes> rod, double periodNm)
+    public RowLanes(double radiusNm, double periodNm)
     {
-        _rod = rod;
-        _shares = new CouplingShares(rod.RadiusNm / periodNm);
+        _radiusNm = radiusNm;
+        _shares = new CouplingShares(radiusNm / periodNm);
         PeriodNm = periodNm;
     }
 
@@ -47,8 +48,9 @@ internal sealed class RowLanes<TLanes>
 
     /// <summary>Prepares what both fields share.</summary>
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
-    public void SetDirection(ChannelLanes<TLanes> channels, LatticeLanes<TLanes> sums, int top)
+    public void SetDirection(RodLanes<TLanes> rod, ChannelLanes<TLanes> channels, LatticeLanes<TLanes> sums, int top)
     {
+        _rod = rod;
         (_top, _orders) = (top, channels.Orders);
         _shares.Reserve(top);
         Reflect.Reserve(_orders * _orders);
@@ -58,7 +60,7 @@ internal sealed class RowLanes<TLanes>
         _even.Reserve(top + 1, _orders);
         _odd.Reserve(top, _orders);
         ComplexLanes<TLanes> k = channels.Pack.WaveNumber(Layering.Section.Matrix), inverse = k.Reciprocal();
-        TLanes s = TLanes.Broadcast(_rod.RadiusNm / 2) * TLanes.Sqrt(k.Norm), square = s * s;
+        TLanes s = TLanes.Broadcast(_radiusNm / 2) * TLanes.Sqrt(k.Norm), square = s * s;
         FillCouplings(sums, square);
         for (int place = 0; place < _orders; place++)
         {
