@@ -38,9 +38,21 @@ public sealed class Spec2cieTests
         double[] foundLab = [color.Lab.L, color.Lab.A, color.Lab.B];
         Assert.InRange(Largest(found, xyz), 0, 0.02);
         Assert.InRange(Largest(foundLab, lab), 0, 0.05);
+        // L*u*v* was compared later, within the same limit.
+        Assert.InRange(Largest([color.Luv.L, color.Luv.U, color.Luv.V], Luv(xyz, white, lab[0])), 0, 0.05);
     }
 
     private static double Largest(double[] a, double[] b) => a.Zip(b, static (x, y) => Math.Abs(x - y)).Max();
+
+    /// <summary>ISO/CIE 11664-5, from tristimulus values.</summary>
+    private static double[] Luv(double[] xyz, double[] white, double lightness)
+    {
+        (double u, double v) = Place(xyz);
+        (double u0, double v0) = Place(white);
+        return [lightness, 13 * lightness * (u - u0), 13 * lightness * (v - v0)];
+
+        static (double U, double V) Place(double[] values) => (4 * values[0] / (values[0] + 15 * values[1] + 3 * values[2]), 9 * values[1] / (values[0] + 15 * values[1] + 3 * values[2]));
+    }
 
     /// <summary>ISO/CIE 11664-4 with the rounded constants of its older editions, written out here again.</summary>
     private static double[] Lab(double[] xyz, double[] white)
