@@ -29,24 +29,41 @@ public readonly record struct BirdHue(string Term, bool IsNonspectral)
     /// <exception cref="ArgumentException">There are not four.</exception>
     public static BirdHue Of(ReadOnlySpan<double> relative, IReadOnlyList<string> names)
     {
-        ArgumentNullException.ThrowIfNull(names);
+        int cones = ConesOf(relative, out bool isNonspectral);
+        return new BirdHue(TermOf(cones, names), isNonspectral);
+    }
+
+    /// <summary>The cones that name the hue, for many colors: allocates nothing.</summary>
+    /// <param name="relative">Relative catches of the four single cones, from the shortest.</param>
+    /// <param name="isNonspectral">Whether the two largest are not neighbors.</param>
+    /// <returns>Bit 0 for the shortest cone, to bit 3 for the long one; 0 for an achromatic color. <see cref="TermOf"/> makes the word.</returns>
+    /// <exception cref="ArgumentException">There are not four.</exception>
+    public static int ConesOf(ReadOnlySpan<double> relative, out bool isNonspectral)
+    {
         Guard.SameLength(VisualSystem.SingleCount, relative.Length, nameof(relative));
-        Guard.SameLength(VisualSystem.SingleCount, names.Count, nameof(names));
+        isNonspectral = false;
         if (new TetrahedralColor(relative).Chroma < AchromaticChroma)
-            return new BirdHue(Achromatic, false);
+            return 0;
         int first = 0;
         for (int i = 1; i < relative.Length; i++)
             first = relative[i] > relative[first] ? i : first;
         int second = first == 0 ? 1 : 0;
         for (int i = 0; i < relative.Length; i++)
             second = i != first && relative[i] > relative[second] ? i : second;
+        isNonspectral = Math.Abs(first - second) > 1;
         double least = LeastShareOfLargest * (relative[first] - TetrahedralColor.Equal);
-        var excited = new List<string>();
+        int cones = 0;
         for (int i = 0; i < relative.Length; i++)
-        {
-            if (relative[i] - TetrahedralColor.Equal >= least)
-                excited.Add(names[i]);
-        }
-        return new BirdHue(string.Join('-', excited), Math.Abs(first - second) > 1);
+            cones |= relative[i] - TetrahedralColor.Equal >= least ? 1 << i : 0;
+        return cones;
+    }
+
+    /// <summary>The word for the cones that <see cref="ConesOf"/> found.</summary>
+    /// <exception cref="ArgumentException">There are not four names.</exception>
+    public static string TermOf(int cones, IReadOnlyList<string> names)
+    {
+        ArgumentNullException.ThrowIfNull(names);
+        Guard.SameLength(VisualSystem.SingleCount, names.Count, nameof(names));
+        return cones == 0 ? Achromatic : string.Join('-', names.Where((_, i) => (cones >> i & 1) == 1));
     }
 }

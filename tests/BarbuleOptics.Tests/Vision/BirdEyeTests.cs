@@ -147,7 +147,7 @@ public sealed class BirdEyeTests
     public void Products_allocate_nothing()
     {
         var eye = new BirdEye(Eyes.Usual, VisualSystems.Violet, Illuminant.D65);
-        double[] spectrum = Eyes.RandomSpectrum(new Random(24), Eyes.Usual).Values.ToArray(), catches = new double[CatchMatrix.RowCount], background = [1, 1, 1, 1];
+        double[] spectrum = Eyes.RandomSpectrum(new Random(24), Eyes.Usual).Values.ToArray(), catches = new double[CatchMatrix.RowCount], background = [1, 1, 1, 1], relative = new double[4];
         Assert.True(Look() > 0);
         long before = GC.GetAllocatedBytesForCurrentThread();
         for (int i = 0; i < 100; i++)
@@ -157,7 +157,8 @@ public sealed class BirdEyeTests
         double Look()
         {
             eye.Matrix.Multiply(spectrum, catches);
-            return eye.Noise.Chromatic(catches.AsSpan(0, 4), background)!.Value + new TetrahedralColor(catches.AsSpan(0, 4)).Chroma;
+            TetrahedralColor.RelativeCatches(catches.AsSpan(0, 4), relative);
+            return eye.Noise.Chromatic(catches.AsSpan(0, 4), background)!.Value + new TetrahedralColor(catches.AsSpan(0, 4)).Chroma + BirdHue.ConesOf(relative, out _);
         }
     }
 
