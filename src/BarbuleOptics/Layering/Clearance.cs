@@ -15,6 +15,8 @@ internal static class Clearance
     public static double Between(in Outline first, in Outline second, double dxNm, double dzNm)
     {
         double dx = Math.Abs(dxNm), dz = Math.Abs(dzNm);
+        if (first.IsCircle && second.IsCircle)
+            return Math.Sqrt(dx * dx + dz * dz) - first.HalfWidthNm - second.HalfWidthNm;
         int best = 0;
         double most = double.NegativeInfinity;
         for (int i = 0; i <= Samples; i++)
@@ -43,6 +45,11 @@ internal static class Clearance
         // Side by side they are clear already: the direction along the surface alone shows it.
         if (Math.Abs(dxNm) - first.HalfWidthNm - second.HalfWidthNm >= clearanceNm || Between(first, second, dxNm, 0) >= clearanceNm)
             return null;
+        if (first.IsCircle && second.IsCircle)
+        {
+            double reach = first.HalfWidthNm + second.HalfWidthNm + clearanceNm;
+            return Math.Sqrt((reach - dxNm) * (reach + dxNm));
+        }
         double low = 0, high = first.HalfHeightNm + second.HalfHeightNm + Math.Max(clearanceNm, 0);
         while (high - low > 1e-10 * high)
         {

@@ -1,5 +1,3 @@
-using BarbuleOptics.Anatomy;
-
 namespace BarbuleOptics.Layering;
 
 /// <summary>Finds layers that reach into each other, out of the surface or into the backing.</summary>
@@ -7,7 +5,7 @@ namespace BarbuleOptics.Layering;
 internal static class LayerOverlap
 {
     /// <summary>The first problem from the outside in, at the gap that would mend it (what lies deeper follows from it); null when there is none.</summary>
-    public static AnatomyProblem? Find(Section section)
+    public static GapShortage? Find(Section section)
     {
         List<Extent> extents = [.. section.Runs.Select(run => new Extent(run)), .. section.Films.GroupBy(film => film.LayerNumber).Select(films => new Extent([.. films]))];
         extents.Sort((a, b) => a.Layer.CompareTo(b.Layer));
@@ -15,23 +13,20 @@ internal static class LayerOverlap
         for (int lower = 1; lower < extents.Count; lower++)
         {
             if (extents[lower].TopNm < -SectionBuilder.TouchingNm)
-                return Problem(extents[lower].Layer - 1, FormattableString.Invariant($"layer {extents[lower].Layer} reaches {-extents[lower].TopNm:0.###} nm out of the surface"), -extents[lower].TopNm);
+                return new GapShortage(extents[lower].Layer - 1, FormattableString.Invariant($"layer {extents[lower].Layer} reaches {-extents[lower].TopNm:0.###} nm out of the surface"), -extents[lower].TopNm);
             for (int upper = 0; upper < lower && deepestAboveNm > extents[lower].TopNm; upper++)
             {
                 double missingNm = MissingNm(extents[upper], extents[lower]);
                 if (missingNm > SectionBuilder.TouchingNm)
-                    return Problem(extents[lower].Layer - 1, FormattableString.Invariant($"layers {extents[upper].Layer} and {extents[lower].Layer} overlap"), missingNm);
+                    return new GapShortage(extents[lower].Layer - 1, FormattableString.Invariant($"layers {extents[upper].Layer} and {extents[lower].Layer} overlap"), missingNm);
             }
             deepestAboveNm = Math.Max(deepestAboveNm, extents[lower].BottomNm);
         }
         double deepestNm = extents.Count == 0 ? section.CortexNm : extents.Max(extent => extent.BottomNm);
         return deepestNm > section.DepthNm + SectionBuilder.TouchingNm
-            ? Problem(extents[^1].Layer, "bodies reach into the backing", deepestNm - section.DepthNm)
+            ? new GapShortage(extents[^1].Layer, "bodies reach into the backing", deepestNm - section.DepthNm)
             : null;
     }
-
-    private static AnatomyProblem Problem(int layer, string what, double missingNm)
-        => new(FormattableString.Invariant($"layer{layer}.gap"), FormattableString.Invariant($"found a gap too small, {what}; allowed at least {Math.Ceiling(missingNm * 1000) / 1000:0.###} nm more"));
 
     /// <summary>How much deeper the lower layer would have to lie, in nm; 0 or less when they are clear.</summary>
     private static double MissingNm(Extent upper, Extent lower)

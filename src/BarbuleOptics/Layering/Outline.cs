@@ -23,6 +23,9 @@ public readonly record struct Outline
     /// <summary>Half of the extent in depth, in nm.</summary>
     public double HalfHeightNm { get; }
 
+    /// <summary>Whether it is a circle.</summary>
+    internal bool IsCircle => Shape == OutlineShape.Ellipse && HalfWidthNm == HalfHeightNm;
+
     /// <summary>Half of the chord along the surface at a depth below the center; 0 outside.</summary>
     public double HalfChordNm(double depthNm)
     {

@@ -23,6 +23,7 @@ public sealed class SectionBuilder
     private readonly List<SectionRun> _runs = [];
     private readonly List<SectionFilm> _films = [];
     private readonly List<AnatomyProblem> _problems = [];
+    private GapShortage? _shortage;
 
     private SectionBuilder(Barbule barbule) => _barbule = barbule;
 
@@ -39,6 +40,15 @@ public sealed class SectionBuilder
         if (problems.Count > 0)
             section = null;
         return section is not null;
+    }
+
+    /// <summary>Builds the section, or says by how much a gap is too small where that alone forbids it.</summary>
+    /// <returns>Both null where something else forbids it.</returns>
+    internal static (Section? Section, GapShortage? Shortage) LayOut(Barbule barbule)
+    {
+        var builder = new SectionBuilder(barbule);
+        Section? section = builder.Build();
+        return builder._problems.Count == 0 ? (section, null) : (null, builder._shortage);
     }
 
     private Section? Build()
@@ -66,8 +76,9 @@ public sealed class SectionBuilder
         var section = new Section(
             _barbule.Surround, backing, _barbule.Axis, ValueList.Create<SectionMaterial>([.. _materials.All]), cortexNm, depthNm,
             ValueList.Create<SectionRun>([.. _runs]), ValueList.Create<SectionFilm>([.. _films]), _barbule.Back);
-        if (LayerOverlap.Find(section) is AnatomyProblem overlap)
-            _problems.Add(overlap);
+        _shortage = LayerOverlap.Find(section);
+        if (_shortage is not null)
+            _problems.Add(_shortage.Problem);
         return section;
     }
 
@@ -176,6 +187,9 @@ public sealed class SectionBuilder
         double distanceNm = layer.Depth.Distance.CentralNm;
         if (layer.Depth.BetweenSurfaces)
             return RowNesting.LeastPitchNm(cell, spacingNm, layer.Stacking, distanceNm);
+        // Rows that do not reach into each other's depth are clear whatever their shapes.
+        if (distanceNm >= cell.Max(body => body.BottomNm) - cell.Min(body => body.TopNm))
+            return distanceNm;
         double leastNm = RowNesting.LeastPitchNm(cell, spacingNm, layer.Stacking, -TouchingNm);
         return distanceNm >= leastNm
             ? distanceNm

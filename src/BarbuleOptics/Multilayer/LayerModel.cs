@@ -58,6 +58,21 @@ public sealed class LayerModel
         return new LayerModel(profile, catalog, rule, slices, 2 * change);
     }
 
+    /// <summary>A section much like this one, in slices as fine, without a search.</summary>
+    /// <remarks>Where it falls into other kinds of intervals, each gets the slices of the finest.</remarks>
+    internal LayerModel Like(Section section)
+    {
+        DepthProfile profile = DepthProfile.Of(section);
+        var slices = new int[profile.KindCount];
+        Array.Fill(slices, Slices.Count == 0 ? 1 : Slices.Max());
+        if (slices.Length == Slices.Count)
+            Slices.AsSpan().CopyTo(slices);
+        return new LayerModel(profile, _catalog, _rule, slices, SliceError);
+    }
+
+    /// <summary>The films at the wavelengths at which materials were looked up.</summary>
+    internal FilmStack FilmsOf(SampledMaterials materials) => _plan.Build(new SectionPermittivities(_section, materials), _rule);
+
     /// <summary>The films at some wavelengths; a long grid is taken in blocks, for each film holds six numbers a wavelength.</summary>
     /// <param name="wavelengthsNm">Vacuum wavelengths, in nm.</param>
     /// <exception cref="ArgumentException">A table does not reach a wavelength.</exception>

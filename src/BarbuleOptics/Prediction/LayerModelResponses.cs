@@ -21,7 +21,7 @@ internal sealed record LayerModelResponses(PowerTable Powers, double ErrorEstima
     private const int ComparedProbes = 9;
 
     /// <summary>The one place that names the solver of films.</summary>
-    private static readonly ReferenceFilmSolver Solver = new();
+    internal static readonly ReferenceFilmSolver Solver = new();
 
     /// <summary>Solves it.</summary>
     public static LayerModelResponses Solve(
@@ -34,7 +34,7 @@ internal sealed record LayerModelResponses(PowerTable Powers, double ErrorEstima
         return new LayerModelResponses(powers, Math.Max(model.SliceError, error), model.FilmCount);
     }
 
-    private static LayerModel Fine(Section section, SolverPlan plan, PredictionConditions conditions, IMaterialCatalog catalog, CancellationToken cancellation)
+    internal static LayerModel Fine(Section section, SolverPlan plan, PredictionConditions conditions, IMaterialCatalog catalog, CancellationToken cancellation)
     {
         // The estimate of the error is twice the change.
         double ofAny = conditions.Accuracy / 2, ofReflectance = Math.Min(MostSliceChange, ofAny);

@@ -174,7 +174,7 @@ public static class Predictor
 
     /// <summary>Whether the backing is to be averaged over thickness but is thinner than half a wave somewhere in the spectrum: no such
     /// thickness varies by a fringe. Decided once for the whole spectrum, so that it has no step.</summary>
-    private static bool HoldsNoFringe(Section section, WavelengthGrid grid, IMaterialCatalog catalog)
+    internal static bool HoldsNoFringe(Section section, WavelengthGrid grid, IMaterialCatalog catalog)
         => section.Back is { Coherent: false } back
             && back.Thickness.CentralNm < grid.StopNm / (2 * Find(catalog, section.Backing).N.At(grid.StopNm));
 

@@ -56,4 +56,28 @@ public static class WarningCodes
 
     /// <summary>Spacings without a common period were moved to the nearest one.</summary>
     public const string SpacingMoved = "spacing-moved";
+
+    /// <summary>Draws: a spread rests on fewer than four independent units.</summary>
+    public const string FewUnits = "few-units";
+
+    /// <summary>Draws: a length was kept, since it says nothing of the spread asked for.</summary>
+    public const string LengthKept = "length-kept";
+
+    /// <summary>Draws: a length that is not known was drawn between its bounds.</summary>
+    public const string RangeDrawn = "range-drawn";
+
+    /// <summary>Draws: lists of as many replicates were taken as measured on the same units.</summary>
+    public const string ReplicatesPaired = "replicates-paired";
+
+    /// <summary>Draws: rows were drawn one by one, and each stays periodic.</summary>
+    public const string RowsPeriodic = "rows-periodic";
+
+    /// <summary>Draws: many lengths drawn could not be and were moved to the nearest that could, which shifts their mean.</summary>
+    public const string DrawsTruncated = "draws-truncated";
+
+    /// <summary>Draws: some could not be solved and were left out.</summary>
+    public const string DrawsFailed = "draws-failed";
+
+    /// <summary>Draws: the peak of the mean geometry was lost in some.</summary>
+    public const string PeakLost = "peak-lost";
 }
