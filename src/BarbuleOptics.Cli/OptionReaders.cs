@@ -1,6 +1,7 @@
 using System.CommandLine.Parsing;
 using System.Globalization;
 using BarbuleOptics.Color;
+using BarbuleOptics.Ensembles;
 using BarbuleOptics.Figures;
 using BarbuleOptics.Files;
 using BarbuleOptics.Layering.Mixing;
@@ -112,6 +113,24 @@ internal static class OptionReaders
     {
         allowed = "a whole number from 1 to 1024";
         return int.TryParse(text, NumberStyles.None, CultureInfo.InvariantCulture, out threads) && threads is >= 1 and <= 1024;
+    }
+
+    public static bool Draws(string text, out int draws, out string allowed)
+    {
+        allowed = FormattableString.Invariant($"a whole number from {DrawOptions.LeastDraws} to {DrawOptions.MostDraws}");
+        return int.TryParse(text, NumberStyles.None, CultureInfo.InvariantCulture, out draws) && draws is >= DrawOptions.LeastDraws and <= DrawOptions.MostDraws;
+    }
+
+    public static bool SpreadName(string text, out Spread spread, out string allowed)
+    {
+        allowed = OneOf(SpreadNames.All, text);
+        return SpreadNames.TryParse(text, out spread);
+    }
+
+    public static bool Seed(string text, out long seed, out string allowed)
+    {
+        allowed = "a whole number from 0 to 9223372036854775807";
+        return long.TryParse(text, NumberStyles.None, CultureInfo.InvariantCulture, out seed);
     }
 
     public static bool FigureWidth(string text, out FigureSize size, out string allowed)

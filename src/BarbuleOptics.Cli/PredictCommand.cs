@@ -1,6 +1,7 @@
 using System.CommandLine;
 using System.CommandLine.Parsing;
 using BarbuleOptics.Color;
+using BarbuleOptics.Ensembles;
 using BarbuleOptics.Figures;
 using BarbuleOptics.Layering.Mixing;
 using BarbuleOptics.Multilayer;
@@ -30,6 +31,9 @@ internal sealed class PredictCommand
     private readonly CheckedOption<int> _threads = new("--threads", "N", "Most processors used [all]; results do not depend on it", Standard.Threads, OptionReaders.Threads);
     private readonly CheckedOption<FigureSize> _width = new("--width", "mm", "Printed width of the figures, such as 85 or 170 mm for one or two columns [85]", FigureSize.OneColumn, OptionReaders.FigureWidth);
     private readonly Option<bool> _overlay = new("--overlay") { Description = "Draw into the reflectance figure, dashed, what the layer model says beside the grating solver, or the grating solver beside --mixing", Arity = ArgumentArity.Zero };
+    private readonly CheckedOption<int> _draws = new("--draws", "N", $"Draw the structure N times from the spread of its measurements ({DrawOptions.LeastDraws} to {DrawOptions.MostDraws}) and report intervals and the probability of each hue term [none]", 0, OptionReaders.Draws);
+    private readonly CheckedOption<Spread> _spread = new("--spread", "mean|between|within", "Which spread is drawn from: mean, sd/sqrt(n), how sure is this color; between barbules, sd_between, what an instrument sees over a spot; within a section, sd, what disorder of the rows does [mean]", Spread.Mean, OptionReaders.SpreadName, SpreadNames.All);
+    private readonly CheckedOption<long> _seed = new("--seed", "S", "Names the random draws: the same seed, the same results [1]", 1, OptionReaders.Seed);
     private readonly Option<string?> _output = new("--out") { Description = "Folder for spectra.csv, prediction.json and figures; with several files, a folder each within it", HelpName = "DIR" };
     private readonly Option<bool> _force = new("--force") { Description = "Replace results that are in the folder already", Arity = ArgumentArity.Zero };
     private readonly Option<bool> _json = new("--json") { Description = "Print one JSON document and nothing else", Arity = ArgumentArity.Zero };
@@ -43,7 +47,7 @@ internal sealed class PredictCommand
         {
             options._files, options._wavelengths.Option, options._angles.Option, options._polarization.Option, options._solver.Option,
             options._accuracy.Option, options._mixing.Option, options._illuminant.Option, options._observer.Option, options._output,
-            options._vision, options._background, options._summation.Option,
+            options._vision, options._background, options._summation.Option, options._draws.Option, options._spread.Option, options._seed.Option,
             options._force, options._json, options._materials, options._sets, options._threads.Option, options._width.Option, options._overlay,
         };
         options._files.Validators.Add(result => CommandLineErrors.RefuseOptions(result, command));
@@ -54,6 +58,7 @@ internal sealed class PredictCommand
         options._vision.Validators.Add(OptionReaders.RefuseUnknownEyes);
         options._vision.CompletionSources.Add([.. VisualSystems.All.Select(eye => eye.Name)]);
         command.Validators.Add(options.RefuseRuleOfNothing);
+        command.Validators.Add(options.RefuseSpreadOfNothing);
         // The parser counts values, so that `--out here --out` would pass.
         command.Validators.Add(result =>
         {
@@ -79,6 +84,18 @@ internal sealed class PredictCommand
         string? ValueOf(Option option) => result.GetResult(option) is { Tokens.Count: > 0 } found ? found.Tokens[^1].Value : null;
     }
 
+    /// <summary>Without draws a spread and a seed mean nothing.</summary>
+    private void RefuseSpreadOfNothing(CommandResult result)
+    {
+        if (result.GetResult(_draws.Option) is not null)
+            return;
+        foreach (Option option in (Option[])[_spread.Option, _seed.Option])
+        {
+            if (result.GetResult(option) is not null)
+                result.AddError($"{option.Name}: found without --draws; allowed beside --draws N");
+        }
+    }
+
     private PredictRequest Request(ParseResult parse)
     {
         Polarizations? polarization = _polarization.Of(parse);
@@ -97,6 +114,9 @@ internal sealed class PredictCommand
         };
         return new PredictRequest(
             parse.GetRequiredValue(_files), conditions, new SeenBy(_illuminant.Of(parse), parse.GetValue(_background), parse.GetValue(_vision) ?? []), parse.GetValue(_output), parse.GetValue(_force), parse.GetValue(_json),
-            parse.GetValue(_materials), parse.GetValue(_sets) ?? [], _width.Of(parse), parse.GetValue(_overlay));
+            parse.GetValue(_materials), parse.GetValue(_sets) ?? [], _width.Of(parse), parse.GetValue(_overlay))
+        {
+            Draws = _draws.Of(parse) is int draws and > 0 ? new DrawOptions { Draws = draws, Spread = _spread.Of(parse), Seed = _seed.Of(parse) } : null,
+        };
     }
 }

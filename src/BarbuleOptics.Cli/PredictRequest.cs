@@ -1,3 +1,4 @@
+using BarbuleOptics.Ensembles;
 using BarbuleOptics.Figures;
 using BarbuleOptics.Prediction;
 
@@ -16,4 +17,8 @@ namespace BarbuleOptics.Cli;
 /// <param name="Overlays">Whether the reflectance figure also holds what the other solver says.</param>
 internal sealed record PredictRequest(
     IReadOnlyList<string> Files, PredictionConditions Conditions, SeenBy SeenBy, string? OutputFolder, bool Force, bool Json, string? MaterialFolder, IReadOnlyList<string> Sets,
-    FigureSize FigureSize, bool Overlays);
+    FigureSize FigureSize, bool Overlays)
+{
+    /// <summary>How many draws of which spread; null for none.</summary>
+    public DrawOptions? Draws { get; init; }
+}

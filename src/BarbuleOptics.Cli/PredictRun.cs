@@ -1,5 +1,6 @@
 using System.Text;
 using BarbuleOptics.Anatomy;
+using BarbuleOptics.Ensembles;
 using BarbuleOptics.Figures;
 using BarbuleOptics.Files;
 using BarbuleOptics.Files.Results;
@@ -12,6 +13,12 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
 {
     /// <summary>Most wavelengths times angles of one file: 2 million are a table of 0.6 GB.</summary>
     private const int MostPoints = 2_000_000;
+
+    /// <summary>Most wavelengths times angles of draws, each of which has a histogram.</summary>
+    private const int MostDrawnPoints = 50_000;
+
+    /// <summary>Files that only draws fill.</summary>
+    private static readonly string[] DrawNames = [BandsCsv.FileName, .. EnsembleFigures.FileNames];
 
     /// <summary>Files that only the grating solver fills.</summary>
     private static readonly string[] GratingNames = [OrdersCsv.FileName, AbsorptionCsv.FileName];
@@ -98,21 +105,28 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
         LoadedStructure loaded = read.Value;
         StructurePrediction? prediction;
         IReadOnlyList<AnatomyProblem> problems;
-        progress.Begin(file);
+        EnsemblePrediction? ensemble = null;
         try
         {
+            progress.Begin(file);
             Predictor.TryPredict(loaded.Barbule, _conditions, loaded.Catalog, out prediction, out problems, progress, cancellation);
+            if (prediction is not null && request.Draws is not null)
+            {
+                progress.End();
+                progress.Begin($"{file}, {request.Draws.Draws} draws");
+                EnsemblePredictor.TryPredict(loaded.Barbule, _conditions, request.Draws, loaded.Catalog, out ensemble, out problems, progress, cancellation);
+            }
         }
         finally
         {
             progress.End();
         }
-        if (prediction is null)
+        if (prediction is null || (ensemble is null && request.Draws is not null))
         {
             Refuse([.. problems.Select(loaded.Locate)]);
             return null;
         }
-        return (new PredictedStructure(file, loaded.Sha256, prediction, request.Sets), loaded);
+        return (new PredictedStructure(file, loaded.Sha256, prediction, request.Sets) { Draws = ensemble }, loaded);
     }
 
     private int Refuse(IReadOnlyList<FileProblem> problems)
@@ -127,7 +141,10 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
     {
         PredictionTable.Write(predicted, loaded.Notes, output, colors);
         if (folder is not null)
-            PredictionTable.Wrap($"Written into {OneLine.Escape(Path.TrimEndingDirectorySeparator(folder))}{Path.DirectorySeparatorChar}: {string.Join(", ", predicted.Prediction.IsRigorous ? [.. ResultNames, .. GratingNames] : ResultNames)}.", output);
+        {
+            string[] names = [.. ResultNames, .. predicted.Prediction.IsRigorous ? GratingNames : [], .. predicted.Draws is null ? [] : DrawNames];
+            PredictionTable.Wrap($"Written into {OneLine.Escape(Path.TrimEndingDirectorySeparator(folder))}{Path.DirectorySeparatorChar}: {string.Join(", ", names)}.", output);
+        }
         output.WriteLine();
     }
 
@@ -140,9 +157,10 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
     private bool HasRoom()
     {
         int wavelengths = request.Conditions.Wavelengths.Count, angles = request.Conditions.Incidences.Count;
-        if ((long)wavelengths * angles <= MostPoints)
+        int most = request.Draws is null ? MostPoints : MostDrawnPoints;
+        if ((long)wavelengths * angles <= most)
             return true;
-        error.WriteLine($"barbule: --angles: found {angles} angles at {wavelengths} wavelengths each; allowed {MostPoints} in all");
+        error.WriteLine($"barbule: --angles: found {angles} angles at {wavelengths} wavelengths each; allowed {most} in all{(request.Draws is null ? "" : " with --draws")}");
         return false;
     }
 
@@ -173,11 +191,16 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
         => TryOutput(() =>
         {
             foreach (string folder in folders)
-                OutputFolder.Check(folder, [.. ResultNames, .. GratingNames], request.Force);
+                OutputFolder.Check(folder, [.. ResultNames, .. GratingNames, .. DrawNames], request.Force);
         });
 
     private bool TryWrite(string folder, PredictedStructure predicted, CancellationToken cancellation)
-        => TryOutput(() => OutputFolder.Write(folder, [.. Results(predicted, cancellation)], request.Force, predicted.Prediction.IsRigorous ? [] : GratingNames, cancellation));
+        => TryOutput(() => OutputFolder.Write(folder, [.. Results(predicted, cancellation)], request.Force, Unfilled(predicted), cancellation));
+
+    /// <summary>Files of an earlier run that this one has nothing for.</summary>
+    private static string[] Unfilled(PredictedStructure predicted)
+        => [.. predicted.Prediction.IsRigorous ? [] : GratingNames, .. predicted.Draws is null ? DrawNames : []];
+
 
     private IEnumerable<OutputFile> Results(PredictedStructure predicted, CancellationToken cancellation)
     {
@@ -187,6 +210,12 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
         {
             yield return new OutputFile(OrdersCsv.FileName, stream => OrdersCsv.Write(predicted.Prediction, stream));
             yield return new OutputFile(AbsorptionCsv.FileName, stream => AbsorptionCsv.Write(predicted.Prediction, stream));
+        }
+        if (predicted.Draws is EnsemblePrediction ensemble)
+        {
+            yield return new OutputFile(BandsCsv.FileName, stream => BandsCsv.Write(ensemble, stream));
+            foreach ((string name, byte[] bytes) in EnsembleFigures.Render(predicted.Prediction, ensemble, request.FigureSize))
+                yield return OutputFile.FromBytes(name, bytes);
         }
         foreach ((string name, byte[] bytes) in PredictionFigures.Render(predicted.Prediction, request.FigureSize, request.Overlays, cancellation))
             yield return OutputFile.FromBytes(name, bytes);

@@ -31,7 +31,8 @@ internal static class PredictionTable
             output.WriteLine(Row(view, colors));
         output.WriteLine();
         BirdTable.Write(prediction, output);
-        foreach (string line in Remarks(prediction).Concat(notes.Select(note => $"Warning {note.Code}: {note}.")).Concat(WarningLines.Of(prediction.Warnings)))
+        DrawsTable.Write(predicted.Draws, output);
+        foreach (string line in Remarks(prediction).Concat(DrawsTable.Remarks(predicted.Draws)).Concat(notes.Select(note => $"Warning {note.Code}: {note}.")).Concat(WarningLines.Of([.. prediction.Warnings, .. predicted.Draws?.Warnings ?? []])))
             Wrap(line, output);
     }
 

@@ -1,3 +1,4 @@
+using BarbuleOptics.Ensembles;
 using BarbuleOptics.Prediction;
 
 namespace BarbuleOptics.Files.Results;
@@ -7,4 +8,8 @@ namespace BarbuleOptics.Files.Results;
 /// <param name="Sha256">SHA-256 of its bytes, lower-case hexadecimal.</param>
 /// <param name="Prediction">The prediction.</param>
 /// <param name="Changes">The values replaced on the command line, as typed.</param>
-public sealed record PredictedStructure(string File, string Sha256, StructurePrediction Prediction, IReadOnlyList<string> Changes);
+public sealed record PredictedStructure(string File, string Sha256, StructurePrediction Prediction, IReadOnlyList<string> Changes)
+{
+    /// <summary>Draws of the same structure; null where none were asked for.</summary>
+    public EnsemblePrediction? Draws { get; init; }
+}

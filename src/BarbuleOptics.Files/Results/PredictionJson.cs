@@ -81,6 +81,7 @@ public static class PredictionJson
             WriteView(json, view, prediction);
         json.WriteEndArray();
         WriteTrack(json, prediction.Track);
+        DrawsJson.Write(json, predicted.Draws);
         WriteWarnings(json, prediction.Warnings);
         json.WriteEndObject();
     }
@@ -239,7 +240,7 @@ public static class PredictionJson
         json.WriteEndObject();
     }
 
-    private static void WriteWarnings(Utf8JsonWriter json, IReadOnlyList<PredictionWarning> warnings)
+    internal static void WriteWarnings(Utf8JsonWriter json, IReadOnlyList<PredictionWarning> warnings)
     {
         json.WriteStartArray("warnings");
         foreach (PredictionWarning warning in warnings)
