@@ -20,7 +20,9 @@ internal sealed class SlabElement<TLanes> : IBatchElement<TLanes>
     private readonly LaneBuffer<TLanes> _reflection = new();
     private readonly LaneBuffer<TLanes> _transmission = new();
     private ChannelLanes<TLanes> _channels = null!;
-    private int _harmonics;
+    private readonly LaneBuffer<TLanes> _parts = new();
+    private int _harmonics, _absorbing, _only;
+    private bool _isElectric;
 
     public SlabElement(SlabShape shape)
     {
@@ -72,26 +74,40 @@ internal sealed class SlabElement<TLanes> : IBatchElement<TLanes>
     /// <inheritdoc/>
     public TLanes Solve(RodField field)
     {
+        PackLanes<TLanes> pack = _channels.Pack;
+        (_isElectric, _absorbing, _only) = (field == RodField.Electric, 0, Section.Matrix);
+        foreach (int material in _materials)
+        {
+            if (pack.Absorbs(material))
+                (_only, _absorbing) = (material, _absorbing + 1);
+        }
         int length = _channels.Orders * _channels.Orders * ComplexLanes<TLanes>.Stride;
         return _slab.Scatter<TLanes>(
-            _light, field == RodField.Electric, _channels.MostOrder, _harmonics,
-            MemoryMarshal.CreateSpan(ref _reflection.At(0), length), MemoryMarshal.CreateSpan(ref _transmission.At(0), length));
+            _light, _isElectric, _channels.MostOrder, _harmonics,
+            MemoryMarshal.CreateSpan(ref _reflection.At(0), length), MemoryMarshal.CreateSpan(ref _transmission.At(0), length),
+            keepsFields: _absorbing > 1);
     }
 
     /// <inheritdoc/>
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public void AddLoss(LaneBuffer<TLanes> down, LaneBuffer<TLanes> up, LaneBuffer<TLanes> byMaterial)
     {
-        PackLanes<TLanes> pack = _channels.Pack;
-        int only = Section.Matrix, absorbing = 0;
-        foreach (int material in _materials)
+        TLanes total = PowerInto(down, up), zero = TLanes.Broadcast(0);
+        if (_absorbing == 1)
         {
-            if (pack.Absorbs(material))
-                (only, absorbing) = (material, absorbing + 1);
+            byMaterial.SetReal(_only, byMaterial.Real(_only) + total);
+            return;
         }
-        // What several materials lose apart is left to the reference.
-        TLanes lost = absorbing > 1 ? TLanes.Broadcast(double.NaN) : PowerInto(down, up);
-        byMaterial.SetReal(only, byMaterial.Real(only) + lost);
+        // The parts from the fields inside, the whole from the balance.
+        _parts.Reserve(_light.Materials);
+        _parts.Clear(_light.Materials);
+        _slab.AddLosses<TLanes>(_light, _isElectric, _channels.MostOrder, ref down.At(0), ref up.At(0), ref _parts.RealAt(0));
+        TLanes sum = zero;
+        foreach (int material in _materials)
+            sum += _parts.Real(material);
+        TLanes scale = TLanes.Select(TLanes.LessThan(zero, sum), total / sum, zero);
+        foreach (int material in _materials)
+            byMaterial.SetReal(material, byMaterial.Real(material) + scale * _parts.Real(material));
     }
 
     // Re(conj(phi) psi) through the upper plane less that through the lower one, which is the loss of Galerkin's method.

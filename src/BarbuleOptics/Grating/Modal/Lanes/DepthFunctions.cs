@@ -39,10 +39,12 @@ internal static class DepthFunctions
     /// <param name="c">Receives C, of which the upper triangle counts.</param>
     /// <param name="d">Receives D.</param>
     /// <param name="scratch">Of <see cref="ScratchOf"/>.</param>
+    /// <param name="record">Receives what the fields inside follow from; null where they are not asked for.</param>
+    /// <param name="interval">Number of the interval in the record.</param>
     /// <returns>Square of the largest multiplier.</returns>
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public static TLanes Find<TLanes>(
-        ref double k, ref double z, bool isUnit, int n, double thinNm, int doublings, ref double c, ref double d, ref double scratch)
+        ref double k, ref double z, bool isUnit, int n, double thinNm, int doublings, ref double c, ref double d, ref double scratch, SlabRecord? record, int interval)
         where TLanes : struct, ILanes<TLanes>
     {
         int size = ComplexLanes<TLanes>.Stride, count = n * n;
@@ -65,12 +67,19 @@ internal static class DepthFunctions
             growth = TLanes.Max(growth, Fraction<TLanes>(ref k, ref z, isUnit, n, OfT[part].Pole, ref scratch, ref result, ref rest));
             LaneSums.Add<TLanes>(ref d, ref result, -OfT[part].Part * inverse, count);
         }
+        if (record is not null)
+        {
+            LaneSums.Set<TLanes>(ref record.Piece(interval), ref c, 1, ref d, -0.5, count);
+            LaneSums.Set<TLanes>(ref record.Link(interval), ref d, 0.5, ref d, 0, count);
+        }
         for (int i = 0; i < doublings; i++)
         {
             LaneSums.Add<TLanes>(ref c, ref d, -0.5, count);
             LaneSums.SetLeft<TLanes>(ref scratch, n, 2 * n, ref c, 1, ref c, 0);
             LaneSums.SetRight<TLanes>(ref scratch, n, n, ref d, 0.5);
             growth = TLanes.Max(growth, SymmetricLanes.Eliminate<TLanes>(ref scratch, n, n, false, ref d, ref rest));
+            if (record is not null)
+                SymmetricLanes.Keep<TLanes>(ref scratch, n, n, ref rest, ref record.Level(interval, i + 1));
         }
         return growth;
     }

@@ -53,6 +53,36 @@ internal static class SymmetricLanes
         return growth;
     }
 
+    /// <summary>Keeps a system just reduced, with its inverse pivots behind it.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+    public static void Keep<TLanes>(ref double system, int n, int c, ref double scratch, ref double slot)
+        where TLanes : struct, ILanes<TLanes>
+    {
+        int size = 2 * TLanes.Count;
+        ref double inverses = ref Unsafe.Add(ref scratch, 2 * n * size);
+        LaneSums.Set<TLanes>(ref slot, ref system, 1, ref system, 0, n * (n + c));
+        LaneSums.Set<TLanes>(ref Unsafe.Add(ref slot, n * (n + c) * size), ref inverses, 1, ref inverses, 0, n);
+    }
+
+    /// <summary>Writes A^-1 R v from a system that was kept.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+    public static void Recall<TLanes>(ref double slot, int n, int c, ref double v, ref double result)
+        where TLanes : struct, ILanes<TLanes>
+    {
+        int size = 2 * TLanes.Count, step = (n + c) * size;
+        ref double inverses = ref Unsafe.Add(ref slot, n * step);
+        for (int row = n - 1; row >= 0; row--)
+        {
+            ref double own = ref Unsafe.Add(ref slot, row * step);
+            ComplexLanes<TLanes> sum = ComplexLanes<TLanes>.Broadcast(0);
+            for (int column = 0; column < c; column++)
+                sum = ComplexLanes<TLanes>.MultiplyAdd(ComplexLanes<TLanes>.Load(ref Unsafe.Add(ref own, (n + column) * size)), ComplexLanes<TLanes>.Load(ref Unsafe.Add(ref v, column * size)), sum);
+            for (int column = row + 1; column < n; column++)
+                sum = ComplexLanes<TLanes>.SubtractProduct(ComplexLanes<TLanes>.Load(ref Unsafe.Add(ref own, column * size)), ComplexLanes<TLanes>.Load(ref Unsafe.Add(ref result, column * size)), sum);
+            ComplexLanes<TLanes>.Store(ComplexLanes<TLanes>.Load(ref Unsafe.Add(ref inverses, row * size)) * sum, ref Unsafe.Add(ref result, row * size));
+        }
+    }
+
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     private static void Invert<TLanes>(ref double pivot, ref double inverse)
         where TLanes : struct, ILanes<TLanes>

@@ -19,7 +19,9 @@ internal sealed class UprightSlab
     private readonly SlabShape _shape;
     private readonly double[]? _wallsNm;
     private readonly Dictionary<int, UprightGeometry> _geometries = [];
+    private readonly SlabRecord[] _records = [new(), new(), new()];
     private LaneMemory _memory = new(0);
+    private UprightGeometry? _solved;
 
     /// <summary>Describes a slab that <see cref="Covers"/> says yes to.</summary>
     public UprightSlab(SlabShape shape)
@@ -38,9 +40,10 @@ internal sealed class UprightSlab
     /// <param name="harmonics">N; at least M is used.</param>
     /// <param name="reflection">Receives (2 M + 1)^2 complex elements, row by row.</param>
     /// <param name="transmission">Likewise.</param>
+    /// <param name="keepsFields">Whether <see cref="AddLosses"/> will follow.</param>
     /// <returns>Mask of the lanes in which elimination lost too many digits; where all are lost answers are not finite.</returns>
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
-    public TLanes Scatter<TLanes>(SlabLight light, bool isElectric, int mostOrder, int harmonics, Span<double> reflection, Span<double> transmission)
+    public TLanes Scatter<TLanes>(SlabLight light, bool isElectric, int mostOrder, int harmonics, Span<double> reflection, Span<double> transmission, bool keepsFields = false)
         where TLanes : struct, ILanes<TLanes>
     {
         harmonics = Math.Max(harmonics, mostOrder);
@@ -52,18 +55,42 @@ internal sealed class UprightSlab
         ref double memory = ref _memory[0];
         var ports = new PortLanes(reflection, transmission, mostOrder);
         ports.Clear<TLanes>();
+        _solved = geometry;
         TLanes growth;
         if (light.IsNormal)
         {
-            growth = UprightKernel.Solve<TLanes>(_shape, geometry, 1, light, isElectric, ports, ref memory);
+            growth = UprightKernel.Solve<TLanes>(_shape, geometry, 1, light, isElectric, ports, ref memory, keepsFields ? _records[2] : null);
             if (mostOrder > 0)
-                growth = TLanes.Max(growth, UprightKernel.Solve<TLanes>(_shape, geometry, -1, light, isElectric, ports, ref memory));
+                growth = TLanes.Max(growth, UprightKernel.Solve<TLanes>(_shape, geometry, -1, light, isElectric, ports, ref memory, keepsFields ? _records[0] : null));
         }
         else
         {
-            growth = UprightKernel.Solve<TLanes>(_shape, geometry, 0, light, isElectric, ports, ref memory);
+            growth = UprightKernel.Solve<TLanes>(_shape, geometry, 0, light, isElectric, ports, ref memory, keepsFields ? _records[1] : null);
         }
         ports.TurnToAmplitudes<TLanes>(light, isElectric, _shape.AxisNm / _shape.PeriodNm);
         return TLanes.LessThan(TLanes.Broadcast(MostGrowth), growth);
+    }
+
+    /// <summary>Adds what each material loses, in units of its own, from waves that fall on the slab solved last with fields kept.</summary>
+    /// <param name="light">As solved.</param>
+    /// <param name="isElectric">As solved.</param>
+    /// <param name="mostOrder">As solved.</param>
+    /// <param name="down">Downward amplitudes at the top plane, by order.</param>
+    /// <param name="up">Upward amplitudes at the bottom plane.</param>
+    /// <param name="byMaterial">Real numbers by the number of the material.</param>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+    public void AddLosses<TLanes>(SlabLight light, bool isElectric, int mostOrder, ref double down, ref double up, ref double byMaterial)
+        where TLanes : struct, ILanes<TLanes>
+    {
+        foreach (int parity in light.IsNormal ? (ReadOnlySpan<int>)[1, -1] : [0])
+        {
+            if (parity < 0 && mostOrder == 0)
+                continue;
+            int needed = SlabLosses.MemoryOf<TLanes>(_records[parity + 1], mostOrder);
+            if (_memory.Length < needed)
+                _memory = new LaneMemory(needed);
+            var part = new SlabPart(_shape, _solved!, parity, _records[parity + 1], light, isElectric);
+            SlabLosses.Add<TLanes>(part, mostOrder, ref down, ref up, ref byMaterial, ref _memory[0]);
+        }
     }
 }
