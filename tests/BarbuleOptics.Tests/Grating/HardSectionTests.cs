@@ -23,6 +23,19 @@ public class HardSectionTests
         """;
 
     // The plane of incidence turns nothing that normal incidence does not see: the square of such a wave vector is 0.
+    /// <summary>Hollow platelets that touch side by side are the limit of those that nearly do: a gap of 0.03 nm of keratin changes R, T and A
+    /// by less than 5e-4, where taking the walls that touch for keratin would change A by 0.03.</summary>
+    [Theory]
+    [InlineData(Polarizations.S)]
+    [InlineData(Polarizations.P)]
+    public void Hollow_platelets_that_touch_are_the_limit_of_those_that_nearly_do(Polarizations polarization)
+    {
+        const string platelets = "[cortex]\nthickness = 120\n[[layer]]\nform = \"platelet\"\nthickness = 54\nwidth = 126\nwall = 12\ncore_air = 0.3\nspacing = ";
+        GratingAnswer touching = GratingCase.Of(platelets + "126\n").Solve(420, 20, polarization, 1e-4);
+        GratingAnswer apart = GratingCase.Of(platelets + "126.03\n").Solve(420, 20, polarization, 1e-4);
+        Assert.InRange(touching.Difference(apart), 0, 5e-4);
+    }
+
     [Theory]
     [InlineData(90, 1e-200)]
     [InlineData(90, 1e-320)]

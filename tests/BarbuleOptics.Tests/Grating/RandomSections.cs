@@ -59,6 +59,24 @@ internal sealed class RandomSections(int seed)
         return Finish(text, lossless);
     }
 
+    /// <summary>Rows of platelets: solid, walled with an empty or a porous core, touching or apart.</summary>
+    public string Platelets()
+    {
+        StringBuilder text = Start(lossless: false);
+        double thickness = In(40, 140), width = thickness * In(1.2, 3.5);
+        text.Append("[[layer]]\nform = \"platelet\"\n");
+        Line(text, "thickness", thickness);
+        Line(text, "width", width);
+        if (Chance(0.6))
+        {
+            Line(text, "wall", thickness * In(0.1, 0.35));
+            Line(text, "core_air", Chance(0.3) ? 1 : In(0.2, 0.9));
+        }
+        Line(text, "spacing", width * (Chance(0.15) ? 1 : In(1.02, 1.5)));
+        AddRows(text, thickness);
+        return Finish(text, lossless: false);
+    }
+
     /// <summary>Angle of the rods' axis, in degrees: across more often than not.</summary>
     public double Axis() => _random.Next(6) switch { 0 => 90, 1 => In(1, 89), _ => 0 };
 

@@ -71,7 +71,7 @@ internal sealed class CrowdedStore
     {
         var cut = new SlabCut(_shape);
         cut.Set(interval, (interval.TopNm + interval.BottomNm) / 2);
-        return [.. Enumerable.Range(0, _crowding.Stretches).Select(stretch => cut.MaterialAt(_crowding.MiddleXNm(stretch)))];
+        return [.. Enumerable.Range(0, _crowding.Stretches).Select(stretch => cut.MaterialBetween(_crowding.MiddleXNm(stretch)))];
     }
 
     private bool TryBuild(Entry entry, bool isElectric)

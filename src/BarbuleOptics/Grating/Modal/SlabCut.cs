@@ -48,6 +48,18 @@ internal sealed class SlabCut
         return material;
     }
 
+    /// <summary>The material between the walls around a place that is none of them; where bodies touch there is no wall.</summary>
+    public int MaterialBetween(double xNm)
+    {
+        if (WallCount == 0)
+            return OnlyMaterial;
+        double place = Wrap(xNm);
+        int wall = WallCount - 1;
+        for (int w = 0; w < WallCount && _walls[w].XNm <= place; w++)
+            wall = w;
+        return _materials[wall];
+    }
+
     /// <summary>The material right of a wall.</summary>
     public int MaterialRightOf(int wall) => _materials[wall];
 
