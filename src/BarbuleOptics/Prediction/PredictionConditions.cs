@@ -3,6 +3,7 @@ using BarbuleOptics.Layering.Mixing;
 using BarbuleOptics.Multilayer;
 using BarbuleOptics.Quantities;
 using BarbuleOptics.Vision;
+using BarbuleOptics.Spectra.Instruments;
 
 namespace BarbuleOptics.Prediction;
 
@@ -62,6 +63,8 @@ public sealed record PredictionConditions
 
     /// <summary>What those eyes are adapted to; flat, a perfect mirror, where null, as it is unless set.</summary>
     public AdaptingBackground? Background { get; init; }
+    /// <summary>The instrument that views and colors are read with; null for the reflectance of a flat section at one angle, as it is unless set.</summary>
+    public Instrument? Instrument { get; init; }
 
     /// <summary>Most threads used, 1 or above; all processors unless set. Results do not depend on it.</summary>
     /// <exception cref="ArgumentOutOfRangeException">Below 1.</exception>
