@@ -2,8 +2,8 @@ using BarbuleOptics.Color;
 using BarbuleOptics.Layering.Mixing;
 using BarbuleOptics.Multilayer;
 using BarbuleOptics.Quantities;
-using BarbuleOptics.Vision;
 using BarbuleOptics.Spectra.Instruments;
+using BarbuleOptics.Vision;
 
 namespace BarbuleOptics.Prediction;
 

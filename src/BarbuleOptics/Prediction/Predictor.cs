@@ -129,6 +129,13 @@ public static class Predictor
         View[] views = [.. ViewsOf(plan.IsRigorous ? rigorous!.Powers : films!.Powers, colorimeter, eyes)];
         if (rigorous is not null && films is not null)
             views = Compared(views, [.. ViewsOf(plan.IsRigorous ? films.Powers : rigorous.Powers, colorimeter, [])], plan);
+        PeakTrack track = TrackOf(views, surround);
+        InstrumentSignal[]? signals = conditions.Instrument is null ? null : InstrumentSignals.Solve(section, plan, conditions, catalog, progress, cancellation);
+        if (signals is not null)
+        {
+            views = [.. views.Zip(signals, (view, signal) => ReadWith(view, signal, colorimeter, eyes))];
+            warnings.AboutSignals(signals);
+        }
         foreach (View view in views)
             warnings.AboutView(view);
         warnings.AboutLayerModel(views);
@@ -150,7 +157,7 @@ public static class Predictor
             MovedSpacings = plan.IsRigorous && spacings is not null ? spacings.Moves : [],
             MovedUpToNm = plan.IsRigorous ? spacings?.LongestNm : null,
             Views = [.. views],
-            Track = TrackOf(views, surround),
+            Track = track,
             Warnings = warnings.All,
         };
     }
@@ -163,6 +170,16 @@ public static class Predictor
             Powers = PowerSummary.Of(response),
             Birds = [.. eyes.Select(eye => eye.Look(response.Reflectance))],
         });
+
+    /// <summary>A view through an instrument: what is seen is its signal; where the power goes is still told for the flat section.</summary>
+    private static View ReadWith(View view, InstrumentSignal signal, Colorimeter colorimeter, BirdEye[] eyes) => view with
+    {
+        Reflectance = signal.Signal,
+        Features = SpectrumFeatures.Of(signal.Signal),
+        Color = colorimeter.CanMeasure ? colorimeter.Measure(signal.Signal) : null,
+        Birds = [.. eyes.Select(eye => eye.Look(signal.Signal))],
+        Signal = signal,
+    };
 
     private static View[] Compared(View[] views, View[] others, SolverPlan plan)
         => [.. views.Zip(others, (view, other) => view with

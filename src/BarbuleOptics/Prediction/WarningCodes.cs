@@ -80,4 +80,16 @@ public static class WarningCodes
 
     /// <summary>Draws: the peak of the mean geometry was lost in some.</summary>
     public const string PeakLost = "peak-lost";
+
+    /// <summary>No facet, or hardly one, sends light from one arm of the instrument into the other.</summary>
+    public const string NoSignal = "no-signal";
+
+    /// <summary>The signal is one of polarized light, whose turning on tilted facets is left out.</summary>
+    public const string SignalPolarization = "signal-polarization";
+
+    /// <summary>Films stand for rows at azimuths between across and along.</summary>
+    public const string SignalAzimuth = "signal-azimuth";
+
+    /// <summary>The integral over directions did not reach the accuracy asked for.</summary>
+    public const string SignalAccuracy = "signal-accuracy";
 }

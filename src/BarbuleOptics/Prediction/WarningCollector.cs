@@ -1,6 +1,7 @@
 using BarbuleOptics.Anatomy;
 using BarbuleOptics.Layering;
 using BarbuleOptics.Materials;
+using BarbuleOptics.Multilayer;
 using BarbuleOptics.Quantities;
 using BarbuleOptics.Vision;
 
@@ -17,6 +18,9 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
 
     /// <summary>The same for the reflectance, where there is no color.</summary>
     private const double MostReflectanceChange = 0.05;
+
+    /// <summary>Share of a mirror's signal below which an instrument sees nothing much.</summary>
+    private const double LeastFacing = 1e-3;
 
     private readonly List<PredictionWarning> _warnings = [];
 
@@ -122,6 +126,23 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
         string others = off.Length == 1 ? "" : FormattableString.Invariant($", the worst of {off.Length} angles");
         Add(WarningCodes.LayerModelError, FormattableString.Invariant(
             $"the layer model is off by {error.LargestChange:0.000} in reflectance at {error.LargestChangeAtNm:0.#} nm{color}{others}; leave --mixing out for the rigorous solution"), worst.Incidence);
+    }
+
+    /// <summary>Says where an instrument sees little, and what its signal leaves out.</summary>
+    public void AboutSignals(IReadOnlyList<InstrumentSignal> signals)
+    {
+        foreach (InstrumentSignal signal in signals)
+        {
+            if (signal.FacingShare < LeastFacing)
+                Add(WarningCodes.NoSignal, FormattableString.Invariant($"{signal.FacingShare:0.0e+0} of the light a mirror would send into the collector comes from these facets; there is hardly anything to measure: widen --aperture or --tilt, or turn the arms"), signal.Angle);
+        }
+        double worst = signals.Max(signal => signal.ErrorEstimate / signal.Scale);
+        if (worst > 2 * conditions.Accuracy)
+            Add(WarningCodes.SignalAccuracy, FormattableString.Invariant($"the integral over cones and facets may be off by {worst:0.0e+0} of a mirror's signal, above the {conditions.Accuracy:0.0e+0} asked for; report it"));
+        if (conditions.Polarization != Polarizations.Unpolarized)
+            Add(WarningCodes.SignalPolarization, "the signal is computed as if every facet saw the light in the plane of the arms; tilted facets turn the polarization a little: rely on unpolarized signals where that matters");
+        else if (!isRigorous && !section.IsFilms)
+            Add(WarningCodes.SignalAzimuth, "films know rods across or along only; between the two the signal takes cos^2 and sin^2 of the azimuth as shares: leave --mixing out for the rigorous solution");
     }
 
     private string EndsOf(View view)
