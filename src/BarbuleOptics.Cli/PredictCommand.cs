@@ -28,6 +28,7 @@ internal sealed class PredictCommand
     private readonly CheckedOption<SummationStep> _summation = new("--summation", "1|5", "Step in nm of the sums that give X, Y and Z [1]", Standard.Summation, OptionReaders.Summation, ["1", "5"]);
     private readonly Option<string[]> _vision = new("--vision") { Description = $"Eye of a bird to compute color for, beside {string.Join(" and ", VisualSystems.Averages.Select(eye => eye.Name))}: {string.Join(", ", VisualSystems.All.Except(VisualSystems.Averages).Select(eye => eye.Name))}, or the path of a file of your own (with a / or ending in .toml); may be repeated", HelpName = "NAME|FILE", Arity = ArgumentArity.OneOrMore };
     private readonly Option<string?> _background = new("--background") { Description = "File with the reflectance of what the eyes of birds are adapted to [flat, a perfect mirror]", HelpName = "FILE" };
+    private readonly InstrumentOptions _instrument = new();
     private readonly CheckedOption<int> _threads = new("--threads", "N", "Most processors used [all]; results do not depend on it", Standard.Threads, OptionReaders.Threads);
     private readonly CheckedOption<FigureSize> _width = new("--width", "mm", "Printed width of the figures, such as 85 or 170 mm for one or two columns [85]", FigureSize.OneColumn, OptionReaders.FigureWidth);
     private readonly Option<bool> _overlay = new("--overlay") { Description = "Draw into the reflectance figure, dashed, what the layer model says beside the grating solver, or the grating solver beside --mixing", Arity = ArgumentArity.Zero };
@@ -50,6 +51,9 @@ internal sealed class PredictCommand
             options._vision, options._background, options._summation.Option, options._draws.Option, options._spread.Option, options._seed.Option,
             options._force, options._json, options._materials, options._sets, options._threads.Option, options._width.Option, options._overlay,
         };
+        foreach (Option option in options._instrument.All)
+            command.Options.Add(option);
+        command.Validators.Add(options._instrument.Refuse);
         options._files.Validators.Add(result => CommandLineErrors.RefuseOptions(result, command));
         options._files.Validators.Add(result => CommandLineErrors.RefuseEmpty(result, "FILE", result.Tokens, "the name of a structure file"));
         options._output.Validators.Add(result => CommandLineErrors.RefuseEmpty(result, "--out", result.Tokens, "the name of a folder"));
@@ -110,6 +114,7 @@ internal sealed class PredictCommand
             Mixing = _mixing.Of(parse),
             Observer = _observer.Of(parse),
             Summation = _summation.Of(parse),
+            Instrument = _instrument.Of(parse),
             Threads = _threads.Of(parse),
         };
         return new PredictRequest(

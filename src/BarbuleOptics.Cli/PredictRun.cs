@@ -23,6 +23,9 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
     /// <summary>Files that only the grating solver fills.</summary>
     private static readonly string[] GratingNames = [OrdersCsv.FileName, AbsorptionCsv.FileName];
 
+    /// <summary>Files that belong to one way of solving or looking, and are no results of another.</summary>
+    private static readonly string[] OptionalNames = [.. GratingNames, SignalCsv.FileName, .. DrawNames];
+
     private static readonly string[] ResultNames = [SpectraCsv.FileName, PredictionJson.FileName, .. PredictionFigures.FileNames];
 
     private PredictionConditions _conditions = request.Conditions;
@@ -141,10 +144,7 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
     {
         PredictionTable.Write(predicted, loaded.Notes, output, colors);
         if (folder is not null)
-        {
-            string[] names = [.. ResultNames, .. predicted.Prediction.IsRigorous ? GratingNames : [], .. predicted.Draws is null ? [] : DrawNames];
-            PredictionTable.Wrap($"Written into {OneLine.Escape(Path.TrimEndingDirectorySeparator(folder))}{Path.DirectorySeparatorChar}: {string.Join(", ", names)}.", output);
-        }
+            PredictionTable.Wrap($"Written into {OneLine.Escape(Path.TrimEndingDirectorySeparator(folder))}{Path.DirectorySeparatorChar}: {string.Join(", ", [.. ResultNames, .. Filled(predicted)])}.", output);
         output.WriteLine();
     }
 
@@ -191,15 +191,19 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
         => TryOutput(() =>
         {
             foreach (string folder in folders)
-                OutputFolder.Check(folder, [.. ResultNames, .. GratingNames, .. DrawNames], request.Force);
+                OutputFolder.Check(folder, [.. ResultNames, .. OptionalNames], request.Force);
         });
 
+    // Files of an earlier run that this one has nothing for are not left beside its own.
     private bool TryWrite(string folder, PredictedStructure predicted, CancellationToken cancellation)
-        => TryOutput(() => OutputFolder.Write(folder, [.. Results(predicted, cancellation)], request.Force, Unfilled(predicted), cancellation));
+        => TryOutput(() => OutputFolder.Write(folder, [.. Results(predicted, cancellation)], request.Force, [.. OptionalNames.Except(Filled(predicted))], cancellation));
 
-    /// <summary>Files of an earlier run that this one has nothing for.</summary>
-    private static string[] Unfilled(PredictedStructure predicted)
-        => [.. predicted.Prediction.IsRigorous ? [] : GratingNames, .. predicted.Draws is null ? DrawNames : []];
+    /// <summary>The optional files that this run fills.</summary>
+    private static string[] Filled(PredictedStructure predicted) =>
+    [
+        .. predicted.Prediction.IsRigorous ? GratingNames : [], .. predicted.Prediction.Conditions.Instrument is null ? [] : (string[])[SignalCsv.FileName],
+        .. predicted.Draws is null ? [] : DrawNames,
+    ];
 
 
     private IEnumerable<OutputFile> Results(PredictedStructure predicted, CancellationToken cancellation)
@@ -217,6 +221,8 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
             foreach ((string name, byte[] bytes) in EnsembleFigures.Render(predicted.Prediction, ensemble, request.FigureSize))
                 yield return OutputFile.FromBytes(name, bytes);
         }
+        if (predicted.Prediction.Conditions.Instrument is not null)
+            yield return new OutputFile(SignalCsv.FileName, stream => SignalCsv.Write(predicted.Prediction, stream));
         foreach ((string name, byte[] bytes) in PredictionFigures.Render(predicted.Prediction, request.FigureSize, request.Overlays, cancellation))
             yield return OutputFile.FromBytes(name, bytes);
     }

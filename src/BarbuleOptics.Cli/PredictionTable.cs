@@ -85,11 +85,14 @@ internal static class PredictionTable
             yield return $"'Rigorous' means: solved without averaging, for {prediction.Picture}.";
         if (LayerModelLine.Of(prediction) is string compared)
             yield return compared;
+        foreach (string line in SignalLines.Of(prediction))
+            yield return line;
         WavelengthGrid grid = prediction.Conditions.Wavelengths;
         if (grid.StartNm > SpectrumFeatures.UltravioletStartNm || grid.StopNm < SpectrumFeatures.VisibleEndNm)
             yield return string.Create(CultureInfo.InvariantCulture, $"'mean R' is over the part of 300-700 nm that {grid.StartNm}-{grid.StopNm} nm covers.");
         yield return $"Materials: {string.Join(", ", prediction.Materials.Select(Describe))}.";
-        yield return "Reflectance 1 is a perfect mirror. 'width' is at half prominence; 'bright' is the color at a lightness a screen shows well.";
+        string reference = prediction.Conditions.Instrument is null ? "Reflectance 1 is a perfect mirror. " : "";
+        yield return $"{reference}'width' is at half prominence; 'bright' is the color at a lightness a screen shows well.";
         foreach (string remark in BirdTable.Remarks(prediction))
             yield return remark;
         yield return StructurePrediction.Scope;

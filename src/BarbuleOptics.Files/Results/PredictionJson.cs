@@ -66,7 +66,7 @@ public static class PredictionJson
         WriteOptional(json, "films", prediction.FilmCount);
         json.WriteNumber("accuracy_asked", prediction.Conditions.Accuracy);
         json.WriteNumber("error_estimate", prediction.ErrorEstimate);
-        json.WriteString("reference", "mirror");
+        SignalJson.WriteInstrument(json, prediction.Conditions.Instrument);
         json.WriteString("scope", StructurePrediction.Scope);
         WriteMaterials(json, prediction.Materials);
         BirdJson.WriteEyes(json, prediction);
@@ -154,6 +154,7 @@ public static class PredictionJson
             json.WriteNull("cie");
         BirdJson.WriteHue(json, view);
         BirdJson.WriteView(json, view);
+        SignalJson.WriteSignal(json, view.Signal);
         WriteLayerModelError(json, view.LayerModelError);
         PowerJson.Write(json, view, prediction);
         json.WriteEndObject();

@@ -6,10 +6,13 @@ using BarbuleOptics.Spectra.Instruments;
 namespace BarbuleOptics.Prediction;
 
 /// <summary>What an instrument reads, at each angle asked for.</summary>
-/// <remarks>The signal is a weighted sum of spectra at few directions; their number is raised, in angle and azimuth in turn, until the sum changes by less than the
-/// accuracy asked for, and the last change of each is the error estimate.</remarks>
+/// <remarks>The signal is a weighted sum of spectra at few directions; their number is raised, in angle, azimuth or both, until what further ones add
+/// is below the accuracy asked for, and the sum of what the last ones added is the error estimate.</remarks>
 internal sealed class InstrumentSignals
 {
+    /// <summary>What the last directions may add, over the accuracy: they are counted, and what is left out is a small part of that.</summary>
+    public const double LastAdded = 5;
+
     private readonly Section _section;
     private readonly PredictionConditions _conditions;
     private readonly SignalSpectra _spectra;
@@ -59,26 +62,62 @@ internal sealed class InstrumentSignals
             scale * (error + orderError), _spectra.Count, other > 0 ? other / (specular + other) : 0);
     }
 
+    // Dimension-adaptive sum of differences between levels (T. Gerstner and M. Griebel, Computing 71 (2003) 65; from memory): the largest one on the border of
+    // what is taken is taken next, and its neighbors, whose own predecessors are taken, join the border.
     private (double[] Signal, double Error) Specular(LocalDirections directions)
     {
         var grid = new DirectionGrid(directions);
-        double allowed = _conditions.Accuracy * directions.Share;
-        int sine = Math.Min(1, grid.MostSine), across = Math.Min(1, grid.MostAcross);
-        double[] signal = Sum(grid.At(sine, across));
-        double sineError = sine == 0 ? 0 : double.PositiveInfinity, acrossError = across == 0 ? 0 : double.PositiveInfinity;
         // Light of one polarization, and films, do not see the azimuth.
-        if (!_spectra.IsUnpolarized || _section.IsFilms)
-            (across, acrossError) = (0, 0);
-        while ((sineError > allowed && sine < grid.MostSine) || (acrossError > allowed && across < grid.MostAcross))
+        int mostAcross = !_spectra.IsUnpolarized || _section.IsFilms ? 0 : grid.MostAcross;
+        double allowed = LastAdded * _conditions.Accuracy * directions.Share;
+        var sums = new Dictionary<(int, int), double[]>();
+        var border = new Dictionary<(int Sine, int Across), double>();
+        var taken = new HashSet<(int, int)>();
+        double[] signal = new double[_conditions.Wavelengths.Count];
+        Join((0, 0));
+        while (border.Count > 0)
         {
-            bool inSine = sine < grid.MostSine && (sineError >= acrossError || across == grid.MostAcross || acrossError <= allowed) && sineError > allowed;
-            double[] finer = Sum(inSine ? grid.At(sine + 1, across) : grid.At(sine, across + 1));
-            double change = LargestChange(signal, finer);
-            (sine, across) = inSine ? (sine + 1, across) : (sine, across + 1);
-            (sineError, acrossError) = inSine ? (change, acrossError) : (sineError, change);
-            signal = finer;
+            // The first levels are taken in any case: the middle may happen to be right.
+            (int Sine, int Across)[] first = [.. border.Keys.Where(level => level.Sine + level.Across <= 1)];
+            if (first.Length == 0 && border.Values.Sum() <= allowed)
+                break;
+            (int sine, int across) = first.Length > 0 ? first[0] : border.MaxBy(pair => pair.Value).Key;
+            border.Remove((sine, across));
+            taken.Add((sine, across));
+            if (sine < grid.MostSine && (across == 0 || taken.Contains((sine + 1, across - 1))))
+                Join((sine + 1, across));
+            if (across < mostAcross && (sine == 0 || taken.Contains((sine - 1, across + 1))))
+                Join((sine, across + 1));
         }
-        return (signal, sineError + acrossError);
+        return (signal, border.Values.Sum());
+
+        void Join((int Sine, int Across) level)
+        {
+            double most = 0;
+            double[] difference = Difference(grid, sums, level.Sine, level.Across);
+            for (int i = 0; i < difference.Length; i++)
+            {
+                signal[i] += difference[i];
+                most = Math.Max(most, Math.Abs(difference[i]));
+            }
+            border.Add(level, most);
+        }
+    }
+
+    // What a level adds to those below it in either direction.
+    private double[] Difference(DirectionGrid grid, Dictionary<(int, int), double[]> sums, int sine, int across)
+    {
+        double[] difference = [.. At(sine, across)];
+        for (int i = 0; i < difference.Length; i++)
+            difference[i] += -At(sine - 1, across)[i] - At(sine, across - 1)[i] + At(sine - 1, across - 1)[i];
+        return difference;
+
+        double[] At(int s, int a)
+        {
+            if (!sums.TryGetValue((s, a), out double[]? sum))
+                sums.Add((s, a), sum = s < 0 || a < 0 ? new double[_conditions.Wavelengths.Count] : Sum(grid.At(s, a)));
+            return sum;
+        }
     }
 
     private double[] Sum(List<GridDirection> points)
@@ -92,13 +131,5 @@ internal sealed class InstrumentSignals
                 sum[i] += point.Weight * specular[i];
         }
         return sum;
-    }
-
-    private static double LargestChange(double[] one, double[] other)
-    {
-        double most = 0;
-        for (int i = 0; i < one.Length; i++)
-            most = Math.Max(most, Math.Abs(one[i] - other[i]));
-        return most;
     }
 }

@@ -137,7 +137,7 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
                 Add(WarningCodes.NoSignal, FormattableString.Invariant($"{signal.FacingShare:0.0e+0} of the light a mirror would send into the collector comes from these facets; there is hardly anything to measure: widen --aperture or --tilt, or turn the arms"), signal.Angle);
         }
         double worst = signals.Max(signal => signal.ErrorEstimate / signal.Scale);
-        if (worst > 2 * conditions.Accuracy)
+        if (worst > 2 * InstrumentSignals.LastAdded * conditions.Accuracy)
             Add(WarningCodes.SignalAccuracy, FormattableString.Invariant($"the integral over cones and facets may be off by {worst:0.0e+0} of a mirror's signal, above the {conditions.Accuracy:0.0e+0} asked for; report it"));
         if (conditions.Polarization != Polarizations.Unpolarized)
             Add(WarningCodes.SignalPolarization, "the signal is computed as if every facet saw the light in the plane of the arms; tilted facets turn the polarization a little: rely on unpolarized signals where that matters");

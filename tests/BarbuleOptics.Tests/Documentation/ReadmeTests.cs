@@ -70,7 +70,8 @@ public sealed partial class ReadmeTests
     [Fact]
     public void Every_option_of_the_readme_is_one_of_the_program()
     {
-        string help = string.Join('\n', File.ReadAllLines(Path.Combine(Repository.Root, "src", "BarbuleOptics.Cli", "PredictCommand.cs")));
+        string cli = Path.Combine(Repository.Root, "src", "BarbuleOptics.Cli");
+        string help = File.ReadAllText(Path.Combine(cli, "PredictCommand.cs")) + File.ReadAllText(Path.Combine(cli, "InstrumentOptions.cs"));
         foreach (string option in Option().Matches(Readme).Select(match => match.Value).Distinct().Where(option => option is not ("--project" or "--help" or "--version" or "--global" or "--source")))
             Assert.Contains($"\"{option}\"", help, StringComparison.Ordinal);
     }

@@ -5,11 +5,14 @@ namespace BarbuleOptics.Spectra.Instruments;
 /// L. N. Trefethen, SIAM Review 46 (2004) 501, equations 4.2 and 5.4 (numbers from memory).</remarks>
 internal static class NestedNodes
 {
+    private static readonly double[][] Points = [.. Enumerable.Range(0, DirectionBox.MostLevel + 1).Select(
+        level => level == 0 ? [0.5] : (double[])[.. Enumerable.Range(0, (1 << level) + 1).Select(i => 0.5 - 0.5 * Math.Cos(Math.PI * i / (1 << level)))])];
+
     /// <summary>Number of points of a level.</summary>
-    public static int Count(int level) => level == 0 ? 1 : (1 << level) + 1;
+    public static int Count(int level) => Points[level].Length;
 
     /// <summary>A point, on 0 to 1.</summary>
-    public static double At(int level, int number) => level == 0 ? 0.5 : 0.5 - 0.5 * Math.Cos(Math.PI * number / (1 << level));
+    public static double At(int level, int number) => Points[level][number];
 
     /// <summary>Fills the values of all polynomials of a level at <paramref name="x"/>, on 0 to 1.</summary>
     public static void Fill(int level, double x, Span<double> values)
