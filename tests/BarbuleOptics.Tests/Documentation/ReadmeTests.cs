@@ -98,6 +98,6 @@ public sealed partial class ReadmeTests
     [GeneratedRegex(@"```toml\n(.*?)```", RegexOptions.Singleline)]
     private static partial Regex StructureText();
 
-    [GeneratedRegex(@"(?<![\w-])--[a-z]+")]
+    [GeneratedRegex(@"(?<![\w-])--[a-z]+(-[a-z]+)*")]
     private static partial Regex Option();
 }
