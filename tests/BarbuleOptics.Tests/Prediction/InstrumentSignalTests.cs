@@ -18,6 +18,7 @@ public sealed class InstrumentSignalTests
     private const string Coarse = "barbule.matrix = { n = 1.55 }\nbarbule.backing = { n = 1.55 }\n[cortex]\nthickness = 50\n"
         + "[[layer]]\nform = 'rod'\ndiameter = 200\nspacing = 480\nmaterial = { n = 1.9 }\n";
 
+    // Both are solved by themselves, to the accuracy asked for (1e-4); measured: 4e-6.
     [Fact]
     public void Without_cones_on_flat_facets_the_signal_is_the_reflectance()
     {
@@ -28,7 +29,7 @@ public sealed class InstrumentSignalTests
             Assert.Null(one.Signal);
             Assert.Null(other.Signal!.FacingShare);
             for (int w = 0; w < one.Reflectance.Grid.Count; w++)
-                Assert.Equal(one.Reflectance[w], other.Reflectance[w], 1e-9);
+                Assert.Equal(one.Reflectance[w], other.Reflectance[w], 2e-5);
         }
     }
 
