@@ -100,14 +100,15 @@ internal readonly struct ComplexLanes<TLanes>(TLanes real, TLanes imaginary)
     }
 
     /// <summary>The square root with an imaginary part of 0 or more: the one that decays or travels on.</summary>
-    /// <remarks>The larger of the two parts is found first, sqrt((|z| + |Re z|)/2), and the other by division, so that neither is a difference.
+    /// <remarks>The larger of the two parts is found first, sqrt((|z| + |Re z|)/2), and the other from its inverse, so that neither is a difference. Values below 1e-150 count as that.
     /// A value with an imaginary part of 0 or -0 gives a root on the positive real or the positive imaginary axis.</remarks>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public ComplexLanes<TLanes> PassiveRoot()
     {
-        TLanes half = TLanes.Broadcast(0.5), zero = TLanes.Broadcast(0);
-        TLanes large = TLanes.Sqrt(half * (TLanes.Sqrt(Norm) + TLanes.Abs(Real)));
-        TLanes small = half * TLanes.Abs(Imaginary) / TLanes.Max(large, TLanes.Broadcast(1e-300));
+        TLanes half = TLanes.Broadcast(0.5), zero = TLanes.Broadcast(0), least = TLanes.Broadcast(1e-300);
+        TLanes modulus = TLanes.RootAndInverse(TLanes.Max(Norm, least)).Root;
+        (TLanes large, TLanes inverse) = TLanes.RootAndInverse(TLanes.Max(half * (modulus + TLanes.Abs(Real)), least));
+        TLanes small = half * TLanes.Abs(Imaginary) * inverse;
         TLanes negativeReal = TLanes.LessThan(Real, zero);
         TLanes magnitude = TLanes.Select(negativeReal, small, large);
         // With Im z < 0 the root of Im >= 0 has Re <= 0.

@@ -46,6 +46,10 @@ internal interface ILanes<TSelf>
     /// <summary>Square root.</summary>
     static abstract TSelf Sqrt(TSelf value);
 
+    /// <summary>The square root and its inverse, within 1 unit in the last place, for values from 1e-300 to 1e300; at 512 bits far cheaper than
+    /// <see cref="Sqrt"/> and a quotient.</summary>
+    static abstract (TSelf Root, TSelf Inverse) RootAndInverse(TSelf value);
+
     /// <summary>Absolute value.</summary>
     static abstract TSelf Abs(TSelf value);
 

@@ -59,6 +59,14 @@ internal readonly struct Lanes128(Vector128<double> vector) : ILanes<Lanes128>
 
     /// <inheritdoc/>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static (Lanes128 Root, Lanes128 Inverse) RootAndInverse(Lanes128 value)
+    {
+        Vector128<double> root = Vector128.Sqrt(value._vector);
+        return (new(root), new(Vector128<double>.One / root));
+    }
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static Lanes128 Abs(Lanes128 value) => new(Vector128.Abs(value._vector));
 
     /// <inheritdoc/>

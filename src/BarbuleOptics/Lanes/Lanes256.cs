@@ -66,6 +66,14 @@ internal readonly struct Lanes256(Vector256<double> vector) : ILanes<Lanes256>
 
     /// <inheritdoc/>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static (Lanes256 Root, Lanes256 Inverse) RootAndInverse(Lanes256 value)
+    {
+        Vector256<double> root = Vector256.Sqrt(value._vector);
+        return (new(root), new(Vector256<double>.One / root));
+    }
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static Lanes256 Abs(Lanes256 value) => new(Vector256.Abs(value._vector));
 
     /// <inheritdoc/>

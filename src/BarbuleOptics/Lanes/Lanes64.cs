@@ -56,6 +56,14 @@ internal readonly struct Lanes64(double value) : ILanes<Lanes64>
 
     /// <inheritdoc/>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static (Lanes64 Root, Lanes64 Inverse) RootAndInverse(Lanes64 value)
+    {
+        double root = Math.Sqrt(value._value);
+        return (new(root), new(1 / root));
+    }
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static Lanes64 Abs(Lanes64 value) => new(Math.Abs(value._value));
 
     /// <inheritdoc/>

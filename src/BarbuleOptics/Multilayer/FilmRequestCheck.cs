@@ -1,4 +1,7 @@
+using System.Runtime.CompilerServices;
+using BarbuleOptics.Lanes;
 using BarbuleOptics.Layering;
+using BarbuleOptics.Multilayer.Kernels;
 using BarbuleOptics.Quantities;
 
 namespace BarbuleOptics.Multilayer;
@@ -76,6 +79,8 @@ internal static class FilmRequestCheck
         void CheckParts(double[] real, double[] imaginary, int medium)
         {
             int start = medium * media.WavelengthCount + first;
+            if (count > 0 && LaneWidth.Default.Invoke<UsableParts, bool>(new UsableParts(real.AsSpan(start, count), imaginary.AsSpan(start, count))))
+                return;
             for (int i = start; i < start + count; i++)
             {
                 if (!IsUsable(real[i], imaginary[i]))
@@ -86,6 +91,25 @@ internal static class FilmRequestCheck
 
     private static bool IsUsable(double real, double imaginary)
         => Math.Max(Math.Abs(real), Math.Abs(imaginary)) is >= LeastPermittivity and <= MostPermittivity;
+
+    // The same for many at once; permittivities are numbers, as what sets them sees to.
+    private readonly ref struct UsableParts(ReadOnlySpan<double> real, ReadOnlySpan<double> imaginary) : ILaneAction<bool>
+    {
+        private readonly ReadOnlySpan<double> _real = real, _imaginary = imaginary;
+
+        [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+        public bool Invoke<TLanes>()
+            where TLanes : struct, ILanes<TLanes>
+        {
+            TLanes smallest = TLanes.Broadcast(1), largest = smallest;
+            for (int vector = 0; vector < LaneBlock.Vectors(_real.Length, TLanes.Count); vector++)
+            {
+                TLanes size = TLanes.Max(TLanes.Abs(LaneBlock.Load<TLanes>(_real, vector)), TLanes.Abs(LaneBlock.Load<TLanes>(_imaginary, vector)));
+                (smallest, largest) = (TLanes.Min(smallest, size), TLanes.Max(largest, size));
+            }
+            return !TLanes.Any(TLanes.LessThan(smallest, TLanes.Broadcast(LeastPermittivity))) && !TLanes.Any(TLanes.LessThan(TLanes.Broadcast(MostPermittivity), largest));
+        }
+    }
 
     private static string Unusable(string what, int wavelength)
         => FormattableString.Invariant($"The permittivity of {what} at wavelength {wavelength} is zero, not finite or beyond 1e-100 to 1e100.");

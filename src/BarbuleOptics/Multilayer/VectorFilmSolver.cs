@@ -121,23 +121,37 @@ public sealed class VectorFilmSolver : ISpectralSolver<FilmStack, VectorFilmWork
                 Transmittance = (request.Outputs & SolverOutputs.Transmittance) != 0 ? _response.Transmittance : [],
                 Absorptance = (request.Outputs & SolverOutputs.Absorptance) != 0 ? _response.Absorptance : [],
             };
+            Span<bool> failed = work.Failed.AsSpan(0, vectors);
+            failed.Clear();
+            Span<int> group = stackalloc int[FieldKernel.Group];
+            int taken = 0;
             for (int vector = 0; vector < vectors; vector++)
             {
-                if (doubtful && !work.Doubtful[vector])
-                    continue;
-                if (doubtful)
+                if (!doubtful || work.Doubtful[vector])
+                    group[taken++] = vector;
+                if (doubtful && work.Doubtful[vector])
                     Clear<TLanes>(run, vector);
-                if (!TrySolve<TLanes>(run, vector))
+                if (taken == FieldKernel.Group || (taken > 0 && vector == vectors - 1))
+                {
+                    SolveGroup<TLanes>(run, group[..taken], failed);
+                    taken = 0;
+                }
+            }
+            for (int vector = 0; vector < vectors; vector++)
+            {
+                if (failed[vector])
                     AskReference<TLanes>(run, vector);
             }
         }
 
-        private bool TrySolve<TLanes>(in FieldRun run, int vector)
+        private void SolveGroup<TLanes>(in FieldRun run, ReadOnlySpan<int> vectors, Span<bool> failed)
             where TLanes : struct, ILanes<TLanes>
         {
             double weight = request.Polarization == Polarizations.Unpolarized ? 0.5 : 1;
-            return ((request.Polarization & Polarizations.S) == 0 || work.Fields.TrySolve<TLanes>(run, vector, isP: false, weight))
-                   && ((request.Polarization & Polarizations.P) == 0 || work.Fields.TrySolve<TLanes>(run, vector, isP: true, weight));
+            if ((request.Polarization & Polarizations.S) != 0)
+                work.Fields.Solve<TLanes>(run, vectors, isP: false, weight, failed);
+            if ((request.Polarization & Polarizations.P) != 0)
+                work.Fields.Solve<TLanes>(run, vectors, isP: true, weight, failed);
         }
 
         private void AskReference<TLanes>(in FieldRun run, int vector)

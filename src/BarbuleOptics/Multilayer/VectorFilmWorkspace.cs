@@ -26,9 +26,10 @@ public sealed class VectorFilmWorkspace
         Films = new FilmSequence(structure.FilmCount);
         Steps = new AmplitudeStep[structure.FilmCount];
         Pairs = new PairRegistry(structure.FilmCount + 1);
-        Fields = new FieldKernel(structure.FilmCount, width.Count);
+        Fields = new FieldKernel(width.Count);
         Facts = new MediumFacts();
         Doubtful = new bool[LaneBlock.Vectors(_mostWavelengths, width.Count)];
+        Failed = new bool[Doubtful.Length];
         Reference = new FilmWorkspace(structure.FilmCount, _mostMedia);
         long doubles = (long)DirectionTable.Values * width.Count * Doubtful.Length * (2 * _mostMedia + structure.FilmCount + 3);
         _directions = new DirectionTable?[(int)Math.Clamp(MostDoubles / doubles, 1, MostDirections)];
@@ -48,6 +49,9 @@ public sealed class VectorFilmWorkspace
 
     /// <summary>For each vector whether the amplitude kernel must leave it.</summary>
     internal bool[] Doubtful { get; }
+
+    /// <summary>For each vector whether the field kernel could not solve it.</summary>
+    internal bool[] Failed { get; }
 
     internal FilmWorkspace Reference { get; }
 

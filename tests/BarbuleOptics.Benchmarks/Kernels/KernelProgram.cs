@@ -9,12 +9,18 @@ internal static class KernelProgram
     /// <summary>Runs of which the median counts.</summary>
     private const int Runs = 9;
 
-    private const string Usage = "kernels [--json] [NAME...]: NAME is a workload; all of them where none is named";
+    private const string Usage = "kernels [--list | --json] [NAME...]: NAME is a workload; all of them where none is named";
 
     /// <summary>Runs it.</summary>
     /// <param name="words">--json, and the workloads wanted.</param>
     public static int Run(string[] words)
     {
+        if (words.Contains("--list"))
+        {
+            foreach (Workload workload in Workload.All)
+                Console.WriteLine(workload.Name);
+            return 0;
+        }
         bool json = words.Contains("--json");
         string[] names = [.. words.Where(word => word != "--json")];
         if (names.FirstOrDefault(name => Workload.All.All(workload => workload.Name != name)) is string unknown)

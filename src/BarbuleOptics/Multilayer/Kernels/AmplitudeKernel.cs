@@ -120,14 +120,14 @@ internal static class AmplitudeKernel
     }
 
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    private static (ComplexLanes<TLanes> A, ComplexLanes<TLanes> B) Through<TLanes>(
+    internal static (ComplexLanes<TLanes> A, ComplexLanes<TLanes> B) Through<TLanes>(
         in ComplexLanes<TLanes> reflection, in ComplexLanes<TLanes> factor, in ComplexLanes<TLanes> a, in ComplexLanes<TLanes> b)
         where TLanes : struct, ILanes<TLanes>
         => (ComplexLanes<TLanes>.MultiplyAdd(reflection, b, a), ComplexLanes<TLanes>.MultiplyAdd(reflection, a, b) * factor);
 
     // |rho a + b|^2 and |a + rho b|^2.
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    private static (TLanes Up, TLanes Incident) Norms<TLanes>(in ComplexLanes<TLanes> top, in ComplexLanes<TLanes> a, in ComplexLanes<TLanes> b)
+    internal static (TLanes Up, TLanes Incident) Norms<TLanes>(in ComplexLanes<TLanes> top, in ComplexLanes<TLanes> a, in ComplexLanes<TLanes> b)
         where TLanes : struct, ILanes<TLanes>
         => (ComplexLanes<TLanes>.MultiplyAdd(top, a, b).Norm, ComplexLanes<TLanes>.MultiplyAdd(top, b, a).Norm);
 
@@ -135,11 +135,18 @@ internal static class AmplitudeKernel
     private static void Keep<TLanes>(in AmplitudeRun run, int vector, double weight, ref double answer)
         where TLanes : struct, ILanes<TLanes>
     {
-        TLanes reflectance = TLanes.Load(in answer), norm = TLanes.Load(in Unsafe.Add(ref answer, TLanes.Count)), zero = TLanes.Broadcast(0);
+        TLanes reflectance = TLanes.Load(in answer), norm = TLanes.Load(in Unsafe.Add(ref answer, TLanes.Count));
         LaneBlock.Add(run.Reflectance, vector, 1, TLanes.Min(TLanes.Broadcast(weight) * reflectance, TLanes.Broadcast(1)));
-        // A lane that is not above the bound condemns the vector, and so does NaN, which is not above zero.
-        TLanes isSound = TLanes.Select(TLanes.LessThan(TLanes.Broadcast(run.LeastNorm), norm), reflectance, TLanes.Broadcast(-1));
-        if (TLanes.Any(TLanes.Select(TLanes.LessThan(TLanes.Broadcast(-0.5), isSound), zero, TLanes.LessThan(zero, TLanes.Broadcast(1)))))
+        if (IsDoubtful(reflectance, norm, run.LeastNorm))
             run.Doubtful[vector] = true;
+    }
+
+    /// <summary>Whether a lane is not above the bound, or NaN.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    internal static bool IsDoubtful<TLanes>(TLanes reflectance, TLanes norm, double leastNorm)
+        where TLanes : struct, ILanes<TLanes>
+    {
+        TLanes isSound = TLanes.Select(TLanes.LessThan(TLanes.Broadcast(leastNorm), norm), reflectance, TLanes.Broadcast(-1));
+        return TLanes.Any(TLanes.Select(TLanes.LessThan(TLanes.Broadcast(-0.5), isSound), TLanes.Broadcast(0), TLanes.LessThan(TLanes.Broadcast(0), TLanes.Broadcast(1))));
     }
 }

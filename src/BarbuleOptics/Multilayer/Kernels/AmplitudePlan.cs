@@ -5,7 +5,8 @@ namespace BarbuleOptics.Multilayer.Kernels;
 /// <param name="TopFace">Number of that face.</param>
 internal readonly record struct AmplitudePlan(int Top, int TopFace)
 {
-    private const double Rounding = 1.1102230246251565e-16;
+    /// <summary>Unit of rounding.</summary>
+    public const double Rounding = 1.1102230246251565e-16;
 
     /// <summary>Makes the steps of the films at hand, numbering faces that were not met before.</summary>
     public static AmplitudePlan Of(VectorFilmWorkspace work, DirectionTable table)

@@ -61,6 +61,9 @@ internal sealed class DirectionTable
     /// <summary>1 + the largest modulus of a face's reflection; infinite where the face is not for this kernel.</summary>
     public double GrowthOf(int face) => _growths[face];
 
+    /// <summary>The largest of <see cref="Steepness"/>.</summary>
+    public double MostSteepness => Steepness.Max();
+
     /// <summary>Forgets what it knows.</summary>
     public void Clear() => Degrees = double.NaN;
 
@@ -109,7 +112,7 @@ internal sealed class DirectionTable
             {
                 ComplexLanes<TLanes> x = media.X(medium, vector), y = media.Y(medium, vector), z = media.Z(medium, vector);
                 ComplexLanes<TLanes> s = light.DepthS(y);
-                (ComplexLanes<TLanes> p, ComplexLanes<TLanes> admittance, _) = light.WaveP(x, z);
+                (ComplexLanes<TLanes> p, ComplexLanes<TLanes> admittance, _, _) = light.WaveP(x, z);
                 SetAdmittances(medium, vector, s, admittance);
                 ref double rates = ref Rates[vector * RateStride + medium * Values * _lanes];
                 SetRates(ref rates, medium, wavesPerNm, s);

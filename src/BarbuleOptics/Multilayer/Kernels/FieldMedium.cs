@@ -7,42 +7,46 @@ namespace BarbuleOptics.Multilayer.Kernels;
 internal static class FieldMedium
 {
     /// <summary>Vectors that a medium takes.</summary>
-    public const int Values = 15;
+    public const int Values = 13;
 
-    public const int Depth = 0, Admittance = 2, Inverse = 4, Ratio = 6, PhiLoss = 8, PsiLoss = 9, Norm = 10, InverseNorm = 11, RatioNorm = 12, InverseDepth = 13;
+    public const int Depth = 0, Admittance = 2, Inverse = 4, Ratio = 6, PhiLoss = 8, PsiLoss = 9, Norm = 10, InverseNorm = 11, RatioNorm = 12;
 
-    /// <summary>Fills a medium's place.</summary>
+    /// <summary>Fills a medium's place, in s.</summary>
     /// <returns>Whether it takes up power at any of the wavelengths.</returns>
-    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
-    public static bool Fill<TLanes>(in LightLanes<TLanes> light, bool isP, in ComplexLanes<TLanes> x, in ComplexLanes<TLanes> y, in ComplexLanes<TLanes> z, ref double place)
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static bool FillS<TLanes>(in LightLanes<TLanes> light, in ComplexLanes<TLanes> y, ref double place)
         where TLanes : struct, ILanes<TLanes>
     {
-        TLanes zero = TLanes.Broadcast(0), one = TLanes.Broadcast(1);
-        ComplexLanes<TLanes> depth, admittance, ratio;
-        TLanes phiLoss, psiLoss;
-        if (isP)
-        {
-            (depth, admittance, phiLoss) = light.WaveP(x, z);
-            (ratio, psiLoss) = (x, x.Imaginary);
-        }
-        else
-        {
-            depth = admittance = light.DepthS(y);
-            (ratio, phiLoss, psiLoss) = (ComplexLanes<TLanes>.Broadcast(1), y.Imaginary, zero);
-        }
-        TLanes norm = admittance.Norm, inverseNorm = one / norm;
+        ComplexLanes<TLanes> depth = light.DepthS(y);
+        return Fill(depth, depth, depth.Reciprocal(), ComplexLanes<TLanes>.Broadcast(1), y.Imaginary, TLanes.Broadcast(0), ref place);
+    }
+
+    /// <summary>Fills a medium's place, in p.</summary>
+    /// <returns>Whether it takes up power at any of the wavelengths.</returns>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static bool FillP<TLanes>(in LightLanes<TLanes> light, in ComplexLanes<TLanes> x, in ComplexLanes<TLanes> z, ref double place)
+        where TLanes : struct, ILanes<TLanes>
+    {
+        (ComplexLanes<TLanes> depth, ComplexLanes<TLanes> admittance, ComplexLanes<TLanes> inverse, TLanes phiLoss) = light.WaveP(x, z);
+        return Fill(depth, admittance, inverse, x, phiLoss, x.Imaginary, ref place);
+    }
+
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    private static bool Fill<TLanes>(
+        in ComplexLanes<TLanes> depth, in ComplexLanes<TLanes> admittance, in ComplexLanes<TLanes> inverse, in ComplexLanes<TLanes> ratio,
+        TLanes phiLoss, TLanes psiLoss, ref double place)
+        where TLanes : struct, ILanes<TLanes>
+    {
         Store(depth, ref place, Depth);
         Store(admittance, ref place, Admittance);
-        Store(inverseNorm * admittance.Conjugate, ref place, Inverse);
+        Store(inverse, ref place, Inverse);
         Store(ratio, ref place, Ratio);
         Store(phiLoss, ref place, PhiLoss);
         Store(psiLoss, ref place, PsiLoss);
-        Store(norm, ref place, Norm);
-        Store(inverseNorm, ref place, InverseNorm);
+        Store(admittance.Norm, ref place, Norm);
+        Store(inverse.Norm, ref place, InverseNorm);
         Store(ratio.Norm, ref place, RatioNorm);
-        Store(one / depth.Real, ref place, InverseDepth);
-        Store(one / depth.Imaginary, ref place, InverseDepth + 1);
-        return TLanes.Any(TLanes.LessThan(zero, TLanes.Max(phiLoss, psiLoss)));
+        return TLanes.Any(TLanes.LessThan(TLanes.Broadcast(0), TLanes.Max(phiLoss, psiLoss)));
     }
 
     [MethodImpl(MethodImplOptions.AggressiveInlining)]

@@ -11,8 +11,12 @@ internal static class FieldStep
 
     public const int Kept = 0, Same = 1, PhiToPsi = 3, PsiToPhi = 5, PhiEntering = 7, PsiEntering = 8, PhiLost = 9, PsiLost = 10;
 
-    /// <summary>Phases above this, in radians, are taken by the sine and cosine that the reference solver takes, so that both round alike.</summary>
-    private const double MostTurn = 64;
+    // 1/(4 pi) in two parts, the second times 2 pi.
+    private const double TurnsOfHalfRadian = 0.07957747154594767, RestOfHalfRadian = -3.0911193037561055e-17;
+
+    // Where |kz d|^2 is below this everywhere, terms from this one on are below 1e-15 of the sum.
+    private const double ThinSize = 0.0625;
+    private const int ThinTerms = 5;
 
     // 1/(2 n + 1)!
     private static ReadOnlySpan<double> InverseFactorials =>
@@ -22,15 +26,14 @@ internal static class FieldStep
     /// <param name="medium">Its medium, filled by <see cref="FieldMedium"/>.</param>
     /// <param name="isLossy">Whether the medium takes up power.</param>
     /// <param name="thickness">k0 d.</param>
-    /// <param name="inverseThickness">1/(k0 d).</param>
     /// <param name="place">Where to write.</param>
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
-    public static void Fill<TLanes>(ref double medium, bool isLossy, TLanes thickness, TLanes inverseThickness, ref double place)
+    public static void Fill<TLanes>(ref double medium, bool isLossy, TLanes thickness, ref double place)
         where TLanes : struct, ILanes<TLanes>
     {
         TLanes zero = TLanes.Broadcast(0), one = TLanes.Broadcast(1), half = TLanes.Broadcast(0.5), two = TLanes.Broadcast(2);
         TLanes turn = Read<TLanes>(ref medium, FieldMedium.Depth) * thickness, decay = Read<TLanes>(ref medium, FieldMedium.Depth + 1) * thickness;
-        (TLanes kept, TLanes faded) = Decay(decay);
+        (TLanes kept, TLanes faded, TLanes share) = Decay(decay);
         (TLanes sine, TLanes cosine) = HalfTurn(turn);
         TLanes swing = two * kept * sine * cosine;
         var change = new ComplexLanes<TLanes>(half * TLanes.MultiplyAdd(two * kept * sine, sine, faded), -half * swing);
@@ -50,42 +53,43 @@ internal static class FieldStep
             Write(zero, ref place, PsiLost);
             return;
         }
-        TLanes a = half * spent * Read<TLanes>(ref medium, FieldMedium.InverseDepth + 1) * inverseThickness;
-        a = TLanes.Select(TLanes.LessThan(zero, decay), a, one);
-        TLanes b = swing * Read<TLanes>(ref medium, FieldMedium.InverseDepth) * inverseThickness;
-        b = TLanes.Select(TLanes.LessThan(zero, TLanes.Abs(turn)), b, kept);
+        // a and b, and the differences that are small where the film is thin: a - b = |h| (sinh(x")/x" - sin(x')/x').
         TLanes norm = Read<TLanes>(ref medium, FieldMedium.Norm), size = TLanes.MultiplyAdd(turn, turn, decay * decay);
-        TLanes odd = (a - b) * norm, oddOverAdmittance = (a - b) * Read<TLanes>(ref medium, FieldMedium.InverseNorm);
-        TLanes isThin = TLanes.LessThan(size, one);
-        if (TLanes.Any(isThin))
+        TLanes gap = kept * SincGap(turn * turn, decay * decay, TLanes.Any(TLanes.LessThan(TLanes.Broadcast(ThinSize), size)) ? InverseFactorials.Length : ThinTerms), a = share * half * (one + kept), difference = gap * size;
+        TLanes odd = difference * norm, oddOverAdmittance = gap * thickness * thickness * Read<TLanes>(ref medium, FieldMedium.RatioNorm);
+        TLanes isThick = TLanes.LessThan(one, size);
+        if (TLanes.Any(isThick))
         {
-            TLanes gap = kept * SincGap(turn * turn, decay * decay);
-            odd = TLanes.Select(isThin, gap * size * norm, odd);
-            oddOverAdmittance = TLanes.Select(isThin, gap * thickness * thickness * Read<TLanes>(ref medium, FieldMedium.RatioNorm), oddOverAdmittance);
+            TLanes thick = a - swing / turn;
+            thick = TLanes.Select(TLanes.LessThan(zero, TLanes.Abs(turn)), thick, a - kept);
+            difference = TLanes.Select(isThick, thick, difference);
+            odd = TLanes.Select(isThick, thick * norm, odd);
+            oddOverAdmittance = TLanes.Select(isThick, thick * Read<TLanes>(ref medium, FieldMedium.InverseNorm), oddOverAdmittance);
         }
+        TLanes even = a + a - difference;
         TLanes phiLoss = half * thickness * Read<TLanes>(ref medium, FieldMedium.PhiLoss), psiLoss = half * thickness * Read<TLanes>(ref medium, FieldMedium.PsiLoss);
-        Write(TLanes.MultiplyAdd(phiLoss, a + b, psiLoss * odd), ref place, PhiLost);
-        Write(TLanes.MultiplyAdd(phiLoss, oddOverAdmittance, psiLoss * (a + b)), ref place, PsiLost);
+        Write(TLanes.MultiplyAdd(phiLoss, even, psiLoss * odd), ref place, PhiLost);
+        Write(TLanes.MultiplyAdd(phiLoss, oddOverAdmittance, psiLoss * even), ref place, PsiLost);
     }
 
+    // Of half the phase; the argument is not rounded on its way to turns, so that a thick film has the phase that the reference gives it.
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     private static (TLanes Sine, TLanes Cosine) HalfTurn<TLanes>(TLanes turn)
         where TLanes : struct, ILanes<TLanes>
     {
-        if (TLanes.Any(TLanes.LessThan(TLanes.Broadcast(MostTurn), TLanes.Abs(turn))))
-            return TLanes.SinCos(TLanes.Broadcast(0.5) * turn);
-        ComplexLanes<TLanes> half = TLanes.Turn(turn, TLanes.Broadcast(0.25 / Math.PI));
-        return (half.Imaginary, half.Real);
+        ComplexLanes<TLanes> half = TLanes.Turn(turn, TLanes.Broadcast(TurnsOfHalfRadian));
+        TLanes rest = TLanes.Broadcast(RestOfHalfRadian) * turn;
+        return (TLanes.MultiplyAdd(rest, half.Real, half.Imaginary), TLanes.SubtractProduct(rest, half.Imaginary, half.Real));
     }
 
-    // exp(-x) and 1 - exp(-x), each to its own last digits: below 1/2 the second is x times a polynomial (Chebyshev nodes, error below 1e-16 of it).
+    // exp(-x), 1 - exp(-x) and (1 - exp(-x))/x, each to its own last digits: below 1/2 the last is a polynomial (Chebyshev nodes, error below 1e-16 of it).
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    private static (TLanes Kept, TLanes Faded) Decay<TLanes>(TLanes x)
+    private static (TLanes Kept, TLanes Faded, TLanes Share) Decay<TLanes>(TLanes x)
         where TLanes : struct, ILanes<TLanes>
     {
         TLanes zero = TLanes.Broadcast(0), one = TLanes.Broadcast(1);
         if (!TLanes.Any(TLanes.LessThan(zero, x)))
-            return (one, zero);
+            return (one, zero, one);
         TLanes sum = TLanes.Broadcast(-2.1985703840083692e-07);
         sum = TLanes.MultiplyAdd(sum, x, TLanes.Broadcast(2.6988592921217972e-06));
         sum = TLanes.MultiplyAdd(sum, x, TLanes.Broadcast(-2.4768788096264572e-05));
@@ -99,19 +103,19 @@ internal static class FieldStep
         TLanes faded = x * sum, kept = one - faded;
         TLanes isLong = TLanes.LessThan(TLanes.Broadcast(0.5), x);
         if (!TLanes.Any(isLong))
-            return (kept, faded);
-        TLanes exponential = TLanes.Exp(-x);
-        return (TLanes.Select(isLong, exponential, kept), TLanes.Select(isLong, one - exponential, faded));
+            return (kept, faded, sum);
+        TLanes exponential = TLanes.PowerOfTwo(x, TLanes.Broadcast(-1.4426950408889634)), rest = one - exponential;
+        return (TLanes.Select(isLong, exponential, kept), TLanes.Select(isLong, rest, faded), TLanes.Select(isLong, rest / x, sum));
     }
 
     // See StableFunctions.SincGap.
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    private static TLanes SincGap<TLanes>(TLanes uSquared, TLanes vSquared)
+    private static TLanes SincGap<TLanes>(TLanes uSquared, TLanes vSquared, int terms)
         where TLanes : struct, ILanes<TLanes>
     {
         TLanes sum = vSquared - uSquared, product = uSquared * vSquared, previous = TLanes.Broadcast(0), current = TLanes.Broadcast(1);
         TLanes total = TLanes.Broadcast(InverseFactorials[0]);
-        for (int n = 1; n < InverseFactorials.Length; n++)
+        for (int n = 1; n < terms; n++)
         {
             (previous, current) = (current, TLanes.MultiplyAdd(sum, current, product * previous));
             total = TLanes.MultiplyAdd(current, TLanes.Broadcast(InverseFactorials[n]), total);

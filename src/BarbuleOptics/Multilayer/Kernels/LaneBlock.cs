@@ -4,24 +4,24 @@ using BarbuleOptics.Lanes;
 
 namespace BarbuleOptics.Multilayer.Kernels;
 
-/// <summary>Wavelengths in vectors: the last vector is filled up with its last wavelength.</summary>
+/// <summary>Wavelengths in vectors: the last vector reaches back over the one before it, or where all are too few for one is filled up with the last.</summary>
 internal static class LaneBlock
 {
     /// <summary>Number of vectors for a number of wavelengths.</summary>
     public static int Vectors(int count, int lanes) => (count + lanes - 1) / lanes;
 
-    /// <summary>Reads a vector's values; beyond the end the last one again.</summary>
+    /// <summary>Reads a vector's values.</summary>
     /// <param name="values">One a wavelength; not empty.</param>
     /// <param name="vector">Number of the vector.</param>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static TLanes Load<TLanes>(ReadOnlySpan<double> values, int vector)
         where TLanes : struct, ILanes<TLanes>
     {
-        int first = vector * TLanes.Count;
-        return first + TLanes.Count <= values.Length ? TLanes.Load(in values[first]) : LoadTail<TLanes>(values[first..]);
+        int first = Math.Min(vector * TLanes.Count, values.Length - TLanes.Count);
+        return first >= 0 ? TLanes.Load(in Unsafe.Add(ref MemoryMarshal.GetReference(values), first)) : LoadFew<TLanes>(values);
     }
 
-    /// <summary>Adds a weighted vector to the values, without those beyond the end.</summary>
+    /// <summary>Adds a weighted vector to the values, each value once.</summary>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static void Add<TLanes>(Span<double> values, int vector, double weight, TLanes addend)
         where TLanes : struct, ILanes<TLanes>
@@ -33,7 +33,7 @@ internal static class LaneBlock
             TLanes.Store(TLanes.MultiplyAdd(TLanes.Broadcast(weight), addend, TLanes.Load(in place)), ref place);
             return;
         }
-        AddTail(values[first..], weight, addend);
+        AddTail(values[first..], values.Length < TLanes.Count ? 0 : first + TLanes.Count - values.Length, weight, addend);
     }
 
     /// <summary>The largest of the lanes; NaN where one is.</summary>
@@ -50,7 +50,7 @@ internal static class LaneBlock
     }
 
     [MethodImpl(MethodImplOptions.AggressiveOptimization | MethodImplOptions.NoInlining)]
-    private static TLanes LoadTail<TLanes>(ReadOnlySpan<double> values)
+    private static TLanes LoadFew<TLanes>(ReadOnlySpan<double> values)
         where TLanes : struct, ILanes<TLanes>
     {
         Span<double> lanes = stackalloc double[TLanes.Count];
@@ -60,12 +60,12 @@ internal static class LaneBlock
     }
 
     [MethodImpl(MethodImplOptions.AggressiveOptimization | MethodImplOptions.NoInlining)]
-    private static void AddTail<TLanes>(Span<double> values, double weight, TLanes addend)
+    private static void AddTail<TLanes>(Span<double> values, int skipped, double weight, TLanes addend)
         where TLanes : struct, ILanes<TLanes>
     {
         Span<double> lanes = stackalloc double[TLanes.Count];
         TLanes.Store(addend, ref MemoryMarshal.GetReference(lanes));
         for (int lane = 0; lane < values.Length; lane++)
-            values[lane] += weight * lanes[lane];
+            values[lane] += weight * lanes[skipped + lane];
     }
 }

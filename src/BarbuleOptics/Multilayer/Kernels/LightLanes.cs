@@ -44,16 +44,20 @@ internal readonly struct LightLanes<TLanes>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public ComplexLanes<TLanes> DepthS(in ComplexLanes<TLanes> y) => new ComplexLanes<TLanes>(MinusLateralSquared(y.Real), y.Imaginary).PassiveRoot();
 
-    /// <summary>kz/k0, admittance and the weight of |phi|^2 in the power lost, in p.</summary>
+    /// <summary>kz/k0, admittance, its inverse and the weight of |phi|^2 in the power lost, in p.</summary>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    public (ComplexLanes<TLanes> Depth, ComplexLanes<TLanes> Admittance, TLanes PhiLoss) WaveP(in ComplexLanes<TLanes> x, in ComplexLanes<TLanes> z)
+    public (ComplexLanes<TLanes> Depth, ComplexLanes<TLanes> Admittance, ComplexLanes<TLanes> Inverse, TLanes PhiLoss) WaveP(
+        in ComplexLanes<TLanes> x, in ComplexLanes<TLanes> z)
     {
         ComplexLanes<TLanes> index = x.PassiveRoot();
         TLanes inverse = TLanes.Broadcast(1) / z.Norm;
         TLanes loss = _lateralSquared * z.Imaginary * inverse;
         TLanes real = TLanes.MultiplyAdd(z.Real, MinusLateralSquared(z.Real), z.Imaginary * z.Imaginary) * inverse;
         ComplexLanes<TLanes> q = new ComplexLanes<TLanes>(real, loss).PassiveRoot();
-        return (index * q, TLanes.Broadcast(1) / index.Norm * (q * index.Conjugate), loss);
+        // q/index and index/q by one division.
+        TLanes indexNorm = index.Norm, norm = q.Norm, both = TLanes.Broadcast(1) / (indexNorm * norm);
+        ComplexLanes<TLanes> product = q * index.Conjugate;
+        return (index * q, norm * both * product, indexNorm * both * product.Conjugate, loss);
     }
 
     [MethodImpl(MethodImplOptions.AggressiveInlining)]

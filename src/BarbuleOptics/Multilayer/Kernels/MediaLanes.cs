@@ -39,7 +39,7 @@ internal readonly ref struct MediaLanes<TLanes>(FilmStack stack, int first, int 
         Span<double> lanes = stackalloc double[2 * TLanes.Count];
         for (int lane = 0; lane < TLanes.Count; lane++)
         {
-            Complex value = stack.Backing[first + Math.Min(vector * TLanes.Count + lane, count - 1)];
+            Complex value = stack.Backing[first + Math.Min(Math.Max(0, Math.Min(vector * TLanes.Count, count - TLanes.Count)) + lane, count - 1)];
             (lanes[lane], lanes[TLanes.Count + lane]) = (value.Real, value.Imaginary);
         }
         return ComplexLanes<TLanes>.Load(ref MemoryMarshal.GetReference(lanes));
