@@ -91,15 +91,16 @@ internal sealed class GratingResponses
                 int firstAngle = piece % (angles / together) * together, first = piece / (angles / together) * block;
                 int length = Math.Min(block, _conditions.Wavelengths.Count - first);
                 for (int angle = firstAngle; angle < firstAngle + together; angle++)
-                    SolveBlock(permittivities, workspace, angle, first, length, cancellation);
-                progress?.Report((double)Interlocked.Increment(ref done) / pieces);
+                    SolveBlock(permittivities, workspace, angle, first, length, Report, cancellation);
                 return workspace;
             },
             _ => { });
+
+        void Report() => progress?.Report((double)Interlocked.Increment(ref done) / (blocks * _beams.Length));
     }
 
     private void SolveBlock(
-        SectionPermittivities permittivities, GratingWorkspace workspace, int angle, int first, int length, CancellationToken cancellation)
+        SectionPermittivities permittivities, GratingWorkspace workspace, int angle, int first, int length, Action report, CancellationToken cancellation)
     {
         BeamAccount[] beams = [.. _beams.Where(beam => beam.Angle == angle)];
         // Both polarizations at once share what depends on the direction; the workspace then knows each.
@@ -117,6 +118,7 @@ internal sealed class GratingResponses
                 permittivities, RequestFor(angle, beam.Polarization, first, length), workspace,
                 scratch.Within(Powers.Block(angle, beam.Polarization, first, length)));
             scratch.CopyTo(beam, first);
+            report();
         }
     }
 

@@ -10,14 +10,14 @@ internal static class BatchElements
 {
     /// <summary>Whether there is an element for a kind.</summary>
     public static bool Covers(ElementKind kind)
-        => kind is RodKind { Rods.Count: 1 } rods ? rods.Rods[0].IsRound : kind is SlabKind slab && UprightSlab.Covers(ShapeOf(slab));
+        => kind is RodKind rods ? rods.Rods.Count == 1 : kind is SlabKind slab && UprightSlab.Covers(ShapeOf(slab));
 
     /// <summary>Makes the element of a kind that is covered.</summary>
     public static IBatchElement<TLanes> Create<TLanes>(ElementKind kind)
         where TLanes : struct, ILanes<TLanes>
         => kind switch
         {
-            RodKind rods => new RowElement<TLanes>(rods),
+            RodKind rods => rods.Rods[0].IsRound ? new RowElement<TLanes>(rods) : new FlatRowElement<TLanes>(rods),
             SlabKind slab => new SlabElement<TLanes>(ShapeOf(slab)),
             _ => throw new ArgumentException($"No batch element for {kind.GetType().Name}.", nameof(kind)),
         };

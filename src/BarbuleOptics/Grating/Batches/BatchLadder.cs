@@ -21,11 +21,13 @@ internal sealed class BatchLadder
     private const double MostGrowth = 1e6;
 
     private readonly PlanGroup _group;
+    private readonly bool _hasFlatRods;
     private readonly int _most;
 
     public BatchLadder(StackPlan plan)
     {
         _group = plan.Groups[0];
+        _hasFlatRods = plan.Kinds.Any(kind => kind is RodKind rods && !rods.Rods[0].IsRound);
         _most = MostMultipoles;
         while (_most > 7 && 2 * _most * Math.Log(_group.Overlap) > Math.Log(MostGrowth))
             _most--;
@@ -52,7 +54,10 @@ internal sealed class BatchLadder
     public Resolution At(int multipoles, int leastOrders)
     {
         int orders = Math.Max(1 + (multipoles + 1) / 4, Math.Max(1, leastOrders));
-        if (_group.HasRods)
+        // Multipoles of flat rods follow from the orders, which rise one by one.
+        if (_hasFlatRods)
+            orders = Math.Max(1, leastOrders) + (multipoles - 1) / 2;
+        else if (_group.HasRods)
             orders = Math.Max(orders, (int)Math.Ceiling(1.3 * multipoles * _group.PeriodNm / (Math.PI * _group.NearestNm)));
         if (!_group.HasSlabs)
             return new Resolution(orders, multipoles, 0, 0);

@@ -11,10 +11,14 @@ internal static class BatchSolvers
     /// <param name="section">The section.</param>
     /// <param name="width">Width of the vectors.</param>
     public static IBatchSolver? TryCreate(Section section, LaneWidth width)
-        => BatchPlan.TryOf(StackPlan.Of(section)) is BatchPlan plan ? width.Invoke<Maker, IBatchSolver>(new Maker(plan)) : null;
+        => PlanOf(section) is BatchPlan plan ? width.Invoke<Maker, IBatchSolver>(new Maker(plan)) : null;
 
     /// <summary>Whether blocks of the section's wavelengths are solved together, straight across its rods at least.</summary>
-    public static bool Covers(Section section) => section.IsAcross && BatchPlan.TryOf(StackPlan.Of(section)) is not null;
+    public static bool Covers(Section section) => section.IsAcross && PlanOf(section) is not null;
+
+    // Flattened rods as rows where multipoles are for them.
+    private static BatchPlan? PlanOf(Section section)
+        => BatchPlan.TryOf(StackPlan.Of(section)) ?? BatchPlan.TryOf(StackPlan.Of(section, RowMethods.AllRods));
 
     /// <summary>Makes a solver with vectors of one width.</summary>
     private readonly struct Maker(BatchPlan plan) : ILaneAction<IBatchSolver>

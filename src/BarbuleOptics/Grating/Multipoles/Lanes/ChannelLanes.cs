@@ -39,6 +39,16 @@ internal sealed class ChannelLanes<TLanes>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public TLanes Kx(int place) => _kx.Real(place);
 
+    /// <summary>The largest of its absolute values.</summary>
+    public double LargestKx(int place)
+    {
+        double largest = 0;
+        ref double first = ref _kx.RealAt(place);
+        for (int lane = 0; lane < TLanes.Count; lane++)
+            largest = Math.Max(largest, Math.Abs(Unsafe.Add(ref first, lane)));
+        return largest;
+    }
+
     /// <summary>Its wave vector in depth in a medium, in 1/nm.</summary>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public ComplexLanes<TLanes> Kz(int medium, int place) => _kz[medium * Orders + place];

@@ -19,7 +19,9 @@ internal sealed class RowLanes<TLanes>
     private readonly Half _odd = new();
     private readonly LaneBuffer<TLanes> _gains = new();
     private readonly LaneBuffer<TLanes> _amplitudes = new();
-    private RodLanes<TLanes> _rod = null!;
+    private RodLanes<TLanes>? _rod;
+    private FlatRodLanes<TLanes>? _flat;
+    private TLanes _square, _flux;
     private RodField _field;
     private int _top;
     private int _orders;
@@ -46,21 +48,44 @@ internal sealed class RowLanes<TLanes>
     /// <summary>Least square of a pivot, compared with that of the element it came from: how many digits elimination kept.</summary>
     public TLanes LeastPivot { get; private set; }
 
-    /// <summary>Prepares what both fields share.</summary>
-    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+    /// <summary>Prepares what both fields share, for round rods.</summary>
     public void SetDirection(RodLanes<TLanes> rod, ChannelLanes<TLanes> channels, LatticeLanes<TLanes> sums, int top)
     {
-        _rod = rod;
+        (_rod, _flat) = (rod, null);
+        SetDirection(channels, sums, top);
+    }
+
+    /// <summary>The same for flattened ones.</summary>
+    public void SetDirection(FlatRodLanes<TLanes> rod, ChannelLanes<TLanes> channels, LatticeLanes<TLanes> sums, int top)
+    {
+        (_rod, _flat) = (null, rod);
+        SetDirection(channels, sums, top);
+    }
+
+    /// <summary>As if there were nothing, not even what lets waves through: for rods without an answer.</summary>
+    public void Clear(int orders)
+    {
+        Reflect.Reserve(orders * orders);
+        Transmit.Reserve(orders * orders);
+        Reflect.Clear(orders * orders);
+        Transmit.Clear(orders * orders);
+    }
+
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+    private void SetDirection(ChannelLanes<TLanes> channels, LatticeLanes<TLanes> sums, int top)
+    {
         (_top, _orders) = (top, channels.Orders);
         _shares.Reserve(top);
         Reflect.Reserve(_orders * _orders);
         Transmit.Reserve(_orders * _orders);
         _gains.Reserve(_orders);
-        _amplitudes.Reserve(2 * _orders + top + 1);
+        _amplitudes.Reserve(2 * _orders + 2 * (top + 1));
         _even.Reserve(top + 1, _orders);
         _odd.Reserve(top, _orders);
         ComplexLanes<TLanes> k = channels.Pack.WaveNumber(Layering.Section.Matrix), inverse = k.Reciprocal();
         TLanes s = TLanes.Broadcast(_radiusNm / 2) * TLanes.Sqrt(k.Norm), square = s * s;
+        _square = square;
+        _flux = channels.Pack.Permittivity(Layering.Section.Matrix).Reciprocal().Real;
         FillCouplings(sums, square);
         for (int place = 0; place < _orders; place++)
         {
@@ -109,9 +134,16 @@ internal sealed class RowLanes<TLanes>
     public void Solve(RodField field)
     {
         _field = field;
-        LeastPivot = TLanes.Min(_even.Eliminate(_rod, field, 0), _odd.Eliminate(_rod, field, 1));
-        _even.FillAnswer();
-        _odd.FillAnswer();
+        if (_rod is not null)
+        {
+            LeastPivot = TLanes.Min(_even.Eliminate(_rod, field, 0), _odd.Eliminate(_rod, field, 1));
+            _even.FillAnswer();
+            _odd.FillAnswer();
+        }
+        else
+        {
+            LeastPivot = TLanes.Min(_even.SolveDense(_flat!, field, 0), _odd.SolveDense(_flat!, field, 1));
+        }
         ComplexLanes<TLanes> one = ComplexLanes<TLanes>.Broadcast(1);
         for (int row = 0; row < _orders; row++)
         {
@@ -141,6 +173,11 @@ internal sealed class RowLanes<TLanes>
             for (int place = 0; place < _orders; place++)
                 _amplitudes[place] = which == 0 ? down[place] + up[place] : down[place] - up[place];
             Half half = which == 0 ? _even : _odd;
+            if (_rod is null)
+            {
+                rod += half.PowerInto(_amplitudes, _orders, which, _square, _field == RodField.Electric ? TLanes.Broadcast(1) : _flux);
+                continue;
+            }
             half.SolveFor(_amplitudes, 2 * _orders);
             for (int m = which; m <= _top; m++)
             {
@@ -159,6 +196,7 @@ internal sealed class RowLanes<TLanes>
         private readonly LaneBuffer<TLanes> _upper = new();
         private readonly LaneBuffer<TLanes> _scaled = new();
         private readonly LaneBuffer<TLanes> _answer = new();
+        private readonly LaneBuffer<TLanes> _sent = new();
         private int _size;
         private int _orders;
         private int _width;
@@ -201,6 +239,71 @@ internal sealed class RowLanes<TLanes>
                     _scaled[start + column] = factor * _upper[start + column];
             }
             return leastPivot;
+        }
+
+        /// <summary>(1 - P C/2) b = P W c for bodies whose answer P couples multipoles of equal parity: b by wave is left behind.</summary>
+        [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+        public TLanes SolveDense(FlatRodLanes<TLanes> rod, RodField field, int least)
+        {
+            int stride = ComplexLanes<TLanes>.Stride;
+            for (int row = 0; row < _size; row++)
+            {
+                for (int column = 0; column < row; column++)
+                    _base[row * _width + column] = _base[column * _width + row];
+            }
+            _sent.Reserve(_size * _orders);
+            _upper.Clear(_size * _size);
+            _sent.Clear(_size * _orders);
+            for (int row = 0; row < _size; row++)
+            {
+                // Multipoles of the row's parity alone answer.
+                int first = row % 2, terms = (_size - first + 1) / 2;
+                ref double answers = ref rod.Answers(field, least, row + least, first + least);
+                LaneAlgebra<TLanes>.Add(ref _upper.At(row * _size), ref answers, 2 * stride, ref _base.At(first * _width), 2 * _width * stride, terms, _size);
+                LaneAlgebra<TLanes>.Add(ref _sent.At(row * _orders), ref answers, 2 * stride, ref _base.At(first * _width + _size), 2 * _width * stride, terms, _orders);
+                _upper[row * _size + row] += ComplexLanes<TLanes>.Broadcast(1);
+            }
+            TLanes leastPivot = LaneAlgebra<TLanes>.Solve(_upper, _size, _sent, _orders);
+            _answer.Clear(_orders * _orders);
+            for (int row = 0; row < _orders; row++)
+            {
+                LaneAlgebra<TLanes>.Add(
+                    ref _answer.At(row * _orders + row), ref _base.At(_size + row), _width * stride, ref _sent.At(row), _orders * stride, _size, _orders - row);
+                for (int column = row; column < _orders; column++)
+                    _answer[row * _orders + column] = -_answer[row * _orders + column];
+            }
+            return leastPivot;
+        }
+
+        /// <summary>Power into a body, times the period, for a real wave number: by the Wronskian -(2/pi) weight (|b|^2 + Re(conj(a) b)) for each
+        /// multipole.</summary>
+        [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+        public TLanes PowerInto(LaneBuffer<TLanes> amplitudes, int orders, int least, TLanes square, TLanes flux)
+        {
+            int outgoing = 2 * orders;
+            for (int row = 0; row < _size; row++)
+            {
+                ComplexLanes<TLanes> sent = ComplexLanes<TLanes>.Broadcast(0);
+                for (int place = 0; place < orders; place++)
+                    sent = ComplexLanes<TLanes>.MultiplyAdd(_sent[row * orders + place], amplitudes[place], sent);
+                amplitudes[outgoing + row] = sent;
+            }
+            TLanes total = TLanes.Broadcast(0), scale = TLanes.Broadcast(1);
+            for (int row = 0; row < _size; row++)
+            {
+                int m = row + least;
+                if (m > 0)
+                    scale *= square * TLanes.Broadcast(1 / ((double)m * m));
+                ComplexLanes<TLanes> arriving = ComplexLanes<TLanes>.Broadcast(0), sent = amplitudes[outgoing + row];
+                for (int place = 0; place < orders; place++)
+                    arriving = ComplexLanes<TLanes>.MultiplyAdd(_base[row * _width + _size + place], amplitudes[place], arriving);
+                for (int column = 0; column < _size; column++)
+                    arriving = ComplexLanes<TLanes>.SubtractProduct(_base[row * _width + column], amplitudes[outgoing + column], arriving);
+                arriving = TLanes.Broadcast(m == 0 ? 1 : 2) * arriving;
+                TLanes power = TLanes.MultiplyAdd(scale, sent.Norm, (arriving.Conjugate * sent).Real);
+                total = TLanes.SubtractProduct(TLanes.Broadcast(m == 0 ? 4 : 2) * flux, power, total);
+            }
+            return total;
         }
 
         [MethodImpl(MethodImplOptions.AggressiveOptimization)]
