@@ -19,6 +19,10 @@ internal sealed class BatchLadder
     private const int MostOrders = 16;
 
     private const double MostGrowth = 1e6;
+    private const double Rounding = 1e-12;
+
+    /// <summary>R, T and A with two numbers of multipoles differ by up to 6e-6 at aspect 3 with a wide core, where orders stay the same.</summary>
+    private const double FlatRodError = 1e-5;
 
     private readonly PlanGroup _group;
     private readonly bool _hasFlatRods;
@@ -35,6 +39,9 @@ internal sealed class BatchLadder
 
     /// <summary>Whether there are slabs, whose errors fall unevenly.</summary>
     public bool HasSlabs => _group.HasSlabs;
+
+    /// <summary>Errors that no step shows: rounding, and what the answers of flattened rods leave.</summary>
+    public double LeastError => _hasFlatRods ? FlatRodError : Rounding;
 
     /// <summary>Whether there is a step after one.</summary>
     public bool HasNext(int start, int step, int leastOrders)

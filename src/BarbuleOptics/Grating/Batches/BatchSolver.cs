@@ -32,7 +32,7 @@ internal sealed class BatchSolver<TLanes> : IBatchSolver
     public BatchSolver(BatchPlan plan)
     {
         (_plan, _ladder, _solver) = (plan, new BatchLadder(plan.Stack), new PackSolver<TLanes>(plan));
-        _errors = [new(_ladder.HasSlabs), new(_ladder.HasSlabs)];
+        _errors = [new(_ladder.HasSlabs, _ladder.LeastError), new(_ladder.HasSlabs, _ladder.LeastError)];
     }
 
     /// <inheritdoc/>
@@ -59,7 +59,7 @@ internal sealed class BatchSolver<TLanes> : IBatchSolver
         bool areKnown = ReferenceEquals(_probed, request.Structure) && _probedBlock == (request.First, request.Count);
         (_probed, _probedBlock) = (request.Structure, (request.First, request.Count));
         int leastOrders = SetProbePacks(request, probes, areKnown);
-        if (_ladder.At(_start + 2, leastOrders).Orders > BatchPlan.MostOrder)
+        if (_ladder.At(_start + 2, leastOrders).Orders > BatchPlan.MostOrder || _ladder.LeastError > request.Accuracy)
         {
             Leave(electric, request.Layout.Length);
             Leave(magnetic, request.Layout.Length);
@@ -75,8 +75,20 @@ internal sealed class BatchSolver<TLanes> : IBatchSolver
             DeliverProbes(request, RodField.Magnetic, magnetic);
             return;
         }
+        electric = LeaveWithoutProbes(electric, RodField.Electric, request.Layout.Length);
+        magnetic = LeaveWithoutProbes(magnetic, RodField.Magnetic, request.Layout.Length);
         for (int cell = 0; cell < request.Count; cell += Probes)
             SolveCell(request, packsAreKnown, firstPack, cell, electric, magnetic);
+    }
+
+    // Where no probe could be solved nothing is tried between them.
+    private Span<double> LeaveWithoutProbes(Span<double> outcomes, RodField field, int length)
+    {
+        ProbeErrors errors = _errors[(int)field];
+        if (outcomes.IsEmpty || (errors.Steps > 0 && errors.Largest(errors.Steps - 1) > 0))
+            return outcomes;
+        Leave(outcomes, length);
+        return [];
     }
 
     private static void Leave(Span<double> outcomes, int length)

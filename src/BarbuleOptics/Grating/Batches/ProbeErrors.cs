@@ -4,7 +4,8 @@ namespace BarbuleOptics.Grating.Batches;
 
 /// <summary>Errors of each step of the ladder at the probes of a group, and what they say of the wavelengths between.</summary>
 /// <param name="hasSlabs">Whether there are slabs, whose errors fall slowly and unevenly.</param>
-internal sealed class ProbeErrors(bool hasSlabs)
+/// <param name="least">No estimate is smaller.</param>
+internal sealed class ProbeErrors(bool hasSlabs, double least)
 {
     /// <summary>Number of probes.</summary>
     public const int Count = 8;
@@ -33,7 +34,7 @@ internal sealed class ProbeErrors(bool hasSlabs)
     /// <summary>Share of a neighboring probe's error that counts at a probe itself.</summary>
     private const double Beside = 0.2;
 
-    /// <summary>No estimate is smaller: rounding.</summary>
+    /// <summary>No change is told from rounding below this.</summary>
     private const double Rounding = 1e-12;
 
     private readonly double[] _errors = new double[BatchLadder.MostSteps * Count];
@@ -62,7 +63,7 @@ internal sealed class ProbeErrors(bool hasSlabs)
             double change = coarse[probe * length + OutcomeLayout.Error] + fine[probe * length + OutcomeLayout.Error];
             for (int i = 0; i < OutcomeLayout.Judged; i++)
                 change = Math.Max(change, Math.Abs(fine[probe * length + i] - coarse[probe * length + i]));
-            _errors[Steps * Count + probe] = Math.Max(Rounding, Safety * Believed(probe, change));
+            _errors[Steps * Count + probe] = Math.Max(least, Safety * Believed(probe, change));
             _changes[probe] = change;
         }
         Steps++;
@@ -73,10 +74,10 @@ internal sealed class ProbeErrors(bool hasSlabs)
         if (Steps == 0)
             return Unproven * change;
         double ratio = change / Math.Max(_changes[probe], Rounding), slowest = _ratios[probe];
-        double first = hasSlabs ? LeastSlabFall : LeastFall, least = Steps == 1 || hasSlabs ? first : Math.Clamp(ShareOfFall * slowest, LeastFallKnown, 1);
+        double first = hasSlabs ? LeastSlabFall : LeastFall, fall = Steps == 1 || hasSlabs ? first : Math.Clamp(ShareOfFall * slowest, LeastFallKnown, 1);
         _ratios[probe] = Math.Max(slowest, ratio);
         // All later changes together, should they go on falling as slowly.
-        return Math.Max(change, least * _changes[probe]) / (1 - Math.Clamp(ratio, 0, MostRatio));
+        return Math.Max(change, fall * _changes[probe]) / (1 - Math.Clamp(ratio, 0, MostRatio));
     }
 
     /// <summary>Error of a step at a probe, not much below that at its neighbors; NaN where it could not be solved.</summary>
@@ -88,7 +89,7 @@ internal sealed class ProbeErrors(bool hasSlabs)
 
     private double Of(int step, int probe) => _errors[step * Count + probe];
 
-    /// <summary>The largest of a step, but for probes that could not be solved.</summary>
+    /// <summary>The largest of a step, but for probes that could not be solved; 0 where none could.</summary>
     public double Largest(int step)
     {
         double largest = 0;

@@ -62,14 +62,14 @@ internal sealed class FlatRodLanes<TLanes>(EllipseOutline outline, EllipseOutlin
         return _solved[step];
     }
 
-    /// <summary>Whether the losses of the rod cannot be found from its amplitudes alone, by lane.</summary>
+    /// <summary>Whether the losses of the rod cannot be found from its amplitudes alone, by lane. A rod that loses nothing counts among them: its answers keep
+    /// energy to 1e-9 only, and nothing there could take the rest.</summary>
     public TLanes NeedsFields(PackLanes<TLanes> pack)
     {
         TLanes zero = TLanes.Broadcast(0), matrix = TLanes.LessThan(zero, pack.Permittivity(Section.Matrix).Imaginary);
-        if (core.HalfWidthNm == 0)
-            return matrix;
-        TLanes both = TLanes.LessThan(zero, TLanes.Min(pack.Permittivity(material).Imaginary, pack.Permittivity(coreMaterial).Imaginary));
-        return TLanes.Select(matrix, matrix, both);
+        TLanes own = pack.Permittivity(material).Imaginary, other = core.HalfWidthNm > 0 ? pack.Permittivity(coreMaterial).Imaginary : zero;
+        TLanes both = TLanes.LessThan(zero, TLanes.Min(own, other)), any = TLanes.LessThan(zero, TLanes.Max(own, other));
+        return TLanes.Select(any, TLanes.Select(matrix, matrix, both), TLanes.LessThan(zero, TLanes.Broadcast(1)));
     }
 
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]

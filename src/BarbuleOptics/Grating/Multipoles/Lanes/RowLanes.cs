@@ -151,11 +151,12 @@ internal sealed class RowLanes<TLanes>
             for (int column = row; column < _orders; column++)
             {
                 ComplexLanes<TLanes> even = _even.Answer(row, column), odd = _odd.Answer(row, column);
-                ComplexLanes<TLanes> turned = even - odd, same = even + odd, back = _gains[column];
-                Reflect[row * _orders + column] = gain * turned;
-                Reflect[column * _orders + row] = back * turned;
-                Transmit[row * _orders + column] = gain * same;
-                Transmit[column * _orders + row] = back * same;
+                Reflect[row * _orders + column] = gain * (even - odd);
+                Transmit[row * _orders + column] = gain * (even + odd);
+                if (_flat is not null)
+                    (even, odd) = (_even.Answer(column, row), _odd.Answer(column, row));
+                Reflect[column * _orders + row] = _gains[column] * (even - odd);
+                Transmit[column * _orders + row] = _gains[column] * (even + odd);
             }
             Transmit[row * _orders + row] += one;
         }
@@ -214,7 +215,7 @@ internal sealed class RowLanes<TLanes>
         [MethodImpl(MethodImplOptions.AggressiveInlining)]
         public void Set(int row, int column, ComplexLanes<TLanes> value) => _base[row * _width + column] = value;
 
-        /// <summary>Of the answer only what stands on and right of the diagonal.</summary>
+        /// <summary>Of the answer to round rods, which is symmetric, only what stands on and right of the diagonal.</summary>
         [MethodImpl(MethodImplOptions.AggressiveInlining)]
         public ComplexLanes<TLanes> Answer(int row, int column) => -_answer[row * _orders + column];
 
@@ -268,8 +269,8 @@ internal sealed class RowLanes<TLanes>
             for (int row = 0; row < _orders; row++)
             {
                 LaneAlgebra<TLanes>.Add(
-                    ref _answer.At(row * _orders + row), ref _base.At(_size + row), _width * stride, ref _sent.At(row), _orders * stride, _size, _orders - row);
-                for (int column = row; column < _orders; column++)
+                    ref _answer.At(row * _orders), ref _base.At(_size + row), _width * stride, ref _sent.At(0), _orders * stride, _size, _orders);
+                for (int column = 0; column < _orders; column++)
                     _answer[row * _orders + column] = -_answer[row * _orders + column];
             }
             return leastPivot;
