@@ -1,4 +1,5 @@
 using BarbuleOptics.Lanes;
+using BarbuleOptics.Multilayer;
 
 namespace BarbuleOptics.Benchmarks.Kernels;
 
@@ -9,6 +10,7 @@ internal abstract class Workload
     public static IReadOnlyList<Workload> All { get; } = 
     [
         new FilmsAngles(), new FilmsEnsemble(), new FilmsGraded(), new Rods("rods-solid", 0, 1e-6), new Rods("rods-hollow", 70, 1e-6), new Rods("rods-1e-4", 70, 1e-4),
+        new Platelets(), new FlattenedHollow("section-flattened-hollow", Polarizations.P, 1e-3), new FlattenedHollow("section-flattened-hollow-s", Polarizations.S, 1e-4),
     ];
 
     /// <summary>Name in the output.</summary>
