@@ -24,6 +24,9 @@ internal sealed class BatchLadder
     /// <summary>R, T and A with two numbers of multipoles differ by up to 6e-6 at aspect 3 with a wide core, where orders stay the same.</summary>
     private const double FlatRodError = 1e-5;
 
+    /// <summary>Distance in depth, in periods, below which slabs count as touching.</summary>
+    private const double Touching = 0.02;
+
     private readonly PlanGroup _group;
     private readonly bool _hasFlatRods;
     private readonly int _most;
@@ -37,8 +40,11 @@ internal sealed class BatchLadder
             _most--;
     }
 
-    /// <summary>Whether there are slabs, whose errors fall unevenly.</summary>
-    public bool HasSlabs => _group.HasSlabs;
+    /// <summary>What is made of errors: those of slabs fall unevenly, and slowly where rows touch in depth.</summary>
+    public ProbeErrors NewErrors()
+        => !_group.HasSlabs ? new(1.4, 0.01, isEven: true, LeastError)
+            : _group.HasCuts || _group.ClearNm < Touching * _group.PeriodNm ? new(4, 0.3, isEven: false, LeastError)
+            : new(2, 0.15, isEven: false, LeastError);
 
     /// <summary>Errors that no step shows: rounding, and what the answers of flattened rods leave.</summary>
     public double LeastError => _hasFlatRods ? FlatRodError : Rounding;
@@ -52,7 +58,7 @@ internal sealed class BatchLadder
 
     /// <summary>Multipoles to begin with: the step after them is mostly enough.</summary>
     public int StartFor(double accuracy) => _group.HasSlabs
-        ? Math.Clamp(2 * (int)Math.Floor(-Math.Log10(accuracy) + 0.1) - 3, 1, 9)
+        ? Math.Clamp(2 * (int)Math.Floor(-Math.Log10(accuracy) + 0.1) - 3, 3, 9)
         : Math.Clamp(2 * (int)Math.Round(-Math.Log10(accuracy) / 2) - 3, 1, 9);
 
     /// <summary>One step.</summary>

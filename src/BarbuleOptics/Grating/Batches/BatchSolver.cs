@@ -32,7 +32,7 @@ internal sealed class BatchSolver<TLanes> : IBatchSolver
     public BatchSolver(BatchPlan plan)
     {
         (_plan, _ladder, _solver) = (plan, new BatchLadder(plan.Stack), new PackSolver<TLanes>(plan));
-        _errors = [new(_ladder.HasSlabs, _ladder.LeastError), new(_ladder.HasSlabs, _ladder.LeastError)];
+        _errors = [_ladder.NewErrors(), _ladder.NewErrors()];
     }
 
     /// <inheritdoc/>

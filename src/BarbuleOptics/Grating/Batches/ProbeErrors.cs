@@ -3,20 +3,16 @@ using BarbuleOptics.Grating.Joining;
 namespace BarbuleOptics.Grating.Batches;
 
 /// <summary>Errors of each step of the ladder at the probes of a group, and what they say of the wavelengths between.</summary>
-/// <param name="hasSlabs">Whether there are slabs, whose errors fall slowly and unevenly.</param>
+/// <param name="safety">Factor on the change that the next step made, for what all later ones would change.</param>
+/// <param name="leastFall">No larger fall of the change from one step to the next is believed: it may be so by accident.</param>
+/// <param name="isEven">Whether changes fall evenly, so that falls seen tell of those to come.</param>
 /// <param name="least">No estimate is smaller.</param>
-internal sealed class ProbeErrors(bool hasSlabs, double least)
+internal sealed class ProbeErrors(double safety, double leastFall, bool isEven, double least)
 {
     /// <summary>Number of probes.</summary>
     public const int Count = 8;
 
-    /// <summary>Factor on the change that the next step made, for what all later ones would change.</summary>
-    private const double Safety = 1.4;
-
-    /// <summary>No larger fall of the change from one step to the next is believed: it may be so by accident.</summary>
-    private const double LeastFall = 0.01, LeastSlabFall = 0.1;
-
-    /// <summary>The same once falls were seen: this share of the slowest, and no less than that.</summary>
+    /// <summary>Least fall once falls were seen: this share of the slowest, and no less than that.</summary>
     private const double ShareOfFall = 0.3, LeastFallKnown = 0.003;
 
     /// <summary>Largest ratio of two changes that is carried on.</summary>
@@ -63,7 +59,7 @@ internal sealed class ProbeErrors(bool hasSlabs, double least)
             double change = coarse[probe * length + OutcomeLayout.Error] + fine[probe * length + OutcomeLayout.Error];
             for (int i = 0; i < OutcomeLayout.Judged; i++)
                 change = Math.Max(change, Math.Abs(fine[probe * length + i] - coarse[probe * length + i]));
-            _errors[Steps * Count + probe] = Math.Max(least, Safety * Believed(probe, change));
+            _errors[Steps * Count + probe] = Math.Max(least, safety * Believed(probe, change));
             _changes[probe] = change;
         }
         Steps++;
@@ -74,7 +70,7 @@ internal sealed class ProbeErrors(bool hasSlabs, double least)
         if (Steps == 0)
             return Unproven * change;
         double ratio = change / Math.Max(_changes[probe], Rounding), slowest = _ratios[probe];
-        double first = hasSlabs ? LeastSlabFall : LeastFall, fall = Steps == 1 || hasSlabs ? first : Math.Clamp(ShareOfFall * slowest, LeastFallKnown, 1);
+        double fall = Steps == 1 || !isEven ? leastFall : Math.Clamp(ShareOfFall * slowest, LeastFallKnown, 1);
         _ratios[probe] = Math.Max(slowest, ratio);
         // All later changes together, should they go on falling as slowly.
         return Math.Max(change, fall * _changes[probe]) / (1 - Math.Clamp(ratio, 0, MostRatio));
