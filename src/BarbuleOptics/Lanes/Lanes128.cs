@@ -120,14 +120,11 @@ internal readonly struct Lanes128(Vector128<double> vector) : ILanes<Lanes128>
     public static Lanes128 PowerOfTwo(Lanes128 rate, Lanes128 length)
     {
         Vector128<double> magic = Vector128.Create(1.5 * (1L << 52));
-        Vector128<double> product = rate._vector * length._vector;
-        // What the product lost in rounding comes back with the rest.
-        Vector128<double> lost = Vector128.MultiplyAddEstimate(rate._vector, length._vector, -product);
-        product = Vector128.MaxNative(product, Vector128.Create(-1000.0));
-        Vector128<double> shifted = product + magic;
-        Vector128<double> power = TurnSeries.Power(new Lanes128(product - (shifted - magic) + lost))._vector;
-        // The whole power stands in the low bits of the shifted number and goes into the exponent.
-        return new((power.AsInt64() + Vector128.ShiftLeft(shifted.AsInt64(), 52)).AsDouble());
+        Vector128<double> shifted = Vector128.MultiplyAddEstimate(rate._vector, length._vector, magic);
+        Vector128<double> power = TurnSeries.Power(new Lanes128(Vector128.MultiplyAddEstimate(rate._vector, length._vector, magic - shifted)))._vector;
+        // The whole power stands in the low bits of the shifted number, from -1000 on, and goes into the exponent.
+        Vector128<double> bounded = Vector128.MaxNative(shifted, Vector128.Create(1.5 * (1L << 52) - 1000));
+        return new((power.AsInt64() + Vector128.ShiftLeft(bounded.AsInt64(), 52)).AsDouble());
     }
 
     /// <inheritdoc/>

@@ -127,14 +127,11 @@ internal readonly struct Lanes256(Vector256<double> vector) : ILanes<Lanes256>
     public static Lanes256 PowerOfTwo(Lanes256 rate, Lanes256 length)
     {
         Vector256<double> magic = Vector256.Create(1.5 * (1L << 52));
-        Vector256<double> product = rate._vector * length._vector;
-        // What the product lost in rounding comes back with the rest.
-        Vector256<double> lost = Vector256.MultiplyAddEstimate(rate._vector, length._vector, -product);
-        product = Vector256.MaxNative(product, Vector256.Create(-1000.0));
-        Vector256<double> shifted = product + magic;
-        Vector256<double> power = TurnSeries.Power(new Lanes256(product - (shifted - magic) + lost))._vector;
-        // The whole power stands in the low bits of the shifted number and goes into the exponent.
-        return new((power.AsInt64() + Vector256.ShiftLeft(shifted.AsInt64(), 52)).AsDouble());
+        Vector256<double> shifted = Vector256.MultiplyAddEstimate(rate._vector, length._vector, magic);
+        Vector256<double> power = TurnSeries.Power(new Lanes256(Vector256.MultiplyAddEstimate(rate._vector, length._vector, magic - shifted)))._vector;
+        // The whole power stands in the low bits of the shifted number, from -1000 on, and goes into the exponent.
+        Vector256<double> bounded = Vector256.MaxNative(shifted, Vector256.Create(1.5 * (1L << 52) - 1000));
+        return new((power.AsInt64() + Vector256.ShiftLeft(bounded.AsInt64(), 52)).AsDouble());
     }
 
     /// <inheritdoc/>

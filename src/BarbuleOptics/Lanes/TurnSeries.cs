@@ -79,17 +79,20 @@ internal static class TurnSeries
     public static TLanes Power<TLanes>(TLanes rest)
         where TLanes : struct, ILanes<TLanes>
     {
-        TLanes sum = TLanes.Broadcast(4.4549605981865186e-10);
-        sum = TLanes.MultiplyAdd(sum, rest, TLanes.Broadcast(7.072585949269223e-09));
-        sum = TLanes.MultiplyAdd(sum, rest, TLanes.Broadcast(1.0178062445845774e-07));
-        sum = TLanes.MultiplyAdd(sum, rest, TLanes.Broadcast(1.321544258792169e-06));
-        sum = TLanes.MultiplyAdd(sum, rest, TLanes.Broadcast(1.525273382983612e-05));
-        sum = TLanes.MultiplyAdd(sum, rest, TLanes.Broadcast(0.0001540353044173605));
-        sum = TLanes.MultiplyAdd(sum, rest, TLanes.Broadcast(0.0013333558146416936));
-        sum = TLanes.MultiplyAdd(sum, rest, TLanes.Broadcast(0.009618129107606888));
-        sum = TLanes.MultiplyAdd(sum, rest, TLanes.Broadcast(0.0555041086648216));
-        sum = TLanes.MultiplyAdd(sum, rest, TLanes.Broadcast(0.24022650695910097));
-        sum = TLanes.MultiplyAdd(sum, rest, TLanes.Broadcast(0.6931471805599453));
-        return TLanes.MultiplyAdd(sum, rest, TLanes.Broadcast(1));
+        // Even and odd powers by themselves: two chains of half the length.
+        TLanes square = rest * rest;
+        TLanes even = TLanes.Broadcast(7.072585949269223e-09);
+        even = TLanes.MultiplyAdd(even, square, TLanes.Broadcast(1.321544258792169e-06));
+        even = TLanes.MultiplyAdd(even, square, TLanes.Broadcast(0.0001540353044173605));
+        even = TLanes.MultiplyAdd(even, square, TLanes.Broadcast(0.009618129107606888));
+        even = TLanes.MultiplyAdd(even, square, TLanes.Broadcast(0.24022650695910097));
+        even = TLanes.MultiplyAdd(even, square, TLanes.Broadcast(1));
+        TLanes odd = TLanes.Broadcast(4.4549605981865186e-10);
+        odd = TLanes.MultiplyAdd(odd, square, TLanes.Broadcast(1.0178062445845774e-07));
+        odd = TLanes.MultiplyAdd(odd, square, TLanes.Broadcast(1.525273382983612e-05));
+        odd = TLanes.MultiplyAdd(odd, square, TLanes.Broadcast(0.0013333558146416936));
+        odd = TLanes.MultiplyAdd(odd, square, TLanes.Broadcast(0.0555041086648216));
+        odd = TLanes.MultiplyAdd(odd, square, TLanes.Broadcast(0.6931471805599453));
+        return TLanes.MultiplyAdd(odd, rest, even);
     }
 }

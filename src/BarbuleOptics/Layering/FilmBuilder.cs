@@ -7,7 +7,9 @@ namespace BarbuleOptics.Layering;
 /// Maxwell's equations for a layered medium depend on depth through ex, ey and 1/ez alone (s: ey; p: ex and 1/ez), linearly. A slice
 /// becomes two films of half its thickness whose values have the slice's own mean and first moment of these three. That makes the
 /// product of transfer matrices right to fourth order in the slice's thickness, as in a commutator-free Magnus integrator
-/// (Blanes and Moan 2006, Appl. Numer. Math. 56:1519), where plain averages are of second order. Within an interval, slices are equal in
+/// (Blanes and Moan 2006, Appl. Numer. Math. 56:1519), where plain averages are of second order. No higher order can be had so: beyond the
+/// fourth, some exponential of every such integrator runs backward (Hofstaetter and Koch 2019, Numer. Math. 141; from memory), and a film of negative
+/// thickness amplifies what should be absorbed. Within an interval, slices are equal in
 /// psi, depth = (1 - cos psi) x thickness / 2: they crowd towards the ends, where the chord of a round body grows like a square root,
 /// and in psi it is smooth. Five Gauss points in psi a slice give a slice's areas to 1e-7 of the interval with one slice, 1e-9 with two or more.
 /// </remarks>
