@@ -40,6 +40,16 @@ internal static class CommandLineErrors
             result.AddError($"{what}: found an empty name; allowed {allowed}");
     }
 
+    /// <summary>Refuses options without a value: the parser counts values, so that `--out here --out` would pass.</summary>
+    public static void RefuseMissingValues(CommandResult result)
+    {
+        foreach (OptionResult option in result.Children.OfType<OptionResult>().Where(option => option.Option.Arity.MinimumNumberOfValues > 0))
+        {
+            if (option.Tokens.Count > 0 && option.IdentifierTokenCount > option.Tokens.Count)
+                result.AddError($"Required argument missing for option: '{option.Option.Name}'.");
+        }
+    }
+
     private static string Unmatched(string token, Command command)
     {
         if (token.StartsWith('-'))

@@ -50,7 +50,7 @@ internal static class DrawsTable
 
     private static string Question(EnsemblePrediction ensemble)
     {
-        string lengths = string.Join(", ", ensemble.Lengths.Select(length => $"{length.Key} {Text(length.DeviationNm, "0.##")} nm"));
+        string lengths = string.Join(", ", ensemble.Lengths.Select(length => $"{length.Key} {Text(length.Deviation, "0.###")}{(length.Unit.Length > 0 ? " " + length.Unit : "")}"));
         return ensemble.Options.Spread switch
         {
             Spread.Mean => $"Spread of the mean, {ensemble.Options.Draws} draws: how sure this color is, given {lengths}.",

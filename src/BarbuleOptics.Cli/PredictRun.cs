@@ -24,7 +24,7 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
     private static readonly string[] GratingNames = [OrdersCsv.FileName, AbsorptionCsv.FileName];
 
     /// <summary>Files that belong to one way of solving or looking, and are no results of another.</summary>
-    private static readonly string[] OptionalNames = [.. GratingNames, SignalCsv.FileName, .. DrawNames];
+    private static readonly string[] OptionalNames = [.. GratingNames, SignalCsv.FileName, .. DrawNames, UnknownsCsv.FileName];
 
     private static readonly string[] ResultNames = [SpectraCsv.FileName, PredictionJson.FileName, .. PredictionFigures.FileNames];
 
@@ -109,10 +109,13 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
         StructurePrediction? prediction;
         IReadOnlyList<AnatomyProblem> problems;
         EnsemblePrediction? ensemble = null;
+        UnknownReach? unknowns = null;
         try
         {
             progress.Begin(file);
             Predictor.TryPredict(loaded.Barbule, _conditions, loaded.Catalog, out prediction, out problems, progress, cancellation);
+            if (prediction is not null)
+                unknowns = UnknownReach.Of(loaded.Barbule, _conditions, loaded.Catalog, cancellation);
             if (prediction is not null && request.Draws is not null)
             {
                 progress.End();
@@ -129,7 +132,7 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
             Refuse([.. problems.Select(loaded.Locate)]);
             return null;
         }
-        return (new PredictedStructure(file, loaded.Sha256, prediction, request.Sets) { Draws = ensemble }, loaded);
+        return (new PredictedStructure(file, loaded.Sha256, prediction, request.Sets) { Draws = ensemble, Unknowns = unknowns }, loaded);
     }
 
     private int Refuse(IReadOnlyList<FileProblem> problems)
@@ -202,7 +205,7 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
     private static string[] Filled(PredictedStructure predicted) =>
     [
         .. predicted.Prediction.IsRigorous ? GratingNames : [], .. predicted.Prediction.Conditions.Instrument is null ? [] : (string[])[SignalCsv.FileName],
-        .. predicted.Draws is null ? [] : DrawNames,
+        .. predicted.Draws is null ? [] : DrawNames, .. predicted.Unknowns is null ? [] : (string[])[UnknownsCsv.FileName],
     ];
 
 
@@ -215,6 +218,8 @@ internal sealed class PredictRun(PredictRequest request, TextWriter output, Text
             yield return new OutputFile(OrdersCsv.FileName, stream => OrdersCsv.Write(predicted.Prediction, stream));
             yield return new OutputFile(AbsorptionCsv.FileName, stream => AbsorptionCsv.Write(predicted.Prediction, stream));
         }
+        if (predicted.Unknowns is UnknownReach unknowns)
+            yield return new OutputFile(UnknownsCsv.FileName, stream => UnknownsCsv.Write(unknowns, stream));
         if (predicted.Draws is EnsemblePrediction ensemble)
         {
             yield return new OutputFile(BandsCsv.FileName, stream => BandsCsv.Write(ensemble, stream));

@@ -32,7 +32,7 @@ internal static class PredictionTable
         output.WriteLine();
         BirdTable.Write(prediction, output);
         DrawsTable.Write(predicted.Draws, output);
-        foreach (string line in Remarks(prediction).Concat(DrawsTable.Remarks(predicted.Draws)).Concat(notes.Select(note => $"Warning {note.Code}: {note}.")).Concat(WarningLines.Of([.. prediction.Warnings, .. predicted.Draws?.Warnings ?? []])))
+        foreach (string line in Remarks(prediction).Concat(UnknownLines.Corrections(prediction.Barbule)).Concat(UnknownLines.Of(predicted.Unknowns)).Concat(DrawsTable.Remarks(predicted.Draws)).Concat(notes.Select(note => $"Warning {note.Code}: {note}.")).Concat(WarningLines.Of([.. prediction.Warnings, .. predicted.Draws?.Warnings ?? []])))
             Wrap(line, output);
     }
 

@@ -36,15 +36,16 @@ internal static class DrawsJson
         json.WriteEndObject();
     }
 
-    private static void WriteLength(Utf8JsonWriter json, DrawnLength length)
+    internal static void WriteLength(Utf8JsonWriter json, DrawnLength length)
     {
         json.WriteStartObject();
         json.WriteString("key", length.Key);
-        json.WriteNumber("center_nm", length.CenterNm);
-        json.WriteNumber("deviation_nm", length.DeviationNm);
+        json.WriteString("unit", length.Unit);
+        json.WriteNumber("center", length.Center);
+        json.WriteNumber("deviation", length.Deviation);
         json.WriteString("law", length.Law);
         json.WriteNumber("truncated_share", length.TruncatedShare);
-        json.WriteNumber("bias_nm", length.BiasNm);
+        json.WriteNumber("bias", length.Bias);
         json.WriteEndObject();
     }
 

@@ -12,4 +12,7 @@ public sealed record PredictedStructure(string File, string Sha256, StructurePre
 {
     /// <summary>Draws of the same structure; null where none were asked for.</summary>
     public EnsemblePrediction? Draws { get; init; }
+
+    /// <summary>What it may show over all that is not known; null where everything is.</summary>
+    public UnknownReach? Unknowns { get; init; }
 }

@@ -41,7 +41,7 @@ public static class PredictionJson
         });
     }
 
-    private static byte[] Document(Action<Utf8JsonWriter> content)
+    internal static byte[] Document(Action<Utf8JsonWriter> content)
     {
         using var stream = new MemoryStream();
         using (var json = new Utf8JsonWriter(stream, Options))
@@ -54,10 +54,7 @@ public static class PredictionJson
     {
         StructurePrediction prediction = predicted.Prediction;
         json.WriteStartObject();
-        json.WriteStartObject("program");
-        json.WriteString("name", ProgramIdentity.Name);
-        json.WriteString("version", ProgramIdentity.Version);
-        json.WriteEndObject();
+        WriteProgram(json);
         WriteStructure(json, predicted);
         json.WriteString("solver", prediction.Solver);
         json.WriteString("picture", prediction.Picture);
@@ -81,21 +78,38 @@ public static class PredictionJson
             WriteView(json, view, prediction);
         json.WriteEndArray();
         WriteTrack(json, prediction.Track);
+        UnknownsJson.WriteCorrections(json, prediction.Barbule);
+        UnknownsJson.Write(json, predicted.Unknowns);
         DrawsJson.Write(json, predicted.Draws);
         WriteWarnings(json, prediction.Warnings);
         json.WriteEndObject();
     }
 
-    private static void WriteStructure(Utf8JsonWriter json, PredictedStructure predicted)
+    /// <summary>What the program is.</summary>
+    internal static void WriteProgram(Utf8JsonWriter json)
+    {
+        json.WriteStartObject("program");
+        json.WriteString("name", ProgramIdentity.Name);
+        json.WriteString("version", ProgramIdentity.Version);
+        json.WriteEndObject();
+    }
+
+    /// <summary>Opens the block of a structure with where it came from; the caller closes it.</summary>
+    internal static void WriteFile(Utf8JsonWriter json, string name, string file, string sha256, IReadOnlyList<string> changes)
     {
         json.WriteStartObject("structure");
-        json.WriteString("name", predicted.Prediction.Barbule.Name);
-        json.WriteString("file", predicted.File);
-        json.WriteString("sha256", predicted.Sha256);
+        json.WriteString("name", name);
+        json.WriteString("file", file);
+        json.WriteString("sha256", sha256);
         json.WriteStartArray("set");
-        foreach (string change in predicted.Changes)
+        foreach (string change in changes)
             json.WriteStringValue(change);
         json.WriteEndArray();
+    }
+
+    private static void WriteStructure(Utf8JsonWriter json, PredictedStructure predicted)
+    {
+        WriteFile(json, predicted.Prediction.Barbule.Name, predicted.File, predicted.Sha256, predicted.Changes);
         WriteGeometry(json, predicted.Prediction);
         json.WriteEndObject();
     }

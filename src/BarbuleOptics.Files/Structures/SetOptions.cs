@@ -8,7 +8,7 @@ namespace BarbuleOptics.Files;
 /// separation, pitch and row_separation.</remarks>
 internal static class SetOptions
 {
-    private static readonly string[] Sections = ["barbule", "cortex", "back"];
+    private static readonly string[] Sections = ["barbule", "cortex", "back", "preparation", "preservation"];
 
     public static void Apply(TomlTable root, IEnumerable<string> sets, ReadingLog log)
     {

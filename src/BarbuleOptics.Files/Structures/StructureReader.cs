@@ -12,7 +12,7 @@ internal sealed class StructureReader(MaterialReader materials, ReadingLog log)
     public const int Format = 1;
 
     /// <summary>Keys of the file and of its sections.</summary>
-    public static readonly string[] TopKeys = ["format", "name", "barbule", "cortex", "layer", "back"];
+    public static readonly string[] TopKeys = ["format", "name", "barbule", "cortex", "layer", "back", "preparation", "preservation"];
 
     private const string Unknown = "unknown";
 
@@ -38,8 +38,11 @@ internal sealed class StructureReader(MaterialReader materials, ReadingLog log)
         MeasuredLength? cortex = ReadCortex(reader);
         ValueList<BarbuleLayer> layers = ReadLayers(reader);
         Back? back = ReadBack(reader);
+        var factors = new FactorReader(log);
+        Preparation? preparation = factors.ReadPreparation(reader);
+        Preservation? preservation = factors.ReadPreservation(reader);
         RefuseNothing(reader, cortex);
-        return log.HasProblems ? null : new Barbule(name, surround, matrix, backing, axis, cortex, layers, back);
+        return log.HasProblems ? null : new Barbule(name, surround, matrix, backing, axis, cortex, layers, back) { Preparation = preparation, Preservation = preservation };
     }
 
     /// <summary>Refuses a file of another format than ours.</summary>

@@ -37,6 +37,19 @@ public static class StructureWriter
             Line(text, "behind", Material(back.Behind));
             Line(text, "coherent", back.Coherent ? "true" : "false");
         }
+        if (barbule.Preparation is { } preparation)
+        {
+            Header(text, "[preparation]");
+            OptionalLine(text, "obliquity", preparation.ObliquityDegrees);
+            OptionalLine(text, "keratin_scale", preparation.KeratinScale);
+            OptionalLine(text, "melanin_scale", preparation.MelaninScale);
+        }
+        if (barbule.Preservation is { } preservation)
+        {
+            Header(text, "[preservation]");
+            OptionalLine(text, "melanosome_shrinkage", preservation.MelanosomeShrinkage);
+            OptionalLine(text, "cortex_shrinkage", preservation.CortexShrinkage);
+        }
         return text.ToString();
     }
 
@@ -155,6 +168,20 @@ public static class StructureWriter
         if (length is not null)
             Line(text, key, Length(length));
     }
+
+    private static void OptionalLine(StringBuilder text, string key, MeasuredFactor? factor)
+    {
+        if (factor is not null)
+            Line(text, key, Factor(factor));
+    }
+
+    private static string Factor(MeasuredFactor factor) => factor switch
+    {
+        MeasuredFactor.Exact exact => Number(exact.Value),
+        MeasuredFactor.Summary summary => $"{{ mean = {Number(summary.Mean)}, sd = {Number(summary.Sd)} }}",
+        MeasuredFactor.Interval interval => $"{{ min = {Number(interval.Least)}, max = {Number(interval.Most)} }}",
+        _ => throw new ArgumentException($"Must be a known kind of factor, is {factor.GetType().Name}.", nameof(factor)),
+    };
 
     private static void Header(StringBuilder text, string header) => text.Append('\n').Append(header).Append('\n');
 

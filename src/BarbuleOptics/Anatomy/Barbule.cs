@@ -16,6 +16,12 @@ public sealed record Barbule(
     string Name, MaterialReference Surround, MaterialReference Matrix, MaterialReference? Backing, Angle Axis,
     MeasuredLength? Cortex, ValueList<BarbuleLayer> Layers, Back? Back)
 {
+    /// <summary>What cutting, drying and embedding did to the lengths; null where they are those of the barbule.</summary>
+    public Preparation? Preparation { get; init; }
+
+    /// <summary>What a fossil lost in size; null for none.</summary>
+    public Preservation? Preservation { get; init; }
+
     /// <summary>Name of the default surround.</summary>
     public const string DefaultSurround = "air";
 

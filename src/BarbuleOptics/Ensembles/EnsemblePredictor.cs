@@ -12,7 +12,6 @@ using BarbuleOptics.Spectra;
 namespace BarbuleOptics.Ensembles;
 
 /// <summary>Carries the spread of the measurements into spectra, peaks, colors and hue terms.</summary>
-/// <remarks>The structure must be one that <see cref="Predictor"/> takes under the same conditions: materials and geometry are checked there.</remarks>
 public static class EnsemblePredictor
 {
     /// <summary>Draws made under each further set of melanin constants, at most.</summary>
@@ -42,11 +41,14 @@ public static class EnsemblePredictor
         ArgumentNullException.ThrowIfNull(options);
         ArgumentNullException.ThrowIfNull(catalog);
         ensemble = null;
+        if (Predictor.Checked(barbule, conditions, catalog, out problems) is null)
+            return false;
         DrawPlan? plan = DrawPlanner.Plan(barbule, options.Spread, out problems, out IReadOnlyList<PredictionWarning> warnings);
         if (plan is null)
             return false;
         var parts = new DrawProgress(progress, options.Draws, MelaninDraws(barbule, options));
-        DrawSetup setup = DrawSetup.Of(plan, conditions, catalog, cancellation);
+        if (!DrawSetup.TryMake(plan, conditions, catalog, out DrawSetup? setup, out problems, cancellation))
+            return false;
         DrawRun run = Run(setup, setup.Plan, setup.Solver, conditions, options.Draws, options.Seed, parts.Next(options.Draws), cancellation);
         if (run.Views[0].Solved == 0)
         {
@@ -131,13 +133,8 @@ public static class EnsemblePredictor
 
     /// <summary>One entry a measurement; where rows are drawn by themselves it stands for all of them.</summary>
     private static IEnumerable<DrawnLength> LengthsOf(DrawPlan plan, DrawRun run)
-        => plan.Drawn.Order().GroupBy(slot => plan.Slots[slot].Key).Select(slots =>
-        {
-            DrawSlot slot = plan.Slots[slots.First()];
-            string law = slot.Law is LengthLaw.Uniform ? "uniform" : double.IsFinite(plan.EffectiveDegrees) ? "t" : "normal";
-            return new DrawnLength(
-                slot.Key, slot.Length.CentralNm, slot.Law!.DeviationNm, law, slots.Average(one => (double)run.Moved(one).Count / run.Draws), slots.Average(one => run.Moved(one).BiasNm));
-        });
+        => plan.Drawn.Order().GroupBy(slot => plan.Slots[slot].Key).Select(slots => plan.Described(
+            slots.First(), slots.Average(one => (double)run.Moved(one).Count / run.Draws), slots.Average(one => run.Moved(one).BiasNm)));
 
     private static IEnumerable<PredictionWarning> WarningsOf(IEnumerable<DrawnLength> lengths, DrawRun run, DrawnView[] views)
     {
@@ -146,7 +143,7 @@ public static class EnsemblePredictor
             string instead = length.Key.EndsWith("spacing", StringComparison.Ordinal) ? "; measured as separation (surface to surface) it cannot overlap"
                 : length.Key.EndsWith("pitch", StringComparison.Ordinal) ? "; measured as row_separation (surface to surface) it cannot overlap" : "";
             yield return new PredictionWarning(WarningCodes.DrawsTruncated, FormattableString.Invariant(
-                $"{100 * length.TruncatedShare:0} % of the draws of {length.Key} could not be (below 0, or overlapping) and took the nearest length that can; their mean is off by {length.BiasNm:+0.##;-0.##} nm by that{instead}"));
+                $"{100 * length.TruncatedShare:0} % of the draws of {length.Key} could not be (below 0, or overlapping) and took the nearest length that can; their mean is off by {length.Bias:+0.##;-0.##} {(length.Unit.Length > 0 ? length.Unit + " " : "")}by that{instead}"));
         }
         long failed = run.Draws - run.Views[0].Solved;
         if (failed > 0)

@@ -27,14 +27,14 @@ public sealed class SectionBuilder
 
     private SectionBuilder(Barbule barbule) => _barbule = barbule;
 
-    /// <summary>Builds the section of <paramref name="barbule"/>; an unknown backing is taken as keratin.</summary>
+    /// <summary>Builds the section of <paramref name="barbule"/>, its lengths corrected for preparation and preservation; an unknown backing is taken as keratin.</summary>
     /// <param name="barbule">The structure as measured.</param>
     /// <param name="section">The section; null when it cannot exist.</param>
     /// <param name="problems">Everything that forbids it; empty when the section stands.</param>
     public static bool TryBuild(Barbule barbule, [NotNullWhen(true)] out Section? section, out IReadOnlyList<AnatomyProblem> problems)
     {
         ArgumentNullException.ThrowIfNull(barbule);
-        var builder = new SectionBuilder(barbule);
+        var builder = new SectionBuilder(TrueGeometry.Of(barbule));
         section = builder.Build();
         problems = builder._problems;
         if (problems.Count > 0)
@@ -46,7 +46,7 @@ public sealed class SectionBuilder
     /// <returns>Both null where something else forbids it.</returns>
     internal static (Section? Section, GapShortage? Shortage) LayOut(Barbule barbule)
     {
-        var builder = new SectionBuilder(barbule);
+        var builder = new SectionBuilder(TrueGeometry.Of(barbule));
         Section? section = builder.Build();
         return builder._problems.Count == 0 ? (section, null) : (null, builder._shortage);
     }

@@ -31,15 +31,11 @@ public static class Predictor
         if (conditions is { Solver: SolverChoice.Grating, Mixing: not null })
             throw new ArgumentException("The grating solver averages nothing, so that no mixing rule can be named beside it.", nameof(conditions));
         prediction = null;
-        if (!SectionBuilder.TryBuild(barbule, out Section? section, out problems))
-            return false;
-        SolverPlan plan = SolverPlan.Of(section, conditions);
-        problems = [.. AxisProblems(section, plan), .. PeriodProblems(section, plan, conditions), .. MaterialCheck.Find(MaterialUse.Of(barbule, section), conditions.Wavelengths, catalog)];
-        if (problems.Count > 0)
+        if (Checked(barbule, conditions, catalog, out problems) is not Section section)
             return false;
         try
         {
-            prediction = Predict(barbule, section, plan, conditions, catalog, progress, cancellation);
+            prediction = Predict(barbule, section, SolverPlan.Of(section, conditions), conditions, catalog, progress, cancellation);
             return true;
         }
         catch (Exception fault) when (UnsolvedIn(fault) is Exception unsolved)
@@ -47,6 +43,16 @@ public static class Predictor
             problems = [new AnatomyProblem(SpacingKey(section), $"{unsolved.Message.TrimEnd('.')}; ask for the layer model with --solver multilayer")];
             return false;
         }
+    }
+
+    /// <summary>The section of a structure that can be solved under some conditions; null, with everything that forbids it, where it cannot.</summary>
+    internal static Section? Checked(Barbule barbule, PredictionConditions conditions, IMaterialCatalog catalog, out IReadOnlyList<AnatomyProblem> problems)
+    {
+        if (!SectionBuilder.TryBuild(barbule, out Section? section, out problems))
+            return null;
+        SolverPlan plan = SolverPlan.Of(section, conditions);
+        problems = [.. AxisProblems(section, plan), .. PeriodProblems(section, plan, conditions), .. MaterialCheck.Find(MaterialUse.Of(barbule, section), conditions.Wavelengths, catalog)];
+        return problems.Count > 0 ? null : section;
     }
 
     /// <summary>What the grating solver throws where it finds no solution, alone or from several threads; null for any other fault.</summary>

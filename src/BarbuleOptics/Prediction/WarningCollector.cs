@@ -36,6 +36,11 @@ internal sealed class WarningCollector(Barbule barbule, Section section, Predict
             if (length is MeasuredLength.Interval interval && interval.MostNm > interval.LeastNm)
                 Add(WarningCodes.IntervalMiddle, FormattableString.Invariant($"{key} is only known to lie between {interval.LeastNm} and {interval.MostNm} nm; its middle, {interval.CentralNm:0.###} nm, was used; run again with --set {key}={interval.LeastNm} and with --set {key}={interval.MostNm} to see how much it matters"));
         }
+        foreach ((string key, MeasuredFactor factor, string unit) in MeasuredFactors.Of(barbule))
+        {
+            if (factor is MeasuredFactor.Interval interval && interval.Most > interval.Least)
+                Add(WarningCodes.IntervalMiddle, FormattableString.Invariant($"{key} is only known to lie between {interval.Least} and {interval.Most}{(unit.Length > 0 ? " " + unit : "")}; its middle, {interval.Central:0.####}, was used"));
+        }
         if (section.Runs.Any(run => run.Cell.Any(body => body.Outer.Shape == OutlineShape.Rectangle) && !run.IsFilm))
             Add(WarningCodes.BarModel, "platelets are computed as bars without end along one direction; real ones end in both; say so where you report the result");
         if (section.Materials.Any(material => material.IsAveraged))

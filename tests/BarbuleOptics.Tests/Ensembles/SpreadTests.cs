@@ -81,7 +81,7 @@ public sealed class SpreadTests
         EnsemblePrediction ensemble = Ensemble.Of(text, Ensemble.Draws(4096, Spread.Between), Coarse);
         DrawnLength spacing = Assert.Single(ensemble.Lengths);
         Assert.Equal(0.158655, spacing.TruncatedShare, 0.002);
-        Assert.Equal(0.83316, spacing.BiasNm, 0.005);
+        Assert.Equal(0.83316, spacing.Bias, 0.005);
         Assert.Contains("separation", Assert.Single(ensemble.Warnings, warning => warning.Code == WarningCodes.DrawsTruncated).Message, StringComparison.Ordinal);
     }
 

@@ -1,3 +1,5 @@
+using System.Diagnostics.CodeAnalysis;
+using BarbuleOptics.Anatomy;
 using BarbuleOptics.Color;
 using BarbuleOptics.Ensembles.Spreads;
 using BarbuleOptics.Layering;
@@ -25,29 +27,49 @@ internal sealed class DrawSetup
 
     public PeakFollower[] Followers { get; private set; }
 
-    /// <summary>Solves the mean geometry and its neighbors.</summary>
-    /// <exception cref="ArithmeticException">The mean geometry has no finite solution.</exception>
-    public static DrawSetup Of(DrawPlan plan, PredictionConditions conditions, IMaterialCatalog catalog, CancellationToken cancellation)
+    /// <summary>Solves the mean geometry and its neighbors; false, with a problem, where the mean geometry has no solution.</summary>
+    public static bool TryMake(
+        DrawPlan plan, PredictionConditions conditions, IMaterialCatalog catalog, [NotNullWhen(true)] out DrawSetup? setup, out IReadOnlyList<AnatomyProblem> problems, CancellationToken cancellation)
+    {
+        problems = [];
+        setup = null;
+        try
+        {
+            setup = Of(plan, conditions, catalog, cancellation);
+        }
+        catch (ArithmeticException unsolved)
+        {
+            problems = [new AnatomyProblem(plan.Slots.Length > 0 ? plan.Slots[0].Key : "barbule.matrix", $"{unsolved.Message.TrimEnd('.')}; ask for the layer model with --solver multilayer")];
+        }
+        return setup is not null;
+    }
+
+    private static DrawSetup Of(DrawPlan plan, PredictionConditions conditions, IMaterialCatalog catalog, CancellationToken cancellation)
+    {
+        DrawSetup setup = Unprobed(plan, conditions, catalog, cancellation);
+        double[] lengthsNm = new double[plan.Slots.Length], reflectances = new double[conditions.Incidences.Count * conditions.Wavelengths.Count];
+        int[] rows = new int[plan.Barbule.Layers.Count];
+        plan.Center(lengthsNm, rows);
+        setup.Solver.Solve(new SectionDrawer(plan.Barbule, plan.Slots, plan.SeparateRows).Draw(lengthsNm, rows), reflectances);
+        var peaks = new PeakScan(conditions.Wavelengths);
+        for (int angle = 0; angle < setup.Followers.Length; angle++)
+        {
+            peaks.Scan(Part(reflectances, angle, conditions));
+            setup.Followers[angle] = PeakFollower.Of(peaks, lengthsNm);
+        }
+        setup.Probe(lengthsNm, rows, cancellation);
+        return setup;
+    }
+
+    /// <summary>Without a solution of the mean geometry: the highest peak of each draw is taken.</summary>
+    public static DrawSetup Unprobed(DrawPlan plan, PredictionConditions conditions, IMaterialCatalog catalog, CancellationToken cancellation)
     {
         double[] lengthsNm = new double[plan.Slots.Length];
         int[] rows = new int[plan.Barbule.Layers.Count];
         plan.Center(lengthsNm, rows);
-        var reader = new OutcomeReader(conditions);
-        var drawer = new SectionDrawer(plan.Barbule, plan.Slots, plan.SeparateRows);
-        Section mean = drawer.Draw(lengthsNm, rows);
+        Section mean = new SectionDrawer(plan.Barbule, plan.Slots, plan.SeparateRows).Draw(lengthsNm, rows);
         var solver = new DrawSolver(mean, conditions, catalog, cancellation);
-        double[] reflectances = new double[conditions.Incidences.Count * conditions.Wavelengths.Count];
-        solver.Solve(mean, reflectances);
-        var peaks = new PeakScan(conditions.Wavelengths);
-        var followers = new PeakFollower[conditions.Incidences.Count];
-        for (int angle = 0; angle < followers.Length; angle++)
-        {
-            peaks.Scan(Part(reflectances, angle, conditions));
-            followers[angle] = PeakFollower.Of(peaks, lengthsNm);
-        }
-        var setup = new DrawSetup(plan, solver, reader, followers, conditions);
-        setup.Probe(lengthsNm, rows, cancellation);
-        return setup;
+        return new DrawSetup(plan, solver, new OutcomeReader(conditions), [.. Enumerable.Repeat(PeakFollower.Highest, conditions.Incidences.Count)], conditions);
     }
 
     private static ReadOnlySpan<double> Part(double[] reflectances, int angle, PredictionConditions conditions)

@@ -41,7 +41,16 @@ internal sealed class DrawWorker
     public void Draw(ScrambledNet net, long number, DrawRound round, int place)
     {
         net.Point(number, _coordinates);
-        _plan.Draw(_coordinates, _lengthsNm, _rowCounts, _scores);
+        Draw(_coordinates, round, place);
+    }
+
+    /// <summary>One draw of given coordinates into its place of a round.</summary>
+    /// <param name="coordinates">Numbers above 0 and below 1, one a dimension of the plan.</param>
+    /// <param name="round">Where it goes.</param>
+    /// <param name="place">Its place there.</param>
+    public void Draw(ReadOnlySpan<double> coordinates, DrawRound round, int place)
+    {
+        _plan.Draw(coordinates, _lengthsNm, _rowCounts, _scores);
         _lengthsNm.CopyTo(_asDrawnNm.AsSpan());
         Section section = _drawer.Draw(_lengthsNm, _rowCounts);
         Span<double> moved = round.Moved(place);
@@ -51,9 +60,6 @@ internal sealed class DrawWorker
         for (int angle = 0; angle < _followers.Length; angle++)
             Read(round, place, angle);
     }
-
-    /// <summary>The section of given lengths, for probes around the mean geometry; lengths that cannot be are changed.</summary>
-    public Section Section(Span<double> lengthsNm, ReadOnlySpan<int> rowCounts) => _drawer.Draw(lengthsNm, rowCounts);
 
     private double TrySolve(Section section, Span<double> reflectances)
     {

@@ -12,6 +12,7 @@ internal sealed class PeakFollower
     private readonly double[] _slopes;
     private readonly double _peakNm;
     private readonly double _mostNm;
+    private bool _takesHighest;
 
     private PeakFollower(double[] centersNm, double[] slopes, double peakNm, double mostNm, bool hasPeak)
         => (_centersNm, _slopes, _peakNm, _mostNm, HasPeak) = (centersNm, slopes, peakNm, mostNm, hasPeak);
@@ -37,12 +38,17 @@ internal sealed class PeakFollower
         return new PeakFollower(centersNm.ToArray(), slopes, peakNm, mostNm, true);
     }
 
+    /// <summary>One that takes the highest peak, whichever it is.</summary>
+    public static PeakFollower Highest { get; } = new([], [], 0, double.PositiveInfinity, true) { _takesHighest = true };
+
     /// <summary>The same with slopes, nm of the peak a nm of each length.</summary>
     public PeakFollower With(double[] slopes) => new(_centersNm, slopes, _peakNm, _mostNm, HasPeak);
 
     /// <summary>Number of the peak among those of a draw; -1 where it is lost.</summary>
     public int Find(PeakScan peaks, ReadOnlySpan<double> lengthsNm)
     {
+        if (_takesHighest)
+            return peaks.Highest;
         if (!HasPeak)
             return -1;
         double expectedNm = _peakNm;

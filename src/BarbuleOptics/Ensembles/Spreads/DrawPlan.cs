@@ -53,6 +53,28 @@ internal sealed class DrawPlan
 
     private StudentScale Scale { get; }
 
+    /// <summary>What varies by itself: measurements with their dimensions, those drawn together and the rows of one measurement as one.</summary>
+    public IEnumerable<(string Key, int[] Dimensions)> Inputs()
+    {
+        var taken = new HashSet<int>();
+        for (int i = 0; i < _counted.Length; i++)
+            yield return (FormattableString.Invariant($"layer{_counted[i] + 1}.rows"), [i]);
+        foreach (CorrelatedGroup group in Groups)
+        {
+            taken.UnionWith(group.Slots);
+            yield return (string.Join(" + ", group.Slots.Select(slot => Slots[slot].Key)), [.. group.Slots.Select(slot => _dimensionOfSlot[slot])]);
+        }
+        foreach (IGrouping<string, int> slots in Drawn.Order().Where(slot => !taken.Contains(slot)).GroupBy(slot => Slots[slot].Key))
+            yield return (slots.Key, [.. slots.Select(slot => _dimensionOfSlot[slot])]);
+    }
+
+    /// <summary>A length that is drawn, in words and numbers.</summary>
+    public DrawnLength Described(int slot, double truncatedShare, double bias)
+    {
+        string law = Slots[slot].Law is LengthLaw.Uniform ? "uniform" : double.IsFinite(EffectiveDegrees) ? "t" : "normal";
+        return new DrawnLength(Slots[slot].Key, Slots[slot].Unit, Slots[slot].Length.CentralNm, Slots[slot].Law!.DeviationNm, law, truncatedShare, bias);
+    }
+
     /// <summary>The same draws of a structure that differs in its materials alone.</summary>
     public DrawPlan Of(Barbule barbule) => new(barbule, Spread, Slots, Groups, _counted, [.. Drawn], EffectiveDegrees);
 

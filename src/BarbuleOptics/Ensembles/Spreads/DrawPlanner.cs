@@ -55,21 +55,23 @@ internal sealed class DrawPlanner
             if (reading.Refusal is string refusal)
                 _problems.Add(new AnatomyProblem(slot.Key, refusal));
             if (reading.Note is string note)
-                Warn(CodeOf(slot.Length, reading), $"{slot.Key} {note}");
+                Warn(CodeOf(reading), $"{slot.Key} {note}");
         }
         return reading.Law;
     }
 
     private LengthReading Reading(DrawSlot slot)
     {
+        if (slot.Factor is not null)
+            return LengthSpread.Of(slot.Factor, _spread, slot.Unit);
         LengthReading reading = LengthSpread.Of(slot.Length, _spread);
         bool isLateral = LateralKeys.Contains(slot.Key[(slot.Key.LastIndexOf('.') + 1)..]);
         return _spread == Spread.Within && isLateral && reading.Law is not null
             ? new LengthReading(null, Note: "was kept at its mean, for rows of one layer share one period") : reading;
     }
 
-    private static string CodeOf(MeasuredLength length, LengthReading reading)
-        => length is MeasuredLength.Interval && reading.Law is not null ? WarningCodes.RangeDrawn : reading.Law is null ? WarningCodes.LengthKept : WarningCodes.FewUnits;
+    private static string CodeOf(LengthReading reading)
+        => reading.Law is LengthLaw.Uniform ? WarningCodes.RangeDrawn : reading.Law is null ? WarningCodes.LengthKept : WarningCodes.FewUnits;
 
     private string NothingToDraw() => _spread switch
     {

@@ -13,6 +13,8 @@ internal ref struct DrawnStructure
     private const double LeastSizeNm = 0.1;
     private const double LeastCoreNm = 1e-3;
     private const double MostCoreShare = 0.999;
+    private const double MostObliquityDegrees = 85;
+    private const double LeastScale = 0.05;
 
     private readonly Barbule _barbule;
     private readonly ReadOnlySpan<DrawSlot> _slots;
@@ -52,7 +54,20 @@ internal ref struct DrawnStructure
                 layers.Add(Whole(layer, _rowCounts[l]));
         }
         Back? back = _barbule.Back is null ? null : _barbule.Back with { Thickness = Take(LeastSizeNm) };
-        return _barbule with { Cortex = cortex, Layers = [.. layers], Back = back };
+        return WithFactors(_barbule with { Cortex = cortex, Layers = [.. layers], Back = back });
+    }
+
+    private readonly Barbule WithFactors(Barbule drawn)
+    {
+        Span<double> values = _lengthsNm[_at..];
+        for (int i = 0; i < values.Length; i++)
+        {
+            // A cosine and a scale above 0, a shrinkage below 1.
+            DrawSlot slot = _slots[_at + i];
+            (double least, double most) = slot.Unit == "deg" ? (0, MostObliquityDegrees) : slot.Key.EndsWith("scale", StringComparison.Ordinal) ? (LeastScale, 1 / LeastScale) : (1 - 1 / LeastScale, 1 - LeastScale);
+            values[i] = Math.Clamp(values[i], least, most);
+        }
+        return values.Length == 0 ? drawn : MeasuredFactors.With(drawn, values);
     }
 
     private BarbuleLayer Whole(BarbuleLayer layer, int rows)

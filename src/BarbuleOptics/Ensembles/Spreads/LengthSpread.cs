@@ -46,6 +46,15 @@ internal static class LengthSpread
         _ => LengthReading.Kept,
     };
 
+    /// <summary>Reads a factor: its deviation says how well it is known, which belongs to the spread of the mean alone.</summary>
+    public static LengthReading Of(MeasuredFactor factor, Spread spread, string unit) => (factor, spread) switch
+    {
+        (MeasuredFactor.Summary { Sd: > 0 } summary, Spread.Mean) => new(new LengthLaw.Normal(summary.Sd, double.PositiveInfinity)),
+        (MeasuredFactor.Interval interval, Spread.Mean) when interval.Most > interval.Least => new(
+            new LengthLaw.Uniform(interval.Least, interval.Most), Note: FormattableString.Invariant($"is not known; it was drawn between {interval.Least} and {interval.Most}{(unit.Length > 0 ? " " + unit : "")}, all values alike")),
+        _ => LengthReading.Kept,
+    };
+
     /// <summary>The values that stand for the units, in their order; null where there are none.</summary>
     public static ValueList<double>? UnitsOf(MeasuredLength length) => length switch
     {
