@@ -1,3 +1,4 @@
+using BarbuleOptics.Benchmarks.Coverage;
 using BarbuleOptics.Benchmarks.Kernels;
 using BarbuleOptics.Benchmarks.MixingRules;
 using BarbuleOptics.Benchmarks.Parts;
@@ -10,6 +11,7 @@ internal static class Program
 {
     private static readonly Dictionary<string, (string About, Func<string[], int> Run)> Programs = new()
     {
+        ["coverage"] = ("how often the 95 % interval of the mean covers the truth; prints the table of DEVELOPERS.md", CoverageProgram.Run),
         ["rules"] = ("how far each mixing rule is from the rigorous solution; prints the README's tables", RuleProgram.Run),
         ["rows"] = ("what a solve of five staggered rows of rods costs and how far it is from a far finer run", RowsProgram.Run),
         ["kernels"] = ("points and solves a second of the kernels as a whole, and their share of the processor's peak", KernelProgram.Run),

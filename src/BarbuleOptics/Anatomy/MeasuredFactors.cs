@@ -34,6 +34,6 @@ public static class MeasuredFactors
         return barbule with { Preparation = preparation, Preservation = preservation };
     }
 
-    private static MeasuredFactor? Next(MeasuredFactor? factor, ReadOnlySpan<double> values, ref int at)
+    private static MeasuredFactor.Exact? Next(MeasuredFactor? factor, ReadOnlySpan<double> values, ref int at)
         => factor is null ? null : new MeasuredFactor.Exact(values[at++]);
 }

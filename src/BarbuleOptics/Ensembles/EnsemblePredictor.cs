@@ -43,7 +43,7 @@ public static class EnsemblePredictor
         ensemble = null;
         if (Predictor.Checked(barbule, conditions, catalog, out problems) is null)
             return false;
-        DrawPlan? plan = DrawPlanner.Plan(barbule, options.Spread, out problems, out IReadOnlyList<PredictionWarning> warnings);
+        DrawPlan? plan = DrawPlanner.Plan(barbule, options.Spread, conditions, out problems, out IReadOnlyList<PredictionWarning> warnings);
         if (plan is null)
             return false;
         var parts = new DrawProgress(progress, options.Draws, MelaninDraws(barbule, options));

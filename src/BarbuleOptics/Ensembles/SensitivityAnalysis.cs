@@ -40,7 +40,7 @@ public static class SensitivityAnalysis
         result = null;
         if (Predictor.Checked(barbule, conditions, catalog, out problems) is null)
             return false;
-        DrawPlan? plan = DrawPlanner.Plan(barbule, options.Spread, out problems, out IReadOnlyList<PredictionWarning> warnings);
+        DrawPlan? plan = DrawPlanner.Plan(barbule, options.Spread, conditions, out problems, out IReadOnlyList<PredictionWarning> warnings);
         if (plan is null)
             return false;
         if (!DrawSetup.TryMake(plan, conditions, catalog, out DrawSetup? setup, out problems, cancellation))

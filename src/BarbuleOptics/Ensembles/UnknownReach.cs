@@ -8,7 +8,7 @@ using BarbuleOptics.Quantities;
 
 namespace BarbuleOptics.Ensembles;
 
-/// <summary>What a structure may show whose lengths, factors or rows are known only between bounds: hue against each, and every hue term within reach.</summary>
+/// <summary>What a structure may show whose lengths, factors or - in a fossil - rows are known only between bounds: hue against each, and every hue term within reach.</summary>
 /// <param name="Views">One an angle.</param>
 /// <param name="Points">Number of combinations tried for the terms within reach.</param>
 public sealed record UnknownReach(ValueList<UnknownView> Views, int Points)
@@ -45,7 +45,8 @@ public sealed record UnknownReach(ValueList<UnknownView> Views, int Points)
     private static DrawPlan? PlanOf(Barbule barbule)
     {
         DrawSlot[] slots = [.. StructureSlots.Of(barbule, separateRows: false).Select(slot => slot with { Law = Unknown(slot) })];
-        int[] counted = [.. Enumerable.Range(0, barbule.Layers.Count).Where(layer => barbule.Layers[layer].Rows.Counts.Distinct().Count() > 1)];
+        // In a living barbule a list of counts is what was seen; of a fossil it is what the rock leaves open.
+        int[] counted = barbule.Preservation is null ? [] : [.. Enumerable.Range(0, barbule.Layers.Count).Where(layer => barbule.Layers[layer].Rows.Counts.Distinct().Count() > 1)];
         return counted.Length == 0 && slots.All(slot => slot.Law is null) ? null : new DrawPlan(barbule, Spread.Mean, slots, [], counted);
     }
 

@@ -1,5 +1,4 @@
 using BarbuleOptics.Anatomy;
-using BarbuleOptics.Quantities;
 
 namespace BarbuleOptics.Layering;
 
@@ -51,7 +50,7 @@ internal sealed class TrueGeometry
         };
     }
 
-    private MeasuredLength Distance(Packing packing, double measuredNm, double bodyNm)
+    private MeasuredLength.Exact Distance(Packing packing, double measuredNm, double bodyNm)
         => Exact(packing.BetweenSurfaces ? measuredNm * _keratin : (measuredNm - bodyNm) * _keratin + bodyNm * _melanin);
 
     /// <summary>Width and height without shrinkage, the height without obliquity.</summary>
@@ -74,10 +73,10 @@ internal sealed class TrueGeometry
     };
 
     [return: System.Diagnostics.CodeAnalysis.NotNullIfNotNull(nameof(length))]
-    private MeasuredLength? Across(MeasuredLength? length) => length is null ? null : Exact(length.CentralNm * _melanin);
+    private MeasuredLength.Exact? Across(MeasuredLength? length) => length is null ? null : Exact(length.CentralNm * _melanin);
 
     [return: System.Diagnostics.CodeAnalysis.NotNullIfNotNull(nameof(length))]
-    private MeasuredLength? InDepth(MeasuredLength? length) => length is null ? null : Exact(length.CentralNm * _depth * _melanin);
+    private MeasuredLength.Exact? InDepth(MeasuredLength? length) => length is null ? null : Exact(length.CentralNm * _depth * _melanin);
 
     private static MeasuredLength.Exact Exact(double nanometres) => new(nanometres);
 }

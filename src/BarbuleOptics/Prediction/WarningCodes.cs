@@ -92,4 +92,7 @@ public static class WarningCodes
 
     /// <summary>The integral over directions did not reach the accuracy asked for.</summary>
     public const string SignalAccuracy = "signal-accuracy";
+
+    /// <summary>Draws: they are of one direction, whatever instrument the prediction is read with.</summary>
+    public const string DrawsOneDirection = "draws-one-direction";
 }

@@ -70,8 +70,8 @@ public sealed partial class ReadmeTests
     [Fact]
     public void Every_option_of_the_readme_is_one_of_the_program()
     {
-        string cli = Path.Combine(Repository.Root, "src", "BarbuleOptics.Cli");
-        string help = File.ReadAllText(Path.Combine(cli, "PredictCommand.cs")) + File.ReadAllText(Path.Combine(cli, "InstrumentOptions.cs"));
+        string folder = Path.Combine(Repository.Root, "src", "BarbuleOptics.Cli");
+        string help = string.Join('\n', ((string[])["PredictCommand.cs", "SensitivityCommand.cs", "ConditionOptions.cs", "InstrumentOptions.cs"]).Select(file => File.ReadAllText(Path.Combine(folder, file))));
         foreach (string option in Option().Matches(Readme).Select(match => match.Value).Distinct().Where(option => option is not ("--project" or "--help" or "--version" or "--global" or "--source")))
             Assert.Contains($"\"{option}\"", help, StringComparison.Ordinal);
     }

@@ -80,7 +80,7 @@ public sealed class SetOptionTests
     [InlineData("layer1.diameter=1\nlumen=2", "--set layer1.diameter=1\\u000Alumen=2: layer1.diameter: found")]
     [InlineData("layer1.lumen=130", "--set layer1.lumen=130: layer1.lumen: found 130; allowed 0 to below the diameter, 118.75")]
     [InlineData("layer1.diametr=5", "--set layer1.diametr=5: layer1.diametr: is no key of layer1; did you mean \"diameter\"")]
-    [InlineData("layer2.diameter=5", "--set layer2.diameter=5: layer2.diameter: there is no layer2; did you mean \"layer1\"; there is barbule, cortex, back, layer1")]
+    [InlineData("layer2.diameter=5", "--set layer2.diameter=5: layer2.diameter: there is no layer2; did you mean \"layer1\"; there is barbule, cortex, back, preparation, preservation, layer1")]
     [InlineData("layer.diameter=5", "--set layer.diameter=5: layer.diameter: there is no layer;")]
     [InlineData("layer1.body1.x=0", "--set layer1.body1.x=0: layer1.body1.x: there is no layer1.body1")]
     [InlineData("layer1.rows.x=0", "--set layer1.rows.x=0: layer1.rows.x: layer1.rows is 4 and has no keys of its own")]

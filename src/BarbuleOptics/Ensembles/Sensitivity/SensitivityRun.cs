@@ -1,7 +1,6 @@
 using System.Collections.Concurrent;
 using BarbuleOptics.Ensembles.Draws;
 using BarbuleOptics.Ensembles.Sequences;
-using BarbuleOptics.Ensembles.Spreads;
 using BarbuleOptics.Prediction;
 
 namespace BarbuleOptics.Ensembles.Sensitivity;

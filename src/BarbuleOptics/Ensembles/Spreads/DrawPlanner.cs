@@ -20,6 +20,15 @@ internal sealed class DrawPlanner
     private DrawPlanner(Barbule barbule, Spread spread) => (_barbule, _spread) = (barbule, spread);
 
     /// <summary>The plan; null when there are problems.</summary>
+    public static DrawPlan? Plan(Barbule barbule, Spread spread, PredictionConditions conditions, out IReadOnlyList<AnatomyProblem> problems, out IReadOnlyList<PredictionWarning> warnings)
+    {
+        DrawPlan? plan = Plan(barbule, spread, out problems, out warnings);
+        if (conditions.Instrument is not null)
+            warnings = [.. warnings, new PredictionWarning(WarningCodes.DrawsOneDirection, "draws are of the reflectance at each angle by itself, without the instrument; compare them with the reflectance, and read how far the instrument's signal is from it in the prediction")];
+        return plan;
+    }
+
+    /// <summary>The plan without a look at conditions.</summary>
     public static DrawPlan? Plan(Barbule barbule, Spread spread, out IReadOnlyList<AnatomyProblem> problems, out IReadOnlyList<PredictionWarning> warnings)
     {
         var planner = new DrawPlanner(barbule, spread);
