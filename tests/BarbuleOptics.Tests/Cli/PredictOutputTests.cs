@@ -158,7 +158,7 @@ public sealed class PredictOutputTests
         string file = SampleFiles.Write("porous-platelets", folder.Path);
         JsonElement root = (await Barbule.Call("predict", file, "--angles", "0,30", "--wavelengths", "300:780:20", "--json", "--observer", "1964-10deg", "--illuminant", "A", "--accuracy", "1e-3")).Json();
 
-        AssertKeys(root, "program", "structure", "solver", "picture", "mixing", "core_mixing", "films", "accuracy_asked", "error_estimate", "reference", "scope", "materials", "bird_vision", "wavelengths_nm", "summation_nm", "views", "main_peak_over_angle", "corrections", "unknowns", "draws", "warnings");
+        AssertKeys(root, "program", "structure", "solver", "picture", "mixing", "core_mixing", "films", "accuracy_asked", "error_estimate", "reference", "instrument", "scope", "materials", "bird_vision", "wavelengths_nm", "summation_nm", "views", "main_peak_over_angle", "corrections", "unknowns", "draws", "warnings");
         Assert.Equal(("Barbule Optics", ProgramIdentity.Version), (Text(root, "program", "name"), Text(root, "program", "version")));
         Assert.Equal(file, Text(root, "structure", "file"));
         Assert.Equal(Convert.ToHexStringLower(System.Security.Cryptography.SHA256.HashData(File.ReadAllBytes(file))), Text(root, "structure", "sha256"));
