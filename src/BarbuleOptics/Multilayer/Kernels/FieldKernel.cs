@@ -15,7 +15,7 @@ internal sealed class FieldKernel
     private const int MediaAtHand = 8;
 
     /// <summary>Vectors solved together, and films whose steps are computed before they are passed: few enough to stay in the nearest cache.</summary>
-    public const int Group = 4, Chunk = 8;
+    public const int Group = 8, Chunk = 4;
 
     // Places of the fields in memory, in vectors; phi comes first.
     private const int Psi = 2, Flux = 4, Lost = 5, Through = 6, K0 = 7, Surround = 8, StateValues = 9;
