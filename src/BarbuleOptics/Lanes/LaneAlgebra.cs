@@ -92,6 +92,7 @@ internal static class LaneAlgebra<TLanes>
     {
         TLanes least = TLanes.Broadcast(double.MaxValue);
         int stride = ComplexLanes<TLanes>.Stride;
+        // Left behind are -L below the diagonal, the inverse pivots on it and -U above, so that both substitutions are sums of products.
         for (int k = 0; k < size; k++)
         {
             ComplexLanes<TLanes> pivot = matrix[k * size + k];
@@ -99,17 +100,19 @@ internal static class LaneAlgebra<TLanes>
             least = TLanes.Min(least, norm);
             ComplexLanes<TLanes> inverse = TLanes.Broadcast(1) / norm * pivot.Conjugate;
             matrix[k * size + k] = inverse;
+            for (int column = k + 1; column < size; column++)
+                matrix[k * size + column] = -matrix[k * size + column];
             for (int row = k + 1; row < size; row++)
             {
-                ComplexLanes<TLanes> factor = -(matrix[row * size + k] * inverse);
+                ComplexLanes<TLanes> factor = matrix[row * size + k] * inverse;
+                matrix[row * size + k] = -factor;
                 AddScaled(ref matrix.At(row * size + k + 1), factor, ref matrix.At(k * size + k + 1), size - k - 1);
-                AddScaled(ref right.At(row * columns), factor, ref right.At(k * columns), columns);
             }
         }
+        for (int row = 1; row < size; row++)
+            Add(ref right.At(row * columns), ref matrix.At(row * size), stride, ref right.At(0), columns * stride, row, columns);
         for (int row = size - 1; row >= 0; row--)
         {
-            for (int k = row + 1; k < size; k++)
-                matrix[row * size + k] = -matrix[row * size + k];
             Add(ref right.At(row * columns), ref matrix.At(row * size + row + 1), stride, ref right.At((row + 1) * columns), columns * stride, size - row - 1, columns);
             ComplexLanes<TLanes> inverse = matrix[row * size + row];
             for (int column = 0; column < columns; column++)

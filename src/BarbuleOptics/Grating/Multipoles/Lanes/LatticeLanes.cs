@@ -89,7 +89,8 @@ internal sealed class LatticeLanes<TLanes>
     private void AddTail(
         TailLanes<TLanes> tail, ComplexLanes<TLanes> k, TLanes start, TLanes half, double periodNm, double largestHalf, double largestX, int side)
     {
-        tail.Set(start);
+        int most = PowersFor(largestX);
+        tail.Set(start, most);
         TLanes inverse = TLanes.Broadcast(1) / start;
         ComplexLanes<TLanes> x = TLanes.Broadcast(periodNm / (4 * Math.PI)) * inverse * k, square = x * x;
         // 4 x/(i k P) = 1/(i pi start).
@@ -106,7 +107,7 @@ internal sealed class LatticeLanes<TLanes>
             }
             ComplexLanes<TLanes> sum = ComplexLanes<TLanes>.Broadcast(0), factor = ComplexLanes<TLanes>.Broadcast(1);
             double share = 1;
-            for (int j = 0; p + 1 + 2 * j <= TailLanes<TLanes>.MostPower; j++)
+            for (int j = 0; p + 1 + 2 * j <= most; j++)
             {
                 sum += tail.ScaledSum(p + 1 + 2 * j) * factor;
                 double ratio = (p + 2 * j + 1.0) * (p + 2 * j + 2.0) / ((j + 1.0) * (p + j + 1.0));
@@ -118,6 +119,10 @@ internal sealed class LatticeLanes<TLanes>
             _sums[p] += leading * sum;
         }
     }
+
+    // Terms fall like (4 x^2)^j.
+    private int PowersFor(double largestX)
+        => Math.Min(TailLanes<TLanes>.MostPower, _top + 3 + 2 * (int)(Math.Log(1e-18) / Math.Log(Math.Min(0.2, 4 * largestX * largestX)) * 1.3));
 
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void AddPowers(ComplexLanes<TLanes> k, TLanes fraction, TLanes half, double periodNm)

@@ -12,42 +12,27 @@ internal sealed class TailLanes<TLanes>
     public const int MostPower = LatticeTail.MostPower;
 
     private readonly LaneBuffer<TLanes> _sums = new();
-    private TLanes _start, _inverse, _square;
-    private int _known;
 
     public TailLanes() => _sums.Reserve(MostPower / 2 + 1);
 
-    /// <summary>Sets the start a, and forgets the sums of another.</summary>
-    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
-    public void Set(TLanes start)
-    {
-        _start = start;
-        _inverse = TLanes.Broadcast(1) / start;
-        _square = _inverse * _inverse;
-        _known = 0;
-    }
-
     /// <summary>a^s times the sum of (n + a)^-s over n >= 0; for s = 1, -a psi(a).</summary>
-    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
-    public TLanes ScaledSum(int power)
-    {
-        for (; _known < power; _known++)
-            _sums.SetReal(_known + 1, Sum(_known + 1));
-        return _sums.Real(power);
-    }
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public TLanes ScaledSum(int power) => _sums.Real(power);
 
+    /// <summary>Finds the sums of powers 1 to <paramref name="most"/> for a start a.</summary>
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
-    private TLanes Sum(int s)
+    public void Set(TLanes start, int most)
     {
-        TLanes leading = s == 1 ? -(_start * TLanes.Log(_start)) : _start * TLanes.Broadcast(1.0 / (s - 1));
-        // From the last term inward: B_2k/(2k)! s (s + 1) ... (s + 2k - 2)/a^(2k - 1).
+        TLanes inverse = TLanes.Broadcast(1) / start, square = inverse * inverse, half = TLanes.Broadcast(0.5);
         ReadOnlySpan<double> bernoulli = LatticeTail.Bernoulli;
-        TLanes sum = TLanes.Broadcast(0);
-        for (int k = bernoulli.Length - 1; k >= 0; k--)
+        for (int s = 1; s <= most; s++)
         {
-            double first = k == 0 ? s : (s + 2 * k - 1.0) * (s + 2 * k);
-            sum = TLanes.Broadcast(first) * (k == 0 ? _inverse : _square) * (TLanes.Broadcast(bernoulli[k]) + sum);
+            // From the last term inward: B_2k/(2k)! s (s + 1) ... (s + 2k - 2)/a^(2k - 1).
+            TLanes sum = TLanes.Broadcast(bernoulli[^1]);
+            for (int k = bernoulli.Length - 1; k > 0; k--)
+                sum = TLanes.MultiplyAdd(TLanes.Broadcast((s + 2 * k - 1.0) * (s + 2 * k)) * square, sum, TLanes.Broadcast(bernoulli[k - 1]));
+            TLanes leading = s == 1 ? -(start * TLanes.Log(start)) : start * TLanes.Broadcast(1.0 / (s - 1));
+            _sums.SetReal(s, half + leading + TLanes.Broadcast(s) * inverse * sum);
         }
-        return TLanes.Broadcast(0.5) + leading + sum;
     }
 }
