@@ -44,7 +44,7 @@ internal sealed class BatchLadder
     public ProbeErrors NewErrors()
         => !_group.HasSlabs ? new(1.4, 0.01, isEven: true, LeastError)
             : _group.HasCuts || _group.ClearNm < Touching * _group.PeriodNm ? new(4, 0.3, isEven: false, LeastError)
-            : new(2, 0.15, isEven: false, LeastError);
+            : new(2, 0.08, isEven: false, LeastError);
 
     /// <summary>Errors that no step shows: rounding, and what the answers of flattened rods leave.</summary>
     public double LeastError => _hasFlatRods ? FlatRodError : Rounding;

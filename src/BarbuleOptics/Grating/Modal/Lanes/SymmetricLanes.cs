@@ -147,31 +147,46 @@ internal static class SymmetricLanes
     {
         int size = 2 * TLanes.Count, half = TLanes.Count;
         TLanes linkR = TLanes.Load(in link), linkI = TLanes.Load(in Unsafe.Add(ref link, half));
-        for (int column = 0; column < count; column += 2)
+        int column = 0;
+        for (; column + 4 <= count; column += 4)
+        {
+            int start = skip * Math.Min(first + column, row);
+            Four(ref Unsafe.Add(ref factors, 2 * start * size), ref Unsafe.Add(ref columns, start * step), row - start, step,
+                out TLanes aR, out TLanes aI, out TLanes bR, out TLanes bI, out TLanes cR, out TLanes cI, out TLanes dR, out TLanes dI,
+                out TLanes eR, out TLanes eI, out TLanes fR, out TLanes fI, out TLanes gR, out TLanes gI, out TLanes hR, out TLanes hI);
+            ref double own = ref Unsafe.Add(ref columns, row * step);
+            Finish(ref own, step, half, linkR, linkI, aR, aI, eR, eI);
+            Finish(ref Unsafe.Add(ref own, size), step, half, linkR, linkI, bR, bI, fR, fI);
+            Finish(ref Unsafe.Add(ref own, 2 * size), step, half, linkR, linkI, cR, cI, gR, gI);
+            Finish(ref Unsafe.Add(ref own, 3 * size), step, half, linkR, linkI, dR, dI, hR, hI);
+            columns = ref Unsafe.Add(ref columns, 4 * size);
+        }
+        for (; column < count; column += 2)
         {
             int start = skip * Math.Min(first + column, row);
             Pair(ref Unsafe.Add(ref factors, 2 * start * size), ref Unsafe.Add(ref columns, start * step), row - start, step,
                 out TLanes aR, out TLanes aI, out TLanes bR, out TLanes bI, out TLanes eR, out TLanes eI, out TLanes dR, out TLanes dI);
             ref double own = ref Unsafe.Add(ref columns, row * step);
-            ref double below = ref Unsafe.Add(ref own, step);
-            aR = TLanes.Load(in own) - aR;
-            aI = TLanes.Load(in Unsafe.Add(ref own, half)) - aI;
-            bR = TLanes.Load(in Unsafe.Add(ref own, size)) - bR;
-            bI = TLanes.Load(in Unsafe.Add(ref own, size + half)) - bI;
-            TLanes.Store(aR, ref own);
-            TLanes.Store(aI, ref Unsafe.Add(ref own, half));
-            TLanes.Store(bR, ref Unsafe.Add(ref own, size));
-            TLanes.Store(bI, ref Unsafe.Add(ref own, size + half));
-            eR += TLanes.MultiplyAdd(linkR, aR, -(linkI * aI));
-            eI += TLanes.MultiplyAdd(linkR, aI, linkI * aR);
-            dR += TLanes.MultiplyAdd(linkR, bR, -(linkI * bI));
-            dI += TLanes.MultiplyAdd(linkR, bI, linkI * bR);
-            TLanes.Store(TLanes.Load(in below) - eR, ref below);
-            TLanes.Store(TLanes.Load(in Unsafe.Add(ref below, half)) - eI, ref Unsafe.Add(ref below, half));
-            TLanes.Store(TLanes.Load(in Unsafe.Add(ref below, size)) - dR, ref Unsafe.Add(ref below, size));
-            TLanes.Store(TLanes.Load(in Unsafe.Add(ref below, size + half)) - dI, ref Unsafe.Add(ref below, size + half));
+            Finish(ref own, step, half, linkR, linkI, aR, aI, eR, eI);
+            Finish(ref Unsafe.Add(ref own, size), step, half, linkR, linkI, bR, bI, dR, dI);
             columns = ref Unsafe.Add(ref columns, 2 * size);
         }
+    }
+
+    // An element of both rows less its sums, and that of the second less the first row's.
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    private static void Finish<TLanes>(
+        ref double own, int step, int half, TLanes linkR, TLanes linkI, TLanes sumR, TLanes sumI, TLanes belowR, TLanes belowI)
+        where TLanes : struct, ILanes<TLanes>
+    {
+        ref double below = ref Unsafe.Add(ref own, step);
+        TLanes real = TLanes.Load(in own) - sumR, imaginary = TLanes.Load(in Unsafe.Add(ref own, half)) - sumI;
+        TLanes.Store(real, ref own);
+        TLanes.Store(imaginary, ref Unsafe.Add(ref own, half));
+        belowR = TLanes.Load(in below) - belowR;
+        belowI = TLanes.Load(in Unsafe.Add(ref below, half)) - belowI;
+        TLanes.Store(TLanes.MultiplyAdd(linkI, imaginary, TLanes.SubtractProduct(linkR, real, belowR)), ref below);
+        TLanes.Store(TLanes.SubtractProduct(linkI, real, TLanes.SubtractProduct(linkR, imaginary, belowI)), ref Unsafe.Add(ref below, half));
     }
 
     [MethodImpl(MethodImplOptions.AggressiveOptimization | MethodImplOptions.NoInlining)]
@@ -214,7 +229,29 @@ internal static class SymmetricLanes
         where TLanes : struct, ILanes<TLanes>
     {
         int size = 2 * TLanes.Count, half = TLanes.Count;
-        for (int column = row; column < c; column += 2)
+        int column = row;
+        for (; column + 4 <= c; column += 4)
+        {
+            int start = first == 0 ? 0 : column;
+            Four(ref Unsafe.Add(ref factors, 2 * (start - first) * size), ref Unsafe.Add(ref columns, start * step), n - start, step,
+                out TLanes aR, out TLanes aI, out TLanes bR, out TLanes bI, out TLanes cR, out TLanes cI, out TLanes dR, out TLanes dI,
+                out TLanes eR, out TLanes eI, out TLanes fR, out TLanes fI, out TLanes gR, out TLanes gI, out TLanes hR, out TLanes hI);
+            ref double upper = ref Unsafe.Add(ref result, (row * c + column) * size);
+            Store4(ref upper, size, half, aR, aI, bR, bI);
+            Store4(ref Unsafe.Add(ref upper, 2 * size), size, half, cR, cI, dR, dI);
+            upper = ref Unsafe.Add(ref upper, c * size);
+            Store4(ref upper, size, half, eR, eI, fR, fI);
+            Store4(ref Unsafe.Add(ref upper, 2 * size), size, half, gR, gI, hR, hI);
+            if (column > row)
+            {
+                Store4(ref Unsafe.Add(ref result, (column * c + row) * size), size, half, aR, aI, eR, eI);
+                Store4(ref Unsafe.Add(ref result, ((column + 1) * c + row) * size), size, half, bR, bI, fR, fI);
+            }
+            Store4(ref Unsafe.Add(ref result, ((column + 2) * c + row) * size), size, half, cR, cI, gR, gI);
+            Store4(ref Unsafe.Add(ref result, ((column + 3) * c + row) * size), size, half, dR, dI, hR, hI);
+            columns = ref Unsafe.Add(ref columns, 4 * size);
+        }
+        for (; column < c; column += 2)
         {
             int start = first == 0 ? 0 : column;
             Pair(ref Unsafe.Add(ref factors, 2 * (start - first) * size), ref Unsafe.Add(ref columns, start * step), n - start, step,
@@ -257,6 +294,48 @@ internal static class SymmetricLanes
         TLanes.Store(firstI, ref Unsafe.Add(ref to, half));
         TLanes.Store(secondR, ref Unsafe.Add(ref to, size));
         TLanes.Store(secondI, ref Unsafe.Add(ref to, size + half));
+    }
+
+    // The sum over k of two factors times four columns: (a b c d; e f g h).
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    private static void Four<TLanes>(
+        ref double factors, ref double columns, int count, int step,
+        out TLanes aR, out TLanes aI, out TLanes bR, out TLanes bI, out TLanes cR, out TLanes cI, out TLanes dR, out TLanes dI,
+        out TLanes eR, out TLanes eI, out TLanes fR, out TLanes fI, out TLanes gR, out TLanes gI, out TLanes hR, out TLanes hI)
+        where TLanes : struct, ILanes<TLanes>
+    {
+        int size = 2 * TLanes.Count, half = TLanes.Count;
+        aR = aI = bR = bI = cR = cI = dR = dI = eR = eI = fR = fI = gR = gI = hR = hI = TLanes.Broadcast(0);
+        for (int k = 0; k < count; k++)
+        {
+            TLanes pR = TLanes.Load(in factors), pI = TLanes.Load(in Unsafe.Add(ref factors, half));
+            TLanes qR = TLanes.Load(in Unsafe.Add(ref factors, size)), qI = TLanes.Load(in Unsafe.Add(ref factors, size + half));
+            TLanes xR = TLanes.Load(in columns), xI = TLanes.Load(in Unsafe.Add(ref columns, half));
+            AddTo(pR, pI, xR, xI, ref aR, ref aI);
+            AddTo(qR, qI, xR, xI, ref eR, ref eI);
+            xR = TLanes.Load(in Unsafe.Add(ref columns, size));
+            xI = TLanes.Load(in Unsafe.Add(ref columns, size + half));
+            AddTo(pR, pI, xR, xI, ref bR, ref bI);
+            AddTo(qR, qI, xR, xI, ref fR, ref fI);
+            xR = TLanes.Load(in Unsafe.Add(ref columns, 2 * size));
+            xI = TLanes.Load(in Unsafe.Add(ref columns, 2 * size + half));
+            AddTo(pR, pI, xR, xI, ref cR, ref cI);
+            AddTo(qR, qI, xR, xI, ref gR, ref gI);
+            xR = TLanes.Load(in Unsafe.Add(ref columns, 3 * size));
+            xI = TLanes.Load(in Unsafe.Add(ref columns, 3 * size + half));
+            AddTo(pR, pI, xR, xI, ref dR, ref dI);
+            AddTo(qR, qI, xR, xI, ref hR, ref hI);
+            factors = ref Unsafe.Add(ref factors, 2 * size);
+            columns = ref Unsafe.Add(ref columns, step);
+        }
+    }
+
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    private static void AddTo<TLanes>(TLanes leftR, TLanes leftI, TLanes rightR, TLanes rightI, ref TLanes real, ref TLanes imaginary)
+        where TLanes : struct, ILanes<TLanes>
+    {
+        real = TLanes.SubtractProduct(leftI, rightI, TLanes.MultiplyAdd(leftR, rightR, real));
+        imaginary = TLanes.MultiplyAdd(leftI, rightR, TLanes.MultiplyAdd(leftR, rightI, imaginary));
     }
 
     // The sum over k of two factors times two columns: (a b; e d).
