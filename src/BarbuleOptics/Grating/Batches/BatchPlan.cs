@@ -107,6 +107,9 @@ internal sealed class BatchPlan
     {
         double turns = _open.ShiftNm / PeriodNm;
         turns -= Math.Round(turns);
+        // Half a period to the left is half a period to the right.
+        if (turns < -0.5 + 1e-12)
+            turns = 0.5;
         BatchLayer layer = _open with { ShiftNm = Math.Abs(turns) < 1e-14 ? 0 : turns * PeriodNm };
         _open = default;
         if (layer.ThicknessNm < LeastLayerNm && layer.ShiftNm == 0)

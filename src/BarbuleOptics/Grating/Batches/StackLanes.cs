@@ -38,6 +38,7 @@ internal sealed class StackLanes<TLanes>
     private readonly StackDescent<TLanes> _descent;
     private (PackLanes<TLanes>? Pack, int Version, double Sine, Resolution Resolution) _set;
     private bool _isDiagonal;
+    private bool _isDark;
     private int _orders;
 
     public StackLanes(BatchPlan plan)
@@ -103,7 +104,7 @@ internal sealed class StackLanes<TLanes>
         foreach (IBatchElement<TLanes> element in _elements)
             failed = Or(failed, element.Solve(field));
         Failed = failed;
-        _isDiagonal = true;
+        (_isDiagonal, _isDark) = (true, true);
         _far.Clear(_orders);
         for (int step = _plan.Steps.Length - 1; step > 0; step--)
             ClimbStep(step, keepsFields);
@@ -167,6 +168,8 @@ internal sealed class StackLanes<TLanes>
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void ClimbLayer(int first)
     {
+        if (_isDark)
+            return;
         if (_isDiagonal)
         {
             for (int place = 0; place < _orders; place++)
@@ -202,11 +205,15 @@ internal sealed class StackLanes<TLanes>
         {
             slot?.Reserve(_orders * _orders);
             slot?.CopyFrom(_far, _orders);
+            TLanes bounced = TLanes.Broadcast(0);
             for (int place = 0; place < _orders; place++)
             {
                 ComplexLanes<TLanes> bounce = _bounce[place], far = _far[place];
                 _far[place] = (far - bounce) * (one - bounce * far).Reciprocal();
+                bounced += bounce.Norm;
             }
+            // Below a backing of the matrix' index nothing comes back.
+            _isDark &= !TLanes.Any(TLanes.LessThan(TLanes.Broadcast(0), bounced));
             return;
         }
         SetRoundAtInterface();
@@ -237,6 +244,11 @@ internal sealed class StackLanes<TLanes>
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void ClimbElement(IBatchElement<TLanes> element, LaneBuffer<TLanes>? slot)
     {
+        if (_isDark)
+        {
+            PassDark(element, slot);
+            return;
+        }
         if (_isDiagonal)
             MakeFull();
         ComplexLanes<TLanes> one = ComplexLanes<TLanes>.Broadcast(1);
@@ -252,6 +264,15 @@ internal sealed class StackLanes<TLanes>
         for (int i = 0; i < _orders * _orders; i++)
             _far[i] = -own[i];
         LaneAlgebra<TLanes>.AddProduct(_far, element.TransmitUp, passed, _orders);
+    }
+
+    private void PassDark(IBatchElement<TLanes> element, LaneBuffer<TLanes>? slot)
+    {
+        (_isDiagonal, _isDark) = (false, false);
+        slot?.Reserve(_orders * _orders);
+        slot?.Clear(_orders * _orders);
+        for (int i = 0; i < _orders * _orders; i++)
+            _far[i] = -element.ReflectTop[i];
     }
 
     [MethodImpl(MethodImplOptions.AggressiveOptimization)]
