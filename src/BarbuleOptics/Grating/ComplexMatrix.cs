@@ -143,6 +143,7 @@ internal sealed class ComplexMatrix
     }
 
     // Complex numbers lie as (re, im) pairs; two fit one vector: target + re * row + im * (-imaginary, real) of row.
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private static void AddScaled(Span<Complex> target, Complex factor, ReadOnlySpan<Complex> row)
     {
         int i = 0;

@@ -1,4 +1,5 @@
 using System.Numerics;
+using System.Runtime.CompilerServices;
 
 namespace BarbuleOptics.Grating.Modal;
 
@@ -112,6 +113,8 @@ internal sealed class CrowdedPlanes
             ComplexMatrix.SubtractScaled(sum.Row(m), -factor * Complex.Conjugate(row[m]), row);
     }
 
+    // Runs long before it is called often enough to be compiled well by itself.
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private static ComplexMatrix Transform(WallCrowding crowding, int harmonics, int far, double step)
     {
         var result = new ComplexMatrix(2 * far + 1, 2 * harmonics + 1);

@@ -1,9 +1,12 @@
+using System.Runtime.CompilerServices;
+
 namespace BarbuleOptics.Grating.Modal.Lanes;
 
 /// <summary>Small real matrices, for what is computed once a slab.</summary>
 internal static class RealMatrices
 {
     /// <summary>Product.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public static double[,] Times(double[,] left, double[,] right)
     {
         var result = new double[left.GetLength(0), right.GetLength(1)];
@@ -53,6 +56,7 @@ internal static class RealMatrices
     }
 
     /// <summary>Replaces the columns of <paramref name="right"/> by L^-1 times them.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public static void SolveLower(double[,] lower, double[,] right)
     {
         for (int row = 0; row < right.GetLength(0); row++)
@@ -67,6 +71,7 @@ internal static class RealMatrices
     }
 
     /// <summary>Replaces the columns of <paramref name="right"/> by L^-T times them.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public static void SolveUpper(double[,] lower, double[,] right)
     {
         for (int row = right.GetLength(0) - 1; row >= 0; row--)

@@ -1,3 +1,5 @@
+using System.Runtime.CompilerServices;
+
 namespace BarbuleOptics.Grating.Modal.Lanes;
 
 /// <summary>Eigenvalues and orthonormal eigenvectors of small real symmetric matrices, by Jacobi's rotations.</summary>
@@ -50,6 +52,7 @@ internal static class SymmetricEigen
         return sum;
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private static void Rotate(double[,] matrix, double[,] vectors, int p, int q)
     {
         double off = matrix[p, q];
