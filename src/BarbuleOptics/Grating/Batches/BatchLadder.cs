@@ -1,3 +1,4 @@
+using System.Runtime.CompilerServices;
 using BarbuleOptics.Grating.Joining;
 using BarbuleOptics.Layering;
 
@@ -83,6 +84,7 @@ internal sealed class BatchLadder
     }
 
     /// <summary>Largest order that travels in any medium at a wavelength.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public static int LeastOrders(SectionPermittivities structure, int wavelength, double sine, double periodNm)
     {
         double index = structure.SurroundIndex[wavelength], largest = Math.Max(index * index, structure.Backing[wavelength].Real);

@@ -1,3 +1,4 @@
+using System.Runtime.CompilerServices;
 using BarbuleOptics.Grating.Joining;
 
 namespace BarbuleOptics.Grating.Batches;
@@ -52,6 +53,7 @@ internal sealed class ProbeErrors(double safety, double leastFall, bool isEven, 
     }
 
     /// <summary>Takes the answers of one step and the next over.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public void Add(ReadOnlySpan<double> coarse, ReadOnlySpan<double> fine, int length)
     {
         for (int probe = 0; probe < _count; probe++)
@@ -101,6 +103,7 @@ internal sealed class ProbeErrors(double safety, double leastFall, bool isEven, 
     public double LargestCarried(int step) => Carrying * Largest(step);
 
     /// <summary>Error of a step at any wavelength of the group; NaN where no probe tells.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public double Carried(int step, int wavelength)
     {
         if (Steps == 0)
@@ -113,6 +116,7 @@ internal sealed class ProbeErrors(double safety, double leastFall, bool isEven, 
     }
 
     /// <summary>The first step with errors up to <paramref name="accuracy"/> at some wavelengths; the last one where none has.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     public int StepFor(int first, int count, double accuracy)
     {
         int step = 0;
@@ -128,6 +132,7 @@ internal sealed class ProbeErrors(double safety, double leastFall, bool isEven, 
     }
 
     // The nearest probe on one side, and the next one beyond it.
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private double Side(int step, int probe, int direction)
     {
         double error = 0, share = 1;

@@ -185,12 +185,14 @@ internal sealed class StackLanes<TLanes>
     }
 
     /// <summary>(near - far)/(near + far) of the admittances at an interface.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public ComplexLanes<TLanes> Bounce(in BatchStep what, int place)
     {
         ComplexLanes<TLanes> near = Channels.Eta(what.Medium, place), far = Channels.Eta(what.Below, place);
         return (near - far) * (near + far).Reciprocal();
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void SetBounces(in BatchStep what)
     {
         for (int place = 0; place < _orders; place++)
@@ -266,6 +268,7 @@ internal sealed class StackLanes<TLanes>
         LaneAlgebra<TLanes>.AddProduct(_far, element.TransmitUp, passed, _orders);
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void PassDark(IBatchElement<TLanes> element, LaneBuffer<TLanes>? slot)
     {
         (_isDiagonal, _isDark) = (false, false);
