@@ -14,7 +14,7 @@ namespace BarbuleOptics.Grating.Modal.Lanes;
 internal sealed class UprightSlab
 {
     /// <summary>Square of the largest multiplier that elimination may meet; beyond it too many digits would be lost.</summary>
-    private const double MostGrowth = 1e10;
+    private const double MostGrowth = 1e7;
 
     private readonly SlabShape _shape;
     private readonly double[]? _wallsNm;
