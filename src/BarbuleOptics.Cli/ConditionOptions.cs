@@ -30,6 +30,9 @@ internal sealed class ConditionOptions
     private readonly Option<string?> _materials = new("--materials") { Description = "Folder of material tables of your own; where a built-in material has the same name, yours is taken", HelpName = "DIR" };
     private readonly Option<string[]> _sets = new("--set") { Description = "Replace a value of the structure file, named by table and key: barbule.surround=water, cortex.thickness=150, layer1.lumen=0 (layer1 is the outermost); may be repeated", HelpName = "KEY=VALUE" };
 
+    /// <summary>Refuses an instrument beside what is drawn.</summary>
+    public void RefuseInstrument(CommandResult result, string drawing) => _instrument.RefuseBeside(result, drawing);
+
     /// <summary>Adds them all, with their checks.</summary>
     public void AddTo(Command command)
     {

@@ -47,6 +47,13 @@ internal sealed class InstrumentOptions
             result.AddError($"--reference: found '{WhiteStandard}' without --aperture; a matt white sends nothing into a cone of no width: allowed with --aperture");
     }
 
+    /// <summary>Refuses an instrument beside what is drawn: draws are of the reflectance of flat sections.</summary>
+    public void RefuseBeside(CommandResult result, string drawing)
+    {
+        foreach (Option option in All.Where(option => result.GetResult(option) is not null))
+            result.AddError($"{option.Name}: found with {drawing}, whose draws are of the reflectance of flat sections; allowed in predict without --draws");
+    }
+
     private static bool Aperture(string text, out (Angle Light, Angle Collection)? cones, out string allowed)
     {
         cones = null;

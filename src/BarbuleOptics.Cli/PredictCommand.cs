@@ -42,7 +42,10 @@ internal sealed class PredictCommand
     private void RefuseSpreadOfNothing(CommandResult result)
     {
         if (result.GetResult(_draws.Option) is not null)
+        {
+            _conditions.RefuseInstrument(result, "--draws");
             return;
+        }
         foreach (Option option in (Option[])[_spread.Option, _seed.Option])
         {
             if (result.GetResult(option) is not null)

@@ -24,6 +24,7 @@ internal sealed class SensitivityCommand
         var options = new SensitivityCommand();
         var command = new Command("sensitivity", "Which measurement decides peak, hue and chroma: shares of the variance") { options._file };
         options._conditions.AddTo(command);
+        command.Validators.Add(result => options._conditions.RefuseInstrument(result, "sensitivity"));
         foreach (Option option in (Option[])[options._draws.Option, options._spread.Option, options._seed.Option, options._output, options._force, options._json, options._width.Option])
             command.Options.Add(option);
         options._file.Validators.Add(result => CommandLineErrors.RefuseOptions(result, command));

@@ -15,12 +15,13 @@ internal sealed class PlotFrame
     private const double WidthPt = 27;
     private const double HeightPt = 16;
 
+    private readonly string _quantity;
     private readonly PlotAxis _percents;
     private readonly PlotAxis _wavelengths;
 
-    private PlotFrame(Box plot, double startNm, double stopNm, double topPercent)
+    private PlotFrame(Box plot, double startNm, double stopNm, double topPercent, string quantity)
     {
-        Plot = plot;
+        (Plot, _quantity) = (plot, quantity);
         _percents = Percents(topPercent, plot.Height);
         _wavelengths = new PlotAxis(startNm, stopNm, plot.Width, WidthPt);
     }
@@ -39,7 +40,8 @@ internal sealed class PlotFrame
     /// <param name="grid">The wavelengths.</param>
     /// <param name="greatest">Greatest reflectance shown, a fraction.</param>
     /// <param name="outside">What the axes with their labels may cover at most.</param>
-    public static PlotFrame Within(WavelengthGrid grid, double greatest, Box outside)
+    /// <param name="quantity">What the vertical axis is called.</param>
+    public static PlotFrame Within(WavelengthGrid grid, double greatest, Box outside, string quantity = "Reflectance (%)")
     {
         // A grid of one wavelength has no width of its own.
         double aside = grid.Count > 1 ? 0 : Math.Max(1, grid.StartNm * 0.02);
@@ -49,7 +51,7 @@ internal sealed class PlotFrame
         PlotAxis percents = Percents(top, bottom - outside.Top);
         double numbers = percents.Major.Max(value => FigureFont.WidthPt(percents.Text(value), Ink.SmallPt));
         double left = outside.Left + Ink.LabelPt + GapPt + numbers + GapPt + TickPt;
-        return new PlotFrame(new Box(left, outside.Top, outside.Right, bottom), startNm, stopNm, top);
+        return new PlotFrame(new Box(left, outside.Top, outside.Right, bottom), startNm, stopNm, top, quantity);
     }
 
     public double X(double wavelengthNm) => Plot.Left + (wavelengthNm - StartNm) / (StopNm - StartNm) * Plot.Width;
@@ -79,7 +81,7 @@ internal sealed class PlotFrame
     {
         double numbers = _percents.Major.Max(value => FigureFont.WidthPt(_percents.Text(value), Ink.SmallPt));
         double x = Plot.Left - TickPt - 2 * GapPt - numbers - FigureFont.Descent * Ink.LabelPt;
-        elements.Add(new TextRun("Reflectance (%)", new(x, Plot.Center.Y), Ink.LabelPt, TextAlign.Middle, Ink.Text, Upward: true));
+        elements.Add(new TextRun(_quantity, new(x, Plot.Center.Y), Ink.LabelPt, TextAlign.Middle, Ink.Text, Upward: true));
         double y = numbersBaseline + GapPt + Ink.LabelPt;
         elements.Add(new TextRun("Wavelength (nm)", new(Plot.Center.X, y), Ink.LabelPt, TextAlign.Middle, Ink.Text));
     }

@@ -8,6 +8,7 @@ using BarbuleOptics.Multilayer;
 using BarbuleOptics.Prediction;
 using BarbuleOptics.Quantities;
 using BarbuleOptics.Spectra;
+using BarbuleOptics.Spectra.Instruments;
 
 namespace BarbuleOptics.Figures.Curves;
 
@@ -37,8 +38,15 @@ public sealed class ReflectanceFigure
         _labelEvery = (int)Math.Ceiling(_views.Count / Math.Min(MostLabels, labels));
         double right = _widthPt - MarginPt - EndLabels.RoomPt(Enumerable.Range(0, _views.Count).Where(IsLabeled).SelectMany(Labels));
         double greatest = _views.Select(view => view.Reflectance).Concat(_others.OfType<LayerModelError>().Select(other => other.OtherReflectance)).Max(Greatest);
-        _frame = PlotFrame.Within(Grid, greatest, new Box(MarginPt, MarginPt + Ink.SmallPt / 2, right, height));
+        _frame = PlotFrame.Within(Grid, greatest, new Box(MarginPt, MarginPt + Ink.SmallPt / 2, right, height), Quantity);
     }
+
+    private string Quantity => _prediction.Conditions.Instrument switch
+    {
+        null => "Reflectance (%)",
+        { Reference: SignalReference.WhiteStandard } => "Signal (% of white)",
+        _ => "Signal (% of mirror)",
+    };
 
     private WavelengthGrid Grid => _prediction.Conditions.Wavelengths;
 

@@ -62,6 +62,17 @@ public sealed class InstrumentOptionTests
         Assert.Equal(JsonValueKind.Null, json.RootElement.GetProperty("views")[0].GetProperty("signal").ValueKind);
     }
 
+    [Theory]
+    [InlineData("predict", "--draws", "16", "--draws")]
+    [InlineData("sensitivity", "--seed", "2", "sensitivity")]
+    public async Task Draws_take_no_instrument(string command, string option, string value, string words)
+    {
+        using var folder = new TemporaryFolder();
+        string file = SampleFiles.Write("solid-rods-one-row", folder.Path);
+        string line = (await Barbule.Call(command, file, option, value, "--tilt", "5")).Refusal(2);
+        Assert.StartsWith($"barbule: --tilt: found with {words}, ", line, StringComparison.Ordinal);
+    }
+
     [Fact]
     public async Task A_white_standard_without_cones_is_refused()
     {
