@@ -29,7 +29,11 @@ internal static class BarbuleProgram
                 CommandLineErrors.Write(result, error);
                 return ExitCode.WrongCommandLine;
             }
-            var configuration = new InvocationConfiguration { EnableDefaultExceptionHandler = false, Output = output, Error = error };
+            // Long enough for what is in flight on a busy machine to end, and to be told.
+            var configuration = new InvocationConfiguration
+            {
+                EnableDefaultExceptionHandler = false, Output = output, Error = error, ProcessTerminationTimeout = TimeSpan.FromSeconds(30),
+            };
             return await result.InvokeAsync(configuration, cancellation).ConfigureAwait(false);
         }
         catch (OperationCanceledException)

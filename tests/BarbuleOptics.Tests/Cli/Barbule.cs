@@ -10,7 +10,12 @@ internal static class Barbule
 {
     private const int LimitMs = 60_000;
 
-    private static readonly string Program = Path.Combine(AppContext.BaseDirectory, "barbule.dll");
+    /// <summary>The folder that the command was built into, which a user runs it from; beside the tests its libraries are theirs.</summary>
+    public static string Folder { get; } = Path.Combine(
+        Repository.Root, "src", "BarbuleOptics.Cli", "bin", Path.GetFileName(Path.GetDirectoryName(Path.TrimEndingDirectorySeparator(AppContext.BaseDirectory)))!,
+        Path.GetFileName(Path.TrimEndingDirectorySeparator(AppContext.BaseDirectory)));
+
+    private static readonly string Program = Path.Combine(Folder, "barbule.dll");
 
     /// <summary>The runtime that runs the test runs the command, too.</summary>
     private static readonly string Runtime = Environment.ProcessPath is string path && Path.GetFileNameWithoutExtension(path) == "dotnet" ? path : "dotnet";

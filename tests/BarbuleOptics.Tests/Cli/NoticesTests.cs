@@ -30,14 +30,17 @@ public sealed class NoticesTests
     public void Font_and_drawing_library_bring_their_licenses(string file, string words)
         => Assert.Contains(words, File.ReadAllText(Path.Combine(AppContext.BaseDirectory, file)), StringComparison.Ordinal);
 
-    /// <summary>Packages of which the command's own list of dependencies says that they bring a file along.</summary>
+    /// <summary>Packages that bring a file along, for this or any other machine: the list that the command's restore left.</summary>
     private static string[] Packages()
     {
-        using var list = JsonDocument.Parse(File.ReadAllText(Path.Combine(AppContext.BaseDirectory, "barbule.deps.json")));
-        JsonElement target = list.RootElement.GetProperty("targets").EnumerateObject().First().Value;
-        var kinds = list.RootElement.GetProperty("libraries").EnumerateObject().ToDictionary(library => library.Name, library => library.Value.GetProperty("type").GetString());
+        using var list = JsonDocument.Parse(File.ReadAllText(Path.Combine(Repository.Root, "src", "BarbuleOptics.Cli", "obj", "project.assets.json")));
+        JsonElement target = list.RootElement.GetProperty("targets").GetProperty("net10.0");
         return [.. target.EnumerateObject()
-            .Where(library => kinds[library.Name] == "package" && (library.Value.TryGetProperty("runtime", out _) || library.Value.TryGetProperty("runtimeTargets", out _) || library.Value.TryGetProperty("native", out _)))
+            .Where(library => library.Value.GetProperty("type").GetString() == "package" && (Brings(library.Value, "runtime") || Brings(library.Value, "runtimeTargets") || Brings(library.Value, "native")))
             .Select(library => library.Name.Split('/')[0])];
     }
+
+    // A package that is empty for a framework holds a file named _._ in place of others.
+    private static bool Brings(JsonElement library, string kind)
+        => library.TryGetProperty(kind, out JsonElement files) && files.EnumerateObject().Any(file => !file.Name.EndsWith("_._", StringComparison.Ordinal));
 }

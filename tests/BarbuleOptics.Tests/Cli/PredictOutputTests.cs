@@ -267,7 +267,7 @@ public sealed class PredictOutputTests
 
     private static void AssertView(JsonElement view)
     {
-        AssertKeys(view, "incidence_deg", "polarization", "spectrum", "cie", "hue", "bird", "layer_model_error", "powers");
+        AssertKeys(view, "incidence_deg", "polarization", "spectrum", "cie", "hue", "bird", "signal", "layer_model_error", "powers");
         JsonElement compared = view.GetProperty("layer_model_error"), powers = view.GetProperty("powers");
         AssertKeys(compared, "mixing", "peak_shift_nm", "largest_change", "largest_change_at_nm", "ciede2000");
         Assert.Equal("bruggeman-2", Text(compared, "mixing"));

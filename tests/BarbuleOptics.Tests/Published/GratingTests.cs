@@ -16,14 +16,14 @@ public class GratingTests
     // Geometry: Li and Haggans 1993, J. Opt. Soc. Am. A 10:1184, 10.1364/JOSAA.10.001184; Granet and Guizal 1996, J. Opt. Soc. Am. A
     // 13:1019, 10.1364/JOSAA.13.001019. R-1 in s .7342789: from memory of these, and confirmed; R0 in s and both in p: computed twice
     // by independent methods (in p by exact modal conditions of the lamellae). A Fourier modal code converges slowly here; with as many
-    // harmonics as the solver allows itself the error is 2e-3 in s and 4e-3 in p, and the estimate, 2.7e-2 in p, has to own to it.
+    // harmonics as the solver allows itself the error is 2e-3 in s and 4e-3 in p, and the estimate, 3.3e-2 in p, has to own to it.
     [Theory]
     [InlineData(Polarizations.S, .131709, .7342789)]
     [InlineData(Polarizations.P, .84848, .10156)]
     public void Metal_lamellae_match_published_values(Polarizations polarization, double zeroth, double first)
     {
         SolvedSection found = SolvedSection.Of(Lamellae(1, 1, (.22, 6.71), (.22, 6.71)), 30, polarization, 1e-4);
-        Assert.InRange(found.Estimate, Math.Abs(found.Specular - zeroth) / 3, .03);
+        Assert.InRange(found.Estimate, Math.Abs(found.Specular - zeroth) / 3, .04);
         Assert.Equal(zeroth, found.Specular, 5e-3);
         Assert.Equal(zeroth, found.ReflectedInto(0), 5e-3);
         Assert.Equal(first, found.ReflectedInto(-1), 5e-3);
