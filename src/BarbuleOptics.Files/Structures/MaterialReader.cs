@@ -8,7 +8,7 @@ internal sealed class MaterialReader(MaterialCatalog catalog, string? baseDirect
 {
     private static readonly NumberRange RefractiveIndex = new(0, 100, ExcludesLeast: true);
     private static readonly NumberRange Extinction = new(0, 100);
-    private static readonly string[] InlineKeys = ["n", "k"];
+    private static readonly string[] InlineKeys = ["n", "k", "n_sd", "k_sd"];
 
     private readonly Dictionary<string, Material?> _tables = new(StringComparer.Ordinal);
 
@@ -51,6 +51,7 @@ internal sealed class MaterialReader(MaterialCatalog catalog, string? baseDirect
         double? least = reference switch
         {
             MaterialReference.Inline { K: > 0 } inline => inline.K,
+            MaterialReference.Inline { KSd: > 0 } inline => inline.KSd,
             MaterialReference.Inline => null,
             _ => Catalog.TryFind(reference, out Material? material) ? LeastExtinction(material) is > Tiny and var k ? k : null : null,
         };
@@ -76,7 +77,9 @@ internal sealed class MaterialReader(MaterialCatalog catalog, string? baseDirect
         if (!reader.Has("n"))
             reader.RefuseMissing("n", "a refractive index");
         double? n = reader.Number("n", RefractiveIndex), k = reader.Has("k") ? reader.Number("k", Extinction) : 0;
-        return n is { } index && k is { } extinction ? new MaterialReference.Inline(index, extinction) : null;
+        double? nSd = reader.Has("n_sd") ? reader.Number("n_sd", Extinction) : 0, kSd = reader.Has("k_sd") ? reader.Number("k_sd", Extinction) : 0;
+        return n is { } index && k is { } extinction && nSd is { } ofIndex && kSd is { } ofExtinction
+            ? new MaterialReference.Inline(index, extinction) { NSd = ofIndex, KSd = ofExtinction } : null;
     }
 
     private MaterialReference.TablePath? Table(TableReader reader, string key, string path)

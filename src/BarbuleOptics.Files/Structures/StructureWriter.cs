@@ -134,11 +134,13 @@ public static class StructureWriter
 
     private static string Material(MaterialReference reference) => reference switch
     {
-        MaterialReference.Inline inline => $"{{ n = {Number(inline.N)}, k = {Number(inline.K)} }}",
+        MaterialReference.Inline inline => $"{{ n = {Number(inline.N)}, k = {Number(inline.K)}{Deviation("n_sd", inline.NSd)}{Deviation("k_sd", inline.KSd)} }}",
         MaterialReference.Named named => Quote(named.Name),
         MaterialReference.TablePath table => Quote(table.Path),
         _ => throw new ArgumentException($"Must be a known kind of reference, is {reference.GetType().Name}.", nameof(reference)),
     };
+
+    private static string Deviation(string key, double value) => value == 0 ? "" : $", {key} = {Number(value)}";
 
     private static string Numbers(ValueList<double> values) => List(values.Select(Number));
 

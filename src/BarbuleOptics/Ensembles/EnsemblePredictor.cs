@@ -47,7 +47,7 @@ public static class EnsemblePredictor
         if (plan is null)
             return false;
         var parts = new DrawProgress(progress, options.Draws, MelaninDraws(barbule, options));
-        if (!DrawSetup.TryMake(plan, conditions, catalog, out DrawSetup? setup, out problems, cancellation))
+        if (!DrawSetup.TryMake(plan, conditions, catalog, shares: true, out DrawSetup? setup, out problems, cancellation))
             return false;
         DrawRun run = Run(setup, setup.Plan, setup.Solver, conditions, options.Draws, options.Seed, parts.Next(options.Draws), cancellation);
         if (run.Views[0].Solved == 0)

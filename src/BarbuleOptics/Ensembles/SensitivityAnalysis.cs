@@ -43,7 +43,7 @@ public static class SensitivityAnalysis
         DrawPlan? plan = DrawPlanner.Plan(barbule, options.Spread, conditions, out problems, out IReadOnlyList<PredictionWarning> warnings);
         if (plan is null)
             return false;
-        if (!DrawSetup.TryMake(plan, conditions, catalog, out DrawSetup? setup, out problems, cancellation))
+        if (!DrawSetup.TryMake(plan, conditions, catalog, shares: false, out DrawSetup? setup, out problems, cancellation))
             return false;
         (string Key, int[] Dimensions)[] inputs = [.. setup.Plan.Inputs()];
         int points = Math.Max(LeastPoints, options.Draws / (inputs.Length + 2));

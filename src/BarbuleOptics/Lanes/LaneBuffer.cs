@@ -10,6 +10,9 @@ internal sealed class LaneBuffer<TLanes>
 {
     private const int LineBytes = 64;
 
+    /// <summary>Doubles from which an array is pinned, 80 KB: larger ones outlive small collections anyway.</summary>
+    private const int LeastPinned = 10_000;
+
     private double[] _memory = [];
     private int _offset;
 
@@ -48,8 +51,10 @@ internal sealed class LaneBuffer<TLanes>
         if (length <= Length)
             return;
         int spare = LineBytes / sizeof(double);
-        // Pinned: a moved array would lose its alignment.
-        _memory = GC.AllocateArray<double>(length * ComplexLanes<TLanes>.Stride + spare, pinned: true);
+        int count = length * ComplexLanes<TLanes>.Stride + spare;
+        // Pinned: a moved array would lose its alignment. Small ones are not, for they often live for one section alone and pinned memory is only freed by
+        // full collections; one that is moved later is slower by a little, not wrong.
+        _memory = GC.AllocateArray<double>(count, pinned: count >= LeastPinned);
         nuint address = (nuint)Marshal.UnsafeAddrOfPinnedArrayElement(_memory, 0);
         _offset = (int)((LineBytes - address % LineBytes) % LineBytes / sizeof(double));
         Length = length;

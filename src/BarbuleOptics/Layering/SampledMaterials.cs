@@ -26,31 +26,47 @@ internal sealed class SampledMaterials
 
     /// <summary>A material as it is; not to be changed.</summary>
     /// <exception cref="ArgumentException">It is not in the catalog, or a table does not reach a wavelength.</exception>
-    public Complex[] Of(MaterialReference reference) => _plain.GetOrAdd(reference, static (key, all) =>
+    public Complex[] Of(MaterialReference reference)
     {
-        Material material = all.Find(key);
-        return Array.ConvertAll(all._wavelengthsNm, wavelength => At(material, wavelength));
-    }, this);
+        // Constants may be another in every draw: they are made anew, or memory would grow with the draws.
+        return reference is MaterialReference.Inline ? Sample(this, reference) : _plain.GetOrAdd(reference, static (key, all) => Sample(all, key), this);
+
+        static Complex[] Sample(SampledMaterials all, MaterialReference key)
+        {
+            Material material = all.Find(key);
+            return Array.ConvertAll(all._wavelengthsNm, wavelength => At(material, wavelength));
+        }
+    }
 
     /// <summary>A material of a section, which may be an average of two; not to be changed.</summary>
     /// <exception cref="ArgumentException">One is not in the catalog, or a table does not reach a wavelength.</exception>
     public Complex[] Of(SectionMaterial material)
     {
         ArgumentNullException.ThrowIfNull(material);
-        return material.Filler is null ? Of(material.Main) : _averaged.GetOrAdd(material, static (key, all) =>
+        if (material.Filler is null)
+            return Of(material.Main);
+        return material.Main is MaterialReference.Inline || material.Filler is MaterialReference.Inline
+            ? Average(this, material) : _averaged.GetOrAdd(material, static (key, all) => Average(all, key), this);
+
+        static Complex[] Average(SampledMaterials all, SectionMaterial key)
         {
             Complex[] main = all.Of(key.Main), filler = all.Of(key.Filler!);
             return [.. main.Zip(filler, (one, other) => PorousCore.Average(one, other, key.FillerShare))];
-        }, this);
+        }
     }
 
     /// <summary>The real index of a surround; not to be changed.</summary>
     /// <exception cref="ArgumentException">It is not in the catalog, absorbs, or a table does not reach a wavelength.</exception>
-    public double[] LosslessIndexOf(MaterialReference reference) => _lossless.GetOrAdd(reference, static (key, all) =>
+    public double[] LosslessIndexOf(MaterialReference reference)
     {
-        Material material = all.Find(key);
-        return Array.ConvertAll(all._wavelengthsNm, wavelength => LosslessIndex(material, wavelength));
-    }, this);
+        return reference is MaterialReference.Inline ? Sample(this, reference) : _lossless.GetOrAdd(reference, static (key, all) => Sample(all, key), this);
+
+        static double[] Sample(SampledMaterials all, MaterialReference key)
+        {
+            Material material = all.Find(key);
+            return Array.ConvertAll(all._wavelengthsNm, wavelength => LosslessIndex(material, wavelength));
+        }
+    }
 
     private Material Find(MaterialReference reference)
         => _catalog.TryFind(reference, out Material? material)

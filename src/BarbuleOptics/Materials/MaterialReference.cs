@@ -29,6 +29,12 @@ public abstract record MaterialReference
         /// <inheritdoc/>
         public override string ToString() => FormattableString.Invariant($"n = {N}, k = {K}");
 
+        /// <summary>Standard deviation of what is known about n, 0 or above; the prediction is for n itself, draws vary it.</summary>
+        public double NSd { get; init; }
+
+        /// <summary>The same of k.</summary>
+        public double KSd { get; init; }
+
         /// <summary>n + i k.</summary>
         public Complex Index => new(N, K);
     }

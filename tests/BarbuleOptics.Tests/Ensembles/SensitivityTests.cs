@@ -24,6 +24,20 @@ public sealed class SensitivityTests
         Assert.Equal(0.2497, peak.Inputs[1].Total, 0.03);
     }
 
+    // The same product with the index in place of the scale: 4 n d = 3 wavelengths; coefficient of variation 0.02/2 = 0.01, and 0.011538 of the thickness:
+    // the index has 0.01^2/(0.01^2 + 0.011538^2) = 0.4290.
+    [Fact]
+    public void An_index_may_carry_a_spread()
+    {
+        string text = Ensemble.Film("{ mean = 195, sd = 9, n = 16 }").Replace("{ n = 2.0 }", "{ n = 2.0, n_sd = 0.02 }", StringComparison.Ordinal);
+        OutcomeShares peak = Analyze(text, 8000, Predictions.At(400, 640, 4)).Views[0].Outcomes.Single(outcome => outcome.Name == "peak_nm");
+        Assert.Equal(0.4290, peak.Inputs.Single(input => input.Key == "layer1.material.n").Total, 0.03);
+        Assert.Equal(0.5710, peak.Inputs.Single(input => input.Key == "layer1.thickness").Total, 0.03);
+
+        var barbule = Structures.Load(text).Barbule;
+        Assert.Equal(barbule, Structures.Load(BarbuleOptics.Files.StructureWriter.Write(barbule)["format = 1\n".Length..]).Barbule);
+    }
+
     [Fact]
     public void Measurements_of_the_same_units_stand_together_and_threads_leave_no_trace()
     {

@@ -40,6 +40,18 @@ public sealed class DrawTests
         Assert.Equal(1, new StudentScale(2).Of(StudentScale.Score(share)) / two, 1e-8);
     }
 
+    // Quantiles of chi-squared: Abramowitz and Stegun 1964, table 26.8 (values from memory): 0.216 (3 degrees, 2.5 %), 9.348 (97.5 %), 10.851 (20 degrees, 5 %), 31.410 (95 %);
+    // with 2 degrees X = -2 ln(1 - p).
+    [Theory]
+    [InlineData(3, 0.025, 0.216)]
+    [InlineData(3, 0.975, 9.348)]
+    [InlineData(20, 0.05, 10.851)]
+    [InlineData(20, 0.95, 31.410)]
+    [InlineData(2, 0.5, 1.386294)]
+    [InlineData(2, 0.999999, 27.631021)]
+    public void The_common_factor_has_the_tabulated_points_of_chi_squared(double degrees, double share, double expected)
+        => Assert.Equal(Math.Sqrt(degrees / expected), new CommonScale(degrees).Of(StudentScale.Score(share)), 0.003 * Math.Sqrt(degrees / expected));
+
     // Compass directions in which eight trees lean: mean angle 99 degrees, r = 0.82522. Zar, Biostatistical Analysis, example 26.4 (from memory); recomputed by hand:
     // sum of cosines -1.0271, of sines 6.5216.
     [Fact]

@@ -28,14 +28,22 @@ internal sealed class DrawSetup
     public PeakFollower[] Followers { get; private set; }
 
     /// <summary>Solves the mean geometry and its neighbors; false, with a problem, where the mean geometry has no solution.</summary>
+    /// <param name="plan">How draws are made.</param>
+    /// <param name="conditions">How the structure is looked at.</param>
+    /// <param name="catalog">Where its materials are.</param>
+    /// <param name="shares">Whether lengths share the factor of Student's t, see <see cref="DrawPlan.Weighted"/>.</param>
+    /// <param name="setup">All that draws need.</param>
+    /// <param name="problems">What forbids them.</param>
+    /// <param name="cancellation">Ends the work early.</param>
     public static bool TryMake(
-        DrawPlan plan, PredictionConditions conditions, IMaterialCatalog catalog, [NotNullWhen(true)] out DrawSetup? setup, out IReadOnlyList<AnatomyProblem> problems, CancellationToken cancellation)
+        DrawPlan plan, PredictionConditions conditions, IMaterialCatalog catalog, bool shares, [NotNullWhen(true)] out DrawSetup? setup, out IReadOnlyList<AnatomyProblem> problems,
+        CancellationToken cancellation)
     {
         problems = [];
         setup = null;
         try
         {
-            setup = Of(plan, conditions, catalog, cancellation);
+            setup = Of(plan, conditions, catalog, shares, cancellation);
         }
         catch (ArithmeticException unsolved)
         {
@@ -44,7 +52,7 @@ internal sealed class DrawSetup
         return setup is not null;
     }
 
-    private static DrawSetup Of(DrawPlan plan, PredictionConditions conditions, IMaterialCatalog catalog, CancellationToken cancellation)
+    private static DrawSetup Of(DrawPlan plan, PredictionConditions conditions, IMaterialCatalog catalog, bool shares, CancellationToken cancellation)
     {
         DrawSetup setup = Unprobed(plan, conditions, catalog, cancellation);
         double[] lengthsNm = new double[plan.Slots.Length], reflectances = new double[conditions.Incidences.Count * conditions.Wavelengths.Count];
@@ -57,7 +65,7 @@ internal sealed class DrawSetup
             peaks.Scan(Part(reflectances, angle, conditions));
             setup.Followers[angle] = PeakFollower.Of(peaks, lengthsNm);
         }
-        setup.Probe(lengthsNm, rows, cancellation);
+        setup.Probe(lengthsNm, rows, shares, cancellation);
         return setup;
     }
 
@@ -76,14 +84,14 @@ internal sealed class DrawSetup
         => reflectances.AsSpan(angle * conditions.Wavelengths.Count, conditions.Wavelengths.Count);
 
     /// <summary>One standard deviation to each side of every length that is drawn.</summary>
-    private void Probe(double[] centersNm, int[] rows, CancellationToken cancellation)
+    private void Probe(double[] centersNm, int[] rows, bool shares, CancellationToken cancellation)
     {
         int[] probed = [.. Plan.Drawn.Take(MostProbed)];
         double[][] changes = [.. Plan.Slots.Select(_ => new double[1])], slopes = [.. Followers.Select(_ => new double[Plan.Slots.Length])];
         var options = new ParallelOptions { MaxDegreeOfParallelism = _conditions.Threads, CancellationToken = cancellation };
         Parallel.For(0, probed.Length, options, i => changes[probed[i]] = ProbeOne(probed[i], centersNm, rows, slopes));
         int width = changes.Max(change => change.Length);
-        Plan = Plan.Weighted(Array.ConvertAll(changes, change => change.Length == width ? change : new double[width]));
+        Plan = Plan.Weighted(Array.ConvertAll(changes, change => change.Length == width ? change : new double[width]), shares);
         Followers = [.. Followers.Select((follower, angle) => follower.With(slopes[angle]))];
     }
 

@@ -1,3 +1,4 @@
+using System.Collections.Concurrent;
 using BarbuleOptics.Ensembles.Spreads;
 using BarbuleOptics.Grating;
 using BarbuleOptics.Layering;
@@ -17,6 +18,7 @@ internal sealed class DrawSolver
     private readonly SampledMaterials _materials;
     private readonly GratingSolver? _grating;
     private readonly LayerModel? _model;
+    private readonly ConcurrentBag<VectorFilmWorkspace> _workspaces = [];
     private readonly bool _thinBack;
     private readonly bool _isFilms;
 
@@ -56,12 +58,22 @@ internal sealed class DrawSolver
     /// <returns>Estimate of the largest error.</returns>
     /// <exception cref="ArithmeticException">There is no finite solution.</exception>
     public double Solve(Section section, Span<double> reflectances)
-        => _grating is not null ? Solve(_grating, new SectionPermittivities(Prepared(section), _materials), reflectances)
-            : Solve(LayerModelResponses.Solver, _model!.Like(Prepared(section)).FilmsOf(_materials), reflectances);
-
-    private double Solve<TStructure, TWorkspace>(ISpectralSolver<TStructure, TWorkspace> solver, TStructure structure, Span<double> reflectances)
     {
-        TWorkspace workspace = solver.CreateWorkspace(structure);
+        if (_grating is not null)
+        {
+            var structure = new SectionPermittivities(Prepared(section), _materials);
+            return Solve(_grating, structure, _grating.CreateWorkspace(structure), reflectances);
+        }
+        FilmStack films = _model!.Like(Prepared(section)).FilmsOf(_materials);
+        if (!_workspaces.TryTake(out VectorFilmWorkspace? workspace) || !workspace.Holds(films))
+            workspace = LayerModelResponses.Solver.CreateWorkspace(films);
+        double error = Solve(LayerModelResponses.Solver, films, workspace, reflectances);
+        _workspaces.Add(workspace);
+        return error;
+    }
+
+    private double Solve<TStructure, TWorkspace>(ISpectralSolver<TStructure, TWorkspace> solver, TStructure structure, TWorkspace workspace, Span<double> reflectances)
+    {
         int count = _conditions.Wavelengths.Count;
         double error = 0;
         for (int angle = 0; angle < _conditions.Incidences.Count; angle++)

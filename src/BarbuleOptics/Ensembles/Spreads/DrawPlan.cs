@@ -8,16 +8,18 @@ internal sealed class DrawPlan
 {
     private readonly int[] _dimensionOfSlot;
     private readonly int[] _counted;
+    private readonly CommonScale? _common;
 
     internal DrawPlan(Barbule barbule, Spread spread, DrawSlot[] slots, IReadOnlyList<CorrelatedGroup> groups, int[] counted)
-        : this(barbule, spread, slots, groups, counted, [.. Enumerable.Range(0, slots.Length).Where(slot => slots[slot].Law is not null)], double.PositiveInfinity)
+        : this(barbule, spread, slots, groups, counted, [.. Enumerable.Range(0, slots.Length).Where(slot => slots[slot].Law is not null)], double.PositiveInfinity, shares: false)
     {
     }
 
-    private DrawPlan(Barbule barbule, Spread spread, DrawSlot[] slots, IReadOnlyList<CorrelatedGroup> groups, int[] counted, int[] order, double degrees)
+    private DrawPlan(Barbule barbule, Spread spread, DrawSlot[] slots, IReadOnlyList<CorrelatedGroup> groups, int[] counted, int[] order, double degrees, bool shares)
     {
         (Barbule, Spread, Slots, Groups, _counted, Drawn, EffectiveDegrees) = (barbule, spread, slots, groups, counted, order, degrees);
-        Scale = new StudentScale(degrees);
+        _common = shares ? new CommonScale(degrees) : null;
+        Scale = new StudentScale(shares ? double.PositiveInfinity : degrees);
         _dimensionOfSlot = new int[slots.Length];
         Array.Fill(_dimensionOfSlot, -1);
         for (int i = 0; i < order.Length; i++)
@@ -49,7 +51,7 @@ internal sealed class DrawPlan
     public IReadOnlyList<int> Counted => _counted;
 
     /// <summary>Numbers that a draw takes.</summary>
-    public int Dimensions => _counted.Length + Drawn.Count;
+    public int Dimensions => _counted.Length + Drawn.Count + (_common is null ? 0 : 1);
 
     private StudentScale Scale { get; }
 
@@ -76,7 +78,7 @@ internal sealed class DrawPlan
     }
 
     /// <summary>The same draws of a structure that differs in its materials alone.</summary>
-    public DrawPlan Of(Barbule barbule) => new(barbule, Spread, Slots, Groups, _counted, [.. Drawn], EffectiveDegrees);
+    public DrawPlan Of(Barbule barbule) => new(barbule, Spread, Slots, Groups, _counted, [.. Drawn], EffectiveDegrees, _common is not null);
 
     /// <summary>The mean geometry.</summary>
     public void Center(Span<double> lengthsNm, Span<int> rowCounts)
@@ -101,6 +103,7 @@ internal sealed class DrawPlan
             rowCounts[_counted[i]] = counts[(int)(coordinates[i] * counts.Count)];
         }
         scores.Clear();
+        double common = _common is null ? 1 : _common.Of(StudentScale.Score(coordinates[Dimensions - 1]));
         foreach (int slot in Drawn)
         {
             double coordinate = coordinates[_dimensionOfSlot[slot]];
@@ -110,26 +113,28 @@ internal sealed class DrawPlan
                 continue;
             }
             scores[slot] = StudentScale.Score(coordinate);
-            lengthsNm[slot] += Slots[slot].Law!.DeviationNm * Scale.Of(scores[slot]);
+            lengthsNm[slot] += Slots[slot].Law!.DeviationNm * common * Scale.Of(scores[slot]);
         }
         foreach (CorrelatedGroup group in Groups)
         {
             for (int member = 0; member < group.Slots.Count; member++)
             {
                 int slot = group.Slots[member];
-                lengthsNm[slot] = Slots[slot].Length.CentralNm + Slots[slot].Law!.DeviationNm * Scale.Of(group.Score(member, scores));
+                lengthsNm[slot] = Slots[slot].Length.CentralNm + Slots[slot].Law!.DeviationNm * common * Scale.Of(group.Score(member, scores));
             }
         }
     }
 
     /// <summary>The same plan with the lengths that matter most first, and with the degrees of freedom that the whole has.</summary>
     /// <param name="changes">For each slot how the outcome that counts changes over one standard deviation of the length, one or more numbers.</param>
+    /// <param name="shares">Whether one factor makes all lengths of a draw Student's t together (<see cref="CommonScale"/>), as intervals ask for; otherwise each is by itself,
+    /// as shares of variance ask for.</param>
     /// <remarks>
     /// Welch and Satterthwaite: nu = (sum V_k)^2 / sum(V_k^2/nu_k), V_k the variance that the k-th independent mean gives the outcome, nu_k its degrees of
     /// freedom (Welch 1947, Biometrika 34:28; Satterthwaite 1946, Biometrics Bull. 2:110). With one length measured this is its own n - 1. Several lengths drawn
     /// each from Student's t of its own n - 1 would make intervals too wide: they are hardly all badly estimated at once.
     /// </remarks>
-    public DrawPlan Weighted(ReadOnlySpan<double[]> changes)
+    public DrawPlan Weighted(ReadOnlySpan<double[]> changes, bool shares = false)
     {
         var variances = new double[Slots.Length];
         for (int slot = 0; slot < Slots.Length; slot++)
@@ -160,8 +165,11 @@ internal sealed class DrawPlan
         }
         double least = Drawn.Count == 0 ? double.PositiveInfinity : Drawn.Min(DegreesOf);
         double degrees = divided > 0 ? Math.Max(least, sum * sum / divided) : least;
-        return new DrawPlan(Barbule, Spread, Slots, Groups, _counted, [.. Drawn.OrderByDescending(slot => variances[slot]).ThenBy(slot => slot)], degrees);
+        return new DrawPlan(Barbule, Spread, Slots, Groups, _counted, [.. Drawn.OrderByDescending(slot => variances[slot]).ThenBy(slot => slot)], degrees, shares && double.IsFinite(degrees) && IsSeveral);
     }
+
+    /// <summary>Whether more than one normal length or group is drawn: one alone is Student's t as it is.</summary>
+    private bool IsSeveral => Groups.Count + Drawn.Count(slot => Slots[slot].Law is LengthLaw.Normal && !Groups.Any(group => group.Slots.Contains(slot))) > 1;
 
     private double DegreesOf(int slot) => Slots[slot].Law is LengthLaw.Normal normal ? normal.Degrees : double.PositiveInfinity;
 }

@@ -12,6 +12,6 @@ internal sealed record DrawSlot(string Key, int Row, MeasuredLength Length, Leng
     /// <summary>Unit of its numbers: "nm", "deg" or empty.</summary>
     public string Unit { get; init; } = "nm";
 
-    /// <summary>The factor that it stands for; null for a length.</summary>
+    /// <summary>The factor or optical constant that it stands for; null for a length.</summary>
     public MeasuredFactor? Factor { get; init; }
 }

@@ -59,7 +59,8 @@ internal ref struct DrawnStructure
 
     private readonly Barbule WithFactors(Barbule drawn)
     {
-        Span<double> values = _lengthsNm[_at..];
+        int factors = MeasuredFactors.Of(_barbule).Count();
+        Span<double> values = _lengthsNm.Slice(_at, factors), constants = _lengthsNm[(_at + factors)..];
         for (int i = 0; i < values.Length; i++)
         {
             // A cosine and a scale above 0, a shrinkage below 1.
@@ -67,7 +68,8 @@ internal ref struct DrawnStructure
             (double least, double most) = slot.Unit == "deg" ? (0, MostObliquityDegrees) : slot.Key.EndsWith("scale", StringComparison.Ordinal) ? (LeastScale, 1 / LeastScale) : (1 - 1 / LeastScale, 1 - LeastScale);
             values[i] = Math.Clamp(values[i], least, most);
         }
-        return values.Length == 0 ? drawn : MeasuredFactors.With(drawn, values);
+        drawn = values.Length == 0 ? drawn : MeasuredFactors.With(drawn, values);
+        return constants.Length == 0 ? drawn : UncertainConstants.With(drawn, constants);
     }
 
     private BarbuleLayer Whole(BarbuleLayer layer, int rows)

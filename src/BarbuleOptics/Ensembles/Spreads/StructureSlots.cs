@@ -4,7 +4,7 @@ namespace BarbuleOptics.Ensembles.Spreads;
 
 /// <summary>Every length of a structure in the order in which <see cref="DrawnStructure"/> takes them.</summary>
 /// <remarks>From the outside in: the cortex; of each layer the sizes of its bodies (row after row where rows are drawn by themselves), the distance along the
-/// surface, the distance of rows (of each two neighbors then), the gap; the far side; factors. Where rows are drawn by themselves the distance along the surface is
+/// surface, the distance of rows (of each two neighbors then), the gap; the far side; factors; optical constants with a deviation. Where rows are drawn by themselves the distance along the surface is
 /// kept: a row stays periodic, and rows of one layer keep one period.</remarks>
 internal static class StructureSlots
 {
@@ -38,6 +38,11 @@ internal static class StructureSlots
             yield return new("back.thickness", 0, barbule.Back.Thickness, null);
         foreach ((string key, MeasuredFactor factor, string unit) in MeasuredFactors.Of(barbule))
             yield return new(key, 0, new MeasuredLength.Exact(factor.Central), null) { Unit = unit, Factor = factor };
+        foreach ((string place, Materials.MaterialReference.Inline constants) in UncertainConstants.Of(barbule))
+        {
+            foreach ((string key, double center, double sd) in UncertainConstants.Parts(place, constants))
+                yield return new(key, 0, new MeasuredLength.Exact(center), null) { Unit = "", Factor = new MeasuredFactor.Summary(center, sd) };
+        }
     }
 
     private static IEnumerable<(string Key, MeasuredLength Length)> Sizes(BarbuleLayer layer)
