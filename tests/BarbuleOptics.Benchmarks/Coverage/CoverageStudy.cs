@@ -13,7 +13,7 @@ namespace BarbuleOptics.Benchmarks.Coverage;
 /// the same number of barbules each.</remarks>
 internal sealed class CoverageStudy
 {
-    private const int Draws = 256;
+    private const int Draws = 1024;
 
     /// <summary>Means of cortex, film and pitch over all barbules, and their standard deviations, in nm.</summary>
     private static readonly (double MeanNm, double SdNm)[] Truth = [(130, 8), (85, 5), (170, 7)];
