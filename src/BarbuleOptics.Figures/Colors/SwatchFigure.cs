@@ -2,6 +2,7 @@ using BarbuleOptics.Color;
 using BarbuleOptics.Figures.Drawing;
 using BarbuleOptics.Figures.Layout;
 using BarbuleOptics.Prediction;
+using BarbuleOptics.Spectra.Instruments;
 using BarbuleOptics.Vision;
 
 namespace BarbuleOptics.Figures.Colors;
@@ -100,10 +101,14 @@ public sealed class SwatchFigure
         _top += StripPt + GapPt;
     }
 
+    /// <summary>What the color white stands for.</summary>
+    public static string White(PredictionConditions conditions)
+        => conditions.Instrument is { Reference: SignalReference.WhiteStandard } ? "a perfect matt white" : "a perfect mirror";
+
     private IEnumerable<string> Notes()
     {
         PredictionConditions conditions = _prediction.Conditions;
-        yield return $"Illuminant {conditions.Illuminant.Name}{Adaptation(conditions)}; people: CIE 1931 2° observer; a perfect mirror is white.";
+        yield return $"Illuminant {conditions.Illuminant.Name}{Adaptation(conditions)}; people: CIE 1931 2° observer; {White(conditions)} is white.";
         string[] outside = [.. _views.Where(view => view.Color is { InSrgbGamut: false }).Select(view => Degrees.Text(view.Incidence))];
         if (outside.Length > 0)
             yield return $"Outside sRGB and shown paler: {(outside.Length <= 4 ? string.Join(", ", outside) : $"{outside.Length} of {_views.Count}")}.";

@@ -167,11 +167,12 @@ public sealed class ReflectanceFigure
             Polarizations.S => "s-polarized light",
             _ => "p-polarized light",
         };
-        yield return _views.Count == 1 && HasOthers ? $"Specular reflectance at {Degrees.Text(_views[0].Incidence)}, {light}." : $"Specular reflectance, {light}.";
+        string quantity = conditions.Instrument is null ? "Specular reflectance" : "Signal of an instrument";
+        yield return _views.Count == 1 && HasOthers ? $"{quantity} at {Degrees.Text(_views[0].Incidence)}, {light}." : $"{quantity}, {light}.";
         foreach (string sentence in SolverNotes())
             yield return sentence;
         if (_views.Any(view => view.Color is not null))
-            yield return $"Colors: illuminant {conditions.Illuminant.Name}, CIE 1931 2° observer{SwatchFigure.Adaptation(conditions)}; a perfect mirror is white.";
+            yield return $"Colors: illuminant {conditions.Illuminant.Name}, CIE 1931 2° observer{SwatchFigure.Adaptation(conditions)}; {SwatchFigure.White(conditions)} is white.";
         string[] outside = [.. _views.Where(view => view.Color is { InSrgbGamut: false }).Select(view => Degrees.Text(view.Incidence))];
         if (outside.Length == _views.Count)
             yield return "They lie outside sRGB and are shown paler.";

@@ -41,16 +41,17 @@ public static class SrgbEncoder
 
     /// <summary>
     /// The same chromaticity lifted to <see cref="BrightenedLightness"/>: X, Y and Z times one factor, then the gamut rule. A color as light
-    /// or lighter stays as it is, and so does one without luminance (Y not above zero).
+    /// or lighter stays as it is, up to white, beyond which a screen shows nothing but white: a signal against a matt white may lie there, and is brought down to the
+    /// same lightness. One without luminance (Y not above zero) stays, too.
     /// </summary>
     /// <param name="color">Tristimulus values of the 1931 observer.</param>
     /// <param name="white">Those of a perfect mirror under the same illuminant.</param>
     public static SrgbColor EncodeBrightened(Tristimulus color, Tristimulus white)
     {
         double wantedY = new CieLab(BrightenedLightness, 0, 0).ToTristimulus(white).Y;
-        bool darker = color.Y > Tristimulus.LeastY && color.Y < wantedY;
+        bool moves = color.Y > Tristimulus.LeastY && (color.Y < wantedY || color.Y > white.Y);
         // The factor of an all but black color may overflow: there is nothing to brighten then.
-        double factor = darker ? wantedY / color.Y : 1;
+        double factor = moves ? wantedY / color.Y : 1;
         return Encode(double.IsFinite(factor * (Math.Abs(color.X) + Math.Abs(color.Z))) ? color.Scale(factor) : color, white, out _);
     }
 
