@@ -20,6 +20,7 @@ internal static class BarbuleCommand
 
         var help = new CommandHelp();
         Add(PredictCommand.Create(colors, progress), "barbule predict throat.toml --angles 0:60:15 --set barbule.surround=water --out results");
+        Add(BatchCommand.Create(progress), "barbule batch specimens.csv --angles 0,30,60 --out results");
         Add(SensitivityCommand.Create(progress), "barbule sensitivity throat.toml --out results");
         Add(MaterialsCommand.Create(), "barbule materials eumelanin");
         Add(SampleCommand.Create(), "barbule sample samples");

@@ -34,6 +34,9 @@ internal static class BarbuleProgram
             {
                 EnableDefaultExceptionHandler = false, Output = output, Error = error, ProcessTerminationTimeout = TimeSpan.FromSeconds(30),
             };
+            // A table is interrupted when the specimens in flight are done, however long those take.
+            if (result.CommandResult.Command.Name == BatchCommand.Name)
+                configuration.ProcessTerminationTimeout = TimeSpan.FromDays(1);
             return await result.InvokeAsync(configuration, cancellation).ConfigureAwait(false);
         }
         catch (OperationCanceledException)

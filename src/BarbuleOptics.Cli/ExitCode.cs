@@ -7,6 +7,7 @@ internal static class ExitCode
     public const int OurFault = 1;
     public const int WrongCommandLine = 2;
     public const int WrongInput = 3;
+    public const int SomeFailed = 4;
     public const int OutputFailed = 5;
     public const int Interrupted = 130;
 }

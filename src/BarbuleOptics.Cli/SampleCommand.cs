@@ -7,7 +7,7 @@ namespace BarbuleOptics.Cli;
 /// <summary>The command <c>barbule sample</c>: structure files to start from.</summary>
 internal static class SampleCommand
 {
-    private const string ReadmeName = "README.md", First = "hollow-rods.toml";
+    private const string ReadmeName = "README.md", First = "hollow-rods.toml", TableName = "specimens.csv";
 
     public static Command Create()
     {
@@ -30,7 +30,7 @@ internal static class SampleCommand
         try
         {
             OutputFolder.Write(
-                folder, [OutputFile.FromText(ReadmeName, Readme(samples)), .. samples.Select(sample => OutputFile.FromText(sample.FileName, sample.Text))], force, [], cancellation);
+                folder, [OutputFile.FromText(ReadmeName, Readme(samples)), OutputFile.FromText(TableName, Embedded.Text("sample-tables/" + TableName)), .. samples.Select(sample => OutputFile.FromText(sample.FileName, sample.Text))], force, [], cancellation);
         }
         catch (OutputException fault)
         {
@@ -40,6 +40,7 @@ internal static class SampleCommand
         output.WriteLine($"Written: {OneLine.Escape(Path.Combine(folder, ReadmeName))} and {samples.Length} structures:");
         foreach (SampleStructure sample in samples)
             output.WriteLine($"  {sample.FileName}");
+        output.WriteLine($"  {TableName}, a table of 60 specimens");
         output.WriteLine();
         output.WriteLine($"Next:    barbule predict {Quoted(Path.Combine(folder, First))} --angles 0,30,60");
         return ExitCode.Done;
@@ -59,6 +60,7 @@ internal static class SampleCommand
             predicts one and writes spectra, color and hue into `results/`. `--set KEY=VALUE` changes a value without touching the file
             (`--set barbule.surround=water` puts the feather under water), `barbule predict --help` lists what else can be asked. For a
             barbule of your own copy the file that is nearest to it and put your measurements in: lengths are in nm.
+            `{TableName}` holds 60 specimens, one a row: `barbule batch {TableName} --out results` predicts them all.
 
             | file | what it is |
             |---|---|

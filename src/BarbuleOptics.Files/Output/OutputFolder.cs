@@ -150,6 +150,9 @@ public static class OutputFolder
         }
     }
 
+    /// <summary>What to tell the user of something that could not be written.</summary>
+    internal static OutputException Translated(string path, Exception cause) => Translate(path, cause);
+
     private static OutputException Translate(string path, Exception cause)
         => new(IsFull(cause) ? OutputFault.DiskFull : OutputFault.NotWritable, $"{OneLine.Escape(path)}: {(IsFull(cause) ? "" : "cannot be written: ")}{Reason(cause)}", cause);
 

@@ -1,3 +1,4 @@
+using System.Globalization;
 using System.Text.Unicode;
 
 namespace BarbuleOptics.Files.Toml;
@@ -9,10 +10,10 @@ internal static class SourceText
     public const int MostBytes = 1_000_000;
 
     /// <summary>The text; null when it was refused.</summary>
-    public static string? Decode(ReadOnlySpan<byte> bytes, ReadingLog log)
+    public static string? Decode(ReadOnlySpan<byte> bytes, ReadingLog log, int mostBytes = MostBytes)
     {
-        if (bytes.Length > MostBytes)
-            return Refuse(log, "found more than 1 MB; allowed up to 1,000,000 bytes");
+        if (bytes.Length > mostBytes)
+            return Refuse(log, string.Create(CultureInfo.InvariantCulture, $"found more than {mostBytes / 1_000_000} MB; allowed up to {mostBytes:#,0} bytes"));
         if (bytes is [0xFF, 0xFE, ..] or [0xFE, 0xFF, ..])
             return Refuse(log, "found UTF-16 or UTF-32 text; allowed UTF-8: save the file in that encoding");
         if (bytes is [0xEF, 0xBB, 0xBF, ..])
@@ -42,7 +43,7 @@ internal static class SourceText
     }
 
     /// <summary>Reads a file; returns why it cannot be read, or null.</summary>
-    public static string? TryReadFile(string path, out byte[] bytes)
+    public static string? TryReadFile(string path, out byte[] bytes, int mostBytes = MostBytes)
     {
         bytes = [];
         try
@@ -50,7 +51,7 @@ internal static class SourceText
             if (Directory.Exists(path))
                 return "found a folder; allowed a file";
             using FileStream stream = new(path, FileMode.Open, FileAccess.Read, FileShare.Read);
-            byte[] buffer = new byte[MostBytes + 1];
+            byte[] buffer = new byte[Math.Min(mostBytes, stream.CanSeek ? stream.Length : mostBytes) + 1];
             int length = stream.ReadAtLeast(buffer, buffer.Length, throwOnEndOfStream: false);
             bytes = buffer[..length];
             return null;

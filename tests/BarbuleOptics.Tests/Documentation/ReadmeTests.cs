@@ -71,7 +71,7 @@ public sealed partial class ReadmeTests
     public void Every_option_of_the_readme_is_one_of_the_program()
     {
         string folder = Path.Combine(Repository.Root, "src", "BarbuleOptics.Cli");
-        string help = string.Join('\n', ((string[])["PredictCommand.cs", "SensitivityCommand.cs", "ConditionOptions.cs", "InstrumentOptions.cs"]).Select(file => File.ReadAllText(Path.Combine(folder, file))));
+        string help = string.Join('\n', ((string[])["PredictCommand.cs", "BatchCommand.cs", "SensitivityCommand.cs", "ConditionOptions.cs", "InstrumentOptions.cs"]).Select(file => File.ReadAllText(Path.Combine(folder, file))));
         foreach (string option in Option().Matches(Readme).Select(match => match.Value).Distinct().Where(option => option is not ("--project" or "--help" or "--version" or "--global" or "--source")))
             Assert.Contains($"\"{option}\"", help, StringComparison.Ordinal);
     }
