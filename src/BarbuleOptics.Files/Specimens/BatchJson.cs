@@ -1,4 +1,3 @@
-using System.Text.Json;
 using BarbuleOptics.Files.Results;
 
 namespace BarbuleOptics.Files.Specimens;

@@ -1,3 +1,4 @@
+using System.Buffers;
 using System.Text;
 using BarbuleOptics.Files.Toml;
 
@@ -87,8 +88,10 @@ internal static class DelimitedText
         line++;
     }
 
+    private static readonly SearchValues<char> Special = SearchValues.Create("\",;\t\r\n");
+
     /// <summary>A cell as comma-separated values hold it: quoted where it must be.</summary>
     public static string Quoted(string cell)
-        => cell.AsSpan().ContainsAny("\",;\t\r\n") || cell.AsSpan().Trim().Length < cell.Length || cell.StartsWith('#') || cell == NotAvailable
+        => cell.AsSpan().ContainsAny(Special) || cell.AsSpan().Trim().Length < cell.Length || cell.StartsWith('#') || cell == NotAvailable
             ? $"\"{cell.Replace("\"", "\"\"", StringComparison.Ordinal)}\"" : cell;
 }

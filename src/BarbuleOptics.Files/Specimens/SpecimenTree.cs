@@ -89,7 +89,7 @@ internal sealed class SpecimenTree(SheetRow row, bool hasDecimalComma, ReadingLo
             return new TomlText(cell, at);
         }
         if (column.Kind == CellKind.Flag)
-            return cell.ToLowerInvariant() is "true" or "false" ? new TomlFlag(cell.ToLowerInvariant() == "true", at) : new TomlText(cell, at);
+            return bool.TryParse(cell, out bool flag) ? new TomlFlag(flag, at) : new TomlText(cell, at);
         return column.Kind == CellKind.Text ? new TomlText(cell, at) : Number(cell, column, at);
     }
 

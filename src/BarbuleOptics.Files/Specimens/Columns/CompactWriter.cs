@@ -4,7 +4,9 @@ namespace BarbuleOptics.Files.Specimens.Columns;
 
 /// <summary>Writes the compact protocol of Apache Thrift, in which Parquet files describe themselves.</summary>
 /// <remarks>Thrift compact protocol encoding, https://github.com/apache/thrift/blob/master/doc/specs/thrift-compact-protocol.md (from memory).</remarks>
+#pragma warning disable CA1001 // A stream in memory holds nothing to give back.
 internal sealed class CompactWriter
+#pragma warning restore CA1001
 {
     private const byte Whole32 = 5, Whole64 = 6, Binary = 8, ListOf = 9, Struct = 12;
 
