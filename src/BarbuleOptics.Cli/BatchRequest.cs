@@ -16,8 +16,4 @@ namespace BarbuleOptics.Cli;
 /// <param name="Options">The options that decide results, as typed, in order.</param>
 internal sealed record BatchRequest(
     string Table, PredictionConditions Conditions, SeenBy SeenBy, string OutputFolder, bool Force, bool Resume, string? MaterialFolder, IReadOnlyList<string> Sets, DrawOptions? Draws,
-    IReadOnlyList<string> Options)
-{
-    /// <summary>Table of replicates; null for none.</summary>
-    public string? Replicates { get; init; }
-}
+    IReadOnlyList<string> Options);

@@ -51,7 +51,8 @@ internal static class SourceText
             if (Directory.Exists(path))
                 return "found a folder; allowed a file";
             using FileStream stream = new(path, FileMode.Open, FileAccess.Read, FileShare.Read);
-            byte[] buffer = new byte[Math.Min(mostBytes, stream.CanSeek ? stream.Length : mostBytes) + 1];
+            // A device says that it is empty and never ends.
+            byte[] buffer = new byte[(stream is { CanSeek: true, Length: > 0 } ? Math.Min(mostBytes, stream.Length) : mostBytes) + 1];
             int length = stream.ReadAtLeast(buffer, buffer.Length, throwOnEndOfStream: false);
             bytes = buffer[..length];
             return null;
