@@ -103,6 +103,21 @@ public sealed class InstrumentTests
         Assert.Equal(1, instrument.WhiteFactor(Angle.FromDegrees(0)) * Math.Pow(Math.Sin(double.DegreesToRadians(coneDegrees)), 2), 1e-9);
     }
 
+    // Mean 0, variance sd^2, fourth moment 3 sd^4, sixth 15 sd^6 of the normal distribution. Source: Abramowitz and Stegun 26.2.6 (from memory).
+    [Fact]
+    public void Turns_of_rods_have_the_moments_of_the_normal_distribution()
+    {
+        const double Deviation = 0.2;
+        (double Turn, double Share)[] turns = RodTurns.Of(Deviation);
+        Assert.Equal(1, Moment(0), 1e-14);
+        Assert.Equal(0, Moment(1), 1e-15);
+        Assert.Equal(1, Moment(2), 1e-13);
+        Assert.Equal(3, Moment(4), 1e-12);
+        Assert.Equal(15, Moment(6), 1e-11);
+
+        double Moment(int power) => turns.Sum(turn => turn.Share * Math.Pow(turn.Turn / Deviation, power));
+    }
+
     // asin(NA/n). Source: definition of the numerical aperture, Born and Wolf 4.8 (from memory).
     [Fact]
     public void Numerical_aperture_is_the_index_times_the_sine_of_the_half_angle()

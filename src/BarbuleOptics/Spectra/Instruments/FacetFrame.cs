@@ -9,7 +9,6 @@ namespace BarbuleOptics.Spectra.Instruments;
 internal readonly record struct FacetFrame(Direction Normal, Direction Across, double Weight)
 {
     private const int Turns = 16;
-    private const int Spreads = 7;
     private const double Reach = 4;
 
     /// <summary>The facets that an instrument's tilt and spread describe, for rods of an axis.</summary>
@@ -20,7 +19,7 @@ internal readonly record struct FacetFrame(Direction Normal, Direction Across, d
         var frames = new List<FacetFrame>();
         foreach ((Direction normal, double share) in Normals(instrument.Tilt, across))
         {
-            foreach ((double turn, double part) in Bell(instrument.RodSpread.Radians))
+            foreach ((double turn, double part) in RodTurns.Of(instrument.RodSpread.Radians))
             {
                 (double s, double c) = Math.SinCos(turn);
                 frames.Add(new FacetFrame(normal, new Direction(across.X * c - across.Y * s, across.X * s + across.Y * c, 0).TurnedWith(normal), share * part));
@@ -45,15 +44,5 @@ internal readonly record struct FacetFrame(Direction Normal, Direction Across, d
         double sum = densities.Sum();
         return Enumerable.Range(0, points.Length * Turns).Select(i =>
             (Direction.Up.Around(most * points[i / Turns], 2 * Math.PI * (i % Turns + 0.5) / Turns), densities[i / Turns] / sum / Turns));
-    }
-
-    // Evenly spaced points of a normal distribution, which converge at once for smooth functions.
-    private static IEnumerable<(double At, double Share)> Bell(double deviation)
-    {
-        if (deviation == 0)
-            return [(0, 1)];
-        double[] at = [.. Enumerable.Range(0, Spreads).Select(i => 3.5 * (2.0 * i / (Spreads - 1) - 1))];
-        double sum = at.Sum(x => Math.Exp(-x * x / 2));
-        return at.Select(x => (x * deviation, Math.Exp(-x * x / 2) / sum));
     }
 }

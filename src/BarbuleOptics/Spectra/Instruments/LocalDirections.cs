@@ -12,9 +12,6 @@ internal sealed class LocalDirections
 {
     private const double LeastHalfAngle = 1e-5;
 
-    private static readonly double[] HermitePoints = [-2.0201828704560856, -0.9585724646138185, 0, 0.9585724646138185, 2.0201828704560856];
-    private static readonly double[] HermiteWeights = [0.01995324205904591, 0.3936193231522412, 0.9453087204829419, 0.3936193231522412, 0.01995324205904591];
-
     private readonly List<LocalDirection> _samples = [];
 
     /// <summary>Finds the directions.</summary>
@@ -29,6 +26,7 @@ internal sealed class LocalDirections
         (Direction towardsLight, Direction towardsCollector) = instrument.Arms.At(angle);
         (double sine, double cosine) = Math.SinCos(rodAxis.Radians);
         Direction across = new(cosine, -sine, 0);
+        (double Turn, double Share)[] turns = RodTurns.Of(instrument.RodSpread.Radians);
         var overlap = new CapOverlap();
         double mirror = 4 * Math.PI * Math.Pow(Math.Sin(Math.Min(light, collection) / 2), 2), sum = 0, incidence = 0;
         foreach ((Direction normal, double share) in new FacetNormals(instrument, towardsLight, towardsCollector, across).Samples)
@@ -42,7 +40,7 @@ internal sealed class LocalDirections
                 double part = share * weight / mirror;
                 sum += part;
                 incidence += part * at.AngleTo(normal);
-                Add(at, normal, across, instrument.RodSpread.Radians, part);
+                Add(at, normal, across, turns, part);
             }
         }
         Share = sum;
@@ -61,21 +59,16 @@ internal sealed class LocalDirections
     /// <summary>Mean angle of incidence on the facets that count.</summary>
     public Angle MeanIncidence { get; }
 
-    private void Add(Direction at, Direction normal, Direction across, double spread, double weight)
+    private void Add(Direction at, Direction normal, Direction across, ReadOnlySpan<(double Turn, double Share)> turns, double weight)
     {
-        for (int i = 0; i < HermitePoints.Length; i++)
+        foreach ((double turn, double share) in turns)
         {
-            // Without a spread all five would be the same.
-            double turn = spread == 0 ? 0 : Math.Sqrt(2) * spread * HermitePoints[i];
             (double sine, double cosine) = Math.SinCos(turn);
             Direction local = new Direction(across.X * cosine - across.Y * sine, across.X * sine + across.Y * cosine, 0).TurnedWith(normal);
-            double share = spread == 0 ? 1 : HermiteWeights[i] / Math.Sqrt(Math.PI);
             // The part of the direction in the facet: the sine keeps its digits where the cosine is 1.
             Direction other = new Direction(local.Y * normal.Z - local.Z * normal.Y, local.Z * normal.X - local.X * normal.Z, local.X * normal.Y - local.Y * normal.X);
             double u = at.Dot(local), v = at.Dot(other), square = u * u + v * v;
             _samples.Add(new LocalDirection(square, square > 0 ? u * u / square : 1, weight * share));
-            if (spread == 0)
-                return;
         }
     }
 }
