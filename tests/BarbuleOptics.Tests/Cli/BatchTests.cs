@@ -1,5 +1,7 @@
 using System.Diagnostics;
 using BarbuleOptics.Tests.Files;
+using Parquet;
+using Parquet.Schema;
 using Xunit;
 
 namespace BarbuleOptics.Tests.Cli;
@@ -38,6 +40,43 @@ public sealed class BatchTests
         Assert.Equal(view.GetProperty("cie").GetProperty("LCh")[2].GetRawText(), cells[Array.IndexOf(names, "h_deg")]);
         Assert.Equal(view.GetProperty("hue").GetProperty("term").GetString(), cells[Array.IndexOf(names, "hue_term")]);
         Assert.Equal(view.GetProperty("spectrum").GetProperty("peaks")[0].GetProperty("wavelength_nm").GetRawText(), cells[Array.IndexOf(names, "peak_nm")]);
+    }
+
+    // Read by a library that knows nothing of us (Parquet.Net), against the text that predict writes of the same structure, which keeps every digit.
+    [Fact]
+    public async Task Spectra_in_Parquet_are_those_that_predict_writes()
+    {
+        using var folder = new TemporaryFolder();
+        File.WriteAllText(folder["a.toml"], "format = 1\nname = \"a\"\n[cortex]\nthickness = 250\n[[layer]]\nform = \"film\"\nthickness = 120\n");
+        File.WriteAllText(folder["t.csv"], "specimen,cortex_nm,layer1.form,layer1.thickness_nm\nPlume \u00e9,250,film,120\nb,300,film,90\n");
+        (await Barbule.Call(["predict", folder["a.toml"], .. Quick, "--angles", "0,40", "--out", folder["one"]])).Good();
+        (await Barbule.Call(["batch", folder["t.csv"], .. Quick, "--angles", "0,40", "--out", folder["out"]])).Good();
+        string[] lines = File.ReadAllLines(folder["one/spectra.csv"]);
+
+        await using ParquetReader reader = await ParquetReader.CreateAsync(folder["out/spectra.parquet"], cancellationToken: TestContext.Current.CancellationToken);
+        Assert.Equal(2, reader.RowGroupCount);
+        using ParquetRowGroupReader group = reader.OpenRowGroupReader(0);
+        Assert.Equal(lines.Length - 1, group.RowCount);
+        DataField[] fields = reader.Schema.GetDataFields();
+        Assert.Equal(lines[0].Split(',').Append("specimen").Order(), fields.Select(field => field.Name).Order());
+        foreach (DataField field in fields)
+        {
+            string[] found = await Values(group, field), expected = [.. lines[1..].Select(line => field.Name == "specimen" ? "Plume \u00e9" : line.Split(',')[Array.IndexOf(lines[0].Split(','), field.Name)])];
+            Assert.Equal(expected, found);
+        }
+    }
+
+    private static async Task<string[]> Values(ParquetRowGroupReader group, DataField field)
+    {
+        if (field.ClrType != typeof(double))
+        {
+            var texts = new string?[group.RowCount];
+            await group.ReadAsync(field, texts.AsMemory(), cancellationToken: TestContext.Current.CancellationToken);
+            return [.. texts.Select(text => text ?? "")];
+        }
+        var numbers = new double[group.RowCount];
+        await group.ReadAsync(field, numbers.AsMemory(), cancellationToken: TestContext.Current.CancellationToken);
+        return [.. numbers.Select(number => number.ToString(System.Globalization.CultureInfo.InvariantCulture))];
     }
 
     [Fact]
